@@ -1,0 +1,1 @@
+//! What a person types into a field: a quantity or an expression over linked cells.

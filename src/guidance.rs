@@ -1,0 +1,1 @@
+//! Published exposure limits as data, and how an exposure is judged by them.

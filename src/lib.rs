@@ -1,0 +1,26 @@
+//! farglow works out the irradiance that a person meets near a hot source,
+//! judges it by cited occupational exposure guidance, and issues the result as
+//! a worksheet that can be signed and filed.
+//!
+//! The layers, from the ground up; imports point down only:
+//!
+//! | layer | modules |
+//! | --- | --- |
+//! | ground | [`units`], [`json`], [`graph`], [`physics`] |
+//! | what a person types, and published limits | [`entry`], [`guidance`] |
+//! | the linked cells | [`notebook`] |
+//! | files | [`store`] |
+//! | pictures and paper | [`drawing`], [`worksheet`] |
+//! | the command line | [`command`] |
+
+pub mod command;
+pub mod drawing;
+pub mod entry;
+pub mod graph;
+pub mod guidance;
+pub mod json;
+pub mod notebook;
+pub mod physics;
+pub mod store;
+pub mod units;
+pub mod worksheet;

@@ -1,0 +1,3 @@
+//! The farglow program.
+
+fn main() {}

@@ -1,0 +1,1 @@
+//! Notebooks as files: read, checked, written whole or not at all.

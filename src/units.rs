@@ -1,0 +1,1 @@
+//! Dimensions, quantities, units, literals, and the one place where numbers become text.

@@ -1,0 +1,1 @@
+//! The notebook as pages to sign and file.
