@@ -289,6 +289,9 @@ impl<V: Same> Graph<V> {
     /// in a ring gets the value that `ring` returns for it and its ring's
     /// members instead, once, until the ring's members change or the node is
     /// touched. A new value that is the same as the old one stops the wave.
+    ///
+    /// A ring can be as long as the graph: a value that holds all its members
+    /// takes the square of that.
     pub fn run(
         &mut self,
         work: &mut dyn FnMut(Node, &Values<'_, V>) -> V,

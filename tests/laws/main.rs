@@ -1,0 +1,3 @@
+//! Laws that hold for any input: properties, tried on random ones.
+
+mod graph_laws;
