@@ -182,8 +182,8 @@ impl Both {
 
     fn run_and_compare(&mut self) -> Result<(), TestCaseError> {
         self.graph.settle();
-        let stale: Vec<Node> = self.nodes.iter().copied();
-        let stale: Vec<Node> = stale.filter(|node| self.graph.is_stale(*node)).collect();
+        let nodes = self.nodes.iter().copied();
+        let stale: Vec<Node> = nodes.filter(|node| self.graph.is_stale(*node)).collect();
         let run = self.run();
 
         let mut once = run.ran.clone();
@@ -239,7 +239,7 @@ impl Both {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig { cases: 600, failure_persistence: None, ..ProptestConfig::default() })]
+    #![proptest_config(ProptestConfig { cases: 1500, failure_persistence: None, ..ProptestConfig::default() })]
 
     #[test]
     fn incremental_equals_from_scratch(edits in prop::collection::vec(edit(), 0..60)) {
