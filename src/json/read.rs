@@ -128,6 +128,13 @@ fn syntax_error(text: &str, start: usize, error: &serde_json::Error) -> Error {
         let mut rest = bytes[offset..].iter();
         offset += rest.position(|byte| *byte < b' ').unwrap_or(0);
     }
+    if message.contains("hex escape") {
+        // And these behind the escape.
+        let half = |at: &usize| is_half(&bytes[*at..]);
+        offset = (offset.saturating_sub(12)..offset)
+            .rfind(half)
+            .unwrap_or(offset);
+    }
     while !text.is_char_boundary(offset) {
         offset -= 1;
     }
@@ -165,6 +172,20 @@ fn syntax_error(text: &str, start: usize, error: &serde_json::Error) -> Error {
         _ => bad_text("this is not JSON"),
     };
     Error { place, kind }
+}
+
+/// Whether an escape of half a character begins here.
+fn is_half(bytes: &[u8]) -> bool {
+    matches!(
+        bytes,
+        [
+            b'\\',
+            b'u',
+            b'd' | b'D',
+            b'8' | b'9' | b'a'..=b'f' | b'A'..=b'F',
+            ..,
+        ]
+    )
 }
 
 fn expected(what: &'static str, found: Option<char>) -> Kind {
