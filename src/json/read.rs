@@ -128,12 +128,12 @@ fn syntax_error(text: &str, start: usize, error: &serde_json::Error) -> Error {
         let mut rest = bytes[offset..].iter();
         offset += rest.position(|byte| *byte < b' ').unwrap_or(0);
     }
-    if message.contains("hex escape") {
-        // And these behind the escape.
-        let half = |at: &usize| is_half(&bytes[*at..]);
-        offset = (offset.saturating_sub(12)..offset)
-            .rfind(half)
-            .unwrap_or(offset);
+    if message.contains("escape") {
+        // And these inside the escape, or behind it.
+        let is_half = message.contains("hex escape");
+        let begins = |at: &usize| bytes[*at] == b'\\' && (!is_half || half_at(&bytes[*at..]));
+        let mut near = offset.saturating_sub(12)..offset;
+        offset = near.rfind(begins).unwrap_or(offset);
     }
     while !text.is_char_boundary(offset) {
         offset -= 1;
@@ -175,7 +175,7 @@ fn syntax_error(text: &str, start: usize, error: &serde_json::Error) -> Error {
 }
 
 /// Whether an escape of half a character begins here.
-fn is_half(bytes: &[u8]) -> bool {
+fn half_at(bytes: &[u8]) -> bool {
     matches!(
         bytes,
         [
