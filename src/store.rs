@@ -1,1 +1,3 @@
 //! Notebooks as files: read, checked, written whole or not at all.
+
+pub mod file;
