@@ -1,4 +1,4 @@
-use super::{Effect, Graph, Node, Same, Values};
+use super::{Effect, Graph, Node, Revision, Same, Values};
 
 #[derive(Clone, Debug, PartialEq)]
 enum Value {
@@ -140,9 +140,9 @@ fn a_value_that_stays_the_same_stops_the_wave() {
     assert_eq!(sums.number(last), 6);
     sums.graph.touch(first);
     assert_eq!(sums.run(), "0=");
-    let first_run = sums.graph.changed_at(last).map(|at| at.number());
+    let first_run = sums.graph.changed_at(last).map(Revision::number);
     assert_eq!(first_run, Some(1));
-    assert_eq!(sums.graph.changed_at(first).map(|at| at.number()), Some(2));
+    assert_eq!(sums.graph.changed_at(first).map(Revision::number), Some(2));
 }
 
 #[test]
