@@ -1,6 +1,6 @@
 //! What the graph itself costs, with next to no work in its nodes.
 
-use divan::{Bencher, black_box};
+use divan::Bencher;
 use farglow::graph::{Graph, Node, Same, Values};
 
 #[derive(Clone)]
