@@ -61,7 +61,7 @@ pub trait Same {
 ///     }
 /// }
 ///
-/// let mut graph = Graph::new();
+/// let mut graph = Graph::<Number>::new();
 /// let width = graph.add();
 /// let double = graph.add();
 /// graph.set_inputs(double, vec![width]);
