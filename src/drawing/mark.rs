@@ -221,6 +221,52 @@ impl Shape {
     }
 }
 
+impl Shape {
+    /// Returns the shape as plain areas, for whoever paints it; the exclamation
+    /// mark of a caution stands in the ground of cautions.
+    pub fn marks(self, at: DVec2, size: f64) -> Vec<Mark> {
+        let role = self.role();
+        if self.filled() {
+            let area = |outline, role| Mark::Area {
+                outline,
+                fill: Some(Fill::Role(role)),
+                hatch: None,
+                edge: None,
+            };
+            let mut found = vec![area(self.outline(at, size), role)];
+            if self == Shape::Caution {
+                let bar = Rectangle::new(
+                    at.x - size * 0.055,
+                    at.y - size * 0.14,
+                    size * 0.11,
+                    size * 0.34,
+                );
+                let dot = Rectangle::new(
+                    at.x - size * 0.055,
+                    at.y + size * 0.26,
+                    size * 0.11,
+                    size * 0.11,
+                );
+                found.extend([bar, dot].map(|part| area(part.corners(), Role::CautionGround)));
+            }
+            return found;
+        }
+        // The edge lies inside the box, so hollow shapes are no larger than filled ones.
+        let width = size * 0.14;
+        let nudge = if self == Shape::NominalPin {
+            DVec2::new(0.0, width)
+        } else {
+            DVec2::ZERO
+        };
+        vec![Mark::Area {
+            outline: self.outline(at - nudge, size - 1.4 * width),
+            fill: Some(Fill::Role(Role::Card)),
+            hatch: None,
+            edge: Some(Stroke::solid(role, width)),
+        }]
+    }
+}
+
 /// Which point of a line of text is placed.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq, Hash)]
 pub enum Anchor {

@@ -1,0 +1,348 @@
+//! The worksheet's PDF read back by other tools, which share no code with us.
+
+use std::path::{Path, PathBuf};
+use std::process::{Command, Output};
+
+use farglow::drawing::font;
+use farglow::worksheet::attach;
+use farglow::worksheet::block::{Block, Cell, Column, Run, Table};
+use farglow::worksheet::layout::{self, Paper};
+use farglow::worksheet::paint;
+
+use crate::sheet;
+
+/// Runs a tool, or fails with the line that installs it.
+fn tool(name: &str, package: &str, arguments: &[&str]) -> Output {
+    match Command::new(name).args(arguments).output() {
+        Ok(output) => output,
+        Err(error) => {
+            panic!("cannot run {name} ({error}); install it: apt-get install -y {package}")
+        }
+    }
+}
+
+fn succeeded(name: &str, package: &str, arguments: &[&str]) -> String {
+    let output = tool(name, package, arguments);
+    let (out, err) = (
+        String::from_utf8_lossy(&output.stdout),
+        String::from_utf8_lossy(&output.stderr),
+    );
+    assert!(
+        output.status.success(),
+        "{name} {arguments:?}: {}\n{out}\n{err}",
+        output.status
+    );
+    assert!(!err.contains("Syntax"), "{name} {arguments:?}: {err}");
+    out.into_owned()
+}
+
+/// A file in a folder of its own, gone with the test.
+struct Written {
+    folder: tempfile::TempDir,
+    path: PathBuf,
+}
+
+impl Written {
+    fn new(bytes: &[u8]) -> Self {
+        let folder = tempfile::tempdir().expect("a temporary folder can be made");
+        let path = folder.path().join("sheet.pdf");
+        std::fs::write(&path, bytes).expect("a temporary file can be written");
+        Self { folder, path }
+    }
+
+    fn path(&self) -> &str {
+        text(&self.path)
+    }
+}
+
+fn text(path: &Path) -> &str {
+    path.to_str().expect("temporary folders have plain names")
+}
+
+fn issued(paper: Paper, draft: bool) -> Vec<u8> {
+    sheet::issued(paper, draft).expect("the sheet is written")
+}
+
+#[test]
+fn qpdf_accepts_the_file() {
+    for paper in [Paper::A4, Paper::Letter] {
+        for draft in [false, true] {
+            let file = Written::new(&issued(paper, draft));
+            let said = succeeded("qpdf", "qpdf", &["--check", file.path()]);
+            assert!(
+                said.contains("No syntax or stream encoding errors found"),
+                "{said}"
+            );
+        }
+    }
+}
+
+#[test]
+fn every_text_is_found_again_with_its_signs() {
+    let file = Written::new(&issued(Paper::A4, false));
+    let said = succeeded("pdftotext", "poppler-utils", &["-layout", file.path(), "-"]);
+    for wanted in [
+        "Charging door, furnace 2",
+        "1250 ± 25 °C",
+        "0.630 m²",
+        "ε σ T⁴",
+        "5.670 374 × 10⁻⁸ W/(m²·K⁴)",
+        "18 000·t^(−0.75) W/m², t ≤ 1000 s",
+        "± ° µ × · − – — ≤ ≥ ≈ √ ² ³ ⁻ ⁴ ₀ ₁ α ε λ σ θ π Σ Δ τ → “ ” ‘ ’ … •",
+        "not assessed: crane hand",
+        "Molten metal: splash and steam are not in this model.",
+        "Prepared",
+        "eye, all shift",
+        "page 1 of",
+        "sha256:6b1f0a94c8e2d7530f4b9ad11c27e6853d90ab42f7715ce06e88d2349ba1c05f",
+    ] {
+        assert!(said.contains(wanted), "{wanted:?} is not in:\n{said}");
+    }
+    assert!(!said.contains("DRAFT"), "a final sheet says DRAFT:\n{said}");
+}
+
+#[test]
+fn every_page_of_a_draft_says_so() {
+    let file = Written::new(&issued(Paper::A4, true));
+    let said = succeeded("pdftotext", "poppler-utils", &["-layout", file.path(), "-"]);
+    let pages: Vec<&str> = said
+        .split('\u{c}')
+        .filter(|page| !page.trim().is_empty())
+        .collect();
+    assert!(
+        pages.len() >= 3,
+        "{} pages, wanted a sheet of at least 3",
+        pages.len()
+    );
+    for (index, page) in pages.iter().enumerate() {
+        let number = format!("page {} of {}", index + 1, pages.len());
+        assert!(
+            page.contains("DRAFT"),
+            "page {} without DRAFT:\n{page}",
+            index + 1
+        );
+        assert!(
+            page.contains(&number),
+            "{number} is not on its page:\n{page}"
+        );
+    }
+}
+
+#[test]
+fn both_weights_are_embedded_and_cut() {
+    let file = Written::new(&issued(Paper::A4, false));
+    let said = succeeded("pdffonts", "poppler-utils", &[file.path()]);
+    let fonts: Vec<&str> = said.lines().skip(2).collect();
+    assert_eq!(fonts.len(), 2, "{said}");
+    for (font, name) in fonts
+        .iter()
+        .zip(["FarglowSans-Regular", "FarglowSans-SemiBold"])
+    {
+        assert!(font.contains(&format!("+{name}")), "{font}");
+        // Embedded, cut, and with a way back to characters: in this order.
+        let flags: Vec<&str> = font
+            .split_whitespace()
+            .filter(|word| ["yes", "no"].contains(word))
+            .collect();
+        assert_eq!(flags, ["yes", "yes", "yes"], "{said}");
+    }
+}
+
+#[test]
+fn the_notebook_comes_out_byte_for_byte() {
+    let bytes = issued(Paper::A4, false);
+    let file = Written::new(&bytes);
+    let listed = succeeded("pdfdetach", "poppler-utils", &["-list", file.path()]);
+    assert!(
+        listed.contains("1 embedded files") && listed.contains("charging-door.farglow"),
+        "{listed}"
+    );
+    let target = file.folder.path().join("out");
+    let _ = succeeded(
+        "pdfdetach",
+        "poppler-utils",
+        &["-save", "1", "-o", text(&target), file.path()],
+    );
+    let saved = std::fs::read(&target).expect("pdfdetach wrote it");
+    assert_eq!(saved, sheet::NOTEBOOK.as_bytes());
+
+    let ours = attach::extract(&bytes).expect("our own reader finds it");
+    assert_eq!(ours.len(), 1);
+    assert_eq!(ours[0].contents, saved);
+    assert_eq!(ours[0].media_type.as_deref(), Some("application/json"));
+}
+
+#[test]
+fn the_attachment_is_the_source_of_the_document() {
+    let file = Written::new(&issued(Paper::A4, false));
+    let said = succeeded(
+        "qpdf",
+        "qpdf",
+        &["--qdf", "--object-streams=disable", file.path(), "-"],
+    );
+    for wanted in [
+        "/AFRelationship /Source",
+        "/AF [",
+        "/EmbeddedFiles",
+        "/Lang (en-GB)",
+        "/Type /EmbeddedFile",
+    ] {
+        assert!(said.contains(wanted), "{wanted} is not in the file");
+    }
+}
+
+#[test]
+fn an_attachment_survives_a_rewrite_by_another_tool() {
+    let file = Written::new(&issued(Paper::A4, false));
+    let target = file.folder.path().join("again.pdf");
+    let arguments = [
+        "--object-streams=generate",
+        "--compress-streams=y",
+        file.path(),
+        text(&target),
+    ];
+    let _ = succeeded("qpdf", "qpdf", &arguments);
+    let again = std::fs::read(&target).expect("qpdf wrote it");
+    let found = attach::extract(&again).expect("our reader finds it in a file with object streams");
+    assert_eq!(found[0].contents, sheet::NOTEBOOK.as_bytes());
+}
+
+#[test]
+fn an_encrypted_file_is_refused_by_name() {
+    let file = Written::new(&issued(Paper::A4, false));
+    let target = file.folder.path().join("locked.pdf");
+    let _ = succeeded(
+        "qpdf",
+        "qpdf",
+        &[
+            "--encrypt",
+            "door",
+            "door",
+            "256",
+            "--",
+            file.path(),
+            text(&target),
+        ],
+    );
+    let locked = std::fs::read(&target).expect("qpdf wrote it");
+    let got = attach::extract(&locked);
+    assert_eq!(got, Err(farglow::worksheet::Error::Encrypted));
+}
+
+#[test]
+fn title_and_producer_are_ours_and_dates_are_the_jobs() {
+    let file = Written::new(&issued(Paper::Letter, false));
+    let said = succeeded("pdfinfo", "poppler-utils", &["-rawdates", file.path()]);
+    for wanted in [
+        "Charging door, furnace 2 · ε σ T⁴",
+        "M. Okafor",
+        paint::PRODUCER,
+        "D:20261201",
+        "612 x 792 pts (letter)",
+    ] {
+        assert!(said.contains(wanted), "{wanted:?} is not in:\n{said}");
+    }
+    let pages = layout::pages(&[], Paper::A4, &sheet::furniture(false));
+    let undated = paint::pdf(&pages, &paint::Meta::default()).expect("written");
+    let file = Written::new(&undated);
+    let said = succeeded("pdfinfo", "poppler-utils", &["-rawdates", file.path()]);
+    assert!(!said.contains("Date:"), "a date from nowhere:\n{said}");
+    assert!(said.contains("(A4)"), "{said}");
+}
+
+#[test]
+fn the_same_sheet_gives_the_same_bytes() {
+    for paper in [Paper::A4, Paper::Letter] {
+        let (one, two) = (issued(paper, true), issued(paper, true));
+        assert!(one == two, "{paper:?}: two runs differ");
+    }
+}
+
+#[test]
+fn the_sheet_is_small() {
+    let bytes = issued(Paper::A4, true);
+    assert!(
+        bytes.len() <= 150_000,
+        "{} bytes, wanted at most 150,000",
+        bytes.len()
+    );
+}
+
+#[test]
+fn a_long_table_has_its_head_on_every_page() {
+    let table = Table {
+        columns: vec![Column::words("position"), Column::numbers("irradiance")],
+        rows: (0..180)
+            .map(|i| {
+                vec![
+                    Cell::plain(format!("row-{i}")),
+                    Cell::plain(format!("{i} W/m²")),
+                ]
+            })
+            .collect(),
+    };
+    let pages = layout::pages(&[Block::Table(table)], Paper::A4, &sheet::furniture(false));
+    let file = Written::new(&paint::pdf(&pages, &sheet::meta()).expect("written"));
+    let info = succeeded("pdfinfo", "poppler-utils", &[file.path()]);
+    let counted = info
+        .lines()
+        .find_map(|line| line.strip_prefix("Pages:"))
+        .map(str::trim);
+    assert_eq!(counted, Some(pages.len().to_string().as_str()));
+    let said = succeeded("pdftotext", "poppler-utils", &["-layout", file.path(), "-"]);
+    let mut rows = 0;
+    for (index, page) in said
+        .split('\u{c}')
+        .filter(|page| !page.trim().is_empty())
+        .enumerate()
+    {
+        let heads = page
+            .lines()
+            .filter(|line| line.contains("position") && line.contains("irradiance"))
+            .count();
+        assert_eq!(heads, 1, "page {}:\n{page}", index + 1);
+        rows += page.matches("row-").count();
+    }
+    assert_eq!(rows, 180, "rows printed");
+}
+
+#[test]
+fn every_latin_letter_and_greek_sign_is_read_back_as_itself() {
+    let signs: String = (0xa1_u32..0x180)
+        .filter_map(char::from_u32)
+        .filter(|c| *c != '\u{ad}' && font::glyph(*c, font::Weight::Regular).is_some())
+        .chain("αβγδεθλμπσστφωΓΔΘΛΞΠΣΦΨΩ⁰¹²³⁴⁵⁶⁷⁸⁹⁻₀₁₂₃∞≠←→".chars())
+        .collect();
+    // Short groups, so that no line breaks inside one.
+    let all: Vec<char> = signs.chars().collect();
+    let groups: Vec<String> = all
+        .chunks(8)
+        .map(|group| format!("[{}]", group.iter().collect::<String>()))
+        .collect();
+    let runs = groups.iter().flat_map(|group| {
+        [
+            Run::plain(format!("{group} ")),
+            Run::bold(format!("{group} ")),
+        ]
+    });
+    let pages = layout::pages(
+        &[Block::Paragraph(runs.collect())],
+        Paper::A4,
+        &sheet::furniture(false),
+    );
+    let file = Written::new(&paint::pdf(&pages, &sheet::meta()).expect("written"));
+    let said = succeeded("pdftotext", "poppler-utils", &["-raw", file.path(), "-"]);
+    for group in groups {
+        let times = said.matches(&group).count();
+        assert_eq!(times, 2, "{group} found {times} times in:\n{said}");
+    }
+}
+
+#[test]
+fn a_character_the_font_lacks_leaves_a_mark() {
+    let blocks = [Block::Paragraph(vec![Run::plain("Kupol 炉 2")])];
+    let pages = layout::pages(&blocks, Paper::A4, &sheet::furniture(false));
+    let file = Written::new(&paint::pdf(&pages, &sheet::meta()).expect("written"));
+    let said = succeeded("pdftotext", "poppler-utils", &[file.path(), "-"]);
+    assert!(said.contains("Kupol □ 2"), "{said}");
+}
