@@ -4,7 +4,7 @@
 mod cut;
 mod page;
 
-use printpdf::{Mm, PdfConformance, PdfDocument, PdfPage, PdfSaveOptions, Pt};
+use printpdf::{PdfConformance, PdfDocument, PdfPage, PdfSaveOptions, Pt, Rect};
 use sha2::{Digest, Sha256};
 
 use crate::drawing::picture::Picture;
@@ -76,12 +76,14 @@ pub fn pdf(pages: &[Picture], meta: &Meta) -> Result<Vec<u8>, Error> {
     custom.requires_icc_profile = false;
     cut::fonts(pages, &mut document.resources.fonts)?;
     for page in pages {
-        let size = |length: f64| Mm::from(Pt(length as f32));
-        document.pages.push(PdfPage::new(
-            size(page.width),
-            size(page.height),
-            page::operations(page),
-        ));
+        // Built by hand: a detour over millimetres would cost the last digit.
+        let sheet = Rect::from_wh(Pt(page.width as f32), Pt(page.height as f32));
+        document.pages.push(PdfPage {
+            media_box: sheet.clone(),
+            trim_box: sheet.clone(),
+            crop_box: sheet,
+            ops: page::operations(page),
+        });
     }
 
     let mut warnings = Vec::new();

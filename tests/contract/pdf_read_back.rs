@@ -346,3 +346,17 @@ fn a_character_the_font_lacks_leaves_a_mark() {
     let said = succeeded("pdftotext", "poppler-utils", &[file.path(), "-"]);
     assert!(said.contains("Kupol □ 2"), "{said}");
 }
+
+/// Writes the sheet into the folder named by `FARGLOW_SHEETS`, to be looked at.
+#[test]
+fn a_sheet_can_be_kept_to_be_looked_at() {
+    let bytes = issued(Paper::A4, true);
+    assert!(bytes.starts_with(b"%PDF-1.7"));
+    if let Some(folder) = std::env::var_os("FARGLOW_SHEETS") {
+        let folder = PathBuf::from(folder);
+        for (name, draft) in [("draft.pdf", true), ("final.pdf", false)] {
+            std::fs::write(folder.join(name), issued(Paper::A4, draft))
+                .expect("the folder can be written to");
+        }
+    }
+}

@@ -302,7 +302,7 @@ pub fn blocks() -> Vec<Block> {
             .collect(),
     }));
     blocks.push(Block::Paragraph(vec![Run::muted(
-        "Check the edition in force where you work. Signs in use: ± ° µ × · − – — ≤ ≥ ≈ √ ² ³ ⁻ ⁴ ₀ ₁ α ε λ σ θ π Σ Δ τ → “ ” ‘ ’ … •",
+        "Check the edition in force where you work.\nSigns in use: ± ° µ × · − – — ≤ ≥ ≈ √ ² ³ ⁻ ⁴ ₀ ₁ α ε λ σ θ π Σ Δ τ → “ ” ‘ ’ … •",
     )]));
     blocks.push(Block::Together(vec![
         Block::Heading("Signatures".into()),
