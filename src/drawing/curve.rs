@@ -9,7 +9,7 @@ mod scale;
 use glam::DVec2;
 
 use crate::drawing::font::{self, Weight};
-use crate::drawing::label::{self, Field};
+use crate::drawing::label::{self, Field, Wish};
 use crate::drawing::mark::{Anchor, Backing, Dash, Mark, Rectangle, Shape, Stroke, Text};
 use crate::drawing::picture::Picture;
 use crate::drawing::role::Role;
@@ -41,7 +41,7 @@ pub struct LimitLine {
 /// A work position on the plot.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Marker {
-    /// What it is called: `charger`.
+    /// What it is called, best with its finding's word: `charger · over`.
     pub label: String,
     /// Its distance, in metres.
     pub distance: f64,
@@ -263,7 +263,7 @@ impl<'a> Plot<'a> {
         } else {
             8.0
         };
-        let top = TITLE + 6.0 + LINE * 2.0 + 8.0;
+        let top = TITLE + 8.0 + LINE * 2.0 + 12.0;
         let area = Rectangle {
             from: DVec2::new(left, top),
             to: DVec2::new(width - gutter, height - 2.0 * LINE - 6.0),
@@ -325,7 +325,7 @@ impl<'a> Plot<'a> {
             samples.push(("limit", Self::limit()));
         }
         let mut pen = 0.0;
-        let baseline = TITLE + 6.0 + LINE;
+        let baseline = TITLE + 8.0 + LINE;
         for (name, stroke) in samples {
             let wide = font::width(name, SMALL, Weight::Regular);
             if pen > 0.0 && pen + 22.0 + wide > self.picture.width {
@@ -440,7 +440,7 @@ impl<'a> Plot<'a> {
             }
             let from = DVec2::new(self.area.from.x, y);
             self.picture.push(Mark::line(from, to, Self::limit()));
-            self.field.avoid(&[from, to]);
+            self.field.avoid(&[from, to], 12.0);
             self.entries.push(Entry {
                 point: to,
                 leader: Stroke::hair(Role::Action),
@@ -475,11 +475,11 @@ impl<'a> Plot<'a> {
                     [] => continue,
                     // A lone value between gaps still shows, as a short dash.
                     [only] => {
-                        points = vec![*only - DVec2::new(1.5, 0.0), *only + DVec2::new(1.5, 0.0)]
+                        points = vec![*only - DVec2::new(1.5, 0.0), *only + DVec2::new(1.5, 0.0)];
                     }
                     _ => {}
                 }
-                self.field.avoid(&points);
+                self.field.avoid(&points, 40.0);
                 marks.push(Mark::Line { points, stroke });
             }
         }
@@ -526,7 +526,7 @@ impl<'a> Plot<'a> {
                     dash: Dash::Short,
                 };
                 self.picture.push(Mark::line(*at, foot, drop));
-                self.field.avoid(&[*at, foot]);
+                self.field.avoid(&[*at, foot], 8.0);
             }
             self.picture.push(Mark::Shape {
                 shape: *shape,
@@ -544,18 +544,17 @@ impl<'a> Plot<'a> {
         }
         for (at, _, text) in pins {
             let Some(text) = text else { continue };
-            let (width, height) = (font::width(text, SMALL, Weight::SemiBold) + 2.0, LINE);
-            let lifted = at - DVec2::new(0.0, SYMBOL / 2.0);
-            let mut tried = self.field.clone();
-            let Some(place) = tried.place(lifted, SYMBOL / 2.0 + 2.0, width, height) else {
-                continue;
-            };
-            let middle = (place.from + place.to) / 2.0;
-            if middle.distance(lifted) > width / 2.0 + 3.0 * LINE {
-                continue;
+            let size = DVec2::new(font::width(text, SMALL, Weight::SemiBold) + 2.0, LINE);
+            let middle = at - DVec2::new(0.0, SYMBOL / 2.0);
+            let gap = SYMBOL / 2.0 + 2.0;
+            if let Some(place) = self.field.place(Wish {
+                at: middle,
+                gap,
+                reach: LINE,
+                size,
+            }) {
+                self.label(place.area, text, Role::Action, Weight::SemiBold);
             }
-            self.field = tried;
-            self.label(place, text, Role::Action, Weight::SemiBold);
         }
     }
 
@@ -586,19 +585,22 @@ impl<'a> Plot<'a> {
                 at,
                 size: SYMBOL,
             });
-            let (width, height) = (
+            let size = DVec2::new(
                 font::width(&marker.label, SMALL, Weight::Regular) + 2.0,
                 LINE,
             );
-            match self.field.place(at, SYMBOL / 2.0 + 2.0, width, height) {
+            match self.field.place(Wish {
+                at,
+                gap: SYMBOL / 2.0 + 2.0,
+                reach: 120.0,
+                size,
+            }) {
                 Some(place) => {
-                    let near = at.clamp(place.from, place.to);
-                    if near.distance(at) > SYMBOL {
-                        let from = at + (near - at).normalize_or_zero() * (SYMBOL / 2.0 + 1.0);
+                    if let Some([from, to]) = place.leader {
                         self.picture
-                            .push(Mark::line(from, near, Stroke::hair(Role::Muted)));
+                            .push(Mark::line(from, to, Stroke::hair(Role::Ink)));
                     }
-                    self.label(place, &marker.label, Role::Ink, Weight::Regular);
+                    self.label(place.area, &marker.label, Role::Ink, Weight::Regular);
                 }
                 None => self.entries.push(Entry {
                     point: at,

@@ -10,7 +10,29 @@ use crate::drawing::mark::Rectangle;
 pub struct Field {
     within: Rectangle,
     boxes: Vec<Rectangle>,
-    lines: Vec<[DVec2; 2]>,
+    lines: Vec<([DVec2; 2], f64)>,
+}
+
+/// What a label asks for.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Wish {
+    /// The point that it names.
+    pub at: DVec2,
+    /// How far the point's own mark reaches to each side, in points.
+    pub gap: f64,
+    /// How far beyond that the label may stand, in points.
+    pub reach: f64,
+    /// Width and height of the label, in points.
+    pub size: DVec2,
+}
+
+/// Where a label stands.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Place {
+    /// Its box.
+    pub area: Rectangle,
+    /// The line that leads to it from its point, if it stands off.
+    pub leader: Option<[DVec2; 2]>,
 }
 
 impl Field {
@@ -28,56 +50,87 @@ impl Field {
         self.boxes.push(area);
     }
 
-    /// Marks a line as drawn: labels keep clear of it where they can.
-    pub fn avoid(&mut self, points: &[DVec2]) {
+    /// Marks a line as drawn: a label goes up to `weight` points out of its way
+    /// to keep clear of it.
+    pub fn avoid(&mut self, points: &[DVec2], weight: f64) {
         self.lines
-            .extend(points.windows(2).map(|pair| [pair[0], pair[1]]));
+            .extend(points.windows(2).map(|pair| ([pair[0], pair[1]], weight)));
     }
 
-    /// Returns the place of a label of `width` by `height` points around `at`, a
-    /// point whose own mark reaches `gap` points to each side, and takes it.
+    /// Returns the best place for a label and takes it: near its point, clear of
+    /// lines, never on a box, and with no box between it and its point.
     ///
-    /// The nearest place that is free of boxes and lines wins; if every place
-    /// has a line through it, the nearest free of boxes that crosses fewest.
-    /// `None` if no place is free of boxes.
-    pub fn place(&mut self, at: DVec2, gap: f64, width: f64, height: f64) -> Option<Rectangle> {
-        let mut best: Option<(usize, Rectangle)> = None;
-        for ring in 0..12 {
-            let out = gap + f64::from(ring) * (height * 0.75);
-            for direction in DIRECTIONS {
-                let (x, y) = direction;
-                let centre = at + DVec2::new(x * (out + width / 2.0), y * (out + height / 2.0));
-                let area = Rectangle::new(
-                    centre.x - width / 2.0,
-                    centre.y - height / 2.0,
-                    width,
-                    height,
-                );
-                if !self.within.holds(&area) || self.boxes.iter().any(|taken| taken.meets(&area)) {
+    /// `None` if there is no such place within reach.
+    pub fn place(&mut self, wish: Wish) -> Option<Place> {
+        let mut best: Option<(f64, Place)> = None;
+        for ring in 0..=RINGS {
+            let out = wish.reach * f64::from(ring) / f64::from(RINGS);
+            // Rings farther out cost more, whatever lies clear there.
+            if best.is_some_and(|(cost, _)| cost <= out) {
+                break;
+            }
+            for (x, y) in DIRECTIONS {
+                let span = wish.gap + out;
+                let centre = wish.at
+                    + DVec2::new(
+                        x * (span + wish.size.x / 2.0),
+                        y * (span + wish.size.y / 2.0),
+                    );
+                let area = Rectangle {
+                    from: centre - wish.size / 2.0,
+                    to: centre + wish.size / 2.0,
+                };
+                let Some(place) = self.free(wish, area) else {
                     continue;
-                }
-                let crossed = self
-                    .lines
-                    .iter()
-                    .filter(|line| crosses(&area, line))
-                    .count();
-                if crossed == 0 {
-                    self.take(area);
-                    return Some(area);
-                }
-                if best.is_none_or(|(fewest, _)| crossed < fewest) {
-                    best = Some((crossed, area));
+                };
+                let cost = out + self.crossed(&area);
+                if best.is_none_or(|(least, _)| cost < least) {
+                    best = Some((cost, place));
                 }
             }
         }
-        let (_, area) = best?;
-        self.take(area);
-        Some(area)
+        let (_, place) = best?;
+        self.take(place.area);
+        if let Some(leader) = place.leader {
+            self.avoid(&leader, wish.reach);
+        }
+        Some(place)
+    }
+
+    /// The place with its leader, if no box is in the way of either.
+    fn free(&self, wish: Wish, area: Rectangle) -> Option<Place> {
+        if !self.within.holds(&area) || self.boxes.iter().any(|taken| taken.meets(&area)) {
+            return None;
+        }
+        let near = wish.at.clamp(area.from, area.to);
+        let run = near - wish.at;
+        if run.length() <= wish.gap * 1.5 + 1.0 {
+            return Some(Place { area, leader: None });
+        }
+        let leader = [
+            wish.at + run.normalize_or_zero() * wish.gap.min(run.length()),
+            near,
+        ];
+        let blocked = self.boxes.iter().any(|taken| crosses(taken, &leader));
+        (!blocked).then_some(Place {
+            area,
+            leader: Some(leader),
+        })
+    }
+
+    fn crossed(&self, area: &Rectangle) -> f64 {
+        let crossed = self.lines.iter().filter(|(line, _)| crosses(area, line));
+        crossed
+            .map(|(_, weight)| weight)
+            .fold(0.0, |sum, weight| sum.max(*weight))
     }
 }
 
-/// Right first, where one reads on, then the other sides and corners.
-const DIRECTIONS: [(f64, f64); 8] = [
+/// How many distances are tried on the way to the farthest.
+const RINGS: u32 = 16;
+
+/// Right first, where one reads on, then the other sides and corners, then between.
+const DIRECTIONS: [(f64, f64); 16] = [
     (1.0, 0.0),
     (1.0, -1.0),
     (0.0, -1.0),
@@ -86,6 +139,14 @@ const DIRECTIONS: [(f64, f64); 8] = [
     (1.0, 1.0),
     (0.0, 1.0),
     (-1.0, 1.0),
+    (1.0, -0.5),
+    (0.5, -1.0),
+    (-0.5, -1.0),
+    (-1.0, -0.5),
+    (1.0, 0.5),
+    (0.5, 1.0),
+    (-0.5, 1.0),
+    (-1.0, 0.5),
 ];
 
 /// Whether a segment has a point inside the box (Liang and Barsky's clipping).
@@ -143,15 +204,25 @@ pub fn column(wishes: &[(f64, f64)], top: f64, bottom: f64) -> Vec<f64> {
 mod tests {
     use super::*;
 
+    fn wish() -> Wish {
+        Wish {
+            at: DVec2::new(100.0, 50.0),
+            gap: 4.0,
+            reach: 100.0,
+            size: DVec2::new(40.0, 9.0),
+        }
+    }
+
     #[test]
     fn labels_of_one_point_never_cover_each_other() {
         let mut field = Field::new(Rectangle::new(0.0, 0.0, 200.0, 100.0));
         let places: Vec<Rectangle> = (0..10)
-            .filter_map(|_| field.place(DVec2::new(100.0, 50.0), 4.0, 40.0, 9.0))
+            .filter_map(|_| field.place(wish()).map(|place| place.area))
             .collect();
+        // Once labels stand all around, no leader gets out between them.
         assert!(
-            places.len() >= 8,
-            "{} placed, wanted at least 8",
+            places.len() >= 5,
+            "{} placed, wanted at least 5",
             places.len()
         );
         for (i, a) in places.iter().enumerate() {
@@ -163,21 +234,36 @@ mod tests {
 
     #[test]
     fn a_label_steps_off_a_line() {
+        let line = [DVec2::new(0.0, 50.0), DVec2::new(200.0, 50.0)];
         let mut field = Field::new(Rectangle::new(0.0, 0.0, 200.0, 100.0));
-        field.avoid(&[DVec2::new(0.0, 50.0), DVec2::new(200.0, 50.0)]);
-        let place = field
-            .place(DVec2::new(100.0, 50.0), 4.0, 40.0, 9.0)
-            .expect("there is room");
+        field.avoid(&line, 30.0);
+        let place = field.place(wish()).expect("there is room");
+        assert!(!crosses(&place.area, &line), "{place:?}");
+    }
+
+    #[test]
+    fn no_leader_runs_through_a_label() {
+        let mut field = Field::new(Rectangle::new(0.0, 0.0, 200.0, 100.0));
+        let places: Vec<Place> = (0..12).filter_map(|_| field.place(wish())).collect();
         assert!(
-            !crosses(&place, &[DVec2::new(0.0, 50.0), DVec2::new(200.0, 50.0)]),
-            "{place:?}"
+            places.iter().any(|place| place.leader.is_some()),
+            "none had to stand off"
         );
+        for (i, place) in places.iter().enumerate() {
+            for earlier in &places[..i] {
+                let through = place
+                    .leader
+                    .is_some_and(|leader| crosses(&earlier.area, &leader));
+                assert!(!through, "{place:?} through {earlier:?}");
+            }
+        }
     }
 
     #[test]
     fn a_full_field_says_so() {
         let mut field = Field::new(Rectangle::new(0.0, 0.0, 30.0, 30.0));
-        assert_eq!(field.place(DVec2::new(15.0, 15.0), 4.0, 40.0, 9.0), None);
+        let at = DVec2::new(15.0, 15.0);
+        assert_eq!(field.place(Wish { at, ..wish() }), None);
     }
 
     #[test]

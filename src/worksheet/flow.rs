@@ -29,6 +29,8 @@ pub(super) const SMALL_LEADING: f64 = 10.0;
 pub(super) struct Item {
     /// Space above, left out at the top of a page.
     pub before: f64,
+    /// Space asked for below; the larger of this and the next item's counts.
+    pub after: f64,
     pub height: f64,
     pub marks: Vec<Mark>,
     /// Whether the next item has to be on the same page.
@@ -71,6 +73,10 @@ pub(super) fn items(blocks: &[Block], room: Room) -> Vec<Item> {
         if let Some(first) = next.first_mut() {
             first.break_before |= break_next;
             break_next = false;
+        }
+        let after = found.last().map_or(0.0, |item: &Item| item.after);
+        if let Some(first) = next.first_mut() {
+            first.before = first.before.max(after);
         }
         found.append(&mut next);
     }
@@ -214,7 +220,7 @@ fn finding(shape: Shape, word: &str, text: &[Run], room: Room) -> Vec<Item> {
         size: 10.0,
     };
     let mut found = text_items(&runs, size, leading, 18.0, room, Some(mark), 4.0);
-    glue_all(&mut found[..]);
+    glue_all(&mut found);
     found
 }
 
@@ -257,5 +263,8 @@ fn picture_items(picture: &Picture, caption: &str, room: Room) -> Vec<Item> {
         ..Item::default()
     }];
     found.append(&mut under);
+    if let Some(last) = found.last_mut() {
+        last.after = 8.0;
+    }
     found
 }

@@ -66,19 +66,19 @@ pub fn plot() -> Picture {
         ],
         positions: vec![
             Marker {
-                label: "charger".into(),
+                label: "charger · over".into(),
                 distance: 2.5,
                 value: value(2.5),
                 shape: Shape::Over,
             },
             Marker {
-                label: "crane hand".into(),
+                label: "crane hand · not assessed".into(),
                 distance: 8.2,
                 value: value(8.2),
                 shape: Shape::NotAssessed,
             },
             Marker {
-                label: "control desk".into(),
+                label: "control desk · within".into(),
                 distance: 14.0,
                 value: value(14.0),
                 shape: Shape::Within,

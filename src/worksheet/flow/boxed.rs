@@ -12,6 +12,14 @@ use crate::worksheet::wrap;
 const FRAME: f64 = 0.75;
 const SIDE: f64 = 6.0;
 
+/// Keeps what follows off the frame.
+fn spaced(mut items: Vec<Item>) -> Vec<Item> {
+    if let Some(last) = items.last_mut() {
+        last.after = 8.0;
+    }
+    items
+}
+
 /// A grid of small names with values under them, like the title block of a drawing.
 pub(in crate::worksheet) fn pairs(columns: usize, pairs: &[Pair], room: Room) -> Vec<Item> {
     let columns = columns.clamp(1, 8);
@@ -90,7 +98,7 @@ pub(in crate::worksheet) fn pairs(columns: usize, pairs: &[Pair], room: Room) ->
         }
     }
     glue_all(&mut found);
-    found
+    spaced(found)
 }
 
 /// Cautions on their own ground, with a frame that survives black-and-white print.
@@ -155,7 +163,7 @@ pub(in crate::worksheet) fn caution(paragraphs: &[Vec<Run>], room: Room) -> Vec<
             ..Item::default()
         });
     }
-    found
+    spaced(found)
 }
 
 /// A row for each person: act, name, date, signature.
@@ -221,5 +229,5 @@ pub(in crate::worksheet) fn signatures(signatures: &[Signature], room: Room) -> 
         });
     }
     glue_all(&mut found);
-    found
+    spaced(found)
 }

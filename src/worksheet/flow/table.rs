@@ -6,7 +6,7 @@ use glam::DVec2;
 
 use crate::drawing::mark::{Mark, Stroke};
 use crate::drawing::role::Role;
-use crate::worksheet::block::{Align, Cell, Run, Table};
+use crate::worksheet::block::{self, Align, Cell, Run, Table};
 use crate::worksheet::flow::{Head, Item, Room, SMALL, SMALL_LEADING, baseline};
 use crate::worksheet::wrap::{self, Line};
 
@@ -80,6 +80,9 @@ pub(in crate::worksheet) fn items(table: &Table, room: Room) -> Vec<Item> {
             found.push(item);
         }
     }
+    if let Some(last) = found.last_mut() {
+        last.after = 8.0;
+    }
     found
 }
 
@@ -96,7 +99,7 @@ fn squared(row: &[Cell], count: usize) -> Vec<Cell> {
     cells
 }
 
-/// Widths by content: what fits gets its full width and the words the rest;
+/// Widths by content: what fits gets its full width and a share of the rest;
 /// what does not shrinks in proportion to how much it could.
 fn columns(table: &Table, rows: &[Vec<Cell>], width: f64) -> Vec<Column> {
     let count = table.columns.len();
@@ -119,11 +122,14 @@ fn columns(table: &Table, rows: &[Vec<Cell>], width: f64) -> Vec<Column> {
     }
     let longest: f64 = wants.iter().map(|w| w.0).sum();
     let widest: f64 = wants.iter().map(|w| w.1).sum();
-    let words = table
-        .columns
-        .iter()
-        .filter(|column| column.align == Align::Start)
-        .count();
+    let share = |column: &block::Column| {
+        if column.align == Align::Start {
+            1.0
+        } else {
+            0.5
+        }
+    };
+    let shares: f64 = table.columns.iter().map(share).sum();
     let mut left = 0.0;
     table
         .columns
@@ -131,13 +137,9 @@ fn columns(table: &Table, rows: &[Vec<Cell>], width: f64) -> Vec<Column> {
         .zip(wants)
         .map(|(column, (line, word))| {
             let width = if longest <= room {
-                // Spare room goes to the words, so that numbers stay close together.
-                let spare = room - longest;
-                match (words, column.align) {
-                    (0, _) => line + spare / count as f64,
-                    (_, Align::Start) => line + spare / words as f64,
-                    (_, Align::Middle | Align::End) => line,
-                }
+                // Spare room is shared out evenly, with less for numbers, which
+                // are compared down the column and not across.
+                line + (room - longest) * share(column) / shares
             } else if widest <= room {
                 let stretch = longest - widest;
                 word + if stretch > 0.0 {
@@ -180,7 +182,7 @@ fn head(table: &Table, columns: &[Column], room: Room) -> Head {
             y += SMALL_LEADING;
         }
     }
-    let rule = Stroke::solid(Role::Ink, 0.75);
+    let rule = Stroke::hair(Role::Ink);
     marks.push(Mark::line(
         DVec2::new(0.0, height),
         DVec2::new(room.width, height),
