@@ -3,7 +3,12 @@
 use std::path::{Path, PathBuf};
 use std::process::{Command, Output};
 
+use glam::DVec2;
+
 use farglow::drawing::font;
+use farglow::drawing::mark::{Anchor, Backing, Mark, Text};
+use farglow::drawing::picture::Picture;
+use farglow::drawing::role::Role;
 use farglow::worksheet::attach;
 use farglow::worksheet::block::{Block, Cell, Column, Run, Table};
 use farglow::worksheet::layout::{self, Paper};
@@ -359,4 +364,62 @@ fn a_sheet_can_be_kept_to_be_looked_at() {
                 .expect("the folder can be written to");
         }
     }
+}
+
+#[test]
+fn turned_and_haloed_texts_are_found_once() {
+    let mut page = Picture::new(400.0, 300.0);
+    let text = |x: f64, y: f64, text: &str| Text::new(DVec2::new(x, y), 12.0, text);
+    page.push(Mark::Text(
+        text(40.0, 60.0, "295 W/m²").backed(Backing::Halo(Role::Card)),
+    ));
+    page.push(Mark::Text(
+        text(40.0, 120.0, "eye, 4 min").backed(Backing::Box(Role::Card)),
+    ));
+    page.push(Mark::Text(Text {
+        turn: 90.0,
+        ..text(200.0, 200.0, "upwards")
+    }));
+    let file = Written::new(&paint::pdf(&[page], &sheet::meta()).expect("written"));
+    let said = succeeded("pdftotext", "poppler-utils", &[file.path(), "-"]);
+    for wanted in ["295 W/m²", "eye, 4 min", "upwards"] {
+        let times = said.matches(wanted).count();
+        assert_eq!(times, 1, "{wanted} found {times} times in:\n{said}");
+    }
+}
+
+#[test]
+fn a_turned_text_stands_where_it_is_put() {
+    let mut page = Picture::new(400.0, 300.0);
+    let upright = Text {
+        turn: 90.0,
+        ..Text::new(DVec2::new(200.0, 200.0), 12.0, "upwards")
+    };
+    let width = upright.width();
+    page.push(Mark::Text(upright.anchored(Anchor::Middle)));
+    let file = Written::new(&paint::pdf(&[page], &sheet::meta()).expect("written"));
+    let said = succeeded("pdftotext", "poppler-utils", &["-bbox", file.path(), "-"]);
+    let number = |name: &str| -> f64 {
+        let found = said
+            .split(&format!("{name}=\""))
+            .nth(1)
+            .and_then(|rest| rest.split('"').next());
+        found
+            .and_then(|text| text.parse().ok())
+            .unwrap_or_else(|| panic!("no {name} in:\n{said}"))
+    };
+    // It climbs from below the point to above it, its middle at the point.
+    let (low, high) = (number("yMin"), number("yMax"));
+    let word = said.split("<word").nth(1).unwrap_or_default();
+    assert!(word.contains("upwards"), "{said}");
+    assert!(
+        ((high + low) / 2.0 - 200.0).abs() < 0.5,
+        "middle at {}, wanted 200",
+        (high + low) / 2.0
+    );
+    assert!(
+        (high - low - width).abs() < 0.5,
+        "{} high, wanted {width}",
+        high - low
+    );
 }

@@ -1,4 +1,7 @@
+use glam::DVec2;
+
 use super::*;
+use crate::drawing::mark::Rectangle;
 
 fn number(value: f64) -> String {
     format!("{value}")

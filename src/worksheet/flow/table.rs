@@ -6,7 +6,7 @@ use glam::DVec2;
 
 use crate::drawing::mark::{Mark, Stroke};
 use crate::drawing::role::Role;
-use crate::worksheet::block::{self, Align, Cell, Run, Table};
+use crate::worksheet::block::{Align, Cell, Run, Table};
 use crate::worksheet::flow::{Head, Item, Room, SMALL, SMALL_LEADING, baseline};
 use crate::worksheet::wrap::{self, Line};
 
@@ -122,24 +122,25 @@ fn columns(table: &Table, rows: &[Vec<Cell>], width: f64) -> Vec<Column> {
     }
     let longest: f64 = wants.iter().map(|w| w.0).sum();
     let widest: f64 = wants.iter().map(|w| w.1).sum();
-    let share = |column: &block::Column| {
-        if column.align == Align::Start {
-            1.0
-        } else {
-            0.5
-        }
+    let share = |index: usize| match (index, table.columns[index].align) {
+        (_, Align::Start) => 1.0,
+        // Numbers that begin the table stay at its edge.
+        (0, _) => 0.0,
+        (_, Align::Middle | Align::End) => 0.5,
     };
-    let shares: f64 = table.columns.iter().map(share).sum();
+    // One column of numbers has no other to share with, and stays narrow.
+    let shares = (0..count).map(share).sum::<f64>().max(0.5);
     let mut left = 0.0;
     table
         .columns
         .iter()
         .zip(wants)
-        .map(|(column, (line, word))| {
+        .enumerate()
+        .map(|(index, (column, (line, word)))| {
             let width = if longest <= room {
                 // Spare room is shared out evenly, with less for numbers, which
                 // are compared down the column and not across.
-                line + (room - longest) * share(column) / shares
+                line + (room - longest) * share(index) / shares
             } else if widest <= room {
                 let stretch = longest - widest;
                 word + if stretch > 0.0 {
