@@ -132,3 +132,31 @@ fn the_same_input_gives_the_same_bytes() {
     let make = || attach(&blank(), "a", "text/plain", b"x", "y").expect("attached");
     assert_eq!(make(), make());
 }
+
+#[test]
+fn deep_nesting_is_refused_without_running_out_of_stack() {
+    for (open, close) in [("[", "]"), ("<</A ", ">>")] {
+        let deep = format!("{}null{}", open.repeat(200_000), close.repeat(200_000));
+        let mut pdf =
+            format!("%PDF-1.7\n1 0 obj\n<</Type/Catalog/Names {deep}>>\nendobj\n").into_bytes();
+        let place = pdf.len();
+        let table = format!(
+            "xref\n0 2\n0000000000 65535 f \n0000000009 00000 n \ntrailer\n<</Size 2/Root 1 0 R>>\nstartxref\n{place}\n%%EOF\n"
+        );
+        pdf.extend_from_slice(table.as_bytes());
+        let got = extract(&pdf);
+        assert!(
+            matches!(got, Err(Error::Damaged(_) | Error::NothingAttached)),
+            "{got:?}"
+        );
+        // And in the trailer, which is read first.
+        let head = format!(
+            "%PDF-1.7\nxref\n0 1\n0000000000 65535 f \ntrailer\n<</Root {deep}>>\nstartxref\n9\n%%EOF\n"
+        );
+        let got = extract(head.as_bytes());
+        assert!(
+            matches!(got, Err(Error::Damaged(_) | Error::NothingAttached)),
+            "{got:?}"
+        );
+    }
+}
