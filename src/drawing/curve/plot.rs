@@ -114,6 +114,7 @@ impl<'a> Plot<'a> {
         self.lines();
         self.picture
             .push(Mark::frame(self.area, Stroke::solid(Role::Ink, 0.75)));
+        self.gaps();
         self.pins();
         self.positions();
         self.column();
@@ -246,6 +247,28 @@ impl<'a> Plot<'a> {
             let text = fit(&number(tick), at.x, SMALL, Weight::Regular);
             self.text(Text::new(at, SMALL, text).anchored(Anchor::End));
         }
+        for value in self.x.between(self.area.width()) {
+            let foot = DVec2::new(
+                self.area.from.x + self.x.fraction(value) * self.area.width(),
+                self.area.to.y,
+            );
+            self.picture.push(Mark::line(
+                foot,
+                foot - DVec2::new(0.0, 3.0),
+                Stroke::hair(Role::Ink),
+            ));
+        }
+        for value in self.y.between(self.area.height()) {
+            let foot = DVec2::new(
+                self.area.from.x,
+                self.area.to.y - self.y.fraction(value) * self.area.height(),
+            );
+            self.picture.push(Mark::line(
+                foot,
+                foot + DVec2::new(3.0, 0.0),
+                Stroke::hair(Role::Ink),
+            ));
+        }
         let room = self.picture.width;
         let label = fit(&self.curve.x_label, room, SMALL, Weight::Regular);
         let at = DVec2::new((self.area.from.x + self.area.to.x) / 2.0, baseline + LINE);
@@ -258,12 +281,17 @@ impl<'a> Plot<'a> {
     fn limits(&mut self) {
         let curve = self.curve;
         for limit in &curve.limits {
-            if !(limit.value.is_finite() && limit.value > 0.0) {
-                continue;
-            }
             let y = self.at(1.0, limit.value).y;
             let to = DVec2::new(self.area.to.x, y);
-            if !self.inside(to) {
+            // A limit that cannot be drawn is still named, or it would seem not to exist.
+            if !y.is_finite() || !self.inside(to) {
+                self.entries.push(Entry {
+                    point: DVec2::NAN,
+                    leader: Stroke::hair(Role::Action),
+                    shape: None,
+                    name: limit.label.clone(),
+                    note: "off this plot".to_owned(),
+                });
                 continue;
             }
             let from = DVec2::new(self.area.from.x, y);
@@ -315,6 +343,23 @@ impl<'a> Plot<'a> {
             window: self.area,
             marks,
         });
+    }
+
+    /// A gap around each position's shape keeps it legible on top of a line;
+    /// all of them come first, so that none eats into another's shape.
+    fn gaps(&mut self) {
+        let curve = self.curve;
+        for marker in &curve.positions {
+            let at = self.at(marker.distance, marker.value);
+            if at.is_finite() && self.inside(at) {
+                self.picture.push(Mark::Area {
+                    outline: Shape::Within.outline(at, SYMBOL + 3.0),
+                    fill: Some(Fill::Role(Role::Card)),
+                    hatch: None,
+                    edge: None,
+                });
+            }
+        }
     }
 
     /// Where each limit is reached: the tip on the line, a drop line to the rail.
@@ -400,14 +445,6 @@ impl<'a> Plot<'a> {
                 });
                 continue;
             }
-            // The gap around the shape keeps it legible on top of a line.
-            let knock = Mark::Area {
-                outline: Shape::Within.outline(at, SYMBOL + 3.0),
-                fill: Some(Fill::Role(Role::Card)),
-                hatch: None,
-                edge: None,
-            };
-            self.picture.push(knock);
             self.picture.push(Mark::Shape {
                 shape: marker.shape,
                 at,

@@ -86,6 +86,25 @@ impl Scale {
         }
         Vec::new()
     }
+
+    /// Returns the places between the ticks, 3, 4, 6 … 9 of every decade, if
+    /// `length` points leave room to tell them apart.
+    pub(super) fn between(&self, length: f64) -> Vec<f64> {
+        let (low, high) = self.ends();
+        // From 9 to 10 is the closest pair.
+        let closest = (10.0_f64 / 9.0).ln() / (high / low).ln() * length;
+        if closest < 2.0 {
+            return Vec::new();
+        }
+        let first = self.low.0.div_euclid(3);
+        let last = self.high.0.div_euclid(3);
+        (first..=last)
+            .flat_map(|decade| {
+                [3.0, 4.0, 6.0, 7.0, 8.0, 9.0].map(|digit| digit * Step(decade * 3).value())
+            })
+            .filter(|value| *value > low && *value < high)
+            .collect()
+    }
 }
 
 #[cfg(test)]
@@ -116,6 +135,16 @@ mod tests {
         );
         let wide = Scale::new(1e-90, 1e90).ticks(9.0);
         assert!((2..=9).contains(&wide.len()), "{} ticks", wide.len());
+    }
+
+    #[test]
+    fn places_between_ticks_show_where_there_is_room() {
+        assert_eq!(
+            Scale::new(2.0, 10.0).between(300.0),
+            vec![3.0, 4.0, 6.0, 7.0, 8.0, 9.0]
+        );
+        assert_eq!(Scale::new(2.0, 10.0).between(20.0), Vec::<f64>::new());
+        assert_eq!(Scale::new(1e-6, 1e6).between(300.0), Vec::<f64>::new());
     }
 
     #[test]

@@ -292,3 +292,15 @@ fn findings_and_lines_differ_without_colour() {
         assert!(!dashes[i + 1..].contains(dash), "{dash:?} is used twice");
     }
 }
+
+#[test]
+fn a_limit_that_cannot_be_drawn_is_still_named() {
+    for value in [-4.0, 0.0, f64::NAN, f64::INFINITY, 1e-9] {
+        let mut curve = base();
+        curve.limits[0].value = value;
+        let picture = picture(&curve, 493.0, 300.0);
+        let texts: Vec<&str> = picture.texts().iter().map(|t| t.text.as_str()).collect();
+        assert!(texts.contains(&"eye, 4 min"), "{value}: {texts:?}");
+        assert!(texts.contains(&"off this plot"), "{value}: {texts:?}");
+    }
+}
