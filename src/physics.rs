@@ -1,1 +1,17 @@
-//! Thermal radiation between a hot surface and a person: SI `f64` in, SI `f64` out.
+//! Thermal radiation between a hot surface and a person.
+//!
+//! SI `f64` in, SI `f64` out: metres, kelvin, W/m². Directions are
+//! [`glam::DVec3`] with x east, y north, z up. Surfaces are diffuse emitters.
+//! What is finite at the door gives finite numbers; faults are an [`Error`].
+
+pub mod constant;
+mod error;
+pub mod exposure;
+mod hazard;
+pub mod planck;
+pub mod region;
+pub mod surface;
+pub mod view;
+pub mod view_factor;
+
+pub use error::Error;

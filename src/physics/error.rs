@@ -1,0 +1,79 @@
+/// What keeps a physical quantity from being worked out.
+///
+/// Small and `Copy`: it names the parameter, the range it has to lie in and
+/// the value that was found.
+#[derive(Clone, Copy, Debug, PartialEq, thiserror::Error)]
+#[non_exhaustive]
+pub enum Error {
+    /// A number lies outside the range in which the relation holds.
+    #[error("{parameter} must be {range}, found {value}")]
+    OutOfRange {
+        /// The parameter as a person would call it.
+        parameter: &'static str,
+        /// The range, in words.
+        range: &'static str,
+        /// The value that was found.
+        value: f64,
+    },
+    /// A vector that must point somewhere has no length, or is not finite.
+    #[error("{parameter} must point in a direction, found a vector of length {length}")]
+    NoDirection {
+        /// The vector as a person would call it.
+        parameter: &'static str,
+        /// The length that was found.
+        length: f64,
+    },
+    /// A polygon has fewer than three vertices, or more than it may have.
+    #[error(
+        "a polygon must have from 3 to {} vertices, found {found}",
+        crate::physics::region::MOST_VERTICES
+    )]
+    VertexCount {
+        /// How many vertices were given.
+        found: usize,
+    },
+    /// The vertices of a polygon enclose no area.
+    #[error(
+        "a polygon must enclose an area, found {area} m²; give its vertices in order around it"
+    )]
+    NoArea {
+        /// The area that was found, in m².
+        area: f64,
+    },
+    /// A vertex lies off the plane of its polygon.
+    #[error("a polygon must be flat, found vertex {vertex} off its plane by {distance} m")]
+    NotFlat {
+        /// Which vertex, counted from 1.
+        vertex: usize,
+        /// How far it lies off the plane, in metres.
+        distance: f64,
+    },
+    /// Two edges of a polygon cross or touch each other.
+    #[error(
+        "the outline of a polygon must not cross itself, found edges {first} and {second} crossing; give its vertices in order around it"
+    )]
+    CrossesItself {
+        /// The first edge, counted from 1: edge 1 runs from vertex 1 to 2.
+        first: usize,
+        /// The second edge.
+        second: usize,
+    },
+}
+
+/// Returns `value` if it is finite and above zero, at most `most`.
+pub(super) fn positive(
+    parameter: &'static str,
+    value: f64,
+    most: f64,
+    range: &'static str,
+) -> Result<f64, Error> {
+    if value > 0.0 && value <= most {
+        Ok(value)
+    } else {
+        Err(Error::OutOfRange {
+            parameter,
+            range,
+            value,
+        })
+    }
+}

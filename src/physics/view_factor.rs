@@ -1,0 +1,1 @@
+//! Configuration factors: closed forms and the contour integral.
