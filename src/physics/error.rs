@@ -1,3 +1,5 @@
+use glam::DVec3;
+
 /// What keeps a physical quantity from being worked out.
 ///
 /// Small and `Copy`: it names the parameter, the range it has to lie in and
@@ -76,4 +78,52 @@ pub(super) fn positive(
             value,
         })
     }
+}
+
+/// The longest length that is accepted, in metres.
+pub(super) const LONGEST: f64 = 1e9;
+
+/// Returns `value` if it is a length above zero.
+pub(super) fn length(parameter: &'static str, value: f64) -> Result<f64, Error> {
+    positive(parameter, value, LONGEST, "above 0 m and at most 10⁹ m")
+}
+
+/// Returns `value` if it is a length or zero.
+pub(super) fn offset(parameter: &'static str, value: f64) -> Result<f64, Error> {
+    if (0.0..=LONGEST).contains(&value) {
+        Ok(value)
+    } else {
+        Err(Error::OutOfRange {
+            parameter,
+            range: "from 0 m to 10⁹ m",
+            value,
+        })
+    }
+}
+
+/// Returns `place` if each of its coordinates is in range.
+pub(super) fn place(parameter: &'static str, place: DVec3) -> Result<DVec3, Error> {
+    for value in place.to_array() {
+        if value.is_nan() || value.abs() > LONGEST {
+            return Err(Error::OutOfRange {
+                parameter,
+                range: "from −10⁹ m to 10⁹ m in each coordinate",
+                value,
+            });
+        }
+    }
+    Ok(place)
+}
+
+/// Returns `vector` with length one.
+pub(super) fn direction(parameter: &'static str, vector: DVec3) -> Result<DVec3, Error> {
+    let most = vector.abs().max_element();
+    let failed = Error::NoDirection {
+        parameter,
+        length: vector.length(),
+    };
+    if !vector.is_finite() || most == 0.0 {
+        return Err(failed);
+    }
+    (vector / most).try_normalize().ok_or(failed)
 }

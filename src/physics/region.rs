@@ -1,17 +1,31 @@
 //! Emitting regions in space: disc, polygon, sphere, in any pose.
 //!
 //! Metres; x east, y north, z up. A flat region emits to the side its normal
-//! points to. Make regions with the constructors, which check.
+//! points to. Make regions with the constructors, which check: the rest stands
+//! on normals of length one and polygons that are flat and simple.
+
+mod outline;
+mod plan;
+
+use std::f64::consts::PI;
 
 use glam::DVec3;
 
 use super::Error;
-use super::view::Sight;
+use super::error::{direction, length, place};
+use super::view::{Sight, View};
 
 /// The greatest number of vertices of a polygon.
-pub const MOST_VERTICES: usize = 10_000;
+pub const MOST_VERTICES: usize = 1000;
 
-/// A region that emits: flat ones from the face their normal points away from.
+/// How near counts as touching, relative to the lengths at play: well above
+/// rounding, well below what a person can measure.
+const TOUCH: f64 = 1e-12;
+
+/// Farther than this, in metres, nothing is seen of any region.
+const OUT_OF_SIGHT: f64 = 1e40;
+
+/// A region that emits diffusely.
 #[derive(Clone, Debug, PartialEq)]
 pub enum Region {
     /// A flat disc.
@@ -40,20 +54,33 @@ pub enum Region {
 }
 
 impl Region {
-    /// Returns a disc.
+    /// Returns a flat disc.
+    ///
+    /// `normal` of any length, to the side that emits; `radius` in metres.
     ///
     /// # Errors
     ///
-    /// [`Error`] where a number or the normal cannot be.
+    /// [`Error::OutOfRange`] if the radius is not above zero and at most 10⁹ m
+    /// or a coordinate beyond that; [`Error::NoDirection`] for the normal.
     pub fn disc(centre: DVec3, normal: DVec3, radius: f64) -> Result<Self, Error> {
-        let _ = (centre, normal, radius);
-        Err(Error::VertexCount { found: 0 })
+        Ok(Self::Disc {
+            centre: place("centre", centre)?,
+            normal: direction("normal", normal)?,
+            radius: length("radius", radius)?,
+        })
     }
-    /// Returns a rectangle.
+
+    /// Returns a rectangle, as a polygon.
+    ///
+    /// `normal` to the side that emits, `up` along its height (what of it is
+    /// perpendicular to the normal counts), both of any length; `width` and
+    /// `height` in metres.
     ///
     /// # Errors
     ///
-    /// [`Error`] where a number or a direction cannot be.
+    /// [`Error::OutOfRange`] if a length is not above zero and at most 10⁹ m or
+    /// a coordinate beyond that; [`Error::NoDirection`] for the normal, or for
+    /// `up` if it runs along the normal.
     pub fn rectangle(
         centre: DVec3,
         normal: DVec3,
@@ -61,83 +88,295 @@ impl Region {
         width: f64,
         height: f64,
     ) -> Result<Self, Error> {
-        let _ = (centre, normal, up, width, height);
-        Err(Error::VertexCount { found: 0 })
+        let centre = place("centre", centre)?;
+        let normal = direction("normal", normal)?;
+        let up = upright(up, normal)?;
+        let side = up.cross(normal) * (0.5 * length("width", width)?);
+        let up = up * (0.5 * length("height", height)?);
+        let vertices = vec![
+            centre - side - up,
+            centre + side - up,
+            centre + side + up,
+            centre - side + up,
+        ];
+        Ok(Self::Polygon { vertices, normal })
     }
-    /// Returns a polygon; anticlockwise as seen from in front.
+
+    /// Returns a flat simple polygon; dents are allowed.
+    ///
+    /// `vertices` in metres, in order, anticlockwise as seen from the side that
+    /// emits. A vertex given twice in a row counts once.
     ///
     /// # Errors
     ///
-    /// [`Error`] if it is no simple flat polygon.
+    /// [`Error::VertexCount`] unless there are 3 to [`MOST_VERTICES`];
+    /// [`Error::OutOfRange`] for a coordinate beyond 10⁹ m;
+    /// [`Error::NoArea`], [`Error::NotFlat`] (by more than 10⁻⁹ of its extent),
+    /// [`Error::CrossesItself`].
     pub fn polygon(vertices: Vec<DVec3>) -> Result<Self, Error> {
-        Err(Error::VertexCount {
-            found: vertices.len(),
-        })
+        let (vertices, normal) = outline::checked(vertices)?;
+        Ok(Self::Polygon { vertices, normal })
     }
-    /// Returns a polygon drawn in its own plane, from points `[sideways, up]`
-    /// off its centre, in either order around it.
+
+    /// Returns a polygon drawn in its own plane.
+    ///
+    /// `points` are `[sideways, up]` off the centre, in metres, in either order
+    /// round the outline; sideways is to the right as seen from in front.
+    /// `normal` and `up` as for [`Region::rectangle`].
     ///
     /// # Errors
     ///
-    /// [`Error`] if it is no simple polygon.
+    /// As [`Region::rectangle`] and [`Region::polygon`].
     pub fn outline(
         centre: DVec3,
         normal: DVec3,
         up: DVec3,
         points: &[[f64; 2]],
     ) -> Result<Self, Error> {
-        let _ = (centre, normal, up);
-        Err(Error::VertexCount {
-            found: points.len(),
-        })
+        let centre = place("centre", centre)?;
+        let normal = direction("normal", normal)?;
+        let up = upright(up, normal)?;
+        let side = up.cross(normal);
+        let vertices: Vec<DVec3> = points
+            .iter()
+            .map(|[right, above]| centre + side * *right + up * *above)
+            .collect();
+        let (mut vertices, found) = outline::checked(vertices)?;
+        if found.dot(normal) < 0.0 {
+            vertices.reverse();
+        }
+        Ok(Self::Polygon { vertices, normal })
     }
+
     /// Returns a sphere.
+    ///
+    /// `radius` in metres.
     ///
     /// # Errors
     ///
-    /// [`Error`] where a number cannot be.
+    /// [`Error::OutOfRange`] if the radius is not above zero and at most 10⁹ m,
+    /// or a coordinate beyond that.
     pub fn sphere(centre: DVec3, radius: f64) -> Result<Self, Error> {
-        let _ = (centre, radius);
-        Err(Error::VertexCount { found: 0 })
+        Ok(Self::Sphere {
+            centre: place("centre", centre)?,
+            radius: length("radius", radius)?,
+        })
     }
-    /// Returns the emitting area, m².
+
+    /// Returns the emitting area in m²: of a flat region one face, of a sphere
+    /// all of it.
     #[must_use]
     pub fn area(&self) -> f64 {
-        0.0
+        match self {
+            Self::Disc { radius, .. } => PI * radius * radius,
+            Self::Polygon { vertices, .. } => 0.5 * outline::double_area(vertices).length(),
+            Self::Sphere { radius, .. } => 4.0 * PI * radius * radius,
+        }
     }
-    /// Returns the centre; of a polygon that of its area.
+
+    /// Returns the centre; of a polygon the centroid of its area.
     #[must_use]
     pub fn centre(&self) -> DVec3 {
-        DVec3::ZERO
+        match self {
+            Self::Disc { centre, .. } | Self::Sphere { centre, .. } => *centre,
+            Self::Polygon { vertices, normal } => outline::centroid(vertices, *normal),
+        }
     }
-    /// Returns the distance from the centre to the outermost point.
+
+    /// Returns the outward normal of a flat region, of length one; none of a
+    /// sphere.
+    #[must_use]
+    pub fn normal(&self) -> Option<DVec3> {
+        match self {
+            Self::Disc { normal, .. } | Self::Polygon { normal, .. } => Some(*normal),
+            Self::Sphere { .. } => None,
+        }
+    }
+
+    /// Returns the distance in metres from the centre to the outermost point.
     #[must_use]
     pub fn bounding_radius(&self) -> f64 {
-        0.0
+        match self {
+            Self::Disc { radius, .. } | Self::Sphere { radius, .. } => *radius,
+            Self::Polygon { vertices, .. } => {
+                let centre = self.centre();
+                vertices
+                    .iter()
+                    .map(|vertex| vertex.distance(centre))
+                    .fold(0.0, f64::max)
+            }
+        }
     }
-    /// Says whether a point lies on the region, or inside a sphere.
+
+    /// Says whether a point lies on a flat region or its edge, or on or inside
+    /// a sphere: to 10⁻¹² of the lengths at play.
+    ///
+    /// A point that is not a finite place counts as touching, so that it is
+    /// refused.
     #[must_use]
     pub fn touches(&self, point: DVec3) -> bool {
-        let _ = point;
-        false
+        matches!(self.view(point), Sight::Touching)
     }
-    /// Says whether the straight way between two points meets the region.
+
+    /// Says whether the straight way between two points meets the region,
+    /// ends included.
+    ///
+    /// Ways that are not between finite places meet it, so that they are
+    /// refused.
     #[must_use]
     pub fn crosses(&self, from: DVec3, to: DVec3) -> bool {
-        let _ = (from, to);
-        false
+        if !from.is_finite() || !to.is_finite() || self.touches(from) || self.touches(to) {
+            return true;
+        }
+        let way = to - from;
+        match self {
+            Self::Sphere { centre, radius } => distance_to_segment(*centre, from, to) <= *radius,
+            Self::Disc {
+                centre,
+                normal,
+                radius,
+            } => match meeting(*centre, *normal, from, way) {
+                Meeting::Apart => false,
+                Meeting::At(place) => place.distance(*centre) <= *radius,
+                Meeting::InPlane => distance_to_segment(*centre, from, to) <= *radius,
+            },
+            Self::Polygon { vertices, normal } => match meeting(vertices[0], *normal, from, way) {
+                Meeting::Apart => false,
+                Meeting::At(place) => outline::holds(vertices, *normal, place, 0.0),
+                Meeting::InPlane => outline::is_met_by(vertices, *normal, from, to),
+            },
+        }
     }
-    /// Returns the horizontal distance from the centre to the outline, on the
-    /// plan, along a direction.
+
+    /// Returns the horizontal distance in metres from the centre to the
+    /// region's outline on the plan, along a direction.
+    ///
+    /// `heading` is the direction; what of it is horizontal counts. The result
+    /// is that of the outermost place where the line leaves the outline: zero
+    /// for a vertical plate seen square on, and for a direction straight up.
     #[must_use]
-    pub fn edge_along(&self, direction: DVec3) -> f64 {
-        let _ = direction;
-        0.0
+    pub fn edge_along(&self, heading: DVec3) -> f64 {
+        self.edge_from(self.centre(), heading)
     }
+
+    /// Returns the same from another place than the centre; zero if the line
+    /// misses the region.
+    #[must_use]
+    pub fn edge_from(&self, place: DVec3, heading: DVec3) -> f64 {
+        plan::edge_from(self, place, heading)
+    }
+
     /// Returns what is seen of the region from a point.
+    ///
+    /// Behind the plane of a flat region nothing is; in that plane outside the
+    /// outline it lies edge on, and the view is empty. On the region, on or
+    /// inside a sphere (to 10⁻¹² of the lengths at play), and from a place that
+    /// is not finite, the answer is [`Sight::Touching`].
     #[must_use]
     pub fn view(&self, point: DVec3) -> Sight {
-        let _ = point;
-        Sight::Behind
+        if !point.is_finite() {
+            return Sight::Touching;
+        }
+        match self {
+            Self::Sphere { centre, radius } => {
+                let seen = *centre - point;
+                if seen.abs().max_element() > OUT_OF_SIGHT {
+                    return Sight::Seen(View::EMPTY);
+                }
+                let distance = seen.length();
+                if distance <= *radius + TOUCH * (radius + point.length()) {
+                    return Sight::Touching;
+                }
+                Sight::Seen(View::of_sphere(seen, *radius))
+            }
+            Self::Disc {
+                centre,
+                normal,
+                radius,
+            } => {
+                let seen = *centre - point;
+                let height = -seen.dot(*normal);
+                let reach = TOUCH * (seen.length() + radius + point.length());
+                if height > reach {
+                    if seen.abs().max_element() > OUT_OF_SIGHT {
+                        return Sight::Seen(View::EMPTY);
+                    }
+                    return Sight::Seen(View::of_disc(seen, *normal, *radius));
+                }
+                if height < -reach {
+                    return Sight::Behind;
+                }
+                if seen.length() <= radius + reach {
+                    Sight::Touching
+                } else {
+                    Sight::Seen(View::EMPTY)
+                }
+            }
+            Self::Polygon { vertices, normal } => {
+                let seen = vertices[0] - point;
+                let height = -seen.dot(*normal);
+                let reach = TOUCH * (seen.length() + point.length());
+                if height > reach {
+                    if seen.abs().max_element() > OUT_OF_SIGHT {
+                        return Sight::Seen(View::EMPTY);
+                    }
+                    return Sight::Seen(View::of_polygon(vertices, point));
+                }
+                if height < -reach {
+                    return Sight::Behind;
+                }
+                if outline::holds(vertices, *normal, point, reach) {
+                    Sight::Touching
+                } else {
+                    Sight::Seen(View::EMPTY)
+                }
+            }
+        }
     }
+}
+
+/// What of `up` is perpendicular to `normal`, with length one.
+fn upright(up: DVec3, normal: DVec3) -> Result<DVec3, Error> {
+    let up = direction("up", up)?;
+    let upright = up - normal * up.dot(normal);
+    let found = upright.length();
+    if found < 1e-9 {
+        return Err(Error::NoDirection {
+            parameter: "what of `up` lies in the region's plane",
+            length: found,
+        });
+    }
+    // Taken off twice, so that it is perpendicular however short it was.
+    let upright = upright / found;
+    Ok((upright - normal * upright.dot(normal)).normalize())
+}
+
+/// How a segment meets a plane.
+enum Meeting {
+    Apart,
+    At(DVec3),
+    InPlane,
+}
+
+fn meeting(on: DVec3, normal: DVec3, from: DVec3, way: DVec3) -> Meeting {
+    let reach = TOUCH * ((from - on).length() + way.length() + on.length());
+    let (start, end) = ((from - on).dot(normal), (from + way - on).dot(normal));
+    if start.abs() <= reach && end.abs() <= reach {
+        Meeting::InPlane
+    } else if start * end > 0.0 {
+        Meeting::Apart
+    } else {
+        Meeting::At(from + way * (start / (start - end)))
+    }
+}
+
+fn distance_to_segment(place: DVec3, from: DVec3, to: DVec3) -> f64 {
+    let way = to - from;
+    let square = way.length_squared();
+    let share = if square > 0.0 {
+        ((place - from).dot(way) / square).clamp(0.0, 1.0)
+    } else {
+        0.0
+    };
+    (from + way * share).distance(place)
 }

@@ -1,9 +1,20 @@
 //! What a small receiver at a point sees of one region.
+//!
+//! A view holds the flux vector of the whole region and its outline as seen
+//! from the point, so that any receiver orientation costs a few products, and a
+//! cut at the receiver's horizon only where there is one.
 
 use glam::DVec3;
 
+use super::view_factor::contour::{self, Circle};
+use super::view_factor::{disc, sphere};
+
 /// What is seen of a region from a point.
 #[derive(Clone, Debug, PartialEq)]
+#[expect(
+    clippy::large_enum_variant,
+    reason = "a view lives on the stack: allocating it would cost as much as working it out"
+)]
 pub enum Sight {
     /// The point lies behind a flat region's plane: nothing is seen.
     Behind,
@@ -25,36 +36,245 @@ impl Sight {
     }
 }
 
+/// How many vertices of a polygon are kept without an allocation.
+const INLINE: usize = 8;
+
+/// The outline of a region as seen from the point.
+#[derive(Clone, Debug, PartialEq)]
+enum Shape {
+    /// Nothing is seen.
+    Nothing,
+    /// A disc, or the silhouette of a sphere.
+    Circle {
+        centre: DVec3,
+        normal: DVec3,
+        radius: f64,
+    },
+    /// A polygon of few vertices, anticlockwise as seen.
+    Few([DVec3; INLINE], usize),
+    /// A polygon of more.
+    Many(Box<[DVec3]>),
+}
+
 /// The view of one region from one point.
 #[derive(Clone, Debug, PartialEq)]
 pub struct View {
     flux: DVec3,
+    shape: Shape,
 }
 
 impl View {
     /// The view in which nothing is seen.
-    pub const EMPTY: Self = Self { flux: DVec3::ZERO };
-    /// Returns the flux vector: for a receiver above whose horizon the whole
-    /// region lies, the configuration factor is its component along the normal.
+    pub const EMPTY: Self = Self {
+        flux: DVec3::ZERO,
+        shape: Shape::Nothing,
+    };
+
+    /// A disc; `centre` from the point, `normal` towards it.
+    pub(super) fn of_disc(centre: DVec3, normal: DVec3, radius: f64) -> Self {
+        Self {
+            flux: disc::flux(centre, normal, radius),
+            shape: Shape::Circle {
+                centre,
+                normal,
+                radius,
+            },
+        }
+    }
+
+    /// A sphere; `centre` from the point, which lies outside.
+    pub(super) fn of_sphere(centre: DVec3, radius: f64) -> Self {
+        let distance = centre.length();
+        let direction = centre / distance;
+        let share = radius / distance;
+        let (centre, normal, radius) = sphere::silhouette(direction, radius, distance);
+        Self {
+            flux: direction * (share * share),
+            shape: Shape::Circle {
+                centre,
+                normal,
+                radius,
+            },
+        }
+    }
+
+    /// A polygon; `vertices` in space, anticlockwise as seen from `point`.
+    pub(super) fn of_polygon(vertices: &[DVec3], point: DVec3) -> Self {
+        if vertices.len() <= INLINE {
+            let mut few = [DVec3::ZERO; INLINE];
+            for (seen, vertex) in few.iter_mut().zip(vertices) {
+                *seen = *vertex - point;
+            }
+            let flux = whole(&few[..vertices.len()]);
+            Self {
+                flux,
+                shape: Shape::Few(few, vertices.len()),
+            }
+        } else {
+            let many: Box<[DVec3]> = vertices.iter().map(|vertex| *vertex - point).collect();
+            Self {
+                flux: whole(&many),
+                shape: Shape::Many(many),
+            }
+        }
+    }
+
+    /// Returns the flux vector, (1/π) ∫ ω dΩ over the directions in which the
+    /// region is seen.
+    ///
+    /// For a receiver above whose horizon the whole region lies the
+    /// configuration factor is its component along the normal. Dimensionless;
+    /// it points at the region.
+    ///
+    /// # Accuracy
+    ///
+    /// Exact relations. Discs and spheres: relative error below `1e-14` at any
+    /// distance. Polygons: `1e-16` times distance over size.
     #[must_use]
     pub fn flux(&self) -> DVec3 {
         self.flux
     }
+
     /// Returns the configuration factor for a receiver of a given normal.
+    ///
+    /// `normal` in any length; the result is dimensionless, in `0..=1`. Parts
+    /// of the region below the receiver's horizon do not count.
+    ///
+    /// # Accuracy
+    ///
+    /// As [`View::flux`]; where the horizon cuts the region the absolute error
+    /// is below `1e-13`.
+    ///
+    /// # Source
+    ///
+    /// Checked in `tests/published/view_factor_catalogue.rs`, and against
+    /// quadrature in `tests/laws/view_factor_laws.rs`.
     #[must_use]
     pub fn factor(&self, normal: DVec3) -> f64 {
-        normal.dot(self.flux)
+        let normal = unit(normal);
+        let flux = if self.reaches_below_unit(normal) {
+            self.cut(normal)
+        } else {
+            self.flux
+        };
+        normal.dot(flux).clamp(0.0, 1.0)
     }
-    /// Returns the flux vector of the part above the receiver's horizon.
+
+    /// Returns the flux vector of the part above a receiver's horizon.
+    ///
+    /// Its component along `normal` is the configuration factor.
     #[must_use]
     pub fn clipped_flux(&self, normal: DVec3) -> DVec3 {
-        let _ = normal;
-        self.flux
+        let normal = unit(normal);
+        if self.reaches_below_unit(normal) {
+            self.cut(normal)
+        } else {
+            self.flux
+        }
     }
-    /// Says whether part of the region lies below the receiver's horizon.
+
+    /// Says whether part of the region lies below a receiver's horizon.
     #[must_use]
     pub fn reaches_below(&self, normal: DVec3) -> bool {
-        let _ = normal;
-        false
+        self.reaches_below_unit(unit(normal))
+    }
+
+    fn reaches_below_unit(&self, normal: DVec3) -> bool {
+        match &self.shape {
+            Shape::Nothing => false,
+            Shape::Circle {
+                centre,
+                normal: own,
+                radius,
+            } => {
+                let middle = normal.dot(*centre);
+                let swing = normal - *own * normal.dot(*own);
+                middle < 0.0 || middle * middle < radius * radius * swing.length_squared()
+            }
+            Shape::Few(vertices, count) => vertices[..*count]
+                .iter()
+                .any(|vertex| vertex.dot(normal) < 0.0),
+            Shape::Many(vertices) => vertices.iter().any(|vertex| vertex.dot(normal) < 0.0),
+        }
+    }
+
+    fn cut(&self, normal: DVec3) -> DVec3 {
+        match &self.shape {
+            Shape::Nothing => DVec3::ZERO,
+            Shape::Circle {
+                centre,
+                normal: own,
+                radius,
+            } => Circle::new(*centre, *own, *radius).above(normal),
+            Shape::Few(vertices, count) => contour::polygon_above(&vertices[..*count], normal),
+            Shape::Many(vertices) => contour::polygon_above(vertices, normal),
+        }
+    }
+
+    /// Says whether all of the region is seen within half a right angle of an
+    /// axis of length one. May say no of a disc that just fits.
+    pub(super) fn lies_within_half_right_angle(&self, axis: DVec3) -> bool {
+        const COSINE: f64 = std::f64::consts::FRAC_1_SQRT_2;
+        let within = |place: DVec3| place.dot(axis) >= COSINE * place.length();
+        match &self.shape {
+            Shape::Nothing => true,
+            Shape::Circle { centre, radius, .. } => {
+                // The ball about the disc subtends asin(R/d) to either side.
+                let square = centre.length_squared() - radius * radius;
+                if square > 0.0 && centre.dot(axis) >= COSINE * (square.sqrt() + radius) {
+                    return true;
+                }
+                self.extremes().iter().all(|place| within(*place))
+            }
+            Shape::Few(vertices, count) => vertices[..*count].iter().all(|vertex| within(*vertex)),
+            Shape::Many(vertices) => vertices.iter().all(|vertex| within(*vertex)),
+        }
+    }
+
+    /// Points whose cone holds the region: the vertices, or those of an octagon
+    /// round a circle.
+    pub(super) fn extremes(&self) -> Vec<DVec3> {
+        match &self.shape {
+            Shape::Nothing => Vec::new(),
+            Shape::Circle {
+                centre,
+                normal,
+                radius,
+            } => {
+                const STEP: f64 = std::f64::consts::FRAC_PI_4;
+                let around = Circle::new(*centre, *normal, *radius / (0.5 * STEP).cos());
+                (0..8_u8)
+                    .map(|corner| around.point((f64::from(corner) + 0.5) * STEP))
+                    .collect()
+            }
+            Shape::Few(vertices, count) => vertices[..*count].to_vec(),
+            Shape::Many(vertices) => vertices.to_vec(),
+        }
+    }
+}
+
+/// The flux vector of a whole polygon.
+fn whole(vertices: &[DVec3]) -> DVec3 {
+    let mut sum = DVec3::ZERO;
+    let Some(mut from) = vertices.last() else {
+        return sum;
+    };
+    for to in vertices {
+        sum += contour::edge(*from, *to);
+        from = to;
+    }
+    sum
+}
+
+/// The vector with length one, or as it is if it points nowhere.
+fn unit(vector: DVec3) -> DVec3 {
+    if (vector.length_squared() - 1.0).abs() < 1e-15 {
+        return vector;
+    }
+    let most = vector.abs().max_element();
+    if most > 0.0 && vector.is_finite() {
+        (vector / most).normalize_or_zero()
+    } else {
+        DVec3::ZERO
     }
 }

@@ -1,0 +1,206 @@
+//! Lambert's contour integral, edge by edge and arc by arc.
+//!
+//! The flux vector of a region is (1/π) ∫ ω dΩ over the directions ω in which
+//! it is seen, and equals (1/2π) ∮ dr × r / r² round its outline, taken
+//! anticlockwise as the receiver at the origin sees it. Its component along a
+//! receiver's normal is the configuration factor, if all of the region lies
+//! above that receiver's horizon; a region that does not is cut there first.
+
+use std::f64::consts::{PI, TAU};
+
+use glam::DVec3;
+
+/// Returns the part of the contour integral that a straight edge gives.
+///
+/// `from` and `to` are the edge's ends as seen from the receiver, in metres.
+///
+/// # Accuracy
+///
+/// Relative error a few times `1e-16` times the edge's distance over its
+/// length; an edge that passes through the receiver gives zero.
+///
+/// # Source
+///
+/// J. H. Lambert, *Photometria* (1760); checked with the families `polygon` and
+/// `rect_pose` in `tests/published/view_factor_catalogue.rs`.
+#[must_use]
+pub fn edge(from: DVec3, to: DVec3) -> DVec3 {
+    // The edge's own vector keeps the digits that `to × from` would lose far away.
+    let cross = (to - from).cross(from);
+    let length = cross.length();
+    if length == 0.0 {
+        return DVec3::ZERO;
+    }
+    cross * (length.atan2(from.dot(to)) / (TAU * length))
+}
+
+/// Returns the part that an edge lying in the receiver's horizon gives.
+///
+/// `normal` is the receiver's; the angle counts with its sense about it, so
+/// that ways along the horizon that go back and forth cancel exactly.
+#[must_use]
+pub(in crate::physics) fn horizon_edge(from: DVec3, to: DVec3, normal: DVec3) -> DVec3 {
+    let sine = (to - from).cross(from).dot(normal);
+    normal * (sine.atan2(from.dot(to)) / TAU)
+}
+
+/// Returns the flux vector of what lies above a receiver's horizon of a
+/// polygon.
+///
+/// `vertices` as seen from the receiver, anticlockwise; `normal` the
+/// receiver's, of length one. The outline may have dents.
+#[must_use]
+pub(in crate::physics) fn polygon_above(vertices: &[DVec3], normal: DVec3) -> DVec3 {
+    let mut sum = DVec3::ZERO;
+    let (mut first_entry, mut exit) = (None, None);
+    let Some(last) = vertices.last() else {
+        return sum;
+    };
+    let (mut from, mut from_height) = (*last, last.dot(normal));
+    for &to in vertices {
+        let to_height = to.dot(normal);
+        let crossing = || from + (to - from) * (from_height / (from_height - to_height));
+        match (from_height >= 0.0, to_height >= 0.0) {
+            (true, true) => sum += edge(from, to),
+            (true, false) => {
+                let place = crossing();
+                sum += edge(from, place);
+                exit = Some(place);
+            }
+            (false, true) => {
+                let place = crossing();
+                match exit.take() {
+                    Some(left) => sum += horizon_edge(left, place, normal),
+                    None => first_entry = Some(place),
+                }
+                sum += edge(place, to);
+            }
+            (false, false) => {}
+        }
+        (from, from_height) = (to, to_height);
+    }
+    if let (Some(left), Some(entered)) = (exit, first_entry) {
+        sum += horizon_edge(left, entered, normal);
+    }
+    sum
+}
+
+/// A circle in space as seen from a receiver at the origin, which lies in front
+/// of its plane.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Circle {
+    /// From the receiver to the centre.
+    centre: DVec3,
+    /// Of length one, towards the receiver's side.
+    normal: DVec3,
+    radius: f64,
+    /// In the plane, of length one, away from the foot of the receiver's
+    /// perpendicular.
+    away: DVec3,
+    /// In the plane, `normal × away`.
+    along: DVec3,
+    /// Distance of the centre from the foot of the perpendicular.
+    offset: f64,
+}
+
+impl Circle {
+    /// Returns the circle; `normal` of length one and towards the receiver.
+    #[must_use]
+    pub fn new(centre: DVec3, normal: DVec3, radius: f64) -> Self {
+        let lateral = centre - normal * centre.dot(normal);
+        // Taken off twice, so that it is perpendicular however short it is.
+        let lateral = lateral - normal * lateral.dot(normal);
+        let offset = lateral.length();
+        let (away, offset) = if offset > 4.0 * f64::EPSILON * centre.length() {
+            (lateral / offset, offset)
+        } else {
+            (normal.any_orthonormal_vector(), 0.0)
+        };
+        Self {
+            centre,
+            normal,
+            radius,
+            away,
+            along: normal.cross(away),
+            offset,
+        }
+    }
+
+    /// Returns the point at an angle, anticlockwise from the farthest one.
+    #[must_use]
+    pub fn point(&self, angle: f64) -> DVec3 {
+        let (sine, cosine) = angle.sin_cos();
+        self.centre + (self.away * cosine + self.along * sine) * self.radius
+    }
+
+    /// Returns the part of the contour integral that an arc gives.
+    ///
+    /// The arc runs from one angle to another, in radians.
+    ///
+    /// On it r² = P (1 + q cos φ), so that the integrand is linear in sin φ and
+    /// cos φ over 1 + q cos φ. With s = √(1 − q²) and β = q / (1 + s) the
+    /// integrals follow from
+    /// ∫ dφ / (1 + q cos φ) = (φ − 2 arg(1 + β exp iφ)) / s, the form of the
+    /// half-angle substitution that has no jump at ±π.
+    ///
+    /// # Accuracy
+    ///
+    /// Exact relation; absolute error of a region closed with it below `1e-14`.
+    ///
+    /// # Source
+    ///
+    /// Derived here; checked with the families `disc_perpendicular_cut`,
+    /// `disc_pose` and `sphere_tilt` in
+    /// `tests/published/view_factor_catalogue.rs`.
+    #[must_use]
+    pub fn arc(&self, from: f64, to: f64) -> DVec3 {
+        let height = self.centre.dot(self.normal);
+        let (radius, offset) = (self.radius, self.offset);
+        let mean = height * height + offset * offset + radius * radius;
+        let q = 2.0 * radius * offset / mean;
+        let s = {
+            let (near, far) = (offset - radius, offset + radius);
+            ((height * height + near * near) * (height * height + far * far)).sqrt() / mean
+        };
+        let beta = q / (1.0 + s);
+        let swing = |angle: f64| {
+            let (sine, cosine) = angle.sin_cos();
+            (beta * sine).atan2(1.0 + beta * cosine)
+        };
+        let turn = to - from;
+        let swung = swing(to) - swing(from);
+        let plain = (turn - 2.0 * swung) / s;
+        // As q goes to zero, 2 arg(…) / q goes to sin φ.
+        let (cosines, sines) = if q > 1e-200 {
+            let step = q * (to.cos() - from.cos()) / (1.0 + q * from.cos());
+            ((2.0 * swung / q - beta * turn) / s, -step.ln_1p() / q)
+        } else {
+            (to.sin() - from.sin(), from.cos() - to.cos())
+        };
+        let sum = self.centre.cross(self.along) * cosines - self.centre.cross(self.away) * sines
+            + self.normal * (radius * plain);
+        sum * (-radius / (TAU * mean))
+    }
+
+    /// Returns the flux vector of what lies above a receiver's horizon of the
+    /// disc in this circle: all of it, nothing, or a segment.
+    ///
+    /// `normal` is the receiver's, of length one.
+    #[must_use]
+    pub fn above(&self, normal: DVec3) -> DVec3 {
+        let middle = normal.dot(self.centre);
+        let cosine = self.radius * normal.dot(self.away);
+        let sine = self.radius * normal.dot(self.along);
+        let swing = cosine.hypot(sine);
+        if middle >= swing {
+            return self.arc(-PI, PI);
+        }
+        if middle <= -swing {
+            return DVec3::ZERO;
+        }
+        let highest = sine.atan2(cosine);
+        let half = ((swing - middle) * (swing + middle)).sqrt().atan2(-middle);
+        let (from, to) = (highest - half, highest + half);
+        self.arc(from, to) + horizon_edge(self.point(to), self.point(from), normal)
+    }
+}
