@@ -1,0 +1,197 @@
+//! No row of the file of checks is forgotten: each runs, or waits for a reason.
+
+use crate::rows::{self, Work};
+use crate::{
+    blackbody_tables, defining_constants, fixed_points, quadrature_of_planck, textbook_examples,
+    view_factor_catalogue,
+};
+
+/// The families that run, with what works their rows out.
+const RUNNING: [(&str, Work); 21] = [
+    ("constant", defining_constants::constant),
+    ("its90", fixed_points::celsius),
+    ("bb_table_modest", blackbody_tables::below),
+    ("bb_table_incropera", blackbody_tables::below),
+    ("bb_table_misprint", blackbody_tables::below),
+    ("bb_exact", blackbody_tables::below),
+    ("bb_band", quadrature_of_planck::band),
+    ("disc_axis", view_factor_catalogue::disc_axis),
+    ("disc_parallel", view_factor_catalogue::disc_parallel),
+    (
+        "disc_perpendicular",
+        view_factor_catalogue::disc_perpendicular,
+    ),
+    (
+        "disc_perpendicular_cut",
+        view_factor_catalogue::disc_perpendicular,
+    ),
+    ("disc_pose", view_factor_catalogue::disc_pose),
+    ("ring", view_factor_catalogue::ring),
+    ("sphere_tilt", view_factor_catalogue::sphere_tilt),
+    ("disc_axis_tilt", view_factor_catalogue::disc_axis_tilt),
+    (
+        "rect_parallel_corner",
+        view_factor_catalogue::rect_parallel_corner,
+    ),
+    (
+        "rect_perpendicular_corner",
+        view_factor_catalogue::rect_perpendicular_corner,
+    ),
+    ("rect_pose", view_factor_catalogue::rect_pose),
+    ("polygon", view_factor_catalogue::polygon),
+    ("strip", view_factor_catalogue::strip),
+    ("textbook", textbook_examples::on_axis),
+];
+
+/// Rows, or whole families, that the program cannot work out yet.
+const PENDING: [(&str, &str); 35] = [
+    (
+        "its90-01",
+        "a defining point, nothing to work out: for the list of process temperatures",
+    ),
+    (
+        "its90-04",
+        "a defining point, nothing to work out: for the list of process temperatures",
+    ),
+    (
+        "its90-05",
+        "a defining point, nothing to work out: for the list of process temperatures",
+    ),
+    (
+        "its90-06",
+        "a defining point, nothing to work out: for the list of process temperatures",
+    ),
+    (
+        "textbook-01",
+        "exchange between cylinder and slotted shell: no such source",
+    ),
+    (
+        "textbook-03",
+        "exchange between cylinder and slotted shell: no such source",
+    ),
+    (
+        "textbook-04",
+        "factor between two finite discs: with thick openings",
+    ),
+    (
+        "textbook-07",
+        "factor between two finite rectangles: with thick openings",
+    ),
+    ("textbook-09", "radiation shields: with screens"),
+    ("textbook-10", "radiation shields: with screens"),
+    ("textbook-13", "radiation shields: with screens"),
+    ("textbook-14", "radiation shields: with screens"),
+    ("cylinder", "cylinders as sources come later"),
+    (
+        "disc_disc",
+        "factor between two finite discs: with thick openings",
+    ),
+    (
+        "rect_rect_parallel",
+        "factor between two finite rectangles: with thick openings",
+    ),
+    (
+        "rect_rect_perpendicular",
+        "factor between two finite rectangles: with thick openings",
+    ),
+    (
+        "thick_round_black",
+        "openings through thick walls come later",
+    ),
+    (
+        "thick_round_reradiating",
+        "openings through thick walls come later",
+    ),
+    (
+        "thick_square_black",
+        "openings through thick walls come later",
+    ),
+    (
+        "thick_square_reradiating",
+        "openings through thick walls come later",
+    ),
+    (
+        "thick_slot_black",
+        "openings through thick walls come later",
+    ),
+    (
+        "thick_slot_reradiating",
+        "openings through thick walls come later",
+    ),
+    ("thick_on_axis", "openings through thick walls come later"),
+    ("thick_beam", "openings through thick walls come later"),
+    ("thick_published", "openings through thick walls come later"),
+    (
+        "cavity_exact",
+        "apparent emissivity of cavities: with thick openings",
+    ),
+    (
+        "cavity_enclosure",
+        "apparent emissivity of cavities: with thick openings",
+    ),
+    (
+        "cavity_gouffe",
+        "apparent emissivity of cavities: with thick openings",
+    ),
+    ("atmosphere_pw", "absorption by air comes later"),
+    ("atmosphere_wayne", "absorption by air comes later"),
+    ("atmosphere_bound", "absorption by air comes later"),
+    ("shield", "radiation shields: with screens"),
+    (
+        "uncertainty",
+        "spread of results is the notebook's: checked with it",
+    ),
+    (
+        "fresnel_emissivity",
+        "emissivity of glass melts: with the list of materials",
+    ),
+    ("plate_balance", "the balance of a screen: with screens"),
+];
+
+/// Source: `resources/checks/physics_checks.json`, all 353 rows.
+#[test]
+fn every_row_runs_or_waits_for_a_stated_reason() {
+    let rows = rows::all();
+    assert_eq!(
+        rows.len(),
+        353,
+        "the file of checks has changed: state what is new here"
+    );
+    let (mut ran, mut waits) = (0, 0);
+    let mut used = vec![false; PENDING.len()];
+    for row in &rows {
+        let work = RUNNING.iter().find(|(family, _)| *family == row.family);
+        let pending = PENDING
+            .iter()
+            .position(|(name, _)| *name == row.id || *name == row.family);
+        let value = work.and_then(|(_, work)| work(row));
+        match (value, pending) {
+            (Some(value), None) => {
+                assert!(value.is_finite(), "{} gives {value}", row.id);
+                ran += 1;
+            }
+            (None, Some(index)) => {
+                assert!(
+                    !PENDING[index].1.is_empty(),
+                    "{} waits without a reason",
+                    row.id
+                );
+                used[index] = true;
+                waits += 1;
+            }
+            (Some(_), Some(_)) => panic!("{} runs and is listed as pending", row.id),
+            (None, None) => panic!("{} of family {} neither runs nor waits", row.id, row.family),
+        }
+    }
+    for (index, used) in used.iter().enumerate() {
+        assert!(used, "no row is called {}", PENDING[index].0);
+    }
+    assert_eq!(
+        (ran, waits),
+        (RAN, rows.len() - RAN),
+        "rows that ran and rows that wait"
+    );
+}
+
+/// How many rows run: it may only grow.
+const RAN: usize = 0;
