@@ -4,7 +4,7 @@ use farglow::physics::planck;
 use farglow::physics::region::Region;
 use glam::DVec3;
 
-/// Source: common practice, no source: 77 K peaks near 38 µm and emits about 2 W/m²; 300 K 9.7 µm, about 460 W/m²; 600 K near 5 µm, about 7.4 kW/m²; 5500 K near 530 nm. Tolerance: half the last digit said.
+/// Source: common practice, no source: 77 K peaks near 38 µm and emits about 2 W/m²; 300 K 9.7 µm, about 460 W/m²; 600 K near 5 µm, about 7.4 kW/m²; 5500 K near 530 nm. Peaks to half the last digit said; exitances to 1 %: 600 K gives 7.349 kW/m², 0.7 % below what is said.
 #[test]
 fn bodies_peak_and_emit_where_the_trade_says() {
     for (temperature, peak, half_digit) in [
@@ -19,15 +19,11 @@ fn bodies_peak_and_emit_where_the_trade_says() {
             "{temperature} K peaks at {found:e} m, said to be {peak:e} m"
         );
     }
-    for (temperature, exitance, half_digit) in [
-        (77.0, 2.0, 0.5),
-        (300.0, 460.0, 5.0),
-        (600.0, 7.4e3, 0.05e3),
-    ] {
+    for (temperature, exitance) in [(77.0, 2.0), (300.0, 460.0), (600.0, 7.4e3)] {
         let found = planck::exitance(temperature);
         assert!(
-            (found - exitance).abs() <= half_digit,
-            "{temperature} K emits {found} W/m², said to be {exitance}"
+            (found / exitance - 1.0).abs() <= 0.01,
+            "{temperature} K emits {found} W/m², said to be about {exitance}"
         );
     }
 }
@@ -42,7 +38,7 @@ fn nothing_is_brighter_than_the_peak() {
             let wavelength = peak * 0.01 * f64::from(step);
             let found = planck::spectral_exitance(wavelength, temperature);
             assert!(
-                found <= top,
+                found <= top * (1.0 + 1e-14),
                 "{temperature} K: {found:e} at {wavelength:e} m above {top:e} at the peak"
             );
         }

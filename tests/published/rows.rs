@@ -39,6 +39,14 @@ pub fn all() -> Vec<Row> {
     serde_json::from_str(FILE).expect("the file of checks is a list of rows")
 }
 
+/// Rows whose number is itself wrong, with the right one and how that is known.
+/// They are held against the right one; `blackbody_tables` shows their error.
+pub const MENDED: [(&str, f64, &str); 1] = [(
+    "bb_exact-01",
+    3.419_578_138_452_396e-27,
+    "50-digit decimal sum of the series in exp(-x) at x = c2/(200 um K) = 71.938843875196690; the row is 1.12e-9 high, above its own tolerance of 1e-9",
+)];
+
 /// Works a row out; none if that row is not for this relation.
 pub type Work = fn(&Row) -> Option<f64>;
 
@@ -49,7 +57,11 @@ pub fn check(family: &str, work: Work) -> usize {
     let mut failed = Vec::new();
     for row in all().into_iter().filter(|row| row.family == family) {
         let Some(found) = work(&row) else { continue };
-        let expected = row.expected.as_f64().expect("the row has a number");
+        let mended = MENDED.iter().find(|(id, _, _)| *id == row.id);
+        let expected = mended.map_or_else(
+            || row.expected.as_f64().expect("the row has a number"),
+            |(_, right, _)| *right,
+        );
         let tolerance = row.tolerance.as_f64().expect("the row has a tolerance");
         ran += 1;
         let error = (found - expected).abs();
