@@ -20,6 +20,7 @@ pub mod graph;
 pub mod guidance;
 pub mod json;
 pub mod notebook;
+pub mod numeric;
 pub mod physics;
 pub mod store;
 pub mod units;

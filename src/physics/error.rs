@@ -83,9 +83,21 @@ pub(super) fn positive(
 /// The longest length that is accepted, in metres.
 pub(super) const LONGEST: f64 = 1e9;
 
-/// Returns `value` if it is a length above zero.
+/// The shortest length that is accepted, in metres: squares of squares of it
+/// still keep all their digits.
+pub(super) const SHORTEST: f64 = 1e-9;
+
+/// Returns `value` if it is a length.
 pub(super) fn length(parameter: &'static str, value: f64) -> Result<f64, Error> {
-    positive(parameter, value, LONGEST, "above 0 m and at most 10⁹ m")
+    if (SHORTEST..=LONGEST).contains(&value) {
+        Ok(value)
+    } else {
+        Err(Error::OutOfRange {
+            parameter,
+            range: "from 10⁻⁹ m to 10⁹ m",
+            value,
+        })
+    }
 }
 
 /// Returns `value` if it is a length or zero.

@@ -38,7 +38,9 @@ static NODES: LazyLock<Vec<Node>> =
 pub(super) fn exitances(temperature: f64) -> Weighted {
     let mut sums = [0.0; 3];
     for node in NODES.iter() {
-        let planck = 1.0 / (node.inverse / temperature).exp_m1();
+        // In e⁻ˣ, which is cheaper than eˣ − 1; x never comes near zero here.
+        let step = (-node.inverse / temperature).exp();
+        let planck = step / (1.0 - step);
         for (sum, share) in sums.iter_mut().zip(node.shares) {
             *sum += planck * share;
         }

@@ -187,3 +187,60 @@ fn above(x: f64) -> f64 {
         .fold(0.0, |sum, term| sum * square + term);
     NORM * x * square * (even - x / 8.0)
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn edges_give_what_they_mean() {
+        for (found, expected) in [
+            (fraction(0.0), 0.0),
+            (fraction(-1.0), 0.0),
+            (fraction(1e-9), 0.0),
+            (fraction(f64::INFINITY), 1.0),
+            (band_fraction(0.0, f64::INFINITY, 300.0), 1.0),
+            (band_fraction(2e-6, 1e-6, 300.0), 0.0),
+            (band_fraction(1e-6, 2e-6, 0.0), 0.0),
+            (band_fraction(1e-6, 2e-6, -5.0), 0.0),
+            (exitance(0.0), 0.0),
+            (exitance(-300.0), 0.0),
+            (peak_wavelength(0.0), f64::INFINITY),
+            (spectral_exitance(0.0, 300.0), 0.0),
+            (spectral_exitance(1e-6, 0.0), 0.0),
+            (spectral_exitance(1e-9, 1.0), 0.0),
+        ] {
+            assert_eq!(found, expected);
+        }
+        assert!(fraction(f64::NAN).is_nan() && band_fraction(f64::NAN, 1.0, 300.0).is_nan());
+    }
+
+    #[test]
+    fn fraction_rises_without_a_step_where_the_series_meet() {
+        let product = |x: f64| SECOND_RADIATION / x;
+        let mut last = fraction(product(2.001));
+        for step in 1..=2000_u32 {
+            let next = fraction(product(2.001 - 1e-6 * f64::from(step)));
+            // Per step of 1e-6 in x the fraction rises by about 1.93e-7.
+            assert!(
+                (next - last - 1.93e-7).abs() < 2e-9,
+                "step {step}: from {last} to {next}"
+            );
+            last = next;
+        }
+    }
+
+    #[test]
+    fn far_complements_keep_their_digits() {
+        // Above λT = 1 m·K the Rayleigh-Jeans tail: (5/π⁴) x³ (1 − 3x/8 + x²/20).
+        for x in [1e-2, 1e-4, 1e-6] {
+            let above = band_fraction(SECOND_RADIATION / x, f64::INFINITY, 1.0);
+            let expected =
+                5.0 / std::f64::consts::PI.powi(4) * x.powi(3) * (1.0 - 0.375 * x + 0.05 * x * x);
+            assert!(
+                (above / expected - 1.0).abs() < 1e-9,
+                "{x}: {above:e} against {expected:e}"
+            );
+        }
+    }
+}

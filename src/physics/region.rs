@@ -6,6 +6,8 @@
 
 mod outline;
 mod plan;
+#[cfg(test)]
+mod tests;
 
 use std::f64::consts::PI;
 
@@ -60,7 +62,7 @@ impl Region {
     ///
     /// # Errors
     ///
-    /// [`Error::OutOfRange`] if the radius is not above zero and at most 10⁹ m
+    /// [`Error::OutOfRange`] if the radius is not from 10⁻⁹ m to 10⁹ m
     /// or a coordinate beyond that; [`Error::NoDirection`] for the normal.
     pub fn disc(centre: DVec3, normal: DVec3, radius: f64) -> Result<Self, Error> {
         Ok(Self::Disc {
@@ -78,7 +80,7 @@ impl Region {
     ///
     /// # Errors
     ///
-    /// [`Error::OutOfRange`] if a length is not above zero and at most 10⁹ m or
+    /// [`Error::OutOfRange`] if a length is not from 10⁻⁹ m to 10⁹ m or
     /// a coordinate beyond that; [`Error::NoDirection`] for the normal, or for
     /// `up` if it runs along the normal.
     pub fn rectangle(
@@ -154,7 +156,7 @@ impl Region {
     ///
     /// # Errors
     ///
-    /// [`Error::OutOfRange`] if the radius is not above zero and at most 10⁹ m,
+    /// [`Error::OutOfRange`] if the radius is not from 10⁻⁹ m to 10⁹ m,
     /// or a coordinate beyond that.
     pub fn sphere(centre: DVec3, radius: f64) -> Result<Self, Error> {
         Ok(Self::Sphere {
@@ -273,6 +275,7 @@ impl Region {
     /// inside a sphere (to 10⁻¹² of the lengths at play), and from a place that
     /// is not finite, the answer is [`Sight::Touching`].
     #[must_use]
+    #[inline]
     pub fn view(&self, point: DVec3) -> Sight {
         if !point.is_finite() {
             return Sight::Touching;
@@ -280,11 +283,11 @@ impl Region {
         match self {
             Self::Sphere { centre, radius } => {
                 let seen = *centre - point;
-                if seen.abs().max_element() > OUT_OF_SIGHT {
+                if size(seen) > OUT_OF_SIGHT {
                     return Sight::Seen(View::EMPTY);
                 }
                 let distance = seen.length();
-                if distance <= *radius + TOUCH * (radius + point.length()) {
+                if distance <= *radius + TOUCH * (radius + size(point)) {
                     return Sight::Touching;
                 }
                 Sight::Seen(View::of_sphere(seen, *radius))
@@ -296,9 +299,9 @@ impl Region {
             } => {
                 let seen = *centre - point;
                 let height = -seen.dot(*normal);
-                let reach = TOUCH * (seen.length() + radius + point.length());
+                let reach = TOUCH * (size(seen) + radius + size(point));
                 if height > reach {
-                    if seen.abs().max_element() > OUT_OF_SIGHT {
+                    if size(seen) > OUT_OF_SIGHT {
                         return Sight::Seen(View::EMPTY);
                     }
                     return Sight::Seen(View::of_disc(seen, *normal, *radius));
@@ -315,9 +318,9 @@ impl Region {
             Self::Polygon { vertices, normal } => {
                 let seen = vertices[0] - point;
                 let height = -seen.dot(*normal);
-                let reach = TOUCH * (seen.length() + point.length());
+                let reach = TOUCH * (size(seen) + size(point));
                 if height > reach {
-                    if seen.abs().max_element() > OUT_OF_SIGHT {
+                    if size(seen) > OUT_OF_SIGHT {
                         return Sight::Seen(View::EMPTY);
                     }
                     return Sight::Seen(View::of_polygon(vertices, point));
@@ -333,6 +336,12 @@ impl Region {
             }
         }
     }
+}
+
+/// The largest coordinate: a length that costs no root.
+#[inline]
+fn size(vector: DVec3) -> f64 {
+    vector.abs().max_element()
 }
 
 /// What of `up` is perpendicular to `normal`, with length one.

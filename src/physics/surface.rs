@@ -142,3 +142,87 @@ impl Emission {
         })
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn each_emissivity_acts_on_its_own_quantities() {
+        let black = Emission::grey(1500.0, 1.0, 1.0).expect("a black body");
+        let grey = Emission::grey(1500.0, 0.3, 0.45).expect("a bare metal");
+        let ratios = [
+            (grey.total / black.total, 0.3),
+            (grey.near_infrared / black.near_infrared, 0.45),
+            (grey.skin / black.skin, 0.45),
+            (grey.blue_light / black.blue_light, 0.45),
+            (grey.retinal_2006 / black.retinal_2006, 0.45),
+            (grey.retinal_2013 / black.retinal_2013, 0.45),
+            (grey.infrared_a / black.infrared_a, 0.45),
+        ];
+        for (found, expected) in ratios {
+            assert!(
+                (found - expected).abs() < 1e-15,
+                "{found} against {expected}"
+            );
+        }
+        assert!(
+            black.infrared_a < black.near_infrared
+                && black.near_infrared < black.skin
+                && black.skin < black.total,
+            "{black:?}"
+        );
+    }
+
+    #[test]
+    fn impossible_surfaces_are_refused_by_name() {
+        let text = |made: Result<Emission, Error>| {
+            made.map_or_else(|error| error.to_string(), |made| format!("{made:?}"))
+        };
+        for (made, expected) in [
+            (
+                Emission::grey(0.0, 1.0, 1.0),
+                "temperature must be above 0 K and at most 100000 K, found 0",
+            ),
+            (
+                Emission::grey(f64::NAN, 1.0, 1.0),
+                "temperature must be above 0 K and at most 100000 K, found NaN",
+            ),
+            (
+                Emission::grey(300.0, 0.0, 1.0),
+                "emissivity must be above 0 and at most 1, found 0",
+            ),
+            (
+                Emission::grey(300.0, 1.01, 1.0),
+                "emissivity must be above 0 and at most 1, found 1.01",
+            ),
+            (
+                Emission::grey(300.0, 1.0, -0.1),
+                "near infrared emissivity must be above 0 and at most 1, found -0.1",
+            ),
+        ] {
+            assert_eq!(text(made), expected);
+        }
+    }
+
+    #[test]
+    fn cold_and_hottest_surfaces_give_finite_numbers() {
+        for temperature in [1e-300, 1e-3, 1.0, 77.0, 1e5] {
+            let found = Emission::grey(temperature, 1.0, 1.0).expect("a possible surface");
+            for value in [
+                found.total,
+                found.near_infrared,
+                found.skin,
+                found.blue_light,
+                found.retinal_2006,
+                found.retinal_2013,
+                found.infrared_a,
+            ] {
+                assert!(
+                    value.is_finite() && value >= 0.0,
+                    "{temperature} K: {found:?}"
+                );
+            }
+        }
+    }
+}

@@ -7,6 +7,7 @@
 use glam::DVec3;
 
 use super::view_factor::contour::{self, Circle};
+use super::view_factor::four::Four;
 use super::view_factor::{disc, sphere};
 
 /// What is seen of a region from a point.
@@ -27,6 +28,7 @@ pub enum Sight {
 impl Sight {
     /// Returns the view: an empty one from behind, none when touching.
     #[must_use]
+    #[inline]
     pub fn into_view(self) -> Option<View> {
         match self {
             Self::Behind => Some(View::EMPTY),
@@ -35,9 +37,6 @@ impl Sight {
         }
     }
 }
-
-/// How many vertices of a polygon are kept without an allocation.
-const INLINE: usize = 8;
 
 /// The outline of a region as seen from the point.
 #[derive(Clone, Debug, PartialEq)]
@@ -50,8 +49,8 @@ enum Shape {
         normal: DVec3,
         radius: f64,
     },
-    /// A polygon of few vertices, anticlockwise as seen.
-    Few([DVec3; INLINE], usize),
+    /// A polygon of up to four vertices, anticlockwise as seen.
+    Few(Four),
     /// A polygon of more.
     Many(Box<[DVec3]>),
 }
@@ -71,6 +70,7 @@ impl View {
     };
 
     /// A disc; `centre` from the point, `normal` towards it.
+    #[inline]
     pub(super) fn of_disc(centre: DVec3, normal: DVec3, radius: f64) -> Self {
         Self {
             flux: disc::flux(centre, normal, radius),
@@ -83,6 +83,7 @@ impl View {
     }
 
     /// A sphere; `centre` from the point, which lies outside.
+    #[inline]
     pub(super) fn of_sphere(centre: DVec3, radius: f64) -> Self {
         let distance = centre.length();
         let direction = centre / distance;
@@ -99,16 +100,12 @@ impl View {
     }
 
     /// A polygon; `vertices` in space, anticlockwise as seen from `point`.
+    #[inline]
     pub(super) fn of_polygon(vertices: &[DVec3], point: DVec3) -> Self {
-        if vertices.len() <= INLINE {
-            let mut few = [DVec3::ZERO; INLINE];
-            for (seen, vertex) in few.iter_mut().zip(vertices) {
-                *seen = *vertex - point;
-            }
-            let flux = whole(&few[..vertices.len()]);
+        if let Some(four) = Four::seen(vertices, point) {
             Self {
-                flux,
-                shape: Shape::Few(few, vertices.len()),
+                flux: four.flux(),
+                shape: Shape::Few(four),
             }
         } else {
             let many: Box<[DVec3]> = vertices.iter().map(|vertex| *vertex - point).collect();
@@ -150,6 +147,7 @@ impl View {
     /// Checked in `tests/published/view_factor_catalogue.rs`, and against
     /// quadrature in `tests/laws/view_factor_laws.rs`.
     #[must_use]
+    #[inline]
     pub fn factor(&self, normal: DVec3) -> f64 {
         let normal = unit(normal);
         let flux = if self.reaches_below_unit(normal) {
@@ -179,6 +177,7 @@ impl View {
         self.reaches_below_unit(unit(normal))
     }
 
+    #[inline]
     fn reaches_below_unit(&self, normal: DVec3) -> bool {
         match &self.shape {
             Shape::Nothing => false,
@@ -191,13 +190,12 @@ impl View {
                 let swing = normal - *own * normal.dot(*own);
                 middle < 0.0 || middle * middle < radius * radius * swing.length_squared()
             }
-            Shape::Few(vertices, count) => vertices[..*count]
-                .iter()
-                .any(|vertex| vertex.dot(normal) < 0.0),
+            Shape::Few(four) => four.lowest(normal) < 0.0,
             Shape::Many(vertices) => vertices.iter().any(|vertex| vertex.dot(normal) < 0.0),
         }
     }
 
+    #[cold]
     fn cut(&self, normal: DVec3) -> DVec3 {
         match &self.shape {
             Shape::Nothing => DVec3::ZERO,
@@ -206,7 +204,7 @@ impl View {
                 normal: own,
                 radius,
             } => Circle::new(*centre, *own, *radius).above(normal),
-            Shape::Few(vertices, count) => contour::polygon_above(&vertices[..*count], normal),
+            Shape::Few(four) => contour::polygon_above(&four.vertices(), normal),
             Shape::Many(vertices) => contour::polygon_above(vertices, normal),
         }
     }
@@ -226,7 +224,7 @@ impl View {
                 }
                 self.extremes().iter().all(|place| within(*place))
             }
-            Shape::Few(vertices, count) => vertices[..*count].iter().all(|vertex| within(*vertex)),
+            Shape::Few(four) => four.vertices().iter().all(|vertex| within(*vertex)),
             Shape::Many(vertices) => vertices.iter().all(|vertex| within(*vertex)),
         }
     }
@@ -247,13 +245,14 @@ impl View {
                     .map(|corner| around.point((f64::from(corner) + 0.5) * STEP))
                     .collect()
             }
-            Shape::Few(vertices, count) => vertices[..*count].to_vec(),
+            Shape::Few(four) => four.vertices().to_vec(),
             Shape::Many(vertices) => vertices.to_vec(),
         }
     }
 }
 
 /// The flux vector of a whole polygon.
+#[inline]
 fn whole(vertices: &[DVec3]) -> DVec3 {
     let mut sum = DVec3::ZERO;
     let Some(mut from) = vertices.last() else {
@@ -267,10 +266,16 @@ fn whole(vertices: &[DVec3]) -> DVec3 {
 }
 
 /// The vector with length one, or as it is if it points nowhere.
+#[inline]
 fn unit(vector: DVec3) -> DVec3 {
     if (vector.length_squared() - 1.0).abs() < 1e-15 {
         return vector;
     }
+    scaled(vector)
+}
+
+#[cold]
+fn scaled(vector: DVec3) -> DVec3 {
     let most = vector.abs().max_element();
     if most > 0.0 && vector.is_finite() {
         (vector / most).normalize_or_zero()

@@ -6,6 +6,7 @@
 
 pub mod contour;
 pub mod disc;
+pub(in crate::physics) mod four;
 pub mod polygon;
 pub mod rectangle;
 pub mod sphere;

@@ -3,7 +3,7 @@
 use glam::{DVec2, DVec3};
 
 use super::super::Error;
-use super::super::error::place;
+use super::super::error::{SHORTEST, place};
 use super::{MOST_VERTICES, distance_to_segment};
 
 /// How far off its plane a vertex may lie, relative to the polygon's extent.
@@ -53,7 +53,7 @@ pub(super) fn checked(mut vertices: Vec<DVec3>) -> Result<(Vec<DVec3>, DVec3), E
         .fold(0.0, f64::max);
     let size = double.length();
     // Written so that a NaN is no area either.
-    if vertices.len() < 3 || !(size > 1e-12 * extent * extent && size > 0.0) {
+    if vertices.len() < 3 || !(size > 1e-12 * extent * extent && extent >= SHORTEST) {
         return Err(Error::NoArea { area: 0.5 * size });
     }
     let normal = (double / size).normalize();

@@ -10,6 +10,8 @@ use std::f64::consts::{PI, TAU};
 
 use glam::DVec3;
 
+use crate::numeric::{LARGEST_SQUARE, arc_over_tangent};
+
 /// Returns the part of the contour integral that a straight edge gives.
 ///
 /// `from` and `to` are the edge's ends as seen from the receiver, in metres.
@@ -24,14 +26,24 @@ use glam::DVec3;
 /// J. H. Lambert, *Photometria* (1760); checked with the families `polygon` and
 /// `rect_pose` in `tests/published/view_factor_catalogue.rs`.
 #[must_use]
+#[inline]
 pub fn edge(from: DVec3, to: DVec3) -> DVec3 {
     // The edge's own vector keeps the digits that `to × from` would lose far away.
     let cross = (to - from).cross(from);
-    let length = cross.length();
-    if length == 0.0 {
+    let (sine, cosine) = (cross.length_squared(), from.dot(to));
+    if cosine > 0.0 && sine < LARGEST_SQUARE * (cosine * cosine) {
+        return cross * (arc_over_tangent(sine / (cosine * cosine)) / (TAU * cosine));
+    }
+    wide_edge(cross, sine.sqrt(), cosine)
+}
+
+/// An edge that is seen under a wide angle, or of which nothing is.
+#[cold]
+fn wide_edge(cross: DVec3, sine: f64, cosine: f64) -> DVec3 {
+    if sine == 0.0 {
         return DVec3::ZERO;
     }
-    cross * (length.atan2(from.dot(to)) / (TAU * length))
+    cross * (sine.atan2(cosine) / (TAU * sine))
 }
 
 /// Returns the part that an edge lying in the receiver's horizon gives.

@@ -21,7 +21,7 @@ use crate::physics::error::{length, offset as checked_offset};
 ///
 /// # Errors
 ///
-/// [`Error::OutOfRange`] if a length is not above zero and at most 10⁹ m.
+/// [`Error::OutOfRange`] if a length is not from 10⁻⁹ m to 10⁹ m.
 ///
 /// # Source
 ///
@@ -57,8 +57,8 @@ pub fn from_coaxial_element(radius: f64, distance: f64) -> Result<f64, Error> {
 ///
 /// # Errors
 ///
-/// [`Error::OutOfRange`] if a length is not above zero (the offset: below
-/// zero), or above 10⁹ m.
+/// [`Error::OutOfRange`] if a length is not from 10⁻⁹ m (the offset: from
+/// zero) to 10⁹ m.
 ///
 /// # Source
 ///
@@ -86,8 +86,8 @@ pub fn from_parallel_element(radius: f64, distance: f64, offset: f64) -> Result<
 ///
 /// # Errors
 ///
-/// [`Error::OutOfRange`] if a length is not above zero (the offset: below
-/// zero), or above 10⁹ m.
+/// [`Error::OutOfRange`] if a length is not from 10⁻⁹ m (the offset: from
+/// zero) to 10⁹ m.
 ///
 /// # Source
 ///
@@ -110,6 +110,7 @@ pub fn from_perpendicular_element(radius: f64, distance: f64, offset: f64) -> Re
 ///
 /// `centre` from the receiver; `normal` of length one, towards it.
 #[must_use]
+#[inline]
 pub(in crate::physics) fn flux(centre: DVec3, normal: DVec3, radius: f64) -> DVec3 {
     let height = -centre.dot(normal);
     let lateral = centre + normal * height;

@@ -20,7 +20,7 @@ use crate::physics::error::length;
 ///
 /// # Errors
 ///
-/// [`Error::OutOfRange`] if a length is not above zero and at most 10⁹ m.
+/// [`Error::OutOfRange`] if a length is not from 10⁻⁹ m to 10⁹ m.
 ///
 /// # Source
 ///
@@ -55,7 +55,7 @@ pub fn from_parallel_element_at_corner(
 ///
 /// # Errors
 ///
-/// [`Error::OutOfRange`] if a length is not above zero and at most 10⁹ m.
+/// [`Error::OutOfRange`] if a length is not from 10⁻⁹ m to 10⁹ m.
 ///
 /// # Source
 ///

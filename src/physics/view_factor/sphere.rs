@@ -22,7 +22,7 @@ use crate::physics::error::length;
 ///
 /// # Errors
 ///
-/// [`Error::OutOfRange`] if a length is not above zero and at most 10⁹ m, the
+/// [`Error::OutOfRange`] if a length is not from 10⁻⁹ m to 10⁹ m, the
 /// distance does not exceed the radius, or the tilt is not in `0..=π`.
 ///
 /// # Source
