@@ -12,10 +12,6 @@ use super::view_factor::{disc, sphere};
 
 /// What is seen of a region from a point.
 #[derive(Clone, Debug, PartialEq)]
-#[expect(
-    clippy::large_enum_variant,
-    reason = "a view lives on the stack: allocating it would cost as much as working it out"
-)]
 pub enum Sight {
     /// The point lies behind a flat region's plane: nothing is seen.
     Behind,

@@ -30,12 +30,12 @@ fn view(region: &Region) -> View {
 }
 
 #[divan::bench]
-fn closed_form_of_a_disc(bencher: Bencher) {
+fn closed_form_of_a_disc(bencher: Bencher<'_, '_>) {
     bencher.bench(|| disc::from_parallel_element(black_box(0.425), black_box(1.6), black_box(2.5)));
 }
 
 #[divan::bench]
-fn disc_in_space(bencher: Bencher) {
+fn disc_in_space(bencher: Bencher<'_, '_>) {
     let (region, normal) = (ladle(), -EYE.normalize());
     bencher.bench(|| {
         black_box(&region)
@@ -46,7 +46,7 @@ fn disc_in_space(bencher: Bencher) {
 }
 
 #[divan::bench]
-fn disc_in_space_cut_by_the_horizon(bencher: Bencher) {
+fn disc_in_space_cut_by_the_horizon(bencher: Bencher<'_, '_>) {
     let (region, normal) = (ladle(), DVec3::new(1.0, 0.0, 0.0));
     bencher.bench(|| {
         black_box(&region)
@@ -57,7 +57,7 @@ fn disc_in_space_cut_by_the_horizon(bencher: Bencher) {
 }
 
 #[divan::bench]
-fn four_sided_polygon_by_contour(bencher: Bencher) {
+fn four_sided_polygon_by_contour(bencher: Bencher<'_, '_>) {
     let (region, normal) = (door(), DVec3::NEG_Y);
     bencher.bench(|| {
         black_box(&region)
@@ -68,7 +68,7 @@ fn four_sided_polygon_by_contour(bencher: Bencher) {
 }
 
 #[divan::bench]
-fn four_sided_polygon_cut_by_the_horizon(bencher: Bencher) {
+fn four_sided_polygon_cut_by_the_horizon(bencher: Bencher<'_, '_>) {
     let (region, normal) = (door(), DVec3::X);
     bencher.bench(|| {
         black_box(&region)
@@ -79,13 +79,13 @@ fn four_sided_polygon_cut_by_the_horizon(bencher: Bencher) {
 }
 
 #[divan::bench]
-fn strongest_of_one_source(bencher: Bencher) {
+fn strongest_of_one_source(bencher: Bencher<'_, '_>) {
     let views = [view(&door())];
     bencher.bench(|| exposure::strongest(black_box(&views), black_box(&[290e3])));
 }
 
 #[divan::bench]
-fn strongest_of_six_sources_all_round(bencher: Bencher) {
+fn strongest_of_six_sources_all_round(bencher: Bencher<'_, '_>) {
     let views: Vec<View> = (0..6_u32)
         .map(|index| {
             let angle = TAU * f64::from(index) / 6.0;
@@ -102,7 +102,7 @@ fn strongest_of_six_sources_all_round(bencher: Bencher) {
 }
 
 #[divan::bench]
-fn emission_of_a_surface(bencher: Bencher) {
+fn emission_of_a_surface(bencher: Bencher<'_, '_>) {
     bencher.bench(|| Emission::grey(black_box(1523.15), black_box(0.95), black_box(0.95)));
 }
 
@@ -130,7 +130,7 @@ fn door_by_quadrature(point: DVec3, normal: DVec3) -> f64 {
 }
 
 #[divan::bench]
-fn four_sided_polygon_by_gauss_quadrature(bencher: Bencher) {
+fn four_sided_polygon_by_gauss_quadrature(bencher: Bencher<'_, '_>) {
     let (exact, plain) = (
         view(&door()).factor(DVec3::NEG_Y),
         door_by_quadrature(EYE, DVec3::NEG_Y),

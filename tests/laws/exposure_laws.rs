@@ -6,7 +6,7 @@ use farglow::physics::view::{Sight, View};
 use glam::DVec3;
 use proptest::prelude::*;
 
-use crate::view_factor_laws::{heading, place, region};
+use crate::view_factor_laws::{config, heading, place, region};
 
 /// A net of directions, evenly over the sphere (golden spiral).
 fn net(count: u32) -> impl Iterator<Item = DVec3> {
@@ -51,7 +51,7 @@ fn views(regions: &[Region], point: DVec3) -> Option<Vec<View>> {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig { cases: 120, failure_persistence: None, ..ProptestConfig::default() })]
+    #![proptest_config(config(120))]
 
     #[test]
     fn strongest_is_the_best_of_a_dense_search(regions in proptest::collection::vec(region(), 1..6), weights in proptest::collection::vec(0.1..10.0_f64, 6), point in place()) {
@@ -66,7 +66,7 @@ proptest! {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig { cases: 1000, failure_persistence: None, ..ProptestConfig::default() })]
+    #![proptest_config(config(1000))]
 
     #[test]
     fn no_orientation_beats_the_strongest(regions in proptest::collection::vec(region(), 1..9), weights in proptest::collection::vec(0.0..10.0_f64, 9), point in place(), tries in proptest::collection::vec(heading(), 20)) {
