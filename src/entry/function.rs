@@ -1,0 +1,1 @@
+//! The functions of entries, and the bridge to the physics.

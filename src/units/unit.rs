@@ -1,0 +1,482 @@
+//! A unit of measurement: read from text, compound or simple, and converted.
+
+use super::dimension::superscript;
+use super::symbol::{self, Symbol};
+use super::{Dimension, Error};
+
+/// A unit with its dimension and exact factor.
+///
+/// Compound units join known symbols by `·` (or `*`, `×`), at most one `/`, and
+/// whole powers (`²`, `^2`, `m2`), with brackets and without spaces:
+/// `W/(m²·sr)`. `a/b/c` and `a/b·c` are not units, since people read them in
+/// two ways.
+///
+/// # Accuracy
+///
+/// Factors are exact decimal fractions (π/180 for the degree) rounded once or
+/// twice; a conversion there and back is within 4e-16 relative, for scales
+/// relative to the temperature in kelvin or the offset.
+///
+/// # Source
+///
+/// See the table of symbols in this module. Checked against NIST SP 811 (2008)
+/// Appendix B in this module's tests.
+///
+/// # Examples
+///
+/// ```
+/// use farglow::units::{Dimension, Unit};
+///
+/// let unit = Unit::parse("kcal/(m2*h)")?;
+/// assert_eq!(unit.symbol(), "kcal/(m²·h)");
+/// assert_eq!(unit.dimension(), Dimension::IRRADIANCE);
+/// assert!((unit.factor() - 1.163).abs() < 1e-15);
+/// # Ok::<(), farglow::units::Error>(())
+/// ```
+#[derive(Clone, Debug, PartialEq)]
+pub struct Unit {
+    symbol: String,
+    multiply: f64,
+    divide: f64,
+    offset: Option<f64>,
+    dimension: Dimension,
+}
+
+impl Unit {
+    /// Reads a whole text as a unit; the empty text and `1` are the unit of a
+    /// plain number.
+    ///
+    /// # Errors
+    ///
+    /// [`Error::UnknownUnit`] with the nearest known symbol,
+    /// [`Error::ScaleInCompound`] for °C or °F in a compound,
+    /// [`Error::ExponentRange`], [`Error::NotAUnit`] for anything else.
+    pub fn parse(text: &str) -> Result<Self, Error> {
+        let text = text.trim();
+        if text.is_empty() || text == "1" {
+            return Ok(Self::one());
+        }
+        let mut reader = Reader { text, at: 0 };
+        if let Some(parts) = reader.product(0, true)
+            && reader.at == text.len()
+        {
+            return Ok(parts.into_unit());
+        }
+        Err(why_not(text))
+    }
+
+    /// Returns the longest run from the start of `text`, without spaces, that
+    /// is a unit, and its length in bytes; `None` if none is.
+    ///
+    /// A symbol directly before an opening bracket is not one: `min(` is a
+    /// function.
+    pub fn longest(text: &str) -> Option<(Self, usize)> {
+        let mut reader = Reader { text, at: 0 };
+        if text.starts_with('(') {
+            return None;
+        }
+        let parts = reader.product(0, false)?;
+        Some((parts.into_unit(), reader.at))
+    }
+
+    /// Returns the known symbol that was probably meant by an unknown one.
+    pub fn suggest(symbol: &str) -> Option<&'static str> {
+        symbol::suggest(symbol)
+    }
+
+    /// Returns the frozen list of bare symbols, which are reserved as names,
+    /// sorted.
+    pub fn symbols() -> &'static [&'static str] {
+        symbol::RESERVED
+    }
+
+    /// Returns the unit of a plain number; its symbol is empty.
+    pub const fn one() -> Self {
+        Self {
+            symbol: String::new(),
+            multiply: 1.0,
+            divide: 1.0,
+            offset: None,
+            dimension: Dimension::NONE,
+        }
+    }
+
+    /// Returns the coherent SI unit of a dimension.
+    pub fn coherent(dimension: Dimension) -> Self {
+        Self {
+            symbol: dimension.si_unit(),
+            dimension,
+            ..Self::one()
+        }
+    }
+
+    /// Returns the symbol as it is printed: `W/(m²·sr)`.
+    pub fn symbol(&self) -> &str {
+        &self.symbol
+    }
+
+    /// Returns the kind of quantity that this unit measures.
+    pub const fn dimension(&self) -> Dimension {
+        self.dimension
+    }
+
+    /// Returns how many coherent SI units one of this unit is; for a scale, how
+    /// many kelvin one of its steps is.
+    pub const fn factor(&self) -> f64 {
+        self.multiply / self.divide
+    }
+
+    /// Returns whether this is a temperature scale with a zero of its own, °C or
+    /// °F.
+    pub const fn is_scale(&self) -> bool {
+        self.offset.is_some()
+    }
+
+    /// Returns `value` of this unit in coherent SI units (a point on the scale,
+    /// for °C and °F).
+    pub fn to_si(&self, value: f64) -> f64 {
+        self.step_to_si(value + self.offset.unwrap_or(0.0))
+    }
+
+    /// Returns a width or difference of `value` of this unit in coherent SI
+    /// units: 9 °F are 5 K.
+    pub fn step_to_si(&self, value: f64) -> f64 {
+        value * self.multiply / self.divide
+    }
+
+    /// Returns how many of this unit `si` coherent SI units are.
+    pub fn from_si(&self, si: f64) -> f64 {
+        si * self.divide / self.multiply - self.offset.unwrap_or(0.0)
+    }
+}
+
+/// A unit under construction.
+struct Parts {
+    symbol: String,
+    /// More than one symbol, so that it needs brackets as a divisor.
+    several: bool,
+    multiply: f64,
+    divide: f64,
+    offset: Option<f64>,
+    dimension: Dimension,
+}
+
+impl Parts {
+    fn of(symbol: &Symbol) -> Self {
+        Self {
+            symbol: symbol.symbol.to_owned(),
+            several: false,
+            multiply: symbol.multiply,
+            divide: symbol.divide,
+            offset: symbol.offset,
+            dimension: symbol.dimension,
+        }
+    }
+
+    fn one() -> Self {
+        Self {
+            symbol: "1".to_owned(),
+            several: false,
+            multiply: 1.0,
+            divide: 1.0,
+            offset: None,
+            dimension: Dimension::NONE,
+        }
+    }
+
+    fn power(mut self, exponent: i8) -> Option<Self> {
+        if exponent == 1 {
+            return Some(self);
+        }
+        if self.offset.is_some() || exponent == 0 {
+            return None;
+        }
+        let size = i32::from(exponent.unsigned_abs());
+        let (multiply, divide) = (self.multiply.powi(size), self.divide.powi(size));
+        (self.multiply, self.divide) = if exponent > 0 {
+            (multiply, divide)
+        } else {
+            (divide, multiply)
+        };
+        self.dimension = self.dimension.power(exponent)?;
+        if self.several {
+            self.symbol = format!("({})", self.symbol);
+        }
+        self.symbol.push_str(&superscript(i64::from(exponent)));
+        self.several = false;
+        self.is_usable().then_some(self)
+    }
+
+    fn join(self, other: Self, divided: bool) -> Option<Self> {
+        if self.offset.is_some() || other.offset.is_some() {
+            return None;
+        }
+        let (sign, above, below, dimension) = if divided {
+            let dimension = self.dimension.over(other.dimension)?;
+            ('/', other.divide, other.multiply, dimension)
+        } else {
+            let dimension = self.dimension.times(other.dimension)?;
+            ('·', other.multiply, other.divide, dimension)
+        };
+        let symbol = if other.several {
+            format!("{}{sign}({})", self.symbol, other.symbol)
+        } else {
+            format!("{}{sign}{}", self.symbol, other.symbol)
+        };
+        let joined = Self {
+            symbol,
+            several: true,
+            multiply: self.multiply * above,
+            divide: self.divide * below,
+            offset: None,
+            dimension,
+        };
+        joined.is_usable().then_some(joined)
+    }
+
+    /// Whether the factor can be used: absurd powers would leave the range.
+    fn is_usable(&self) -> bool {
+        self.multiply.is_normal()
+            && self.divide.is_normal()
+            && (self.multiply / self.divide).is_normal()
+    }
+
+    fn into_unit(mut self) -> Unit {
+        if self.multiply % self.divide == 0.0 {
+            (self.multiply, self.divide) = (self.multiply / self.divide, 1.0);
+        } else if self.divide % self.multiply == 0.0 {
+            (self.multiply, self.divide) = (1.0, self.divide / self.multiply);
+        }
+        Unit {
+            symbol: self.symbol,
+            multiply: self.multiply,
+            divide: self.divide,
+            offset: self.offset,
+            dimension: self.dimension,
+        }
+    }
+}
+
+/// Brackets within brackets in a unit; nobody writes more.
+const DEEPEST: usize = 8;
+
+struct Reader<'a> {
+    text: &'a str,
+    at: usize,
+}
+
+impl Reader<'_> {
+    fn rest(&self) -> &str {
+        &self.text[self.at..]
+    }
+
+    fn peek(&self) -> Option<char> {
+        self.rest().chars().next()
+    }
+
+    fn eat(&mut self, wanted: char) -> bool {
+        let found = self.peek() == Some(wanted);
+        if found {
+            self.at += wanted.len_utf8();
+        }
+        found
+    }
+
+    /// Reads as many terms as are a unit, and stays before the first sign that
+    /// belongs to none. `reciprocal` allows a leading `1/`.
+    fn product(&mut self, depth: usize, reciprocal: bool) -> Option<Parts> {
+        let start = self.at;
+        let mut parts = if reciprocal && self.rest().starts_with("1/") {
+            self.at += 1;
+            Parts::one()
+        } else {
+            self.term(depth)?
+        };
+        loop {
+            let before = self.at;
+            let divided = match self.peek() {
+                Some('/') => true,
+                Some('·' | '*' | '×' | '⋅') => false,
+                _ => break,
+            };
+            self.at += self.peek().map_or(0, char::len_utf8);
+            let Some(next) = self.term(depth) else {
+                self.at = before;
+                break;
+            };
+            let kept = (self.at, before);
+            let Some(joined) = rejoin(&parts, next, divided) else {
+                self.at = kept.1;
+                break;
+            };
+            parts = joined;
+            // Nothing may follow a quotient: `a/b·c` has two readings.
+            if divided {
+                break;
+            }
+        }
+        if self.at == start { None } else { Some(parts) }
+    }
+
+    fn term(&mut self, depth: usize) -> Option<Parts> {
+        let start = self.at;
+        let term = self.try_term(depth);
+        if term.is_none() {
+            self.at = start;
+        }
+        term
+    }
+
+    fn try_term(&mut self, depth: usize) -> Option<Parts> {
+        let parts = if self.eat('(') {
+            if depth == DEEPEST {
+                return None;
+            }
+            let inside = self.product(depth + 1, false)?;
+            if !self.eat(')') {
+                return None;
+            }
+            inside
+        } else {
+            let length = symbol_length(self.rest());
+            let (symbol, power) = symbol::find(&self.rest()[..length])?;
+            self.at += length;
+            Parts::of(symbol).power(power)?
+        };
+        let before = self.at;
+        let parts = match self.exponent() {
+            Some(exponent) if !parts.several || self.text[..before].ends_with(')') => {
+                parts.power(exponent)?
+            }
+            Some(_) => return None,
+            None => parts,
+        };
+        // `m(`, `m²x`: not the end of a unit.
+        match self.peek() {
+            Some('(') => None,
+            Some(next) if is_symbol_sign(next) || next.is_ascii_digit() => None,
+            _ => Some(parts),
+        }
+    }
+
+    /// Reads `²`, `⁻¹`, `^2`, `^-1` or `^(-1)`; stays in place if there is none.
+    fn exponent(&mut self) -> Option<i8> {
+        let start = self.at;
+        let exponent = self.try_exponent();
+        if exponent.is_none() {
+            self.at = start;
+        }
+        exponent
+    }
+
+    fn try_exponent(&mut self) -> Option<i8> {
+        let mut digits = String::new();
+        if self.eat('^') {
+            let bracket = self.eat('(');
+            if self.eat('-') || self.eat('−') {
+                digits.push('-');
+            }
+            while let Some(digit) = self.peek().filter(char::is_ascii_digit) {
+                digits.push(digit);
+                self.at += 1;
+            }
+            if bracket && !self.eat(')') {
+                return None;
+            }
+            // `m^2.5` is a power of a quantity, not a unit.
+            if self.peek() == Some('.') {
+                return None;
+            }
+        } else {
+            while let Some(digit) = self.peek().and_then(from_superscript) {
+                digits.push(digit);
+                self.at += self.peek().map_or(0, char::len_utf8);
+            }
+        }
+        digits.parse().ok()
+    }
+}
+
+fn rejoin(parts: &Parts, next: Parts, divided: bool) -> Option<Parts> {
+    let own = Parts {
+        symbol: parts.symbol.clone(),
+        ..*parts
+    };
+    own.join(next, divided)
+}
+
+pub(super) fn from_superscript(sign: char) -> Option<char> {
+    Some(match sign {
+        '⁻' => '-',
+        '⁰' => '0',
+        '¹' => '1',
+        '²' => '2',
+        '³' => '3',
+        '⁴' => '4',
+        '⁵' => '5',
+        '⁶' => '6',
+        '⁷' => '7',
+        '⁸' => '8',
+        '⁹' => '9',
+        _ => return None,
+    })
+}
+
+pub(super) fn is_symbol_sign(sign: char) -> bool {
+    sign.is_alphabetic() || matches!(sign, '_' | '°' | '%' | 'µ')
+}
+
+/// The length in bytes of the word at the start of a text that could be a
+/// symbol: one `%`, or letters, `°` and digits.
+pub(super) fn symbol_length(text: &str) -> usize {
+    if text.starts_with('%') {
+        return 1;
+    }
+    let mut length = 0;
+    for sign in text.chars() {
+        let fits = (is_symbol_sign(sign) && sign != '%') || (length > 0 && sign.is_ascii_digit());
+        if !fits || (sign == '°' && length > 0) {
+            break;
+        }
+        length += sign.len_utf8();
+    }
+    length
+}
+
+/// Says what is wrong with a text that is no unit.
+fn why_not(text: &str) -> Error {
+    let mut symbols = Vec::new();
+    let mut at = 0;
+    while let Some(sign) = text[at..].chars().next() {
+        let length = symbol_length(&text[at..]);
+        if length > 0 {
+            symbols.push(&text[at..at + length]);
+            at += length;
+        } else {
+            at += sign.len_utf8();
+        }
+    }
+    for word in &symbols {
+        if symbol::find(word).is_none() {
+            return Error::UnknownUnit {
+                symbol: (*word).to_owned(),
+                suggestion: symbol::suggest(word),
+            };
+        }
+    }
+    let scale = symbols
+        .iter()
+        .filter_map(|word| symbol::find(word))
+        .find(|(symbol, _)| symbol.offset.is_some());
+    match scale {
+        Some((symbol, _)) => Error::ScaleInCompound {
+            symbol: symbol.symbol,
+        },
+        None => Error::NotAUnit {
+            text: text.to_owned(),
+        },
+    }
+}
+
+#[cfg(test)]
+mod tests;
