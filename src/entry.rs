@@ -10,6 +10,9 @@ mod parse;
 mod program;
 mod token;
 
+#[cfg(test)]
+mod tests;
+
 pub use diagnostic::Diagnostic;
 pub use name::{RESERVED, is_name, is_reserved};
 pub use token::{LiteralUse, NameUse};
@@ -77,7 +80,7 @@ impl Entry {
     /// Every fault that was found, in the order of their places.
     pub fn parse(text: &str) -> Result<Self, Vec<Diagnostic>> {
         let tokens = token::read(text)?;
-        let program = parse::compile(text, &tokens).map_err(|fault| vec![fault])?;
+        let program = parse::compile(&tokens).map_err(|fault| vec![fault])?;
         let nominal = tokens
             .literals
             .iter()
@@ -149,9 +152,7 @@ impl Entry {
                 format!("expected {needed} values, found {found}"),
             ));
         }
-        self.program
-            .run(names, &self.literals, literals)
-            .map_err(|fault| *fault)
+        self.program.run(names, literals).map_err(|fault| *fault)
     }
 
     /// Returns the text with each use of the cell `from` replaced by `to`.

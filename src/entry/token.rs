@@ -1,4 +1,9 @@
-//! Our own reading of a text before any parser sees it.
+//! Our own reading of a text before any parser sees it: every literal becomes
+//! one operand, every name is checked, every sign has its place, and what the
+//! grammar does not allow is refused here with its remedy.
+
+mod fault;
+mod reader;
 
 use super::Diagnostic;
 use crate::units::Literal;
@@ -26,24 +31,97 @@ pub struct NameUse {
     pub span: Range<usize>,
 }
 
+/// Where something stands, in characters from 0.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
+pub(super) struct Span {
+    pub(super) start: u16,
+    pub(super) end: u16,
+}
+
+impl From<Span> for Range<usize> {
+    fn from(span: Span) -> Self {
+        usize::from(span.start)..usize::from(span.end)
+    }
+}
+
+/// What a token is.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub(super) enum Sign {
+    /// The literal of that index.
+    Literal(u16),
+    /// The name of that index.
+    Name(u16),
+    /// The constant of that index.
+    Constant(u16),
+    /// The function of that index, before its bracket.
+    Function(u16),
+    Open,
+    Close,
+    Comma,
+    Minus,
+    Not,
+    Binary(Binary),
+}
+
+/// An operator between two values.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub(super) enum Binary {
+    Add,
+    Subtract,
+    Multiply,
+    Divide,
+    Power,
+    Equal,
+    Unequal,
+    Greater,
+    Less,
+    GreaterOrEqual,
+    LessOrEqual,
+    And,
+    Or,
+}
+
+impl Binary {
+    /// The spelling that the parser of expressions knows.
+    pub(super) const fn spelling(self) -> &'static str {
+        match self {
+            Self::Add => "+",
+            Self::Subtract => "-",
+            Self::Multiply => "*",
+            Self::Divide => "/",
+            Self::Power => "^",
+            Self::Equal => "==",
+            Self::Unequal => "!=",
+            Self::Greater => ">",
+            Self::Less => "<",
+            Self::GreaterOrEqual => ">=",
+            Self::LessOrEqual => "<=",
+            Self::And => "&&",
+            Self::Or => "||",
+        }
+    }
+}
+
+#[derive(Clone, Copy, Debug)]
+pub(super) struct Token {
+    pub(super) sign: Sign,
+    pub(super) span: Span,
+}
+
+/// A text as its tokens, with what they stand for.
 #[derive(Debug, Default)]
 pub(super) struct Tokens {
+    pub(super) list: Vec<Token>,
     pub(super) literals: Vec<LiteralUse>,
     pub(super) names: Vec<NameUse>,
 }
 
+/// Reads a text into tokens that are sure to alternate between values and
+/// operators, in brackets that match.
+///
+/// # Errors
+///
+/// Every fault, in the order of their places, at most [`reader::MOST_FAULTS`].
 pub(super) fn read(text: &str) -> Result<Tokens, Vec<Diagnostic>> {
-    match Literal::read(text) {
-        Ok(literal) if literal.length == text.len() => Ok(Tokens {
-            literals: vec![LiteralUse {
-                literal,
-                span: 0..text.chars().count(),
-            }],
-            names: Vec::new(),
-        }),
-        _ => Err(vec![Diagnostic::new(
-            "not-yet",
-            "expected a quantity, found an expression",
-        )]),
-    }
+    reader::Reader::new(text).read()
 }

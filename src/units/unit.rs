@@ -207,7 +207,7 @@ impl Parts {
         self.is_usable().then_some(self)
     }
 
-    fn join(self, other: Self, divided: bool) -> Option<Self> {
+    fn join(&self, other: &Self, divided: bool) -> Option<Self> {
         if self.offset.is_some() || other.offset.is_some() {
             return None;
         }
@@ -285,7 +285,6 @@ impl Reader<'_> {
     /// Reads as many terms as are a unit, and stays before the first sign that
     /// belongs to none. `reciprocal` allows a leading `1/`.
     fn product(&mut self, depth: usize, reciprocal: bool) -> Option<Parts> {
-        let start = self.at;
         let mut parts = if reciprocal && self.rest().starts_with("1/") {
             self.at += 1;
             Parts::one()
@@ -304,9 +303,8 @@ impl Reader<'_> {
                 self.at = before;
                 break;
             };
-            let kept = (self.at, before);
-            let Some(joined) = rejoin(&parts, next, divided) else {
-                self.at = kept.1;
+            let Some(joined) = parts.join(&next, divided) else {
+                self.at = before;
                 break;
             };
             parts = joined;
@@ -315,7 +313,7 @@ impl Reader<'_> {
                 break;
             }
         }
-        if self.at == start { None } else { Some(parts) }
+        Some(parts)
     }
 
     fn term(&mut self, depth: usize) -> Option<Parts> {
@@ -395,14 +393,6 @@ impl Reader<'_> {
         }
         digits.parse().ok()
     }
-}
-
-fn rejoin(parts: &Parts, next: Parts, divided: bool) -> Option<Parts> {
-    let own = Parts {
-        symbol: parts.symbol.clone(),
-        ..*parts
-    };
-    own.join(next, divided)
 }
 
 pub(super) fn from_superscript(sign: char) -> Option<char> {
