@@ -199,7 +199,8 @@ pub fn safe_time(si: f64) -> String {
     if si == f64::INFINITY {
         return NOT_FINITE.to_owned();
     }
-    let seconds = if si.is_nan() { 0.0 } else { down(si) };
+    // A time that is no number, or before the start, permits nothing.
+    let seconds = if si > 0.0 { down(si) } else { 0.0 };
     if seconds < 10.0 {
         return "no planned stay".to_owned();
     }

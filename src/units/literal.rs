@@ -235,7 +235,7 @@ impl Literal {
                 },
             });
         }
-        if quantity.sense != Sense::Point && quantity.si == 0.0 && self.number != 0.0 {
+        if quantity.sense != Sense::Point && self.number != 0.0 && !quantity.si.is_normal() {
             return fault(LiteralFault::TooSmall);
         }
         Ok(self)
