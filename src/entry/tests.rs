@@ -88,7 +88,7 @@ fn entries_have_the_value_that_is_written() {
         ("5 m/s * 2 s", 10.0, "m"),
         ("1 ft + 1 in", 0.3302, "m"),
         ("18000 W/m² * (t / 1 s)^(-0.75)", 2250.0, "W/m²"),
-        ("(door / stefan_boltzmann)^0.25", 1503.843_345, "K"),
+        ("(door / stefan_boltzmann)^0.25", 1503.822_455, "K"),
         ("290 kW/m² / stefan_boltzmann / (1 K)^3", 5.114_3e12, "K"),
         // Functions.
         ("sqrt(16 m²)", 4.0, "m"),
@@ -272,7 +272,7 @@ fn faults_have_a_code_and_a_place() {
         ("# note", "comment", Some(0..6)),
         ("\"text\"", "string", Some(0..6)),
         ("x + 'a'", "string", Some(4..7)),
-        ("[1]", "character", Some(0..1)),
+        ("[1", "character", Some(0..1)),
         ("x $ y", "character", Some(2..3)),
         ("tür + 1", "character", Some(1..3)),
         ("√4", "character", Some(0..1)),
@@ -331,7 +331,7 @@ fn faults_have_a_code_and_a_place() {
         ("-(5 °C)", "point-in-arithmetic", Some(0..1)),
         ("1 + (1 > 2)", "truth-in-arithmetic", Some(2..3)),
         ("1 < 2 < 3", "truth-in-arithmetic", Some(6..7)),
-        ("1 && 2", "quantity-in-logic", Some(2..3)),
+        ("1 && 2", "quantity-in-logic", Some(2..4)),
         ("!x", "quantity-in-logic", Some(0..1)),
     ];
     for (text, code, span) in table {
@@ -399,11 +399,7 @@ fn monstrous_texts_are_refused_at_once() {
 
 #[test]
 fn names_and_literals_know_their_places() {
-    let entry = Entry::parse(
-        "µ".replace('µ', "3 µm * x + charger.irradiance_from.door / door")
-            .as_str(),
-    )
-    .expect("an entry");
+    let entry = Entry::parse("3 µm * x + charger.irradiance_from.door / door").expect("an entry");
     let names: Vec<(&str, &[String], Range<usize>)> = entry
         .names()
         .iter()

@@ -1,6 +1,9 @@
 //! Laws that hold for any input: properties, tried on random ones.
 
+mod entry_never_panics;
+mod entry_reads_like_a_book;
 mod exposure_laws;
 mod graph_laws;
 mod json_laws;
+mod printing_and_parsing_agree;
 mod view_factor_laws;

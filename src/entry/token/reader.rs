@@ -140,7 +140,12 @@ impl<'a> Reader<'a> {
     /// Notes a fault; what it covers counts as the value or operator it should
     /// have been, so that one slip is told once.
     fn refuse(&mut self, fault: Diagnostic, span: Span, as_value: bool) {
-        self.faults.push(fault.at(span.into()));
+        // `x ? 1 : 2` is one condition, not two.
+        let is_told =
+            fault.code == "conditional" && self.faults.iter().any(|f| f.code == fault.code);
+        if !is_told {
+            self.faults.push(fault.at(span.into()));
+        }
         self.after_value = as_value;
         self.in_doubt = true;
     }
@@ -203,6 +208,11 @@ impl<'a> Reader<'a> {
                 let fault = Diagnostic::new(error.kind.code(), error.to_string())
                     .with_hint(error.kind.hint());
                 self.refuse(fault, span, true);
+                // The rest of the literal is no second fault.
+                self.skip_spaces();
+                if let Some((_, length)) = Unit::longest(self.rest()) {
+                    let _ = self.take(length);
+                }
             }
         }
     }
@@ -549,7 +559,8 @@ impl<'a> Reader<'a> {
     fn adjacent(&mut self, sign: char) {
         let literal_before = matches!(self.last(), Some(Sign::Literal(_)));
         let rest = self.rest();
-        let length = word_length(rest).max(self.sign_length());
+        let digits = rest.bytes().take_while(u8::is_ascii_digit).count();
+        let length = word_length(rest).max(digits).max(self.sign_length());
         let shown = format!("`{}`", rest[..length].chars().take(20).collect::<String>());
         let thousands = literal_before && sign.is_ascii_digit();
         let start = self.place;
