@@ -72,8 +72,8 @@ impl Eq for Entry {}
 impl Entry {
     /// Parses what was typed.
     ///
-    /// At most 1,000 characters and 64 levels of brackets; see the cautions of
-    /// [`Diagnostic`] for the rest.
+    /// At most 1,000 characters and 64 levels of brackets. Never panics,
+    /// whatever the text.
     ///
     /// # Errors
     ///

@@ -88,7 +88,7 @@ fn entries_have_the_value_that_is_written() {
         ("5 m/s * 2 s", 10.0, "m"),
         ("1 ft + 1 in", 0.3302, "m"),
         ("18000 W/m² * (t / 1 s)^(-0.75)", 2250.0, "W/m²"),
-        ("(door / stefan_boltzmann)^0.25", 1503.822_455, "K"),
+        ("(door / stefan_boltzmann)^0.25", 1_503.822_455, "K"),
         ("290 kW/m² / stefan_boltzmann / (1 K)^3", 5.114_3e12, "K"),
         // Functions.
         ("sqrt(16 m²)", 4.0, "m"),

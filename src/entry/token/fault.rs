@@ -1,20 +1,12 @@
 //! The wording of what the token pass refuses.
 
-use super::super::Diagnostic;
-use super::super::function::{CONSTANTS, FUNCTIONS};
+use crate::entry::Diagnostic;
+use crate::entry::function::{CONSTANTS, FUNCTIONS};
 use crate::units::{Unit, closest};
 
-pub(super) fn too_long(found: usize) -> Diagnostic {
-    let found = if found > super::super::LONGEST {
-        "more"
-    } else {
-        "fewer"
-    };
-    Diagnostic::new(
-        "too-long",
-        format!("expected at most 1000 characters, found {found}"),
-    )
-    .with_hint("move parts of it into cells of their own and use their names")
+pub(super) fn too_long() -> Diagnostic {
+    Diagnostic::new("too-long", "expected at most 1000 characters, found more")
+        .with_hint("move parts of it into cells of their own and use their names")
 }
 
 pub(super) fn empty() -> Diagnostic {
