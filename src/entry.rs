@@ -131,8 +131,8 @@ impl Entry {
     ///
     /// # Accuracy
     ///
-    /// Each operation is that of `f64`; functions are within 2 units in the
-    /// last place, those of radiation as their own documentation says.
+    /// Each operation and function is that of `f64` in the standard library;
+    /// those of radiation are as accurate as their own documentation says.
     ///
     /// # Errors
     ///

@@ -243,5 +243,8 @@ fn call(index: u16, values: &[Outcome]) -> Result<Outcome, Fault> {
         Err(fault) => fault,
     };
     fault.message = format!("in `{}`: {}", function.name, fault.message);
+    if fault.hint.is_none() {
+        fault.hint = Some(format!("write `{}`", function.usage));
+    }
     Err(fault)
 }

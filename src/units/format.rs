@@ -3,7 +3,7 @@
 //! Decimal point, thin spaces in groups of three, no locale.
 
 use super::dimension::superscript;
-use super::{Dimension, Unit};
+use super::{Dimension, Quantity, Sense, Unit};
 
 /// Which way a number is rounded.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -135,6 +135,30 @@ pub fn quantity(si: f64, unit: &Unit, figures: u32, rounding: Rounding) -> Strin
         &significant(unit.from_si(si), figures, rounding),
         unit.symbol(),
     )
+}
+
+/// Returns a quantity in the unit that reads best, or in `hint` if that
+/// measures the same kind; a difference of temperatures is always in kelvin.
+///
+/// # Examples
+///
+/// ```
+/// use farglow::units::format::{Rounding, of};
+/// use farglow::units::Literal;
+///
+/// let hearth = Literal::read("1523.15 K").expect("this is a literal").quantity();
+/// assert_eq!(of(hearth, None, 4, Rounding::Nearest), "1250 °C");
+/// let rise = hearth.minus(hearth)?;
+/// assert_eq!(of(rise, None, 1, Rounding::Nearest), "0 K");
+/// # Ok::<(), farglow::units::Error>(())
+/// ```
+pub fn of(value: Quantity, hint: Option<&Unit>, figures: u32, rounding: Rounding) -> String {
+    let unit = natural_unit(value.dimension, value.si, hint);
+    if value.sense == Sense::Difference && unit.is_scale() {
+        let kelvin = Unit::coherent(Dimension::TEMPERATURE);
+        return quantity(value.si, &kelvin, figures, rounding);
+    }
+    quantity(value.si, &unit, figures, rounding)
 }
 
 /// Returns the unit in which a value reads best: `hint` if it measures the same

@@ -43,6 +43,11 @@ pub(super) fn expected_operator(found: &str, thousands: bool) -> Diagnostic {
     .with_hint(hint)
 }
 
+pub(super) fn second_point() -> Diagnostic {
+    Diagnostic::new("missing-operator", "expected an operator, found a point")
+        .with_hint("a number has one decimal point, and a name has none before it")
+}
+
 pub(super) fn sign_run() -> Diagnostic {
     Diagnostic::new(
         "sign-run",
@@ -66,9 +71,13 @@ pub(super) fn power_after_unit(symbol: &str) -> Diagnostic {
         "power-after-unit",
         format!("expected a power that is clear, found `^` behind the unit `{symbol}`"),
     )
-    .with_hint(format!(
-        "write `{symbol}^2` without spaces for the unit, or brackets round the quantity: `(3 {symbol})^2`"
-    ))
+    .with_hint(if symbol.chars().all(char::is_alphabetic) {
+        format!(
+            "write `{symbol}^2` without spaces for the unit, or brackets round the quantity: `(3 {symbol})^2`"
+        )
+    } else {
+        format!("write brackets round the quantity: `(3 {symbol})^2`")
+    })
 }
 
 pub(super) fn decimal_comma(is_call: bool) -> Diagnostic {

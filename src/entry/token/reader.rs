@@ -211,12 +211,24 @@ impl<'a> Reader<'a> {
                 let fault = Diagnostic::new(error.kind.code(), error.to_string())
                     .with_hint(error.kind.hint());
                 self.refuse(fault, span, true);
-                // The rest of the literal is no second fault.
-                self.skip_spaces();
-                if let Some((_, length)) = Unit::longest(self.rest()) {
-                    let _ = self.take(length);
-                }
+                self.skip_literal_rest();
             }
+        }
+    }
+
+    /// Passes what belongs to a broken literal, so that it is no second fault:
+    /// its unit, or the rest of a compound whose first symbol is unknown.
+    fn skip_literal_rest(&mut self) {
+        let behind_symbol = format!("m{}", self.rest());
+        if let Some((_, length @ 2..)) = Unit::longest(&behind_symbol)
+            && self.rest().starts_with(['/', '·', '*', '×', '⋅'])
+        {
+            let _ = self.take(length - 1);
+            return;
+        }
+        self.skip_spaces();
+        if let Some((_, length)) = Unit::longest(self.rest()) {
+            let _ = self.take(length);
         }
     }
 

@@ -208,6 +208,7 @@ impl Reader<'_> {
             Parts::of(symbol).power(power)?
         };
         let before = self.at;
+        let is_percent = self.text[..before].ends_with('%');
         let parts = match self.exponent() {
             Some(exponent) if !parts.several || self.text[..before].ends_with(')') => {
                 parts.power(exponent)?
@@ -215,10 +216,10 @@ impl Reader<'_> {
             Some(_) => return None,
             None => parts,
         };
-        // `m(`, `m²x`: not the end of a unit.
+        // `m(`, `m²x`: not the end of a unit; `%` needs no gap behind it.
         match self.peek() {
             Some('(') => None,
-            Some(next) if is_symbol_sign(next) || next.is_ascii_digit() => None,
+            Some(next) if !is_percent && (is_symbol_sign(next) || next.is_ascii_digit()) => None,
             _ => Some(parts),
         }
     }

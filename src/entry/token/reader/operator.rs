@@ -29,6 +29,11 @@ impl Reader<'_> {
         }
         match sign {
             ')' => self.close(),
+            '.' => {
+                let digits = rest[1..].bytes().take_while(u8::is_ascii_digit);
+                let span = self.take(1 + digits.count());
+                self.refuse(fault::second_point(), span, true);
+            }
             ',' => self.comma(),
             '%' => {
                 let span = self.take_sign();
@@ -40,7 +45,6 @@ impl Reader<'_> {
             }
             _ if sign == '('
                 || sign == '!'
-                || sign == '.'
                 || sign.is_alphanumeric()
                 || sign == '_'
                 || sign == '°' =>
@@ -107,14 +111,22 @@ impl Reader<'_> {
     /// Two values side by side; the second is read on as if an operator stood
     /// between them.
     fn adjacent(&mut self, sign: char) {
-        let literal_before = matches!(self.last(), Some(Sign::Literal(_)));
+        let number_before = match self.last() {
+            Some(Sign::Literal(index)) => {
+                let literal = &self.tokens.literals[usize::from(index)].literal;
+                literal.unit.is_none() && literal.spread.is_none()
+            }
+            _ => false,
+        };
         let rest = self.rest();
         let digits = rest.bytes().take_while(u8::is_ascii_digit).count();
         let length = word_length(rest).max(digits).max(self.sign_length());
         let shown = format!("`{}`", rest[..length].chars().take(20).collect::<String>());
-        let thousands = literal_before && sign.is_ascii_digit();
+        let thousands = number_before && sign.is_ascii_digit();
         let start = self.place;
-        if !self.in_doubt {
+        // Words in a row are one slip.
+        let is_told = self.faults.iter().any(|f| f.code == "missing-operator");
+        if !self.in_doubt && !is_told {
             let span = start..start + rest[..length].chars().count();
             self.faults
                 .push(fault::expected_operator(&shown, thousands).at(span));

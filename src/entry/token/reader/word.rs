@@ -4,7 +4,7 @@
 use super::super::{NameUse, Sign, fault};
 use super::{Reader, superscript, word_length};
 use crate::entry::function::{CONSTANTS, FUNCTIONS};
-use crate::entry::name::{LONGEST_NAME, is_reserved};
+use crate::entry::name::{LONGEST_NAME, is_later, is_reserved};
 use crate::units::Unit;
 
 impl Reader<'_> {
@@ -19,7 +19,12 @@ impl Reader<'_> {
             let part = &part[..word_length(part)];
             if part.is_empty() {
                 broken = Some(fault::broken_member(&rest[..length]));
-                length += 1;
+                // What follows belongs to the broken name.
+                let rest = &rest[length..];
+                length += rest
+                    .bytes()
+                    .take_while(|&byte| is_later(byte) || byte == b'.')
+                    .count();
                 break;
             }
             length += 1 + part.len();
