@@ -13,9 +13,14 @@ mod finding;
 mod form;
 mod library;
 mod limit;
+mod link;
 mod metric;
+mod nearest;
+mod node;
 mod overall;
+mod read;
 mod standing;
+mod written;
 
 pub use course::{Allowed, Course};
 pub use error::{Error, Fault};
