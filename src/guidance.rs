@@ -16,7 +16,6 @@ mod limit;
 mod link;
 mod metric;
 mod nearest;
-mod node;
 mod overall;
 mod read;
 mod standing;

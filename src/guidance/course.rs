@@ -4,6 +4,9 @@
 //! The limit never rises with time, which the gate proves at load; so the
 //! first time at which an exposure passes it ends the allowed stay.
 
+#[cfg(test)]
+mod tests;
+
 use super::form::Form;
 use super::{Dose, Error, Finding, Judgement, Reason};
 
@@ -136,7 +139,12 @@ impl Course {
         if !(stay.is_finite() && stay > 0.0) {
             return Ok(unanswered(Reason::StayNotPositive));
         }
-        let passed = matches!(allowed, Allowed::Seconds(longest) if stay > longest);
+        let passed = match allowed {
+            Allowed::Seconds(longest) => stay > longest,
+            // Capped where the guidance ends, or at nothing because it only begins later.
+            Allowed::CappedAt(cap) => stay > cap && self.end() != Some(cap),
+            Allowed::Unlimited => false,
+        };
         let (time, limit) = if let Some(stretch) = self.stretch_at(stay) {
             (stay, stretch.form.at(stay))
         } else if let Some(end) = self.end().filter(|&end| stay >= end) {

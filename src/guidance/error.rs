@@ -2,6 +2,8 @@
 
 use std::fmt;
 
+use crate::json::Place;
+
 /// Why a judgement was refused.
 #[derive(Clone, Debug, PartialEq, thiserror::Error)]
 pub enum Error {
@@ -33,10 +35,8 @@ fn remedy(suggestion: Option<&str>) -> String {
 pub struct Fault {
     /// The file, as its name was handed over.
     pub file: String,
-    /// The line, from 1; absent when the fault is of the file as a whole.
-    pub line: Option<usize>,
-    /// The character in that line, from 1.
-    pub column: Option<usize>,
+    /// The line and the character in it, both from 1.
+    pub place: Place,
     /// The limit and field in which it is, such as `eu-2006-25-m, pieces 1, limit`.
     pub field: String,
     /// What was expected, what was found, and the remedy.
@@ -45,10 +45,7 @@ pub struct Fault {
 
 impl fmt::Display for Fault {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
-        write!(f, "{}", self.file)?;
-        if let (Some(line), Some(column)) = (self.line, self.column) {
-            write!(f, ", line {line}, column {column}")?;
-        }
+        write!(f, "{}, {}", self.file, self.place)?;
         if !self.field.is_empty() {
             write!(f, ", {}", self.field)?;
         }

@@ -1,5 +1,8 @@
 //! All limits that are loaded, by id.
 
+#[cfg(test)]
+pub(super) mod tests;
+
 use std::sync::LazyLock;
 
 use super::link::{self, Family, Linked};

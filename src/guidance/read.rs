@@ -5,9 +5,9 @@
 
 use super::form::Form;
 use super::nearest::nearest;
-use super::node::{self, Member, Node, Place, Value};
 use super::written::{Wanted, Written};
 use super::{Fault, HowKnown, Limit, Metric, Organ, Origin, Piece, Standing};
+use crate::json::{self, Member, Node, Place, Value};
 
 const FIELDS: [&str; 21] = [
     "id",
@@ -39,14 +39,14 @@ const PIECE_FIELDS: [&str; 3] = ["until", "before", "limit"];
 pub(super) struct Read {
     pub(super) limit: Limit,
     pub(super) file: String,
-    pub(super) id_place: Option<Place>,
-    pub(super) from_place: Option<Place>,
-    pub(super) continued_place: Option<Place>,
+    pub(super) id_place: Place,
+    pub(super) from_place: Place,
+    pub(super) continued_place: Place,
 }
 
 impl Read {
     /// Returns a fault of this limit's field `field` at `place`.
-    pub(super) fn fault(&self, place: Option<Place>, field: &str, message: String) -> Fault {
+    pub(super) fn fault(&self, place: Place, field: &str, message: String) -> Fault {
         fault(
             &self.file,
             place,
@@ -56,14 +56,23 @@ impl Read {
     }
 }
 
-fn fault(file: &str, place: Option<Place>, field: String, message: String) -> Fault {
+fn fault(file: &str, place: Place, field: String, message: String) -> Fault {
     Fault {
         file: file.to_owned(),
-        line: place.map(|place| place.line),
-        column: place.map(|place| place.column),
+        place,
         field,
         message,
     }
+}
+
+/// Returns a fault of the JSON itself; its text would give the place a second time.
+fn syntax(file: &str, error: &json::Error) -> Fault {
+    let text = error.to_string();
+    let message = text
+        .strip_prefix(&format!("{}: ", error.place))
+        .unwrap_or(&text)
+        .to_owned();
+    fault(file, error.place, String::new(), message)
 }
 
 /// Reads one file: one limit, or a list of them.
@@ -72,8 +81,7 @@ fn fault(file: &str, place: Option<Place>, field: String, message: String) -> Fa
 ///
 /// Every fault of the file, in the order of the file.
 pub(super) fn file(name: &str, bytes: &[u8], origin: &Origin) -> Result<Vec<Read>, Vec<Fault>> {
-    let root = node::parse(bytes)
-        .map_err(|(place, message)| vec![fault(name, place, String::new(), message)])?;
+    let root = json::parse(bytes).map_err(|error| vec![syntax(name, &error)])?;
     let nodes = match &root.value {
         Value::List(nodes) => nodes.as_slice(),
         _ => std::slice::from_ref(&root),
@@ -110,7 +118,7 @@ struct Gate<'a> {
 
 /// One object of the file, with the words that name it in faults.
 struct Object<'a> {
-    place: Option<Place>,
+    place: Place,
     name: String,
     members: &'a [Member],
 }
@@ -123,6 +131,11 @@ impl<'a> Object<'a> {
             .map(|member| &member.value)
     }
 
+    /// Returns the place of a field's value, or of the object if it has none.
+    fn place_of(&self, key: &str) -> Place {
+        self.get(key).map_or(self.place, |node| node.place)
+    }
+
     /// Returns the name of one of its fields.
     fn field(&self, key: &str) -> String {
         format!("{}, {key}", self.name)
@@ -130,7 +143,7 @@ impl<'a> Object<'a> {
 }
 
 impl Gate<'_> {
-    fn refuse(&mut self, place: Option<Place>, field: &str, message: String) {
+    fn refuse(&mut self, place: Place, field: &str, message: String) {
         self.faults
             .push(fault(self.file, place, field.to_owned(), message));
     }
@@ -144,7 +157,7 @@ impl Gate<'_> {
                 format!(
                     "expected an object with the fields {}, found {}",
                     known.join(", "),
-                    kind(node)
+                    node.value.kind()
                 ),
             );
             return None;
@@ -186,7 +199,10 @@ impl Gate<'_> {
                 self.refuse(
                     node.place,
                     &object.field(key),
-                    format!("expected text in quotation marks, found {}", kind(node)),
+                    format!(
+                        "expected text in quotation marks, found {}",
+                        node.value.kind()
+                    ),
                 );
                 None
             }
@@ -221,7 +237,7 @@ impl Gate<'_> {
             let remedy = nearest(text, words.iter().copied())
                 .map_or_else(String::new, |near| format!(", did you mean `{near}`?"));
             self.refuse(
-                object.get(key).and_then(|node| node.place),
+                object.place_of(key),
                 &object.field(key),
                 format!(
                     "expected one of `{}`, found `{text}`{remedy}",
@@ -290,7 +306,7 @@ impl Gate<'_> {
         if let (Some(next), Some(pieces)) = (&continued_by, &pieces)
             && pieces.last().is_some_and(|piece| piece.until.is_none())
         {
-            let place = object.get("continued_by").and_then(|node| node.place);
+            let place = object.place_of("continued_by");
             self.refuse(
                 place,
                 &object.field("continued_by"),
@@ -310,7 +326,6 @@ impl Gate<'_> {
         };
         let where_known = self.text(&object, "where_known", "say where it was read");
         let caution = self.text(&object, "caution", "say what must be said beside it");
-        let place_of = |key| object.get(key).and_then(|node| node.place);
         Some(Read {
             limit: Limit {
                 id: id?,
@@ -337,9 +352,9 @@ impl Gate<'_> {
                 origin: self.origin.clone(),
             },
             file: self.file.to_owned(),
-            id_place: place_of("id"),
-            from_place: place_of("from"),
-            continued_place: place_of("continued_by"),
+            id_place: object.place_of("id"),
+            from_place: object.place_of("from"),
+            continued_place: object.place_of("continued_by"),
         })
     }
 
@@ -353,7 +368,7 @@ impl Gate<'_> {
                 .all(|c| c.is_ascii_lowercase() || c.is_ascii_digit() || c == '-');
         if !legal {
             self.refuse(
-                object.get("id").and_then(|node| node.place),
+                object.place_of("id"),
                 &object.field("id"),
                 format!(
                     "expected small letters a to z, digits and hyphens, beginning with a letter, at most 60, found `{id}`"
@@ -404,11 +419,7 @@ impl Gate<'_> {
             Ok(time) => format!("expected a time greater than zero, found {time} s"),
             Err(wrong) => wrong.message,
         };
-        self.refuse(
-            object.get(key).and_then(|node| node.place),
-            &object.field(key),
-            message,
-        );
+        self.refuse(object.place_of(key), &object.field(key), message);
         None
     }
 
@@ -419,7 +430,7 @@ impl Gate<'_> {
                 ..
             }) if !nodes.is_empty() => nodes,
             other => {
-                let found = other.map_or("none", kind);
+                let found = other.map_or("none", |node| node.value.kind());
                 self.refuse(
                     other.map_or(object.place, |node| node.place),
                     &object.field("limit"),
@@ -506,22 +517,9 @@ impl Gate<'_> {
                 form,
             }),
             Err(message) => {
-                self.refuse(
-                    piece.get("limit").and_then(|node| node.place),
-                    &piece.field("limit"),
-                    message,
-                );
+                self.refuse(piece.place_of("limit"), &piece.field("limit"), message);
                 None
             }
         }
-    }
-}
-
-fn kind(node: &Node) -> &'static str {
-    match node.value {
-        Value::Text(_) => "text",
-        Value::List(_) => "a list",
-        Value::Object(_) => "an object",
-        Value::Other => "a number, true, false or null",
     }
 }
