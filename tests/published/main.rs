@@ -1,14 +1,18 @@
 //! Checks against published numbers: one module per source, each test headed
 //! by where its numbers come from and how they are known.
 
+mod guidance_rows;
 mod rows;
 
 mod blackbody_tables;
 mod common_practice;
 mod defining_constants;
+mod directive_2006_25;
+mod every_guidance_row;
 mod every_row;
 mod fixed_points;
 mod ladle_case;
 mod quadrature_of_planck;
 mod textbook_examples;
+mod time_to_pain;
 mod view_factor_catalogue;
