@@ -1,5 +1,7 @@
 //! What a limit measures: which radiation, and whether its rate or its sum.
 
+use crate::units::Dimension;
+
 /// What a limit judges: a band of wavelengths, as irradiance or as dose.
 ///
 /// Bands are unweighted. Whatever the metric, the exposure that is handed to
@@ -88,6 +90,16 @@ impl Metric {
             Self::SkinDose => "H_skin",
             Self::TotalIrradiance => "E",
             Self::TotalDose => "H",
+        }
+    }
+
+    /// Returns the dimension that the written limit must have.
+    #[must_use]
+    pub const fn dimension(self) -> Dimension {
+        if self.is_dose() {
+            Dimension::RADIANT_EXPOSURE
+        } else {
+            Dimension::IRRADIANCE
         }
     }
 

@@ -5,7 +5,7 @@
 
 use super::form::Form;
 use super::nearest::nearest;
-use super::written::{Wanted, Written};
+use super::written::{self, Written};
 use super::{Fault, HowKnown, Limit, Metric, Organ, Origin, Piece, Standing};
 use crate::json::{self, Member, Node, Place, Value};
 
@@ -414,12 +414,14 @@ impl Gate<'_> {
     /// Returns a field that is an exposure time greater than zero, in seconds.
     fn time(&mut self, object: &Object<'_>, key: &str) -> Option<f64> {
         let text = self.optional(object, key)?;
-        let message = match Written::constant(text) {
+        let messages = match written::time(text) {
             Ok(time) if time > 0.0 => return Some(time),
-            Ok(time) => format!("expected a time greater than zero, found {time} s"),
-            Err(wrong) => wrong.message,
+            Ok(time) => vec![format!("expected a time greater than zero, found {time} s")],
+            Err(messages) => messages,
         };
-        self.refuse(object.place_of(key), &object.field(key), message);
+        for message in messages {
+            self.refuse(object.place_of(key), &object.field(key), message);
+        }
         None
     }
 
@@ -506,9 +508,9 @@ impl Gate<'_> {
             return None;
         }
         let text = self.text(&piece, "limit", "say what the limit is")?;
-        let form = Written::read(text, Wanted::Limit(metric))
-            .map_err(|wrong| wrong.message)
-            .and_then(|written| Form::new(written, metric.is_dose(), start, until));
+        let form = Written::limit(text, metric.dimension()).and_then(|written| {
+            Form::new(written, metric.is_dose(), start, until).map_err(|message| vec![message])
+        });
         match form {
             Ok(form) => Some(Piece {
                 until,
@@ -516,8 +518,10 @@ impl Gate<'_> {
                 limit: text.to_owned(),
                 form,
             }),
-            Err(message) => {
-                self.refuse(piece.place_of("limit"), &piece.field("limit"), message);
+            Err(messages) => {
+                for message in messages {
+                    self.refuse(piece.place_of("limit"), &piece.field("limit"), message);
+                }
                 None
             }
         }
