@@ -9,6 +9,7 @@ mod tests;
 
 use super::form::Form;
 use super::{Dose, Error, Finding, Judgement, Reason};
+use crate::units::format;
 
 /// How long one stay may be, with no other exposure that shift.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -37,6 +38,23 @@ pub(super) struct Stretch {
     pub(super) end: Option<f64>,
     pub(super) includes_end: bool,
     pub(super) form: Form,
+}
+
+impl Allowed {
+    /// Returns the time in words, rounded down.
+    ///
+    /// "Unlimited" holds for this guidance alone: a position's own time is
+    /// unlimited only where no other effect limits it.
+    #[must_use]
+    pub fn text(self) -> String {
+        match self {
+            Self::Seconds(time) => format::safe_time(time),
+            Self::Unlimited => "unlimited".to_owned(),
+            Self::CappedAt(time) => {
+                format!("{}, and nothing is said beyond", format::safe_time(time))
+            }
+        }
+    }
 }
 
 impl Course {
@@ -99,12 +117,12 @@ impl Course {
         if !(exposure.is_finite() && exposure >= 0.0) {
             return Err(Error::Exposure { value: exposure });
         }
-        for stretch in &self.stretches {
+        for (at, stretch) in self.stretches.iter().enumerate() {
             if exposure > stretch.form.at(stretch.start) {
                 // Before the first row nothing is known, so nothing is granted.
-                return Ok(if stretch.start > 0.0 && stretch.start == self.start() {
+                return Ok(if at == 0 && stretch.start > 0.0 {
                     Allowed::CappedAt(0.0)
-                } else if stretch.start_taken || stretch.start <= 0.0 {
+                } else if at == 0 || stretch.start_taken {
                     Allowed::Seconds(stretch.start)
                 } else {
                     Allowed::Seconds(stretch.start.next_down())
@@ -161,7 +179,7 @@ impl Course {
             exposure,
             limit: Some(limit),
             ratio: Some(settled(exposure / limit, passed)),
-            dose: self.dose.then(|| Dose {
+            dose: self.dose.then_some(Dose {
                 exposure: exposure * time,
                 limit: limit * time,
             }),

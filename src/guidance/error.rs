@@ -3,6 +3,8 @@
 use std::fmt;
 
 use crate::json::Place;
+use crate::units::format::{self, Rounding};
+use crate::units::{Dimension, Unit};
 
 /// Why a judgement was refused.
 #[derive(Clone, Debug, PartialEq, thiserror::Error)]
@@ -16,7 +18,7 @@ pub enum Error {
         suggestion: Option<String>,
     },
     /// The exposure is no irradiance.
-    #[error("expected an exposure of zero or more W/m², found {value}")]
+    #[error("expected an exposure of zero or more, found {}", irradiance(*value))]
     Exposure {
         /// What was handed over.
         value: f64,
@@ -54,3 +56,27 @@ impl fmt::Display for Fault {
 }
 
 impl std::error::Error for Fault {}
+
+/// Returns an exposure time for messages.
+pub(super) fn seconds(time: f64) -> String {
+    number(time, Dimension::TIME)
+}
+
+/// Returns an irradiance for messages.
+pub(super) fn irradiance(value: f64) -> String {
+    number(value, Dimension::IRRADIANCE)
+}
+
+/// Returns a number as it was written, as far as six figures do.
+fn number(si: f64, dimension: Dimension) -> String {
+    let unit = Unit::coherent(dimension);
+    let short = |figures| format::quantity(si, &unit, figures, Rounding::Nearest);
+    let plain = |text: &str| -> String { text.chars().filter(|&c| c != format::GROUP).collect() };
+    // The fewest figures that say the same, so that 1000 s is not 1000.00 s.
+    let full = format::significant(si, 6, Rounding::Nearest);
+    let value = plain(&full).parse::<f64>().unwrap_or(si);
+    let figures = (1..6).find(|&figures| {
+        plain(&format::significant(si, figures, Rounding::Nearest)).parse() == Ok(value)
+    });
+    short(figures.unwrap_or(6))
+}

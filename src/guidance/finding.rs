@@ -1,6 +1,7 @@
 //! How one exposure stands to one limit.
 
 use super::Allowed;
+use super::error::seconds;
 
 /// One exposure judged by one family of limits.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -109,10 +110,16 @@ impl Reason {
             Self::NoStay => "no stay is stated".to_owned(),
             Self::StayNotPositive => "the stay is not a time greater than zero".to_owned(),
             Self::Before { from } => {
-                format!("this guidance speaks only of stays longer than {from} s")
+                format!(
+                    "this guidance speaks only of stays longer than {}",
+                    seconds(from)
+                )
             }
             Self::Beyond { until } => {
-                format!("this guidance says nothing about stays past {until} s")
+                format!(
+                    "this guidance says nothing about stays past {}",
+                    seconds(until)
+                )
             }
         }
     }

@@ -4,6 +4,7 @@
 //! powers of time are recognised at load and inverted in closed form, since a
 //! limit is judged thousands of times for one uncertainty.
 
+use super::error::{irradiance, seconds};
 use super::written::Written;
 
 /// Stays shorter than this are given the limit at this time, which is lower and so safe.
@@ -57,13 +58,19 @@ impl Form {
             };
             if limit <= 0.0 {
                 return Err(format!(
-                    "expected a limit greater than zero, found {limit} W/m² at {t} s"
+                    "expected a limit greater than zero, found {} at {}",
+                    irradiance(limit),
+                    seconds(t)
                 ));
             }
             // A hair of rounding is no rise.
             if let Some((earlier, higher)) = before.filter(|&(_, h)| limit > h * (1.0 + 1e-12)) {
                 return Err(format!(
-                    "expected a limit that as an irradiance never rises with time, found {higher} W/m² at {earlier} s and {limit} W/m² at {t} s"
+                    "expected a limit that as an irradiance never rises with time, found {} at {} and {} at {}",
+                    irradiance(higher),
+                    seconds(earlier),
+                    irradiance(limit),
+                    seconds(t)
                 ));
             }
             before = Some((t, limit));

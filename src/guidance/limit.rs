@@ -1,5 +1,6 @@
 //! One published limit, as its file states it.
 
+use super::error::seconds;
 use super::form::Form;
 use super::{Envelope, HowKnown, Metric, Organ, Standing};
 
@@ -117,5 +118,36 @@ impl Limit {
             Origin::Shipped => text,
             Origin::Own { file } => format!("{text} (entered by the user in {file})"),
         }
+    }
+
+    /// Returns the limit as it is written, each piece with the stays to which it applies.
+    ///
+    /// # Examples
+    ///
+    /// ```
+    /// use farglow::guidance::Library;
+    ///
+    /// let row = Library::shipped().get("eu-2006-25-o").expect("it is shipped");
+    /// assert_eq!(row.limit_text(), "20000 J/m² * (t / 1 s)^0.25 for t under 10 s");
+    /// ```
+    #[must_use]
+    pub fn limit_text(&self) -> String {
+        // The start of a row belongs to the row before it.
+        let (mut start, mut taken) = (self.from, true);
+        let mut texts = Vec::with_capacity(self.pieces.len());
+        for piece in &self.pieces {
+            let stays = match piece.until {
+                Some(end) if piece.includes_end => {
+                    format!("t up to and including {}", seconds(end))
+                }
+                Some(end) => format!("t under {}", seconds(end)),
+                None if start <= 0.0 => "every t".to_owned(),
+                None if taken => format!("t longer than {}", seconds(start)),
+                None => format!("t of {} and longer", seconds(start)),
+            };
+            texts.push(format!("{} for {stays}", piece.limit));
+            (start, taken) = (piece.until.unwrap_or(f64::MAX), piece.includes_end);
+        }
+        texts.join("; ")
     }
 }

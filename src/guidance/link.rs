@@ -1,6 +1,7 @@
 //! What ties rows to one another: unique ids, and successors that adjoin.
 
 use super::course::{Course, Stretch};
+use super::error::{irradiance, seconds};
 use super::nearest::nearest;
 use super::read::Read;
 use super::{Fault, Limit};
@@ -150,14 +151,16 @@ fn misfit(row: &Limit, successor: &Limit) -> Option<String> {
     // Both times are written by people: the same text gives the same bits.
     if end.to_bits() != successor.from.to_bits() {
         return Some(format!(
-            "expected a successor from {end} s, where this row ends, found `{id}` from {} s",
-            successor.from
+            "expected a successor from {}, where this row ends, found `{id}` from {}",
+            seconds(end),
+            seconds(successor.from)
         ));
     }
     let (before, after) = (last.form.at(end), first.form.at(end));
     (after > before * (1.0 + 1e-12)).then(|| {
         format!(
-            "expected a limit that never rises with time, found a step up from {before} W/m² to {after} W/m² at {end} s, where `{id}` begins"
+            "expected a limit that never rises with time, found a step up from {} to {} at {}, where `{id}` begins",
+            irradiance(before), irradiance(after), seconds(end)
         )
     })
 }

@@ -35,19 +35,23 @@ fn plain(text: &str) -> Vec<char> {
         .collect()
 }
 
-/// Counts the characters to insert, leave out or replace (Levenshtein).
+/// Counts the characters to insert, leave out, replace, or swap with their neighbour.
 fn distance(a: &[char], b: &[char]) -> usize {
-    let mut row: Vec<usize> = (0..=b.len()).collect();
-    for (i, from) in a.iter().enumerate() {
-        let mut diagonal = row[0];
-        row[0] = i + 1;
-        for (j, to) in b.iter().enumerate() {
-            let replaced = diagonal + usize::from(from != to);
-            diagonal = row[j + 1];
-            row[j + 1] = replaced.min(row[j] + 1).min(diagonal + 1);
+    let mut before: Vec<usize> = Vec::new();
+    let mut last: Vec<usize> = (0..=b.len()).collect();
+    for i in 1..=a.len() {
+        let mut row = vec![i];
+        for j in 1..=b.len() {
+            let replaced = last[j - 1] + usize::from(a[i - 1] != b[j - 1]);
+            let mut least = replaced.min(last[j] + 1).min(row[j - 1] + 1);
+            if i > 1 && j > 1 && a[i - 1] == b[j - 2] && a[i - 2] == b[j - 1] {
+                least = least.min(before[j - 2] + 1);
+            }
+            row.push(least);
         }
+        before = std::mem::replace(&mut last, row);
     }
-    row[b.len()]
+    last[b.len()]
 }
 
 #[cfg(test)]
@@ -62,6 +66,7 @@ mod tests {
             ("EU_2006_25 m", Some("eu-2006-25-m")),
             ("icnirp-2013-ireye", Some("icnirp-2013-ir-eye")),
             ("paintime", Some("pain-time")),
+            ("pian-tmie", Some("pain-time")),
             ("", None),
             ("something else", None),
         ] {

@@ -3,11 +3,12 @@
 //! Shipped files and a user's own pass through it alike. Every fault is
 //! collected; what ties rows to one another is checked in `link`.
 
+use super::error::{irradiance, seconds};
 use super::form::Form;
-use super::nearest::nearest;
+use super::gate::{Gate, Object, fault};
 use super::written::{self, Written};
 use super::{Fault, HowKnown, Limit, Metric, Organ, Origin, Piece, Standing};
-use crate::json::{self, Member, Node, Place, Value};
+use crate::json::{self, Node, Place, Value};
 
 const FIELDS: [&str; 21] = [
     "id",
@@ -56,15 +57,6 @@ impl Read {
     }
 }
 
-fn fault(file: &str, place: Place, field: String, message: String) -> Fault {
-    Fault {
-        file: file.to_owned(),
-        place,
-        field,
-        message,
-    }
-}
-
 /// Returns a fault of the JSON itself; its text would give the place a second time.
 fn syntax(file: &str, error: &json::Error) -> Fault {
     let text = error.to_string();
@@ -110,155 +102,7 @@ pub(super) fn file(name: &str, bytes: &[u8], origin: &Origin) -> Result<Vec<Read
     }
 }
 
-struct Gate<'a> {
-    file: &'a str,
-    origin: &'a Origin,
-    faults: Vec<Fault>,
-}
-
-/// One object of the file, with the words that name it in faults.
-struct Object<'a> {
-    place: Place,
-    name: String,
-    members: &'a [Member],
-}
-
-impl<'a> Object<'a> {
-    fn get(&self, key: &str) -> Option<&'a Node> {
-        self.members
-            .iter()
-            .find(|member| member.key == key)
-            .map(|member| &member.value)
-    }
-
-    /// Returns the place of a field's value, or of the object if it has none.
-    fn place_of(&self, key: &str) -> Place {
-        self.get(key).map_or(self.place, |node| node.place)
-    }
-
-    /// Returns the name of one of its fields.
-    fn field(&self, key: &str) -> String {
-        format!("{}, {key}", self.name)
-    }
-}
-
 impl Gate<'_> {
-    fn refuse(&mut self, place: Place, field: &str, message: String) {
-        self.faults
-            .push(fault(self.file, place, field.to_owned(), message));
-    }
-
-    /// Returns a node as an object that has no fields but those known.
-    fn object<'n>(&mut self, node: &'n Node, name: String, known: &[&str]) -> Option<Object<'n>> {
-        let Value::Object(members) = &node.value else {
-            self.refuse(
-                node.place,
-                &name,
-                format!(
-                    "expected an object with the fields {}, found {}",
-                    known.join(", "),
-                    node.value.kind()
-                ),
-            );
-            return None;
-        };
-        for member in members {
-            if !known.contains(&member.key.as_str()) {
-                let remedy = nearest(&member.key, known.iter().copied()).map_or_else(
-                    || format!("; the fields are {}", known.join(", ")),
-                    |near| format!(", did you mean `{near}`?"),
-                );
-                self.refuse(
-                    member.key_place,
-                    &name,
-                    format!("unknown field `{}`{remedy}", member.key),
-                );
-            }
-        }
-        Some(Object {
-            place: node.place,
-            name,
-            members,
-        })
-    }
-
-    /// Returns a field that may be absent, as text that is not blank.
-    fn optional<'n>(&mut self, object: &Object<'n>, key: &str) -> Option<&'n str> {
-        let node = object.get(key)?;
-        match &node.value {
-            Value::Text(text) if !text.trim().is_empty() => Some(text),
-            Value::Text(_) => {
-                self.refuse(
-                    node.place,
-                    &object.field(key),
-                    "expected text, found none between the quotation marks".to_owned(),
-                );
-                None
-            }
-            _ => {
-                self.refuse(
-                    node.place,
-                    &object.field(key),
-                    format!(
-                        "expected text in quotation marks, found {}",
-                        node.value.kind()
-                    ),
-                );
-                None
-            }
-        }
-    }
-
-    /// Returns a field that must be there, as text that is not blank.
-    fn text<'n>(&mut self, object: &Object<'n>, key: &str, why: &str) -> Option<&'n str> {
-        if object.get(key).is_none() {
-            self.refuse(
-                object.place,
-                &object.name,
-                format!("the field `{key}` is missing: {why}"),
-            );
-            return None;
-        }
-        self.optional(object, key)
-    }
-
-    /// Returns a field whose text must be one of a few words.
-    fn word<T>(
-        &mut self,
-        object: &Object<'_>,
-        key: &str,
-        why: &str,
-        words: &[&'static str],
-        from_word: impl Fn(&str) -> Option<T>,
-    ) -> Option<T> {
-        let text = self.text(object, key, why)?;
-        let value = from_word(text);
-        if value.is_none() {
-            let remedy = nearest(text, words.iter().copied())
-                .map_or_else(String::new, |near| format!(", did you mean `{near}`?"));
-            self.refuse(
-                object.place_of(key),
-                &object.field(key),
-                format!(
-                    "expected one of `{}`, found `{text}`{remedy}",
-                    words.join("`, `")
-                ),
-            );
-        }
-        value
-    }
-
-    fn how_known(&mut self, object: &Object<'_>, key: &str, of: &str) -> Option<HowKnown> {
-        let why = format!("say how {of} known, and never more surely than so");
-        self.word(
-            object,
-            key,
-            &why,
-            &HowKnown::ALL.map(HowKnown::word),
-            HowKnown::from_word,
-        )
-    }
-
     fn limit(&mut self, node: &Node, number: usize) -> Option<Read> {
         let named = match &node.value {
             Value::Object(members) => members.iter().find(|m| m.key == "id"),
@@ -416,7 +260,10 @@ impl Gate<'_> {
         let text = self.optional(object, key)?;
         let messages = match written::time(text) {
             Ok(time) if time > 0.0 => return Some(time),
-            Ok(time) => vec![format!("expected a time greater than zero, found {time} s")],
+            Ok(time) => vec![format!(
+                "expected a time greater than zero, found {}",
+                seconds(time)
+            )],
             Err(messages) => messages,
         };
         for message in messages {
@@ -456,9 +303,8 @@ impl Gate<'_> {
                     node.place,
                     &name,
                     format!(
-                        "expected a limit that never rises with time, found a step up from {} W/m² to {} W/m² at {start} s",
-                        before.form.at(start),
-                        piece.form.at(start)
+                        "expected a limit that never rises with time, found a step up from {} to {} at {}",
+                        irradiance(before.form.at(start)), irradiance(piece.form.at(start)), seconds(start)
                     ),
                 );
             }
@@ -503,7 +349,11 @@ impl Gate<'_> {
             self.refuse(
                 piece.place,
                 &piece.name,
-                format!("expected an end later than its start at {start} s, found {end} s"),
+                format!(
+                    "expected an end later than its start at {}, found {}",
+                    seconds(start),
+                    seconds(end)
+                ),
             );
             return None;
         }

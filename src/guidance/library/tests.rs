@@ -138,6 +138,67 @@ fn a_limit_is_cited_in_one_line() {
 }
 
 #[test]
+fn a_limit_is_written_with_the_stays_to_which_each_piece_applies() {
+    for (id, text) in [
+        (
+            "eu-2006-25-m",
+            "18000 W/m² * (t / 1 s)^(-0.75) for t up to and including 1000 s",
+        ),
+        ("eu-2006-25-n", "100 W/m² for t longer than 1000 s"),
+        (
+            "icnirp-2013-ir-eye",
+            "18000 W/m² * (t / 1 s)^(-0.75) for t under 1000 s; 100 W/m² for t of 1000 s and longer",
+        ),
+        (
+            "pain-time",
+            "35 kW/m² * (t / 1 s)^(-1 / 1.33) for t up to and including 55.8616 s",
+        ),
+    ] {
+        let limit = Library::shipped().get(id).expect("it is shipped");
+        assert_eq!(limit.limit_text(), text, "{id}");
+    }
+    let own = Library::read("bay.json", sound().as_bytes()).expect("the file is sound");
+    assert_eq!(own.limits()[0].limit_text(), "500 W/m² for every t");
+}
+
+#[test]
+fn reasons_and_times_are_said_in_words() {
+    for (finding, text) in [
+        (Finding::Within, "within"),
+        (Finding::Over, "over"),
+        (Finding::BelowOnset, "below onset"),
+        (Finding::OnsetReached, "onset reached"),
+        (
+            Finding::NotAssessed(Reason::NoStay),
+            "not assessed: no stay is stated",
+        ),
+        (
+            Finding::NotAssessed(Reason::Beyond { until: 10.0 }),
+            "not assessed: this guidance says nothing about stays past 10 s",
+        ),
+        (
+            Finding::NotAssessed(Reason::Before { from: 1000.0 }),
+            "not assessed: this guidance speaks only of stays longer than 1000 s",
+        ),
+    ] {
+        assert_eq!(finding.text(), text);
+    }
+    for (allowed, text) in [
+        (Allowed::Unlimited, "unlimited"),
+        (Allowed::Seconds(3.9), "no planned stay"),
+        (Allowed::Seconds(59.99), "59 s"),
+        (Allowed::Seconds(1000.0_f64.next_down()), "16 min"),
+        (Allowed::CappedAt(10.0), "10 s, and nothing is said beyond"),
+        (
+            Allowed::CappedAt(0.0),
+            "no planned stay, and nothing is said beyond",
+        ),
+    ] {
+        assert_eq!(allowed.text(), text, "{allowed:?}");
+    }
+}
+
+#[test]
 fn a_family_is_the_rows_in_order_of_time() {
     let library = Library::shipped();
     for (id, expected) in [
@@ -432,7 +493,7 @@ fn a_faulty_file_is_refused_with_its_place() {
         ),
         (
             format!("[{whole},\n{whole}]"),
-            20,
+            21,
             9,
             "is taken by \"Rule of the casting bay\"",
         ),
