@@ -90,7 +90,7 @@ impl Course {
     /// limit is returned wherever one is.
     #[must_use]
     pub fn limit_at(&self, t: f64) -> Option<f64> {
-        self.stretch_at(t).map(|stretch| stretch.form.at(t))
+        self.stretch_at(t).map(|stretch| finite(stretch.form.at(t)))
     }
 
     fn stretch_at(&self, t: f64) -> Option<&Stretch> {
@@ -177,11 +177,11 @@ impl Course {
         };
         Ok(Judgement {
             exposure,
-            limit: Some(limit),
-            ratio: Some(settled(exposure / limit, passed)),
+            limit: Some(finite(limit)),
+            ratio: Some(settled(exposure, limit, passed)),
             dose: self.dose.then_some(Dose {
-                exposure: exposure * time,
-                limit: limit * time,
+                exposure: finite(exposure * time),
+                limit: finite(limit * time),
             }),
             judged_at: Some(time),
             allowed,
@@ -195,13 +195,21 @@ impl Course {
     }
 }
 
-/// Brings a ratio that rounding put on the wrong side of 1 to the side where the time says it is.
-fn settled(ratio: f64, passed: bool) -> f64 {
+/// Returns exposure over limit; one that rounding put on the wrong side of 1 is brought to the
+/// side where the time says it is.
+fn settled(exposure: f64, limit: f64, passed: bool) -> f64 {
     if passed {
-        ratio.max(1.0_f64.next_up())
+        finite(exposure / limit).max(1.0_f64.next_up())
+    } else if exposure == 0.0 {
+        0.0
     } else {
-        ratio.min(1.0)
+        (exposure / limit).min(1.0)
     }
+}
+
+/// Returns the largest number in place of infinity, which no result may be.
+fn finite(value: f64) -> f64 {
+    value.min(f64::MAX)
 }
 
 impl Stretch {

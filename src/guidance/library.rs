@@ -187,8 +187,6 @@ impl Library {
     }
 
     fn index(&self, id: &str) -> Option<usize> {
-        self.limits
-            .binary_search_by(|limit| limit.id.as_str().cmp(id))
-            .ok()
+        link::find(&self.limits, id)
     }
 }

@@ -1,5 +1,8 @@
 //! What ties rows to one another: unique ids, and successors that adjoin.
 
+use std::collections::BTreeMap;
+use std::collections::btree_map::Entry;
+
 use super::course::{Course, Stretch};
 use super::error::{irradiance, seconds};
 use super::nearest::nearest;
@@ -29,25 +32,31 @@ pub(super) struct Linked {
 pub(super) fn link(there: &[Limit], read: &[Read]) -> Result<Linked, Vec<Fault>> {
     let mut faults = Vec::new();
     let mut limits = there.to_vec();
+    let mut titles: BTreeMap<&str, &str> = there
+        .iter()
+        .map(|limit| (limit.id.as_str(), limit.title.as_str()))
+        .collect();
     for new in read {
-        if let Some(old) = limits.iter().find(|limit| limit.id == new.limit.id) {
-            faults.push(new.fault(
+        let (id, title) = (new.limit.id.as_str(), new.limit.title.as_str());
+        match titles.entry(id) {
+            Entry::Vacant(free) => {
+                let _ = free.insert(title);
+                limits.push(new.limit.clone());
+            }
+            Entry::Occupied(taken) => faults.push(new.fault(
                 new.id_place,
                 "id",
                 format!(
-                    "the id `{}` is taken by \"{}\": give this limit another",
-                    old.id, old.title
+                    "the id `{id}` is taken by \"{}\": give this limit another",
+                    taken.get()
                 ),
-            ));
-        } else {
-            limits.push(new.limit.clone());
+            )),
         }
     }
     if !faults.is_empty() {
         return Err(faults);
     }
     limits.sort_by(|a, b| a.id.cmp(&b.id));
-    let find = |id: &str| limits.binary_search_by(|limit| limit.id.as_str().cmp(id));
     let read_of = |id: &str| read.iter().find(|new| new.limit.id == id);
 
     let mut next: Vec<Option<usize>> = vec![None; limits.len()];
@@ -64,7 +73,7 @@ pub(super) fn link(there: &[Limit], read: &[Read]) -> Result<Linked, Vec<Fault>>
                 faults.push(new.fault(new.from_place, "from", message));
             }
         };
-        let Ok(found) = find(successor) else {
+        let Some(found) = find(&limits, successor) else {
             let remedy = nearest(successor, limits.iter().map(|limit| limit.id.as_str()))
                 .map_or_else(
                     || ": write the id of a limit that is loaded".to_owned(),
@@ -73,13 +82,16 @@ pub(super) fn link(there: &[Limit], read: &[Read]) -> Result<Linked, Vec<Fault>>
             refuse(format!("no limit is named `{successor}`{remedy}"));
             continue;
         };
-        if loops(&limits, at) {
-            refuse(format!(
-                "`{}` comes to continue itself by way of `{successor}`: one row of a chain must be the last",
-                limit.id
-            ));
-        } else if let Some(message) = misfit(limit, &limits[found]) {
-            refuse(message);
+        // Times only grow along a chain, so one that closes does not fit somewhere.
+        if let Some(message) = misfit(limit, &limits[found]) {
+            refuse(if loops(&limits, at) {
+                format!(
+                    "`{}` comes to continue itself by way of `{successor}`: one row of a chain must be the last",
+                    limit.id
+                )
+            } else {
+                message
+            });
         }
         if let Some(other) = previous[found] {
             refuse(format!(
@@ -112,12 +124,19 @@ pub(super) fn link(there: &[Limit], read: &[Read]) -> Result<Linked, Vec<Fault>>
     })
 }
 
+/// Returns where the limit of that id is among limits in the order of their ids.
+pub(super) fn find(limits: &[Limit], id: &str) -> Option<usize> {
+    limits
+        .binary_search_by(|limit| limit.id.as_str().cmp(id))
+        .ok()
+}
+
 /// Returns whether the chain of successors of a row comes back to it.
 fn loops(limits: &[Limit], from: usize) -> bool {
     let mut at = from;
     for _ in limits {
         let next = limits[at].continued_by.as_deref();
-        let Some(next) = next.and_then(|id| limits.iter().position(|limit| limit.id == id)) else {
+        let Some(next) = next.and_then(|id| find(limits, id)) else {
             return false;
         };
         if next == from {

@@ -36,6 +36,9 @@ const FIELDS: [&str; 21] = [
 const METRIC_FIELDS: [&str; 3] = ["quantity", "band", "weighting"];
 const PIECE_FIELDS: [&str; 3] = ["until", "before", "limit"];
 
+/// The most limits in one file, and pieces in one limit: more are no guidance for people.
+const MOST: usize = 1000;
+
 /// A limit as read, with the places that linking may have to name.
 pub(super) struct Read {
     pub(super) limit: Limit,
@@ -89,6 +92,12 @@ pub(super) fn file(name: &str, bytes: &[u8], origin: &Origin) -> Result<Vec<Read
             "",
             "expected at least one limit, found an empty list".to_owned(),
         );
+    }
+    if nodes.len() > MOST {
+        let found = nodes.len();
+        let message = format!("expected at most {MOST} limits in a file, found {found}: split it");
+        gate.refuse(root.place, "", message);
+        return Err(gate.faults);
     }
     let limits: Vec<Option<Read>> = nodes
         .iter()
@@ -277,14 +286,14 @@ impl Gate<'_> {
             Some(Node {
                 value: Value::List(nodes),
                 ..
-            }) if !nodes.is_empty() => nodes,
+            }) if (1..=MOST).contains(&nodes.len()) => nodes,
             other => {
                 let found = other.map_or("none", |node| node.value.kind());
                 self.refuse(
                     other.map_or(object.place, |node| node.place),
                     &object.field("limit"),
                     format!(
-                        "expected a list of at least one piece with `until` or `before`, and `limit`, found {found}"
+                        "expected a list of 1 to {MOST} pieces with `until` or `before`, and `limit`, found {found}"
                     ),
                 );
                 return None;

@@ -271,6 +271,36 @@ fn limits_are_given_only_where_guidance_speaks() {
     }
 }
 
+#[test]
+fn extremes_give_finite_numbers() {
+    let steep = crate::guidance::library::tests::own(
+        r#""irradiance", "band": "all wavelengths""#,
+        r#"[{"limit": "1e-300 W/m² * (t / 1 s)^(-1.5)"}]"#,
+    );
+    let steep = Library::read("own.json", steep.as_bytes()).expect("the file is sound");
+    for (library, id) in [
+        (Library::shipped(), "eu-2006-25-m"),
+        (Library::shipped(), "eu-2006-25-o"),
+        (Library::shipped(), "pain-time"),
+        (&steep, "own-rule"),
+    ] {
+        for exposure in [0.0, f64::MIN_POSITIVE, 1.0, f64::MAX] {
+            for stay in [5e-324, 1e-300, 1e-3, 9.99, 1e5, f64::MAX] {
+                let found = library
+                    .judge(id, exposure, Some(stay))
+                    .expect("it is loaded");
+                let dose = found.dose.map(|dose| [dose.exposure, dose.limit]);
+                let numbers = [found.ratio, found.limit, found.judged_at];
+                let all = numbers.iter().flatten().chain(dose.iter().flatten());
+                assert!(
+                    all.copied().all(f64::is_finite),
+                    "{id}, {exposure} W/m² for {stay} s: {found:?}"
+                );
+            }
+        }
+    }
+}
+
 /// Formulas that are no powers of time, in a user's file.
 fn own() -> Library {
     let bytes = crate::guidance::library::tests::own(

@@ -1,3 +1,5 @@
+use proptest::prelude::*;
+
 use super::{Library, SHIPPED};
 use crate::guidance::{
     Allowed, Envelope, Finding, HowKnown, Limit, Metric, Organ, Origin, Overall, Reason, Standing,
@@ -356,7 +358,7 @@ fn a_faulty_file_is_refused_with_its_place() {
             13,
             "unknown metric radiance / all wavelengths / none",
         ),
-        (piece("[]"), 13, 12, "expected a list of at least one piece"),
+        (piece("[]"), 13, 12, "expected a list of 1 to 1000 pieces"),
         (piece(r#"[{ "limit": "500 W/m² + 1 s" }]"#), 13, 24, "W/m²"),
         (
             piece(r#"[{ "limit": "500 J/m²" }]"#),
@@ -642,5 +644,33 @@ fn overall_is_over_before_it_is_not_assessed_before_it_is_within() {
         let found: Overall = overall(findings.iter().copied());
         assert_eq!(found.text(), text, "{findings:?}");
         assert!(text.starts_with(found.word()), "{text}");
+    }
+}
+
+proptest! {
+    #![proptest_config(ProptestConfig { failure_persistence: None, ..ProptestConfig::default() })]
+
+    #[test]
+    fn a_damaged_file_is_refused_or_read_but_never_stops_the_program(
+        at in any::<prop::sample::Index>(), sign in any::<char>(), cut in any::<bool>(), piece in ".{0,40}",
+    ) {
+        let whole = own(
+            r#""irradiance", "band": "all wavelengths""#,
+            &format!(r#"[{{ "limit": "500 W/m² * {}" }}]"#, piece.replace(['"', '\\'], "")),
+        );
+        let mut signs: Vec<char> = whole.chars().collect();
+        let at = at.index(signs.len());
+        if cut { signs.truncate(at) } else { signs[at] = sign }
+        let file: String = signs.into_iter().collect();
+        match Library::read("bay.json", file.as_bytes()) {
+            Ok(library) => {
+                for exposure in [0.0, 1.0, 1e9] {
+                    let id = library.limits()[0].id.as_str();
+                    let found = library.judge(id, exposure, Some(60.0)).expect("it is loaded");
+                    prop_assert!(found.ratio.is_none_or(f64::is_finite), "{:?}", found);
+                }
+            }
+            Err(faults) => prop_assert!(!faults.is_empty()),
+        }
     }
 }
