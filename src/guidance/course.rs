@@ -108,7 +108,7 @@ impl Course {
     ///
     /// # Accuracy
     ///
-    /// `1e-15` relative for powers of time, `1e-12` for other formulas.
+    /// `4e-15` relative for powers of time, `1e-12` for other formulas, where the limit still falls.
     ///
     /// # Errors
     ///

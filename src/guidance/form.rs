@@ -184,3 +184,53 @@ impl Form {
         low
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::{Form, Written};
+    use crate::guidance::Library;
+    use crate::units::Dimension;
+
+    #[test]
+    fn shipped_formulas_are_recognised_as_powers_of_time_to_the_last_digit() {
+        for (id, piece, coefficient, exponent) in [
+            ("eu-2006-25-m", 0, 18_000.0, -0.75),
+            ("eu-2006-25-n", 0, 100.0, 0.0),
+            ("icnirp-2013-ir-eye", 0, 18_000.0, -0.75),
+            ("icnirp-2013-ir-eye", 1, 100.0, 0.0),
+            // Doses by the time: t^0.25 / t.
+            ("eu-2006-25-o", 0, 20_000.0, -0.75),
+            ("icnirp-2013-skin", 0, 20_000.0, -0.75),
+            ("pain-time", 0, 35_000.0, -1.0 / 1.33),
+        ] {
+            let limit = Library::shipped().get(id).expect("it is shipped");
+            let Form::Power {
+                coefficient: c,
+                exponent: e,
+            } = limit.pieces[piece].form
+            else {
+                panic!("{id} piece {piece} is no power: {:?}", limit.pieces[piece]);
+            };
+            assert!(
+                c == coefficient && (e - exponent).abs() <= 4e-16,
+                "{id}: expected {coefficient}·t^{exponent}, found {c}·t^{e}"
+            );
+        }
+    }
+
+    #[test]
+    fn what_is_nearly_a_power_is_not_taken_for_one() {
+        for text in [
+            "18000 W/m² * (t / 1 s)^(-0.75) + 0.000001 W/m²",
+            "18000 W/m² * (t / 1 s + 0.000000001)^(-0.75)",
+            "min(18000 W/m² * (t / 1 s)^(-0.75), 1000000 W/m²)",
+        ] {
+            let written = Written::limit(text, Dimension::IRRADIANCE).expect("it is an irradiance");
+            let form = Form::new(written, false, 0.0, Some(1000.0)).expect("it never rises");
+            assert!(
+                matches!(form, Form::Formula { .. }),
+                "{text} was taken for {form:?}"
+            );
+        }
+    }
+}

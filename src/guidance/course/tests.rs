@@ -328,7 +328,7 @@ fn formulas_are_inverted_to_a_part_in_a_million_million() {
             panic!("{exposure} W/m²: expected {expected} s, found {found:?}");
         };
         assert!(
-            (time - expected).abs() <= 2e-12 * expected,
+            (time - expected).abs() <= 1e-12 * expected,
             "{exposure} W/m²: expected {expected} s, found {time} s"
         );
     }
