@@ -43,7 +43,6 @@ mod library;
 mod limit;
 mod link;
 mod metric;
-mod nearest;
 mod overall;
 mod read;
 mod standing;

@@ -6,7 +6,7 @@
 //!
 //! | layer | modules |
 //! | --- | --- |
-//! | ground | [`units`], [`json`], [`graph`], [`physics`] |
+//! | ground | [`units`], [`json`], [`graph`], [`physics`], [`spelling`], [`numeric`] |
 //! | what a person types, and published limits | [`entry`], [`guidance`] |
 //! | the linked cells | [`notebook`] |
 //! | files | [`store`] |
@@ -22,6 +22,7 @@ pub mod json;
 pub mod notebook;
 pub mod numeric;
 pub mod physics;
+pub mod spelling;
 pub mod store;
 pub mod units;
 pub mod worksheet;

@@ -17,5 +17,3 @@ pub use error::Error;
 pub use literal::{Literal, LiteralError, LiteralFault};
 pub use quantity::{Quantity, Sense};
 pub use unit::Unit;
-
-pub(crate) use symbol::closest;

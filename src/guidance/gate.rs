@@ -1,8 +1,8 @@
 //! Fields of a guidance file: taken out one by one, each fault kept with its place.
 
-use super::nearest::nearest;
 use super::{Fault, HowKnown, Origin};
 use crate::json::{Member, Node, Place, Value};
+use crate::spelling::nearest;
 
 /// Returns a fault of a file.
 pub(super) fn fault(file: &str, place: Place, field: String, message: String) -> Fault {

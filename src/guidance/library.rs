@@ -6,9 +6,9 @@ pub(super) mod tests;
 use std::sync::LazyLock;
 
 use super::link::{self, Family, Linked};
-use super::nearest::nearest;
 use super::read;
 use super::{Allowed, Course, Error, Fault, Judgement, Limit, Origin};
+use crate::spelling::nearest;
 
 /// Names a file of the resources, built into the program.
 macro_rules! shipped {

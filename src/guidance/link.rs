@@ -5,9 +5,9 @@ use std::collections::btree_map::Entry;
 
 use super::course::{Course, Stretch};
 use super::error::{irradiance, seconds};
-use super::nearest::nearest;
 use super::read::Read;
 use super::{Fault, Limit};
+use crate::spelling::nearest;
 
 /// The rows of one family by their place in the library, and their course.
 #[derive(Clone, Debug, PartialEq)]

@@ -2,6 +2,8 @@
 //! them. Factors are kept as a multiplier and a divisor, so that `780 nm` is
 //! the `f64` nearest to 7.8e-7 and not a rounding of a rounding.
 
+use crate::spelling::nearest;
+
 use super::Dimension;
 
 /// One known symbol: `si = (x + offset) · multiply / divide`.
@@ -187,55 +189,7 @@ pub(super) fn suggest(text: &str) -> Option<&'static str> {
     if let Some(&(_, symbol)) = meant {
         return Some(symbol);
     }
-    closest(text, SYMBOLS.iter().map(|known| known.symbol))
-}
-
-/// Returns the candidate nearest to `text`: the same but for upper and lower
-/// case, else at most one slip for every three letters away; ties to the first.
-pub(crate) fn closest<'a>(
-    text: &str,
-    candidates: impl Iterator<Item = &'a str>,
-) -> Option<&'a str> {
-    const LONGEST: usize = 40;
-    let written: Vec<char> = text.chars().take(LONGEST + 1).collect();
-    if written.len() > LONGEST {
-        return None;
-    }
-    let mut best: Option<(usize, &'a str)> = None;
-    for candidate in candidates {
-        let distance = if candidate.eq_ignore_ascii_case(text) {
-            0
-        } else {
-            slips(&written, candidate)
-        };
-        let shorter = written.len().min(candidate.chars().count());
-        let allowed = distance == 0 || distance <= shorter / 3;
-        if allowed && best.is_none_or(|(least, _)| distance < least) {
-            best = Some((distance, candidate));
-        }
-    }
-    best.map(|(_, candidate)| candidate)
-}
-
-/// The number of letters to insert, drop, change or swap with a neighbour.
-fn slips(written: &[char], candidate: &str) -> usize {
-    let candidate: Vec<char> = candidate.chars().collect();
-    let mut before: Vec<usize> = Vec::new();
-    let mut above: Vec<usize> = (0..=candidate.len()).collect();
-    for (i, &own) in written.iter().enumerate() {
-        let mut row = vec![i + 1];
-        for (j, &other) in candidate.iter().enumerate() {
-            let change = above[j] + usize::from(own != other);
-            let mut least = change.min(above[j + 1] + 1).min(row[j] + 1);
-            if i > 0 && j > 0 && own == candidate[j - 1] && written[i - 1] == other {
-                least = least.min(before[j - 1] + 1);
-            }
-            row.push(least);
-        }
-        before = above;
-        above = row;
-    }
-    above.last().copied().unwrap_or(written.len())
+    nearest(text, SYMBOLS.iter().map(|known| known.symbol))
 }
 
 #[cfg(test)]

@@ -2,7 +2,8 @@
 
 use crate::entry::Diagnostic;
 use crate::entry::function::{CONSTANTS, FUNCTIONS};
-use crate::units::{Unit, closest};
+use crate::spelling::nearest;
+use crate::units::Unit;
 
 pub(super) fn too_long() -> Diagnostic {
     Diagnostic::new("too-long", "expected at most 1000 characters, found more")
@@ -286,7 +287,7 @@ pub(super) fn member_of_reserved(name: &str) -> Diagnostic {
 pub(super) fn unknown_function(name: &str) -> Diagnostic {
     let functions = FUNCTIONS.iter().map(|function| function.name);
     let message = format!("unknown function `{name}`");
-    match closest(name, functions) {
+    match nearest(name, functions) {
         Some(near) => Diagnostic::new(
             "unknown-function",
             format!("{message}, did you mean `{near}`?"),
