@@ -1,0 +1,471 @@
+//! Where a person stands, which way they face, how high the eye is, for how
+//! long.
+
+pub mod sights;
+
+use std::f64::consts::PI;
+use std::sync::Arc;
+
+use glam::DVec3;
+
+use super::Kind;
+use super::field::{self, Expect, Need, Spec};
+use super::source::direction;
+use crate::graph::Node;
+use crate::guidance::Envelope;
+use crate::notebook::Diagnostic;
+use crate::notebook::datum::{Datum, Output, Slot};
+use crate::notebook::engine::{Linker, Slot as Own};
+use crate::notebook::task::{Inputs, Task};
+use crate::units::{Dimension, Quantity};
+
+pub use sights::{Band, Form, Orientation, Views};
+pub(in crate::notebook) use sights::{Facing, FormTask, HeatTask};
+use sights::{Hit, behind, envelope};
+
+/// The fields of a position.
+pub const FIELDS: &[Spec] = &[
+    Spec {
+        name: "x",
+        form: field::Form::Entry(Expect::COORDINATE),
+        need: Need::Optional,
+        about: "to the east; with y, in place of from and distance",
+    },
+    Spec {
+        name: "y",
+        form: field::Form::Entry(Expect::COORDINATE),
+        need: Need::Optional,
+        about: "to the north; with x, in place of from and distance",
+    },
+    Spec {
+        name: "from",
+        form: field::Form::Cell(&[Kind::Source]),
+        need: Need::Optional,
+        about: "the source that the distance is taken from",
+    },
+    Spec {
+        name: "distance",
+        form: field::Form::Entry(Expect::SIZE),
+        need: Need::Optional,
+        about: "horizontal distance from the centre of the source's outline",
+    },
+    Spec {
+        name: "bearing",
+        form: field::Form::Entry(Expect::HEADING),
+        need: Need::Default("0 °"),
+        about: "clockwise off the source's own heading, 0 ° straight out",
+    },
+    Spec {
+        name: "z",
+        form: field::Form::Entry(Expect::COORDINATE),
+        need: Need::Default("1.6 m"),
+        about: "height of the eye above the floor",
+    },
+    Spec {
+        name: "ground",
+        form: field::Form::Entry(Expect::COORDINATE),
+        need: Need::Default("0 m"),
+        about: "height of what the person stands on: the floor, or a platform",
+    },
+    Spec {
+        name: "faces",
+        form: field::Form::Facing,
+        need: Need::Default("strongest"),
+        about: "`strongest`, the name of a source, or a heading",
+    },
+    Spec {
+        name: "tilt",
+        form: field::Form::Entry(Expect::TILT),
+        need: Need::Default("0 °"),
+        about: "how far the face is raised, where faces is a heading",
+    },
+    Spec {
+        name: "stay",
+        form: field::Form::Entry(Expect::DURATION),
+        need: Need::Optional,
+        about: "how long the person stays, once a shift",
+    },
+    Spec {
+        name: "reach",
+        form: field::Form::Entry(Expect::REACH),
+        need: Need::Default("0.3 m"),
+        about: "how far eyes, face and hands may stray from the stated point",
+    },
+    Spec {
+        name: "note",
+        form: field::Form::Text,
+        need: Need::Optional,
+        about: "a remark",
+    },
+];
+
+/// The outputs of a position. `irradiance_from` and `view_factor` carry the
+/// name of a source behind a further point.
+pub const OUTPUTS: &[&str] = &[
+    "irradiance",
+    "near_ir_irradiance",
+    "skin_irradiance",
+    "background",
+    "envelope_irradiance",
+    "envelope_near_ir_irradiance",
+    "envelope_skin_irradiance",
+    "blue_light_radiance",
+    "retinal_radiance_2006",
+    "retinal_radiance_2013",
+    "ir_a_radiance",
+    "irradiance_from",
+    "view_factor",
+];
+
+/// Where a position stands, as linked.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub(in crate::notebook) enum Place {
+    At {
+        x: Node,
+        y: Node,
+    },
+    From {
+        shape: Node,
+        distance: Node,
+        bearing: Node,
+    },
+}
+
+/// What a position sees, from the stated point and from its envelopes.
+#[derive(Clone, Debug)]
+pub struct Sights {
+    /// The eye at the stated point.
+    pub eye: DVec3,
+    /// The height of what the person stands on.
+    pub ground: f64,
+    /// How far eyes, face and hands may stray.
+    pub reach: f64,
+    /// The names of the sources that it lies behind.
+    pub behind: Vec<String>,
+    /// The names of all sources.
+    pub names: Vec<String>,
+    /// The eye's envelope; the first point is the stated one.
+    pub around_eye: Views,
+    /// The skin's envelope.
+    pub around_skin: Views,
+}
+
+/// Works out what a position sees.
+#[derive(Clone, Debug, PartialEq)]
+pub(in crate::notebook) struct SightsTask {
+    pub(in crate::notebook) form: Node,
+    pub(in crate::notebook) place: Place,
+    pub(in crate::notebook) z: Node,
+    pub(in crate::notebook) ground: Node,
+    pub(in crate::notebook) reach: Node,
+}
+
+impl SightsTask {
+    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
+        nodes.extend([self.form, self.z, self.ground, self.reach]);
+        match self.place {
+            Place::At { x, y } => nodes.extend([x, y]),
+            Place::From {
+                shape,
+                distance,
+                bearing,
+            } => nodes.extend([shape, distance, bearing]),
+        }
+    }
+
+    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
+        let form = inputs.form(self.form);
+        let z = inputs.si(self.z);
+        let eye = match self.place {
+            Place::At { x, y } => DVec3::new(inputs.si(x), inputs.si(y), z),
+            Place::From {
+                shape,
+                distance,
+                bearing,
+            } => {
+                let shape = inputs.shape(shape);
+                let heading = shape.ahead.x.atan2(shape.ahead.y) + inputs.si(bearing);
+                (shape.centre + direction(heading) * inputs.si(distance)).with_z(z)
+            }
+        };
+        let (ground, reach) = (inputs.si(self.ground), inputs.si(self.reach));
+        let look = |kind| {
+            Views::look(form, eye, envelope(eye, ground, reach, kind))
+                .map_err(|hit| self.touching(hit, form, reach))
+        };
+        Ok(Datum::Sights(Arc::new(Sights {
+            eye,
+            ground,
+            reach,
+            behind: behind(form, eye)
+                .into_iter()
+                .map(|index| form.names[index].clone())
+                .collect(),
+            names: form.names.clone(),
+            around_eye: look(Envelope::Eye)?,
+            around_skin: look(Envelope::Skin)?,
+        })))
+    }
+
+    fn touching(&self, hit: Hit, form: &Form, reach: f64) -> Diagnostic {
+        let field = match self.place {
+            Place::At { .. } => "x",
+            Place::From { .. } => "distance",
+        };
+        match hit {
+            Hit::Inside(index) => Diagnostic::of_field(
+                field,
+                "inside-source",
+                format!(
+                    "the position lies inside or touches source {}: no irradiance can be given",
+                    form.names[index]
+                ),
+            )
+            .with_hint("move it away from the hot surface"),
+            Hit::Reached(index) => Diagnostic::of_field(
+                field,
+                "reach-touches-source",
+                format!(
+                    "within its reach of {reach} m the position touches source {}: this is \
+                     contact, not irradiance",
+                    form.names[index]
+                ),
+            )
+            .with_hint("move it away, or state a smaller `reach` if a barrier makes it certain"),
+        }
+    }
+}
+
+/// What reaches a position. Irradiances in W/m², radiances in W/(m²·sr).
+#[derive(Clone, Debug, PartialEq)]
+pub struct Exposure {
+    /// At the stated point, by [`Band`].
+    pub stated: [f64; 3],
+    /// The worst of the eye's envelope, by [`Band`].
+    pub worst_eye: [f64; 3],
+    /// The worst of the skin's envelope, by [`Band`].
+    pub worst_skin: [f64; 3],
+    /// From the room, on the receiver that faces as it does for the total.
+    pub background: f64,
+    /// The greatest weighted radiances of what is seen: blue light, retinal of
+    /// 2006, retinal of 2013, IR-A.
+    pub radiances: [f64; 4],
+    /// For each source its name, its part of the total irradiance and its
+    /// configuration factor, on that same receiver.
+    pub parts: Vec<(String, f64, f64)>,
+    /// Which way the receiver faces for the total, a unit vector.
+    pub normal: DVec3,
+}
+
+impl Exposure {
+    /// Returns what guidance judges: the worst of an envelope in a band.
+    ///
+    /// Where a near infrared emissivity above the total one makes a band exceed
+    /// the whole, the whole is taken as that band: the larger figure is judged.
+    #[must_use]
+    pub fn judged(&self, envelope: Envelope, band: Band) -> f64 {
+        let worst = match envelope {
+            Envelope::Eye => &self.worst_eye,
+            Envelope::Skin => &self.worst_skin,
+        };
+        match band {
+            Band::Total => worst.iter().copied().fold(0.0, f64::max),
+            Band::NearInfrared | Band::Skin => worst[band as usize],
+        }
+    }
+
+    pub(in crate::notebook) fn visit(&self, see: &mut dyn FnMut(Slot<'_>, Output<'_>)) {
+        let [total, near, skin] = self.stated;
+        let [blue, retinal_2006, retinal_2013, infrared_a] = self.radiances;
+        let irradiance = Dimension::IRRADIANCE;
+        for (name, si, dimension) in [
+            ("irradiance", total, irradiance),
+            ("near_ir_irradiance", near, irradiance),
+            ("skin_irradiance", skin, irradiance),
+            ("background", self.background, irradiance),
+            (
+                "envelope_irradiance",
+                self.worst_skin[Band::Total as usize],
+                irradiance,
+            ),
+            (
+                "envelope_near_ir_irradiance",
+                self.judged(Envelope::Eye, Band::NearInfrared),
+                irradiance,
+            ),
+            (
+                "envelope_skin_irradiance",
+                self.judged(Envelope::Skin, Band::Skin),
+                irradiance,
+            ),
+            ("blue_light_radiance", blue, Dimension::RADIANCE),
+            ("retinal_radiance_2006", retinal_2006, Dimension::RADIANCE),
+            ("retinal_radiance_2013", retinal_2013, Dimension::RADIANCE),
+            ("ir_a_radiance", infrared_a, Dimension::RADIANCE),
+        ] {
+            see(
+                Slot::named(name),
+                Output::Quantity(Quantity::new(si, dimension)),
+            );
+        }
+        for (name, part, factor) in &self.parts {
+            let slot = |output| Slot {
+                name: output,
+                part: Some(name),
+                row: None,
+            };
+            see(
+                slot("irradiance_from"),
+                Output::Quantity(Quantity::new(*part, irradiance)),
+            );
+            see(
+                slot("view_factor"),
+                Output::Quantity(Quantity::number(*factor)),
+            );
+        }
+    }
+}
+
+/// Works out what reaches a position.
+#[derive(Clone, Debug, PartialEq)]
+pub(in crate::notebook) struct ExposureTask {
+    pub(in crate::notebook) sights: Node,
+    pub(in crate::notebook) heat: Node,
+    pub(in crate::notebook) room: Node,
+    pub(in crate::notebook) facing: Facing,
+}
+
+impl ExposureTask {
+    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
+        nodes.extend([self.sights, self.heat, self.room]);
+        self.facing.inputs(nodes);
+    }
+
+    // Returns a result as every task does.
+    #[allow(clippy::unnecessary_wraps)]
+    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
+        let sights = inputs.sights(self.sights);
+        let heat = inputs.heat(self.heat);
+        let orientation = self.facing.orientation(inputs);
+        let weights = Band::ALL.map(|band| band.weights(heat));
+        let views = sights.around_eye.at(0);
+        let [stated, worst_eye, worst_skin] = [0, 1, 2].map(|which| {
+            [0, 1, 2].map(|band: usize| match which {
+                0 => orientation.irradiance(sights.eye, views, &weights[band]).0,
+                1 => sights.around_eye.worst(orientation, &weights[band]),
+                _ => sights.around_skin.worst(orientation, &weights[band]),
+            })
+        });
+        let (_, normal) = orientation.irradiance(sights.eye, views, &weights[Band::Total as usize]);
+        let parts: Vec<(String, f64, f64)> = sights
+            .names
+            .iter()
+            .zip(views)
+            .zip(heat)
+            .map(|((name, view), emission)| {
+                let factor = view.factor(normal);
+                (name.clone(), emission.total * factor, factor)
+            })
+            .collect();
+        let seen: f64 = parts.iter().map(|(_, _, factor)| factor).sum();
+        let mut radiances = [0.0_f64; 4];
+        for (view, emission) in views.iter().zip(heat) {
+            if view.flux() == DVec3::ZERO {
+                continue;
+            }
+            for (greatest, exitance) in radiances.iter_mut().zip([
+                emission.blue_light,
+                emission.retinal_2006,
+                emission.retinal_2013,
+                emission.infrared_a,
+            ]) {
+                *greatest = greatest.max(exitance / PI);
+            }
+        }
+        Ok(Datum::Exposure(Arc::new(Exposure {
+            stated,
+            worst_eye,
+            worst_skin,
+            background: inputs.room(self.room).background * (1.0 - seen).max(0.0),
+            radiances,
+            parts,
+            normal,
+        })))
+    }
+}
+
+pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
+    let place = place(linker);
+    let facing = linker.facing();
+    if linker.has("tilt") && !matches!(facing, Some(Facing::Heading { .. })) {
+        linker.refuse(&["tilt"], "only goes with a heading in `faces`");
+    }
+    let [form, heat, room] = linker.scene();
+    let [z, ground, reach] = ["z", "ground", "reach"].map(|field| linker.always(field));
+    let sights = place.map(|place| {
+        Task::Sights(SightsTask {
+            form,
+            place,
+            z,
+            ground,
+            reach,
+        })
+    });
+    let sights = linker.group("sights", sights);
+    let exposure = facing.map(|facing| {
+        Task::Exposure(ExposureTask {
+            sights,
+            heat,
+            room,
+            facing,
+        })
+    });
+    let _ = linker.group("exposure", exposure);
+}
+
+fn place(linker: &mut Linker<'_>) -> Option<Place> {
+    let by_source = linker.has("from") || linker.has("distance");
+    let by_point = linker.has("x") || linker.has("y");
+    if by_source && by_point {
+        linker.refuse(
+            &["x", "y"],
+            "does not go with `from` and `distance`: a position has one place",
+        );
+        return None;
+    }
+    if by_point {
+        linker.refuse(&["bearing"], "goes with `from` and `distance` only");
+        let x = linker.need("x", "a position given by its point");
+        let y = linker.need("y", "a position given by its point");
+        return Some(Place::At { x: x?, y: y? });
+    }
+    if !by_source {
+        linker.fault(
+            Diagnostic::of_cell(
+                "no-place",
+                "expected a place: `from` and `distance`, or `x` and `y`; found neither",
+            )
+            .with_hint("say how far from which source the person stands"),
+        );
+        return None;
+    }
+    let distance = linker.need("distance", "a position placed from a source");
+    if !linker.has("from") {
+        linker.fault(
+            Diagnostic::of_field(
+                "from",
+                "missing-field",
+                "expected the source that the distance is taken from, found nothing",
+            )
+            .with_hint("add `from`"),
+        );
+    }
+    let source = linker.target("from")?;
+    let shape = linker.foreign(source, Own::Group("shape"));
+    let bearing = linker.always("bearing");
+    Some(Place::From {
+        shape,
+        distance: distance?,
+        bearing,
+    })
+}

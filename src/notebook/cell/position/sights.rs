@@ -1,0 +1,335 @@
+//! What is seen from a point: the scene's regions, the envelope around a
+//! position, and the way a receiver faces.
+
+use std::sync::Arc;
+
+use glam::DVec3;
+
+use crate::graph::Node;
+use crate::guidance::Envelope;
+use crate::notebook::Diagnostic;
+use crate::notebook::cell::source::{Shape, direction};
+use crate::notebook::datum::Datum;
+use crate::notebook::task::Inputs;
+use crate::physics::exposure;
+use crate::physics::surface::Emission;
+use crate::physics::view::{Sight, View};
+
+/// Where all sources are, in file order.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Form {
+    /// Their names.
+    pub names: Vec<String>,
+    /// Their shapes, parallel to the names.
+    pub shapes: Vec<Arc<Shape>>,
+}
+
+/// Gathers the shapes of all sources.
+#[derive(Clone, Debug, PartialEq)]
+pub(in crate::notebook) struct FormTask {
+    pub(in crate::notebook) names: Vec<String>,
+    pub(in crate::notebook) shapes: Vec<Node>,
+}
+
+impl FormTask {
+    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
+        nodes.extend(&self.shapes);
+    }
+
+    // Returns a result as every task does.
+    #[allow(clippy::unnecessary_wraps)]
+    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
+        Ok(Datum::Form(Arc::new(Form {
+            names: self.names.clone(),
+            shapes: self
+                .shapes
+                .iter()
+                .map(|node| Arc::clone(inputs.shape(*node)))
+                .collect(),
+        })))
+    }
+}
+
+/// Gathers what all sources emit.
+#[derive(Clone, Debug, PartialEq)]
+pub(in crate::notebook) struct HeatTask {
+    pub(in crate::notebook) emissions: Vec<Node>,
+}
+
+impl HeatTask {
+    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
+        nodes.extend(&self.emissions);
+    }
+
+    // Returns a result as every task does.
+    #[allow(clippy::unnecessary_wraps)]
+    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
+        Ok(Datum::Heat(Arc::new(
+            self.emissions
+                .iter()
+                .map(|node| *inputs.emission(*node))
+                .collect(),
+        )))
+    }
+}
+
+/// One of the quantities that guidance judges.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Band {
+    /// All wavelengths.
+    Total,
+    /// 780–3000 nm.
+    NearInfrared,
+    /// 380–3000 nm.
+    Skin,
+}
+
+impl Band {
+    /// The three, in the order in which results list them.
+    pub const ALL: [Band; 3] = [Band::Total, Band::NearInfrared, Band::Skin];
+
+    /// Returns the exitance of a source in this band, W/m².
+    #[must_use]
+    pub const fn of(self, emission: &Emission) -> f64 {
+        match self {
+            Band::Total => emission.total,
+            Band::NearInfrared => emission.near_infrared,
+            Band::Skin => emission.skin,
+        }
+    }
+
+    /// Returns the band that guidance judges an exposure in.
+    #[must_use]
+    pub const fn judged(exposure: crate::guidance::Exposure) -> Band {
+        match exposure {
+            crate::guidance::Exposure::Total => Band::Total,
+            crate::guidance::Exposure::NearInfrared => Band::NearInfrared,
+            crate::guidance::Exposure::Skin => Band::Skin,
+        }
+    }
+
+    /// Returns the exitances of all sources in this band, for judging: where a
+    /// band exceeds the whole, the whole is taken as that band.
+    #[must_use]
+    pub fn judged_weights(self, heat: &[Emission]) -> Vec<f64> {
+        heat.iter()
+            .map(|emission| match self {
+                Band::Total => emission
+                    .total
+                    .max(emission.skin)
+                    .max(emission.near_infrared),
+                Band::NearInfrared | Band::Skin => self.of(emission),
+            })
+            .collect()
+    }
+
+    /// Returns the exitances of all sources in this band.
+    #[must_use]
+    pub fn weights(self, heat: &[Emission]) -> Vec<f64> {
+        heat.iter().map(|emission| self.of(emission)).collect()
+    }
+}
+
+/// Which way a receiver faces, as linked.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub(in crate::notebook) enum Facing {
+    Strongest,
+    /// Towards the centre of this shape.
+    Source(Node),
+    Heading {
+        heading: Node,
+        tilt: Option<Node>,
+    },
+}
+
+impl Facing {
+    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
+        match self {
+            Facing::Strongest => {}
+            Facing::Source(shape) => nodes.push(*shape),
+            Facing::Heading { heading, tilt } => {
+                nodes.push(*heading);
+                nodes.extend(*tilt);
+            }
+        }
+    }
+
+    pub(in crate::notebook) fn orientation(&self, inputs: Inputs<'_>) -> Orientation {
+        match self {
+            Facing::Strongest => Orientation::Strongest,
+            Facing::Source(shape) => Orientation::Towards(inputs.shape(*shape).centre),
+            Facing::Heading { heading, tilt } => {
+                let (sin, cos) = inputs.maybe(*tilt).unwrap_or(0.0).sin_cos();
+                Orientation::Normal(direction(inputs.si(*heading)) * cos + DVec3::Z * sin)
+            }
+        }
+    }
+}
+
+/// Which way a receiver faces.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Orientation {
+    /// The way of greatest irradiance, for each quantity and point by itself.
+    Strongest,
+    /// Towards a point.
+    Towards(DVec3),
+    /// Along this unit vector.
+    Normal(DVec3),
+}
+
+impl Orientation {
+    /// Returns the irradiance at a point in W/m² for the exitances `weights`,
+    /// and the normal of the receiver.
+    ///
+    /// A receiver that stands in the very point it should face has no such
+    /// direction: it is taken the strongest way.
+    #[must_use]
+    pub fn irradiance(&self, point: DVec3, views: &[View], weights: &[f64]) -> (f64, DVec3) {
+        let normal = match self {
+            Orientation::Strongest => None,
+            Orientation::Towards(target) => (*target - point).try_normalize(),
+            Orientation::Normal(normal) => Some(*normal),
+        };
+        match normal {
+            Some(normal) => (exposure::facing(views, weights, normal), normal),
+            None => exposure::strongest(views, weights),
+        }
+    }
+}
+
+/// The heights above the ground at which skin is judged, m.
+pub const SKIN_HEIGHTS: [f64; 6] = [0.3, 0.6, 0.9, 1.2, 1.5, 1.8];
+
+/// Returns the points that are judged around an eye point.
+///
+/// For the eye: the point itself first, then the six points at ± `reach`
+/// along x, y and z. For the skin: the [`SKIN_HEIGHTS`] above `ground` at the
+/// standing point and at ± `reach` around it. With a reach of zero only the
+/// distinct points are listed.
+#[must_use]
+pub fn envelope(eye: DVec3, ground: f64, reach: f64, envelope: Envelope) -> Vec<DVec3> {
+    let axes: &[DVec3] = match envelope {
+        Envelope::Eye => &[DVec3::X, DVec3::Y, DVec3::Z],
+        Envelope::Skin => &[DVec3::X, DVec3::Y],
+    };
+    let centres: Vec<DVec3> = match envelope {
+        Envelope::Eye => vec![eye],
+        Envelope::Skin => SKIN_HEIGHTS
+            .iter()
+            .map(|height| eye.with_z(ground + height))
+            .collect(),
+    };
+    let mut points = Vec::with_capacity(centres.len() * (1 + 2 * axes.len()));
+    for centre in centres {
+        points.push(centre);
+        if reach > 0.0 {
+            for axis in axes {
+                points.extend([centre + *axis * reach, centre - *axis * reach]);
+            }
+        }
+    }
+    points
+}
+
+/// What keeps a point from being looked from.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Hit {
+    /// The point lies in or on this source.
+    Inside(usize),
+    /// The way from the stated point to it meets this source.
+    Reached(usize),
+}
+
+/// What is seen from several points.
+#[derive(Clone, Debug)]
+pub struct Views {
+    /// The points.
+    pub points: Vec<DVec3>,
+    views: Vec<View>,
+    sources: usize,
+}
+
+impl Views {
+    /// Looks at every source of the scene from each of the points, all of them
+    /// within reach of `stated`.
+    ///
+    /// # Errors
+    ///
+    /// [`Hit`] where a point lies in a source, or where the way to it from
+    /// `stated` meets one.
+    pub fn look(form: &Form, stated: DVec3, points: Vec<DVec3>) -> Result<Views, Hit> {
+        let mut views = Vec::with_capacity(points.len() * form.shapes.len());
+        for point in &points {
+            for (index, shape) in form.shapes.iter().enumerate() {
+                if *point != stated && shape.region.crosses(stated, *point) {
+                    return Err(Hit::Reached(index));
+                }
+                match shape.region.view(*point).into_view() {
+                    Some(view) => views.push(view),
+                    None if *point == stated => return Err(Hit::Inside(index)),
+                    None => return Err(Hit::Reached(index)),
+                }
+            }
+        }
+        Ok(Views {
+            points,
+            views,
+            sources: form.shapes.len(),
+        })
+    }
+
+    /// Looks at every source of the scene from each of the points, which have
+    /// nothing to do with one another.
+    ///
+    /// # Errors
+    ///
+    /// [`Hit::Inside`] where a point lies in a source.
+    pub fn standing(form: &Form, points: Vec<DVec3>) -> Result<Views, Hit> {
+        let mut views = Vec::with_capacity(points.len() * form.shapes.len());
+        for point in &points {
+            for (index, shape) in form.shapes.iter().enumerate() {
+                views.push(
+                    shape
+                        .region
+                        .view(*point)
+                        .into_view()
+                        .ok_or(Hit::Inside(index))?,
+                );
+            }
+        }
+        Ok(Views {
+            points,
+            views,
+            sources: form.shapes.len(),
+        })
+    }
+
+    /// Returns the views of all sources from the point of this number.
+    #[must_use]
+    pub fn at(&self, point: usize) -> &[View] {
+        &self.views[point * self.sources..(point + 1) * self.sources]
+    }
+
+    /// Returns the greatest irradiance over all points, W/m².
+    #[must_use]
+    pub fn worst(&self, orientation: Orientation, weights: &[f64]) -> f64 {
+        (0..self.points.len())
+            .map(|index| {
+                orientation
+                    .irradiance(self.points[index], self.at(index), weights)
+                    .0
+            })
+            .fold(0.0, f64::max)
+    }
+}
+
+/// Returns the sources that a point lies behind, and so does not see.
+#[must_use]
+pub fn behind(form: &Form, point: DVec3) -> Vec<usize> {
+    form.shapes
+        .iter()
+        .enumerate()
+        .filter(|(_, shape)| matches!(shape.region.view(point), Sight::Behind))
+        .map(|(index, _)| index)
+        .collect()
+}

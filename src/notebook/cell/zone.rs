@@ -1,0 +1,458 @@
+//! The ground inside which one rule is not met.
+
+use std::sync::Arc;
+
+use glam::DVec3;
+
+use super::Kind;
+use super::curve::{along, steps};
+use super::field::{self, Expect, Need, Spec};
+use super::position::sights::envelope;
+use super::position::{Band, Facing, Form, Orientation, Views};
+use crate::graph::Node;
+use crate::guidance::{Allowed, Envelope, Library};
+use crate::notebook::Diagnostic;
+use crate::notebook::datum::{Datum, Output, Slot};
+use crate::notebook::engine::{Linker, Slot as Own};
+use crate::notebook::task::{Inputs, Task};
+use crate::units::{Dimension, Quantity};
+
+/// The fields of a zone.
+pub const FIELDS: &[Spec] = &[
+    Spec {
+        name: "from",
+        form: field::Form::Cell(&[Kind::Source]),
+        need: Need::Required,
+        about: "the source from whose centre the line runs; all sources count",
+    },
+    Spec {
+        name: "heading",
+        form: field::Form::Entry(Expect::HEADING),
+        need: Need::Optional,
+        about: "direction of the line, clockwise from north; an opening's own if left out, else 0 °",
+    },
+    Spec {
+        name: "z",
+        form: field::Form::Entry(Expect::COORDINATE),
+        need: Need::Default("1.6 m"),
+        about: "height of the eye above the floor",
+    },
+    Spec {
+        name: "ground",
+        form: field::Form::Entry(Expect::COORDINATE),
+        need: Need::Default("0 m"),
+        about: "height of what people stand on",
+    },
+    Spec {
+        name: "guidance",
+        form: field::Form::Guidance,
+        need: Need::Required,
+        about: "the limit, by its id",
+    },
+    Spec {
+        name: "stay",
+        form: field::Form::Entry(Expect::DURATION),
+        need: Need::Required,
+        about: "how long people stay, once a shift",
+    },
+    Spec {
+        name: "faces",
+        form: field::Form::Facing,
+        need: Need::Default("strongest"),
+        about: "`strongest`, the name of a source, or a heading",
+    },
+    Spec {
+        name: "reach",
+        form: field::Form::Entry(Expect::REACH),
+        need: Need::Default("0.3 m"),
+        about: "how far eyes, face and hands may stray from the line",
+    },
+    Spec {
+        name: "farthest",
+        form: field::Form::Entry(Expect::SIZE),
+        need: Need::Default("200 m"),
+        about: "where the search along the line ends",
+    },
+    Spec {
+        name: "note",
+        form: field::Form::Text,
+        need: Need::Optional,
+        about: "a remark",
+    },
+];
+
+/// The outputs of a zone.
+pub const OUTPUTS: &[&str] = &["distance", "clear_distance", "limit", "state"];
+
+/// Where a zone ends on its line.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Extent {
+    /// At this distance in m: everywhere farther along the line, as far as it
+    /// is searched, the rule is met.
+    At(f64),
+    /// The rule is met everywhere on the line.
+    MetEverywhere,
+    /// The rule is not met at the end of the line, at this distance in m.
+    NotMetWithin(f64),
+    /// The guidance says nothing about this stay.
+    NotAssessed,
+}
+
+impl Extent {
+    /// Returns the words for it where it is no distance.
+    #[must_use]
+    pub const fn words(self) -> &'static str {
+        match self {
+            Extent::At(_) => "ends at a distance",
+            Extent::MetEverywhere => "met everywhere",
+            Extent::NotMetWithin(_) => "met nowhere within range",
+            Extent::NotAssessed => "not assessed",
+        }
+    }
+
+    /// Returns the same extent measured from a point `edge` metres along the
+    /// line.
+    #[must_use]
+    pub fn from(self, edge: f64) -> Extent {
+        match self {
+            Extent::At(distance) => Extent::At(distance - edge),
+            Extent::NotMetWithin(distance) => Extent::NotMetWithin(distance - edge),
+            Extent::MetEverywhere | Extent::NotAssessed => self,
+        }
+    }
+
+    /// Returns a number by which extents order: greater is farther.
+    #[must_use]
+    pub const fn rank(self) -> f64 {
+        match self {
+            Extent::At(distance) => distance,
+            Extent::MetEverywhere => f64::NEG_INFINITY,
+            Extent::NotMetWithin(_) => f64::INFINITY,
+            Extent::NotAssessed => f64::NAN,
+        }
+    }
+}
+
+/// Where a zone ends, and what its rule allows there.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Edge {
+    /// From the centre of the outline.
+    pub extent: Extent,
+    /// How far the outline reaches along the line, m.
+    pub edge: f64,
+    /// The limit for the stay, as an irradiance in W/m².
+    pub limit: Option<f64>,
+}
+
+impl Edge {
+    pub(in crate::notebook) fn visit(&self, see: &mut dyn FnMut(Slot<'_>, Output<'_>)) {
+        see(Slot::named("distance"), Output::Extent(self.extent));
+        see(
+            Slot::named("clear_distance"),
+            Output::Extent(self.extent.from(self.edge)),
+        );
+        see(
+            Slot::named("limit"),
+            self.limit.map_or(Output::Nothing, |limit| {
+                Output::Quantity(Quantity::new(limit, Dimension::IRRADIANCE))
+            }),
+        );
+        see(Slot::named("state"), Output::Word(self.extent.words()));
+    }
+}
+
+/// The line of a zone with what is seen from it, stop by stop.
+#[derive(Clone, Debug)]
+pub struct Track {
+    form: Arc<Form>,
+    origin: DVec3,
+    ahead: DVec3,
+    z: f64,
+    ground: f64,
+    reach: f64,
+    envelope: Envelope,
+    /// How far the outline reaches along the line, m.
+    pub edge: f64,
+    /// Distances, growing, with what is seen from around each; nothing where a
+    /// source is touched.
+    stops: Vec<(f64, Option<Views>)>,
+}
+
+/// The nearest clear distance that is looked at, m.
+const NEAREST: f64 = 0.01;
+
+/// How many stops there are from the nearest to the farthest.
+const STOPS: u32 = 160;
+
+impl Track {
+    fn look(&self, distance: f64) -> Option<Views> {
+        let eye = (self.origin + self.ahead * distance).with_z(self.z);
+        let points = envelope(eye, self.ground, self.reach, self.envelope);
+        Views::look(&self.form, eye, points).ok()
+    }
+
+    /// Returns the distances at which a line is looked at: geometric steps,
+    /// and closer ones where the line passes a source, whose reach along the
+    /// line could fall between two steps.
+    fn distances(&self, farthest: f64) -> Vec<f64> {
+        let clear = farthest - self.edge;
+        let mut distances: Vec<f64> = steps(NEAREST.min(clear / 2.0), clear, STOPS)
+            .into_iter()
+            .map(|step| self.edge + step)
+            .collect();
+        for shape in &self.form.shapes {
+            let centre = shape.region.centre();
+            let foot = (centre - self.origin).dot(self.ahead);
+            let aside = (centre - self.origin).with_z(0.0) - self.ahead * foot;
+            let spread = shape.region.bounding_radius() + aside.length() + self.reach;
+            for share in [-2.0, -1.0, -0.5, -0.2, 0.0, 0.2, 0.5, 1.0, 2.0] {
+                distances.push(foot + share * spread);
+            }
+        }
+        distances.retain(|distance| *distance > self.edge && *distance <= farthest);
+        distances.sort_unstable_by(f64::total_cmp);
+        distances.dedup();
+        distances
+    }
+
+    /// Returns the worst irradiance at a distance, infinite where a source is
+    /// touched.
+    fn exposure(views: Option<&Views>, orientation: Orientation, weights: &[f64]) -> f64 {
+        views.map_or(f64::INFINITY, |views| views.worst(orientation, weights))
+    }
+
+    /// Returns the outermost distance at which the irradiance passes `limit`.
+    ///
+    /// # Accuracy
+    ///
+    /// 0.1 mm, given that between two stops the irradiance does not rise and
+    /// fall again.
+    fn outermost(&self, orientation: Orientation, weights: &[f64], limit: f64) -> Extent {
+        let over = |exposure: f64| exposure > limit;
+        let mut outside: Option<f64> = None;
+        for (distance, views) in self.stops.iter().rev() {
+            if over(Self::exposure(views.as_ref(), orientation, weights)) {
+                let Some(outside) = outside else {
+                    return Extent::NotMetWithin(*distance);
+                };
+                return Extent::At(self.narrow(*distance, outside, orientation, weights, limit));
+            }
+            outside = Some(*distance);
+        }
+        Extent::MetEverywhere
+    }
+
+    /// Narrows a crossing down, and returns its outer side.
+    ///
+    /// The Illinois variant of the regula falsi on the logarithm of exposure
+    /// over limit (Dowell and Jarratt 1971), with halving where a source is
+    /// touched or the steps stay large.
+    fn narrow(
+        &self,
+        inside: f64,
+        outside: f64,
+        orientation: Orientation,
+        weights: &[f64],
+        limit: f64,
+    ) -> f64 {
+        const WIDTH: f64 = 1e-4;
+        let height = |distance: f64| {
+            let exposure = Self::exposure(self.look(distance).as_ref(), orientation, weights);
+            if exposure > 0.0 {
+                (exposure / limit).ln()
+            } else {
+                f64::NEG_INFINITY
+            }
+        };
+        let (mut a, mut b) = (inside, outside);
+        let (mut fa, mut fb) = (height(a), height(b));
+        let mut side = 0_i8;
+        for round in 0..100 {
+            if b - a <= WIDTH {
+                break;
+            }
+            let straight = b - fb * (b - a) / (fb - fa);
+            let margin = 0.25 * WIDTH;
+            let next = if round % 4 < 3 && straight.is_finite() {
+                straight.clamp(a + margin, b - margin)
+            } else {
+                0.5 * (a + b)
+            };
+            let f = height(next);
+            if f > 0.0 {
+                a = next;
+                fa = f;
+                if side == 1 {
+                    fb /= 2.0;
+                }
+                side = 1;
+            } else {
+                b = next;
+                fb = f;
+                if side == -1 {
+                    fa /= 2.0;
+                }
+                side = -1;
+            }
+        }
+        b
+    }
+}
+
+/// Works out what is seen along a zone's line.
+#[derive(Clone, Debug, PartialEq)]
+pub(in crate::notebook) struct TrackTask {
+    pub(in crate::notebook) form: Node,
+    pub(in crate::notebook) shape: Node,
+    pub(in crate::notebook) heading: Option<Node>,
+    pub(in crate::notebook) z: Node,
+    pub(in crate::notebook) ground: Node,
+    pub(in crate::notebook) reach: Node,
+    pub(in crate::notebook) farthest: Node,
+    pub(in crate::notebook) envelope: Envelope,
+}
+
+impl TrackTask {
+    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
+        nodes.extend([
+            self.form,
+            self.shape,
+            self.z,
+            self.ground,
+            self.reach,
+            self.farthest,
+        ]);
+        nodes.extend(self.heading);
+    }
+
+    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
+        let form = Arc::clone(inputs.form(self.form));
+        let shape = inputs.shape(self.shape);
+        let ahead = along(shape, inputs.maybe(self.heading));
+        let edge = shape.region.edge_along(ahead);
+        let farthest = inputs.si(self.farthest);
+        if farthest <= edge {
+            return Err(Diagnostic::of_field(
+                "farthest",
+                "inside-outline",
+                format!(
+                    "expected a distance outside the source's outline, whose edge is at {edge} m, \
+                     found {farthest} m"
+                ),
+            )
+            .with_hint("give a greater `farthest`"));
+        }
+        let mut track = Track {
+            form,
+            origin: shape.centre,
+            ahead,
+            z: inputs.si(self.z),
+            ground: inputs.si(self.ground),
+            reach: inputs.si(self.reach),
+            envelope: self.envelope,
+            edge,
+            stops: Vec::new(),
+        };
+        track.stops = track
+            .distances(farthest)
+            .into_iter()
+            .map(|distance| (distance, track.look(distance)))
+            .collect();
+        Ok(Datum::Track(Arc::new(track)))
+    }
+}
+
+/// Works out where a zone ends.
+#[derive(Clone, Debug, PartialEq)]
+pub(in crate::notebook) struct EdgeTask {
+    pub(in crate::notebook) track: Node,
+    pub(in crate::notebook) heat: Node,
+    pub(in crate::notebook) stay: Node,
+    pub(in crate::notebook) guidance: String,
+    pub(in crate::notebook) facing: Facing,
+}
+
+impl EdgeTask {
+    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
+        nodes.extend([self.track, self.heat, self.stay]);
+        self.facing.inputs(nodes);
+    }
+
+    // Returns a result as every task does.
+    #[allow(clippy::unnecessary_wraps)]
+    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
+        let track = inputs.track(self.track);
+        let library = Library::shipped();
+        let limit = library
+            .get(&self.guidance)
+            .expect("ids are checked while linking");
+        let weights = Band::judged(limit.metric.exposure()).judged_weights(inputs.heat(self.heat));
+        let stay = inputs.si(self.stay);
+        let permitted = permitted(&self.guidance, stay);
+        let extent = permitted.map_or(Extent::NotAssessed, |permitted| {
+            track.outermost(self.facing.orientation(inputs), &weights, permitted)
+        });
+        Ok(Datum::Edge(Edge {
+            extent,
+            edge: track.edge,
+            limit: permitted,
+        }))
+    }
+}
+
+/// Returns the greatest irradiance in W/m² in which the whole stay is allowed;
+/// `None` where the guidance says nothing about so long a stay.
+fn permitted(guidance: &str, stay: f64) -> Option<f64> {
+    let library = Library::shipped();
+    let limit = library.limit_at(guidance, stay)?;
+    // A family's limit never rises with time, so that at the end of the stay
+    // is the least; asked the other way round it must allow the stay.
+    match library.allowed(guidance, limit) {
+        Ok(Allowed::Unlimited) => Some(limit),
+        Ok(Allowed::Seconds(seconds) | Allowed::CappedAt(seconds))
+            if seconds >= stay * (1.0 - 1e-12) =>
+        {
+            Some(limit)
+        }
+        Ok(_) | Err(_) => None,
+    }
+}
+
+pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
+    let source = linker.target("from");
+    let shape = source.map(|source| linker.foreign(source, Own::Group("shape")));
+    let guidance = linker
+        .guidance("guidance")
+        .and_then(|ids| ids.into_iter().next());
+    let facing = linker.facing();
+    let heading = linker.entry("heading");
+    let [form, heat, _] = linker.scene();
+    let [z, ground, reach, farthest, stay] =
+        ["z", "ground", "reach", "farthest", "stay"].map(|field| linker.always(field));
+    let track = shape.zip(guidance.as_ref()).map(|(shape, guidance)| {
+        let limit = Library::shipped()
+            .get(guidance)
+            .expect("the linker hands out known ids only");
+        Task::Track(TrackTask {
+            form,
+            shape,
+            heading,
+            z,
+            ground,
+            reach,
+            farthest,
+            envelope: limit.envelope(),
+        })
+    });
+    let track = linker.group("track", track);
+    let edge = facing.zip(guidance).map(|(facing, guidance)| {
+        Task::Edge(EdgeTask {
+            track,
+            heat,
+            stay,
+            guidance,
+            facing,
+        })
+    });
+    let _ = linker.group("edge", edge);
+}

@@ -1,0 +1,422 @@
+//! Everything that was worked out, cell by cell, with bounds: what the command
+//! line prints, the worksheet paints and the window shows.
+
+use super::caution::{self, Caution};
+use super::cell::assessment::{self, Verdict};
+use super::cell::zone::Extent;
+use super::cell::{Kind, position};
+use super::datum::{CellId, Datum, Output, Span};
+use super::engine::{Engine, Slot};
+use super::uncertainty::{Bounds, NodeBounds};
+use super::{Diagnostic, readiness};
+use crate::graph::Node;
+use crate::guidance::{Library, Overall};
+use crate::units::Quantity;
+
+/// The results of a whole notebook.
+#[derive(Clone, Debug)]
+pub struct Results {
+    /// Each cell's, in file order.
+    pub cells: Vec<CellResult>,
+    /// What still stops a worksheet from being issued as final.
+    pub readiness: Vec<readiness::Item>,
+    /// How many inputs carry a spread.
+    pub spreads: usize,
+    /// How many draws bound the outputs; none where no input has a spread.
+    pub draws: u32,
+    /// What the draws are keyed by.
+    pub seed: u64,
+}
+
+/// Whether a cell could be worked out.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub enum State {
+    /// It was.
+    Ok,
+    /// It has faults of its own.
+    Error,
+    /// It depends on these cells, which have.
+    Waiting(Vec<String>),
+}
+
+impl State {
+    /// Returns the word for it.
+    #[must_use]
+    pub const fn word(&self) -> &'static str {
+        match self {
+            State::Ok => "ok",
+            State::Error => "error",
+            State::Waiting(_) => "waiting",
+        }
+    }
+}
+
+/// The results of one cell.
+#[derive(Clone, Debug)]
+pub struct CellResult {
+    /// Its number.
+    pub id: CellId,
+    /// Its name.
+    pub name: String,
+    /// Its kind.
+    pub kind: Kind,
+    /// Whether it could be worked out.
+    pub state: State,
+    /// Its outputs, in the order of its kind; none unless the state is `Ok`.
+    pub figures: Vec<Figure>,
+    /// Its own faults.
+    pub errors: Vec<Diagnostic>,
+    /// The warnings that its values call up.
+    pub cautions: Vec<Caution>,
+    /// An assessment's limits, judged on the unfavourable bound.
+    pub verdicts: Vec<Verdict>,
+    /// An assessment's limits drawn together, on the unfavourable bound.
+    pub overall: Option<Overall>,
+    /// In how many draws it had no value.
+    pub failed: u32,
+    /// Out of how many.
+    pub draws: u32,
+}
+
+/// One output, with its place in the cell.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Figure {
+    /// The output's name, or a table's column.
+    pub name: String,
+    /// The source that it is about, where it is about one.
+    pub part: Option<String>,
+    /// The row of the cell's table, for a column.
+    pub row: Option<usize>,
+    /// Its value.
+    pub shown: Shown,
+}
+
+/// A value with the bounds of its central 95 %, where spreads reach it.
+#[derive(Clone, Debug, PartialEq)]
+pub enum Shown {
+    /// A quantity.
+    Quantity {
+        /// The nominal one.
+        quantity: Quantity,
+        /// The lower bound in SI units.
+        low: Option<f64>,
+        /// The upper bound in SI units.
+        high: Option<f64>,
+    },
+    /// A duration.
+    Time {
+        /// The nominal one.
+        span: Span,
+        /// The shortest.
+        low: Option<Span>,
+        /// The longest.
+        high: Option<Span>,
+    },
+    /// A distance along a line.
+    Extent {
+        /// The nominal one.
+        extent: Extent,
+        /// The nearest.
+        low: Option<Extent>,
+        /// The farthest.
+        high: Option<Extent>,
+    },
+    /// A word.
+    Word(String),
+}
+
+impl Shown {
+    /// Returns the nominal quantity.
+    #[must_use]
+    pub const fn quantity(&self) -> Option<Quantity> {
+        match self {
+            Shown::Quantity { quantity, .. } => Some(*quantity),
+            Shown::Time { .. } | Shown::Extent { .. } | Shown::Word(_) => None,
+        }
+    }
+
+    /// Returns the upper bound of a quantity, its nominal value without one.
+    #[must_use]
+    pub fn upper(&self) -> Option<f64> {
+        match self {
+            Shown::Quantity { quantity, high, .. } => Some(high.unwrap_or(quantity.si)),
+            Shown::Time { .. } | Shown::Extent { .. } | Shown::Word(_) => None,
+        }
+    }
+
+    /// Returns the word.
+    #[must_use]
+    pub fn word(&self) -> Option<&str> {
+        match self {
+            Shown::Word(word) => Some(word),
+            Shown::Quantity { .. } | Shown::Time { .. } | Shown::Extent { .. } => None,
+        }
+    }
+
+    fn new(output: &Output<'_>, ranks: Option<(f64, f64)>) -> Option<Shown> {
+        let (low, high) = ranks.unzip();
+        Some(match *output {
+            Output::Quantity(quantity) => Shown::Quantity {
+                quantity,
+                low,
+                high,
+            },
+            Output::Time(span) => {
+                let like = |rank: f64| match span {
+                    _ if rank == f64::INFINITY => Span::Unlimited,
+                    Span::Capped(cap) if rank >= cap => Span::Capped(cap),
+                    _ => Span::Seconds(rank),
+                };
+                Shown::Time {
+                    span,
+                    low: low.map(like),
+                    high: high.map(like),
+                }
+            }
+            Output::Extent(extent) => {
+                let farthest = match extent {
+                    Extent::NotMetWithin(farthest) => farthest,
+                    Extent::At(_) | Extent::MetEverywhere | Extent::NotAssessed => f64::INFINITY,
+                };
+                let like = |rank: f64| match rank {
+                    f64::INFINITY => Extent::NotMetWithin(farthest),
+                    f64::NEG_INFINITY => Extent::MetEverywhere,
+                    distance => Extent::At(distance),
+                };
+                Shown::Extent {
+                    extent,
+                    low: low.map(like),
+                    high: high.map(like),
+                }
+            }
+            Output::Word(word) => Shown::Word(word.to_owned()),
+            Output::Nothing => return None,
+        })
+    }
+}
+
+impl Results {
+    /// Gathers everything that an engine has worked out, with the bounds that
+    /// were drawn for it.
+    #[must_use]
+    pub fn new(engine: &Engine, bounds: &Bounds) -> Results {
+        let mut cells = Vec::with_capacity(engine.notebook().cells.len());
+        for place in 0..engine.notebook().cells.len() {
+            if let Some(id) = engine.id(place) {
+                cells.push(cell_result(engine, bounds, id));
+            }
+        }
+        let readiness = readiness::items(engine, &cells);
+        let spreads = bounds.spreads();
+        let settings = bounds.settings();
+        Results {
+            cells,
+            readiness,
+            spreads,
+            draws: if spreads > 0 { settings.draws } else { 0 },
+            seed: settings.seed,
+        }
+    }
+
+    /// Returns the result of the cell of this name.
+    #[must_use]
+    pub fn cell(&self, name: &str) -> Option<&CellResult> {
+        self.cells.iter().find(|cell| cell.name == name)
+    }
+
+    /// Returns whether every cell was worked out.
+    #[must_use]
+    pub fn is_whole(&self) -> bool {
+        self.cells.iter().all(|cell| cell.state == State::Ok)
+    }
+}
+
+impl CellResult {
+    /// Returns the value of an output that is in no table and about no source.
+    #[must_use]
+    pub fn shown(&self, name: &str) -> Option<&Shown> {
+        self.figures
+            .iter()
+            .find(|figure| figure.name == name && figure.row.is_none() && figure.part.is_none())
+            .map(|figure| &figure.shown)
+    }
+
+    /// Returns the value in a row of the cell's table.
+    #[must_use]
+    pub fn in_row(&self, row: usize, name: &str) -> Option<&Shown> {
+        self.figures
+            .iter()
+            .find(|figure| figure.name == name && figure.row == Some(row))
+            .map(|figure| &figure.shown)
+    }
+
+    /// Returns the number of rows of the cell's table.
+    #[must_use]
+    pub fn rows(&self) -> usize {
+        self.figures
+            .iter()
+            .filter_map(|figure| figure.row)
+            .max()
+            .map_or(0, |last| last + 1)
+    }
+}
+
+fn cell_result(engine: &Engine, bounds: &Bounds, id: CellId) -> CellResult {
+    let cell = engine.cell(id).expect("the engine numbers its own cells");
+    let mut errors = Vec::new();
+    let mut waits = Vec::new();
+    for (_, node) in engine.nodes(id) {
+        match engine.value(*node) {
+            Some(Datum::Fault(faults)) => errors.extend(faults.iter().cloned()),
+            Some(Datum::Waiting(cells)) => waits.extend(cells.iter().copied()),
+            _ => {}
+        }
+    }
+    // The check comes last in the nodes, but the same fault may be at a field.
+    let mut unique: Vec<Diagnostic> = Vec::with_capacity(errors.len());
+    for error in errors {
+        if !unique.contains(&error) {
+            unique.push(error);
+        }
+    }
+    waits.retain(|cell| *cell != id);
+    waits.sort_unstable();
+    waits.dedup();
+    let state = if !unique.is_empty() {
+        State::Error
+    } else if waits.is_empty() {
+        State::Ok
+    } else {
+        State::Waiting(
+            waits
+                .into_iter()
+                .filter_map(|cell| engine.cell(cell))
+                .map(|cell| cell.name.clone())
+                .collect(),
+        )
+    };
+    let mut result = CellResult {
+        id,
+        name: cell.name.clone(),
+        kind: cell.kind,
+        figures: Vec::new(),
+        errors: unique,
+        cautions: Vec::new(),
+        verdicts: Vec::new(),
+        overall: None,
+        failed: 0,
+        draws: 0,
+        state,
+    };
+    if result.state == State::Ok
+        && let Some(node) = engine.result(id)
+    {
+        fill(engine, bounds, node, &mut result);
+    }
+    result.cautions = caution::of_cell(engine, id, &result);
+    result
+}
+
+fn fill(engine: &Engine, bounds: &Bounds, node: Node, result: &mut CellResult) {
+    let Some(datum) = engine.value(node) else {
+        return;
+    };
+    let node_bounds = bounds.of(node);
+    if let Some(node_bounds) = node_bounds {
+        result.failed = node_bounds.failed;
+        result.draws = bounds.settings().draws;
+    }
+    let mut at = 0;
+    datum.visit(&mut |slot, output| {
+        let ranks = node_bounds.and_then(|bounds| bounds.ranks.get(at).copied().flatten());
+        at += 1;
+        if let Some(shown) = Shown::new(&output, ranks) {
+            result.figures.push(Figure {
+                name: slot.name.to_owned(),
+                part: slot.part.map(str::to_owned),
+                row: slot.row,
+                shown,
+            });
+        }
+    });
+    if let Datum::Verdicts(verdicts) = datum {
+        let stay = stay_bound(engine, bounds, result.id);
+        judge(verdicts, node_bounds, stay, result);
+    }
+}
+
+/// Returns the longest stay of an assessment's position, on the bound.
+fn stay_bound(engine: &Engine, bounds: &Bounds, id: CellId) -> Option<f64> {
+    let position = engine.cell(id)?.text("position")?;
+    let node = engine.slot(engine.find(position)?, Slot::Field("stay"))?;
+    bounds
+        .of(node)
+        .and_then(|bounds| bounds.ranks.first().copied().flatten())
+        .map(|(_, high)| high)
+}
+
+/// Judges every limit on the unfavourable bound of exposure and stay, and puts
+/// those findings in place of the nominal ones.
+fn judge(
+    nominal: &[Verdict],
+    bounds: Option<&NodeBounds>,
+    stay: Option<f64>,
+    result: &mut CellResult,
+) {
+    let library = Library::shipped();
+    let mut verdicts = Vec::with_capacity(nominal.len());
+    for (row, verdict) in nominal.iter().enumerate() {
+        let mut verdict = verdict.clone();
+        let exposure = match result.in_row(row, "exposure") {
+            Some(shown) => shown.upper(),
+            None => None,
+        };
+        let stay = stay.or(verdict.stay);
+        if let Some(exposure) = exposure
+            && let Ok(judgement) = library.judge(&verdict.guidance, exposure, stay)
+        {
+            verdict.judgement = judgement;
+        }
+        verdicts.push(verdict);
+    }
+    let mut overall = assessment::overall(&verdicts);
+    let failed = bounds.is_some_and(|bounds| bounds.failed > 0);
+    if failed && !matches!(overall, Overall::Over { .. }) {
+        // Without bounds nothing is within.
+        overall = Overall::NotAssessed {
+            missing: crate::guidance::NEEDED.to_vec(),
+            within: Vec::new(),
+        };
+    }
+    let governed = assessment::governing(&verdicts).map(|verdict| verdict.guidance.clone());
+    for figure in &mut result.figures {
+        let word = match (figure.name.as_str(), figure.row) {
+            ("finding", Some(row)) => {
+                let finding = verdicts[row].judgement.finding;
+                if failed && !finding.counts_as_over() {
+                    "not assessed"
+                } else {
+                    finding.word()
+                }
+            }
+            ("finding", None) => overall.word(),
+            ("governed_by", None) => match &governed {
+                Some(id) => id,
+                None => continue,
+            },
+            _ => continue,
+        };
+        figure.shown = Shown::Word(word.to_owned());
+    }
+    result.verdicts = verdicts;
+    result.overall = Some(overall);
+}
+
+/// Returns what reaches a position, nominal, for drawings.
+#[must_use]
+pub fn sights(engine: &Engine, id: CellId) -> Option<&position::Sights> {
+    match engine.value_of(id, Slot::Group("sights"))? {
+        Datum::Sights(sights) => Some(sights),
+        _ => None,
+    }
+}
