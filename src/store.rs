@@ -1,3 +1,5 @@
 //! Notebooks as files: read, checked, written whole or not at all.
 
 pub mod file;
+pub mod schema;
+pub mod template;
