@@ -10,6 +10,7 @@ mod error;
 mod flow;
 pub mod layout;
 pub mod paint;
+pub mod sheet;
 mod wrap;
 
 pub use error::Error;

@@ -1,0 +1,217 @@
+//! What was found: one sentence a position, the edges of the zones, and the
+//! tables behind them.
+
+use super::Sheet;
+use crate::drawing::mark::Shape;
+use crate::guidance::Overall;
+use crate::notebook::cell::{Kind, assessment};
+use crate::notebook::results::{CellResult, State};
+use crate::notebook::wording;
+use crate::units::{Dimension, format};
+use crate::worksheet::block::{Block, Cell, Column, Pair, Run, Table};
+
+/// Returns the shape of a finding's word.
+pub(super) fn shape(word: &str) -> Shape {
+    match word {
+        "over" | "onset reached" => Shape::Over,
+        "within" | "below onset" => Shape::Within,
+        _ => Shape::NotAssessed,
+    }
+}
+
+/// Returns the finding's word of a position: the worst of those that judge it.
+pub(super) fn word_of(sheet: &Sheet<'_>, position: &str) -> Option<&'static str> {
+    let words: Vec<&str> = sheet
+        .results
+        .cells
+        .iter()
+        .filter(|cell| judges(sheet, cell, position))
+        .filter_map(|cell| cell.overall.as_ref().map(Overall::word))
+        .collect();
+    ["over", "not assessed", "within"]
+        .into_iter()
+        .find(|word| words.contains(word))
+}
+
+fn judges(sheet: &Sheet<'_>, cell: &CellResult, position: &str) -> bool {
+    cell.kind == Kind::Assessment
+        && sheet
+            .engine
+            .cell(cell.id)
+            .is_some_and(|cell| cell.text("position") == Some(position))
+}
+
+pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
+    let mut blocks = vec![Block::Heading("Findings".to_owned())];
+    for cell in &sheet.results.cells {
+        match cell.kind {
+            Kind::Position => blocks.extend(of_position(sheet, cell)),
+            Kind::Zone => blocks.push(of_zone(sheet, cell)),
+            _ => {}
+        }
+    }
+    for cell in &sheet.results.cells {
+        blocks.extend(faults(cell));
+    }
+    if blocks.len() == 1 {
+        blocks.push(Block::Finding {
+            shape: Shape::NotAssessed,
+            word: "not assessed".to_owned(),
+            text: vec![Run::plain(
+                ": there is no position in this notebook, so nothing is decided here.",
+            )],
+        });
+    }
+    blocks
+}
+
+fn of_position(sheet: &Sheet<'_>, position: &CellResult) -> Vec<Block> {
+    let mut blocks = Vec::new();
+    for cell in &sheet.results.cells {
+        if !judges(sheet, cell, &position.name) {
+            continue;
+        }
+        let (word, text) = match wording::finding(sheet.engine, cell) {
+            Some(sentence) => (sentence.word, sentence.text),
+            None => ("not assessed", "it could not be worked out".to_owned()),
+        };
+        blocks.push(Block::Finding {
+            shape: shape(word),
+            word: word.to_owned(),
+            text: vec![
+                Run::plain(" at "),
+                Run::bold(position.name.clone()),
+                Run::plain(format!(": {text}.")),
+            ],
+        });
+    }
+    if blocks.is_empty() {
+        blocks.push(Block::Finding {
+            shape: Shape::NotAssessed,
+            word: "not assessed".to_owned(),
+            text: vec![
+                Run::plain(" at "),
+                Run::bold(position.name.clone()),
+                Run::plain(": nothing in this notebook judges it."),
+            ],
+        });
+    }
+    blocks
+}
+
+fn of_zone(sheet: &Sheet<'_>, cell: &CellResult) -> Block {
+    let typed = sheet.engine.cell(cell.id);
+    let text = |field: &str| typed.and_then(|cell| cell.text(field)).unwrap_or("");
+    let rule = format!("{} for {}", text("guidance"), text("stay"));
+    Block::Bullet(vec![
+        Run::bold(format!("Zone {}", cell.name)),
+        Run::plain(format!(" ({rule}): ")),
+        Run::bold(wording::zone(cell, text("from"))),
+        Run::plain("."),
+    ])
+}
+
+fn faults(cell: &CellResult) -> Vec<Block> {
+    let finding = |text: String| Block::Finding {
+        shape: Shape::NotAssessed,
+        word: "not worked out".to_owned(),
+        text: vec![
+            Run::plain(": "),
+            Run::bold(cell.name.clone()),
+            Run::plain(text),
+        ],
+    };
+    match &cell.state {
+        State::Ok => Vec::new(),
+        State::Error => cell
+            .errors
+            .iter()
+            .map(|error| finding(format!(", {error}")))
+            .collect(),
+        State::Waiting(cells) => vec![finding(format!(" waits for {}", cells.join(", ")))],
+    }
+}
+
+/// Returns what reaches each position, and what each limit says of it.
+pub(super) fn tables(sheet: &Sheet<'_>) -> Vec<Block> {
+    let mut blocks = Vec::new();
+    for position in &sheet.results.cells {
+        if position.kind != Kind::Position || position.state != State::Ok {
+            continue;
+        }
+        blocks.push(Block::Heading(format!("Position {}", position.name)));
+        blocks.push(Block::Pairs {
+            columns: 4,
+            pairs: exposures(position),
+        });
+        for cell in &sheet.results.cells {
+            if judges(sheet, cell, &position.name) && cell.state == State::Ok {
+                blocks.push(Block::Table(verdicts(cell)));
+            }
+        }
+    }
+    blocks
+}
+
+fn exposures(position: &CellResult) -> Vec<Pair> {
+    position
+        .figures
+        .iter()
+        .map(|figure| {
+            let nominal = wording::nominal(&figure.name, &figure.shown, None);
+            let value = match wording::bound(&figure.name, &figure.shown, None) {
+                Some(bound) if bound != nominal => {
+                    vec![Run::bold(bound), Run::muted(format!("\nnominal {nominal}"))]
+                }
+                _ => vec![Run::plain(nominal)],
+            };
+            Pair {
+                name: wording::figure_label(figure),
+                value,
+            }
+        })
+        .collect()
+}
+
+fn verdicts(cell: &CellResult) -> Table {
+    let columns = vec![
+        Column::words("limit"),
+        Column::numbers("exposure"),
+        Column::numbers("limit for the stay"),
+        Column::numbers("ratio"),
+        Column::numbers("allowed time"),
+        Column::words("finding"),
+    ];
+    let rows = cell
+        .verdicts
+        .iter()
+        .enumerate()
+        .map(|(row, verdict)| {
+            let judgement = &verdict.judgement;
+            let word = cell
+                .in_row(row, "finding")
+                .and_then(|shown| shown.word())
+                .unwrap_or("not assessed");
+            let limit = judgement.limit.map_or_else(
+                || "none".to_owned(),
+                |si| {
+                    let unit = format::natural_unit(Dimension::IRRADIANCE, si, None);
+                    format::permitted(si, &unit, 3)
+                },
+            );
+            vec![
+                Cell::plain(verdict.guidance.clone()),
+                Cell::plain(format::safe_irradiance(judgement.exposure)),
+                Cell::plain(limit),
+                Cell::plain(
+                    judgement
+                        .ratio
+                        .map_or_else(|| "none".to_owned(), format::safe_ratio),
+                ),
+                Cell::plain(wording::span(assessment::span(judgement.allowed))),
+                Cell::finding(shape(word), word),
+            ]
+        })
+        .collect();
+    Table { columns, rows }
+}

@@ -1,0 +1,208 @@
+//! The curves: irradiance against distance with limit lines, crossings and the
+//! positions on that line.
+
+use super::Sheet;
+use super::findings::{shape, word_of};
+use crate::drawing::curve::{self, Crossing, Curve, LimitLine, Marker};
+use crate::drawing::mark::Shape;
+use crate::guidance::{Exposure, Library};
+use crate::notebook::cell::zone::Extent;
+use crate::notebook::cell::{Cell, Kind};
+use crate::notebook::datum::Datum;
+use crate::notebook::engine::Slot;
+use crate::notebook::results::{CellResult, Shown, State};
+use crate::notebook::wording;
+use crate::units::format::{self, Rounding};
+use crate::worksheet::block::Block;
+
+/// The size of a plot on paper, in points.
+const SIZE: (f64, f64) = (490.0, 280.0);
+
+pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
+    let mut blocks = Vec::new();
+    for cell in &sheet.results.cells {
+        if cell.kind != Kind::Curve || cell.state != State::Ok {
+            continue;
+        }
+        if blocks.is_empty() {
+            blocks.push(Block::Heading("Irradiance against distance".to_owned()));
+        }
+        let near_infrared = plot(sheet, cell, Exposure::NearInfrared);
+        let total = plot(sheet, cell, Exposure::Total);
+        // The quantity that limits judge here; all of it where none does.
+        let shown = if near_infrared.limits.is_empty() && !total.limits.is_empty() {
+            total
+        } else {
+            near_infrared
+        };
+        blocks.push(Block::Picture {
+            picture: curve::picture(&shown, SIZE.0, SIZE.1),
+            caption: caption(&shown),
+        });
+    }
+    blocks
+}
+
+fn caption(curve: &Curve) -> String {
+    let mut text = "Full line: nominal. ".to_owned();
+    if curve.upper.is_some() {
+        text.push_str("Dashed: upper bound (97.5 %). ");
+    }
+    text.push_str(
+        "Dotted: inverse square through the farthest point, for comparison: too high or too low \
+         near the source. Pins mark where a rule begins to be met, with the reach counted.",
+    );
+    text
+}
+
+fn plot(sheet: &Sheet<'_>, cell: &CellResult, quantity: Exposure) -> Curve {
+    let column = match quantity {
+        Exposure::NearInfrared => "near_ir_irradiance",
+        Exposure::Total | Exposure::Skin => "irradiance",
+    };
+    let typed = sheet.engine.cell(cell.id);
+    let from = typed.and_then(|cell| cell.text("from")).unwrap_or_default();
+    let rows: Vec<(f64, f64)> = series(cell, column, |shown| {
+        shown.quantity().map(|quantity| quantity.si)
+    });
+    let bounded = cell
+        .in_row(0, column)
+        .is_some_and(|shown| matches!(shown, Shown::Quantity { high: Some(_), .. }));
+    let upper = bounded.then(|| series(cell, column, Shown::upper));
+    let height = typed.and_then(|cell| cell.text("z")).unwrap_or("1.6 m");
+    Curve {
+        title: format!("{}: from {from}, at {height}", cell.name),
+        x_label: format!("horizontal distance from the centre of {from} (m)"),
+        y_label: format!(
+            "{} (W/m²)",
+            match quantity {
+                Exposure::NearInfrared => "near infrared irradiance, 780–3000 nm",
+                Exposure::Total | Exposure::Skin => "irradiance, all wavelengths",
+            }
+        ),
+        y_unit: 1.0,
+        inverse_square: rows.last().copied(),
+        limits: limits(sheet, cell, quantity),
+        positions: positions(sheet, cell, column),
+        rows,
+        upper,
+        number: |value| format::significant(value, 1, Rounding::Nearest),
+    }
+}
+
+fn series(
+    cell: &CellResult,
+    column: &str,
+    value: impl Fn(&Shown) -> Option<f64>,
+) -> Vec<(f64, f64)> {
+    (0..cell.rows())
+        .filter_map(|row| {
+            let distance = cell.in_row(row, "distance")?.quantity()?.si;
+            Some((distance, value(cell.in_row(row, column)?)?))
+        })
+        .collect()
+}
+
+/// Returns the rules of the zones that run along the curve's own line.
+fn limits(sheet: &Sheet<'_>, curve: &CellResult, quantity: Exposure) -> Vec<LimitLine> {
+    let Some(line) = sheet.engine.cell(curve.id) else {
+        return Vec::new();
+    };
+    let mut limits = Vec::new();
+    for cell in &sheet.results.cells {
+        let Some(typed) = sheet.engine.cell(cell.id) else {
+            continue;
+        };
+        if cell.kind != Kind::Zone || !same_line(sheet, line, typed) {
+            continue;
+        }
+        let id = typed.text("guidance").unwrap_or_default();
+        let judged = Library::shipped()
+            .get(id)
+            .is_some_and(|limit| limit.metric.exposure() == quantity);
+        let value = cell
+            .shown("limit")
+            .and_then(Shown::quantity)
+            .map(|limit| limit.si);
+        let (Some(value), true) = (value, judged) else {
+            continue;
+        };
+        let (nominal, safe) = match cell.shown("distance") {
+            Some(Shown::Extent { extent, high, .. }) => (Some(*extent), *high),
+            _ => (None, None),
+        };
+        limits.push(LimitLine {
+            label: format!("{id}, {}", typed.text("stay").unwrap_or_default()),
+            value,
+            crossing: nominal.and_then(crossing),
+            upper_crossing: safe.and_then(crossing),
+        });
+    }
+    limits
+}
+
+fn crossing(extent: Extent) -> Option<Crossing> {
+    match extent {
+        Extent::At(distance) => Some(Crossing {
+            distance,
+            text: wording::extent(extent),
+        }),
+        Extent::MetEverywhere | Extent::NotMetWithin(_) | Extent::NotAssessed => None,
+    }
+}
+
+/// Returns whether two cells name the same source, heading and height.
+fn same_line(sheet: &Sheet<'_>, a: &Cell, b: &Cell) -> bool {
+    let value = |cell: &Cell, field: &'static str| {
+        let id = sheet.engine.find(&cell.name)?;
+        Some(
+            sheet
+                .engine
+                .value_of(id, Slot::Field(field))?
+                .as_quantity()?
+                .si
+                .to_bits(),
+        )
+    };
+    a.text("from") == b.text("from")
+        && value(a, "heading") == value(b, "heading")
+        && value(a, "z") == value(b, "z")
+}
+
+/// Returns the positions that stand on the curve's own line.
+fn positions(sheet: &Sheet<'_>, curve: &CellResult, column: &str) -> Vec<Marker> {
+    let Some(Datum::Line(line)) = sheet.engine.value_of(curve.id, Slot::Group("line")) else {
+        return Vec::new();
+    };
+    let (Some(first), Some(last)) = (line.views.points.first(), line.views.points.last()) else {
+        return Vec::new();
+    };
+    let Some(ahead) = (*last - *first).try_normalize() else {
+        return Vec::new();
+    };
+    let mut markers = Vec::new();
+    for cell in &sheet.results.cells {
+        let Some(sights) = crate::notebook::results::sights(sheet.engine, cell.id) else {
+            continue;
+        };
+        let along = (sights.eye - *first).dot(ahead);
+        let aside = sights.eye - (*first + ahead * along);
+        let distance = line.distances.first().copied().unwrap_or(0.0) + along;
+        let in_range =
+            distance > 0.0 && line.distances.last().is_some_and(|last| distance <= *last);
+        if aside.length() > 0.05 || !in_range {
+            continue;
+        }
+        let Some(value) = cell.shown(column).and_then(Shown::quantity) else {
+            continue;
+        };
+        let word = word_of(sheet, &cell.name);
+        markers.push(Marker {
+            label: format!("{} · {}", cell.name, word.unwrap_or("not assessed")),
+            distance,
+            value: value.si,
+            shape: word.map_or(Shape::NotAssessed, shape),
+        });
+    }
+    markers
+}
