@@ -32,8 +32,8 @@ pub fn label(name: &str) -> &str {
         "envelope_near_ir_irradiance" => "near infrared, worst at the eye",
         "envelope_skin_irradiance" => "skin band, worst within reach",
         "blue_light_radiance" => "blue-light radiance",
-        "retinal_radiance_2006" => "retinal radiance, weights of 2006",
-        "retinal_radiance_2013" => "retinal radiance, weights of 2013",
+        "retinal_radiance_2006" => "retinal radiance, 2006",
+        "retinal_radiance_2013" => "retinal radiance, 2013",
         "ir_a_radiance" => "IR-A radiance, 780–1400 nm",
         "irradiance_from" => "irradiance from",
         "view_factor" => "configuration factor of",
@@ -181,6 +181,23 @@ pub fn unit_of(engine: &Engine, result: &CellResult) -> Option<Unit> {
         Kind::Value => super::cell::field::typed_unit(engine.entry(result.id, "entry")?).cloned(),
         _ => None,
     }
+}
+
+/// Returns the limit that an exposure was compared with, rounded down, and the
+/// time that it belongs to where that is not the stay: guidance that ends
+/// before the stay does is asked at its last second.
+#[must_use]
+pub fn permitted(verdict: &Verdict) -> Option<String> {
+    let judgement = &verdict.judgement;
+    let si = judgement.limit?;
+    let unit = format::natural_unit(Dimension::IRRADIANCE, si, None);
+    let limit = format::permitted(si, &unit, 3);
+    Some(match judgement.judged_at {
+        Some(time) if verdict.stay.is_some_and(|stay| time < stay) => {
+            format!("{limit} at {}", plain_time(time))
+        }
+        _ => limit,
+    })
 }
 
 /// Returns where a zone ends in words, on the safe bound, with the nominal edge

@@ -183,11 +183,9 @@ fn print_verdicts(cell: &CellResult, out: &mut dyn Write) -> io::Result<()> {
             .and_then(|shown| shown.word())
             .unwrap_or_default();
         let exposure = crate::units::format::safe_irradiance(judgement.exposure);
-        let limit = judgement.limit.map_or_else(String::new, |si| {
-            let unit =
-                crate::units::format::natural_unit(crate::units::Dimension::IRRADIANCE, si, None);
-            format!(" of {}", crate::units::format::permitted(si, &unit, 3))
-        });
+        let limit = wording::permitted(verdict)
+            .map(|limit| format!(" of {limit}"))
+            .unwrap_or_default();
         let ratio = judgement
             .ratio
             .map(|ratio| format!(", ratio {}", crate::units::format::safe_ratio(ratio)))

@@ -7,7 +7,7 @@ use crate::guidance::Overall;
 use crate::notebook::cell::{Kind, assessment};
 use crate::notebook::results::{CellResult, State};
 use crate::notebook::wording;
-use crate::units::{Dimension, format};
+use crate::units::format;
 use crate::worksheet::block::{Block, Cell, Column, Pair, Run, Table};
 
 /// Returns the shape of a finding's word.
@@ -175,9 +175,9 @@ fn exposures(position: &CellResult) -> Vec<Pair> {
 
 fn verdicts(cell: &CellResult) -> Table {
     let columns = vec![
-        Column::words("limit"),
+        Column::words("guidance"),
         Column::numbers("exposure"),
-        Column::numbers("limit for the stay"),
+        Column::numbers("limit"),
         Column::numbers("ratio"),
         Column::numbers("allowed time"),
         Column::words("finding"),
@@ -192,13 +192,7 @@ fn verdicts(cell: &CellResult) -> Table {
                 .in_row(row, "finding")
                 .and_then(|shown| shown.word())
                 .unwrap_or("not assessed");
-            let limit = judgement.limit.map_or_else(
-                || "none".to_owned(),
-                |si| {
-                    let unit = format::natural_unit(Dimension::IRRADIANCE, si, None);
-                    format::permitted(si, &unit, 3)
-                },
-            );
+            let limit = wording::permitted(verdict).unwrap_or_else(|| "none".to_owned());
             vec![
                 Cell::plain(verdict.guidance.clone()),
                 Cell::plain(format::safe_irradiance(judgement.exposure)),

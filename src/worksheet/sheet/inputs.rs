@@ -53,7 +53,9 @@ pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
             if let Some(row) = input(sheet, cell, spec, first) {
                 first = false;
                 inputs.rows.push(row);
-            } else if let Need::Default(text) = spec.need {
+            } else if let Need::Default(text) = spec.need
+                && applies(sheet, cell, spec.name)
+            {
                 left_out.push(format!("{} {text}", spec.name.replace('_', " ")));
             }
             formulas.rows.extend(formula(sheet, cell, spec));
@@ -82,6 +84,24 @@ pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
         blocks.push(Block::Table(formulas));
     }
     blocks
+}
+
+/// Returns whether a field that was left out has a meaning for this cell.
+fn applies(sheet: &Sheet<'_>, cell: &CellResult, field: &str) -> bool {
+    let Some(typed) = sheet.engine.cell(cell.id) else {
+        return false;
+    };
+    match (cell.kind, typed.text("form")) {
+        (Kind::Source, Some("opening")) => field != "freeboard",
+        (Kind::Source, Some("pool")) => !matches!(field, "wall_thickness" | "tilt"),
+        (Kind::Source, _) => !matches!(field, "wall_thickness" | "freeboard" | "tilt"),
+        (Kind::Position, _) => match field {
+            "bearing" => typed.field("from").is_some(),
+            "tilt" => sheet.engine.entry(cell.id, "faces").is_some(),
+            _ => true,
+        },
+        _ => true,
+    }
 }
 
 /// Returns the row of one field; `None` where nothing was typed, or where the

@@ -50,7 +50,7 @@ fn caption(curve: &Curve) -> String {
     }
     text.push_str(
         "Dotted: inverse square through the farthest point, for comparison: too high or too low \
-         near the source. Pins mark where a rule begins to be met, with the reach counted.",
+         near the source. Pins mark where a rule begins to be met: for zones with the reach counted.",
     );
     text
 }
@@ -82,7 +82,7 @@ fn plot(sheet: &Sheet<'_>, cell: &CellResult, quantity: Exposure) -> Curve {
         ),
         y_unit: 1.0,
         inverse_square: rows.last().copied(),
-        limits: limits(sheet, cell, quantity),
+        limits: limits(sheet, cell, quantity, &rows, upper.as_deref()),
         positions: positions(sheet, cell, column),
         rows,
         upper,
@@ -103,12 +103,20 @@ fn series(
         .collect()
 }
 
-/// Returns the rules of the zones that run along the curve's own line.
-fn limits(sheet: &Sheet<'_>, curve: &CellResult, quantity: Exposure) -> Vec<LimitLine> {
+/// Returns the rules that judge on this quantity: those of the zones that run
+/// along the curve's own line, with their crossings, then those of assessments
+/// whose level no zone has drawn yet.
+fn limits(
+    sheet: &Sheet<'_>,
+    curve: &CellResult,
+    quantity: Exposure,
+    rows: &[(f64, f64)],
+    upper: Option<&[(f64, f64)]>,
+) -> Vec<LimitLine> {
     let Some(line) = sheet.engine.cell(curve.id) else {
         return Vec::new();
     };
-    let mut limits = Vec::new();
+    let mut limits: Vec<LimitLine> = Vec::new();
     for cell in &sheet.results.cells {
         let Some(typed) = sheet.engine.cell(cell.id) else {
             continue;
@@ -117,14 +125,11 @@ fn limits(sheet: &Sheet<'_>, curve: &CellResult, quantity: Exposure) -> Vec<Limi
             continue;
         }
         let id = typed.text("guidance").unwrap_or_default();
-        let judged = Library::shipped()
-            .get(id)
-            .is_some_and(|limit| limit.metric.exposure() == quantity);
         let value = cell
             .shown("limit")
             .and_then(Shown::quantity)
             .map(|limit| limit.si);
-        let (Some(value), true) = (value, judged) else {
+        let (Some(value), true) = (value, judges(id, quantity)) else {
             continue;
         };
         let (nominal, safe) = match cell.shown("distance") {
@@ -138,7 +143,49 @@ fn limits(sheet: &Sheet<'_>, curve: &CellResult, quantity: Exposure) -> Vec<Limi
             upper_crossing: safe.and_then(crossing),
         });
     }
+    for cell in &sheet.results.cells {
+        for verdict in &cell.verdicts {
+            let (Some(value), Some(stay)) = (verdict.judgement.limit, verdict.stay) else {
+                continue;
+            };
+            let drawn = |line: &LimitLine| (line.value - value).abs() <= 1e-9 * value;
+            if judges(&verdict.guidance, quantity) && !limits.iter().any(drawn) {
+                limits.push(LimitLine {
+                    label: format!(
+                        "{}, {}, without reach",
+                        verdict.guidance,
+                        wording::plain_time(stay)
+                    ),
+                    value,
+                    crossing: outermost(rows, value),
+                    upper_crossing: upper.and_then(|rows| outermost(rows, value)),
+                });
+            }
+        }
+    }
     limits
+}
+
+/// Returns where a drawn series passes a value for the last time, between its
+/// rows on straight lines of the log scales.
+fn outermost(rows: &[(f64, f64)], value: f64) -> Option<Crossing> {
+    let pair = rows
+        .windows(2)
+        .rev()
+        .find(|pair| pair[0].1 > value && pair[1].1 <= value && pair[1].1 > 0.0)?;
+    let [(near, above), (far, below)] = [pair[0], pair[1]];
+    let share = (above / value).ln() / (above / below).ln();
+    let distance = near * (far / near).powf(share);
+    Some(Crossing {
+        distance,
+        text: format::safe_distance(distance),
+    })
+}
+
+fn judges(id: &str, quantity: Exposure) -> bool {
+    Library::shipped()
+        .get(id)
+        .is_some_and(|limit| limit.metric.exposure() == quantity)
 }
 
 fn crossing(extent: Extent) -> Option<Crossing> {
