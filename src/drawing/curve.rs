@@ -4,6 +4,7 @@
 //! colour alone. No label covers another: limits are named in a column beside
 //! the plot, and a position that finds no room in the plot is named there too.
 
+mod data;
 mod plot;
 mod scale;
 

@@ -224,6 +224,21 @@ impl Results {
         self.cells.iter().find(|cell| cell.name == name)
     }
 
+    /// Returns the finding's word of a position: the worst of the assessments
+    /// that judge it; `None` where none does, or none could be worked out.
+    #[must_use]
+    pub fn word_of(&self, engine: &Engine, position: &str) -> Option<&'static str> {
+        let words: Vec<&str> = self
+            .cells
+            .iter()
+            .filter(|cell| cell.judges(engine, position))
+            .filter_map(|cell| cell.overall.as_ref().map(Overall::word))
+            .collect();
+        ["over", "not assessed", "within"]
+            .into_iter()
+            .find(|word| words.contains(word))
+    }
+
     /// Returns whether every cell was worked out.
     #[must_use]
     pub fn is_whole(&self) -> bool {
@@ -248,6 +263,15 @@ impl CellResult {
             .iter()
             .find(|figure| figure.name == name && figure.row == Some(row))
             .map(|figure| &figure.shown)
+    }
+
+    /// Returns whether this is an assessment of the position of this name.
+    #[must_use]
+    pub fn judges(&self, engine: &Engine, position: &str) -> bool {
+        self.kind == Kind::Assessment
+            && engine
+                .cell(self.id)
+                .is_some_and(|cell| cell.text("position") == Some(position))
     }
 
     /// Returns the number of rows of the cell's table.

@@ -23,6 +23,17 @@ pub enum Shape {
 }
 
 impl Shape {
+    /// Returns the shape of a finding's word; the hollow diamond for a word that
+    /// is no finding.
+    #[must_use]
+    pub fn of_word(word: &str) -> Self {
+        match word {
+            "over" | "onset reached" => Shape::Over,
+            "within" | "below onset" => Shape::Within,
+            _ => Shape::NotAssessed,
+        }
+    }
+
     /// Returns the role in which the shape is drawn.
     pub const fn role(self) -> Role {
         match self {

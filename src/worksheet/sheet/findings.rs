@@ -3,42 +3,14 @@
 
 use super::Sheet;
 use crate::drawing::mark::Shape;
-use crate::guidance::Overall;
 use crate::notebook::cell::{Kind, assessment};
 use crate::notebook::results::{CellResult, State};
 use crate::notebook::wording;
 use crate::units::format;
 use crate::worksheet::block::{Block, Cell, Column, Pair, Run, Table};
 
-/// Returns the shape of a finding's word.
-pub(super) fn shape(word: &str) -> Shape {
-    match word {
-        "over" | "onset reached" => Shape::Over,
-        "within" | "below onset" => Shape::Within,
-        _ => Shape::NotAssessed,
-    }
-}
-
-/// Returns the finding's word of a position: the worst of those that judge it.
-pub(super) fn word_of(sheet: &Sheet<'_>, position: &str) -> Option<&'static str> {
-    let words: Vec<&str> = sheet
-        .results
-        .cells
-        .iter()
-        .filter(|cell| judges(sheet, cell, position))
-        .filter_map(|cell| cell.overall.as_ref().map(Overall::word))
-        .collect();
-    ["over", "not assessed", "within"]
-        .into_iter()
-        .find(|word| words.contains(word))
-}
-
 fn judges(sheet: &Sheet<'_>, cell: &CellResult, position: &str) -> bool {
-    cell.kind == Kind::Assessment
-        && sheet
-            .engine
-            .cell(cell.id)
-            .is_some_and(|cell| cell.text("position") == Some(position))
+    cell.judges(sheet.engine, position)
 }
 
 pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
@@ -76,7 +48,7 @@ fn of_position(sheet: &Sheet<'_>, position: &CellResult) -> Vec<Block> {
             None => ("not assessed", "it could not be worked out".to_owned()),
         };
         blocks.push(Block::Finding {
-            shape: shape(word),
+            shape: Shape::of_word(word),
             word: word.to_owned(),
             text: vec![
                 Run::plain(" at "),
@@ -203,7 +175,7 @@ fn verdicts(cell: &CellResult) -> Table {
                         .map_or_else(|| "none".to_owned(), format::safe_ratio),
                 ),
                 Cell::plain(wording::span(assessment::span(judgement.allowed))),
-                Cell::finding(shape(word), word),
+                Cell::finding(Shape::of_word(word), word),
             ]
         })
         .collect();

@@ -108,6 +108,13 @@ impl Band {
         }
     }
 
+    /// Returns the band that the guidance of this id judges an exposure in.
+    #[must_use]
+    pub fn of_guidance(id: &str) -> Option<Band> {
+        let limit = crate::guidance::Library::shipped().get(id)?;
+        Some(Band::judged(limit.metric.exposure()))
+    }
+
     /// Returns the exitances of all sources in this band, for judging: where a
     /// band exceeds the whole, the whole is taken as that band.
     #[must_use]

@@ -1,0 +1,227 @@
+//! What a notebook's curve cell shows: its rows, the rules that judge on them,
+//! and the positions that stand on its line.
+
+use super::{Crossing, Curve, LimitLine, Marker};
+use crate::drawing::mark::Shape;
+use crate::notebook::cell::position::Band;
+use crate::notebook::cell::zone::Extent;
+use crate::notebook::cell::{Cell, Kind};
+use crate::notebook::datum::Datum;
+use crate::notebook::engine::{Engine, Slot};
+use crate::notebook::results::{CellResult, Results, Shown, sights};
+use crate::notebook::wording;
+use crate::units::format::{self, Rounding};
+
+impl Curve {
+    /// Returns the plot of a curve cell that was worked out.
+    ///
+    /// It shows the near infrared irradiance, or the irradiance over all
+    /// wavelengths where only that is judged by a limit on this line.
+    #[must_use]
+    pub fn of(engine: &Engine, results: &Results, cell: &CellResult) -> Curve {
+        let near_infrared = plot(engine, results, cell, Band::NearInfrared);
+        let total = plot(engine, results, cell, Band::Total);
+        if near_infrared.limits.is_empty() && !total.limits.is_empty() {
+            total
+        } else {
+            near_infrared
+        }
+    }
+}
+
+fn plot(engine: &Engine, results: &Results, cell: &CellResult, quantity: Band) -> Curve {
+    let column = match quantity {
+        Band::NearInfrared => "near_ir_irradiance",
+        Band::Total | Band::Skin => "irradiance",
+    };
+    let typed = engine.cell(cell.id);
+    let from = typed.and_then(|cell| cell.text("from")).unwrap_or_default();
+    let rows: Vec<(f64, f64)> = series(cell, column, |shown| {
+        shown.quantity().map(|quantity| quantity.si)
+    });
+    let bounded = cell
+        .in_row(0, column)
+        .is_some_and(|shown| matches!(shown, Shown::Quantity { high: Some(_), .. }));
+    let upper = bounded.then(|| series(cell, column, Shown::upper));
+    let height = typed.and_then(|cell| cell.text("z")).unwrap_or("1.6 m");
+    Curve {
+        title: format!("{}: from {from}, at {height}", cell.name),
+        x_label: format!("horizontal distance from the centre of {from} (m)"),
+        y_label: format!(
+            "{} (W/m²)",
+            match quantity {
+                Band::NearInfrared => "near infrared irradiance, 780–3000 nm",
+                Band::Total | Band::Skin => "irradiance, all wavelengths",
+            }
+        ),
+        y_unit: 1.0,
+        inverse_square: rows.last().copied(),
+        limits: limits(engine, results, cell, quantity, &rows, upper.as_deref()),
+        positions: positions(engine, results, cell, column),
+        rows,
+        upper,
+        number: |value| format::significant(value, 1, Rounding::Nearest),
+    }
+}
+
+fn series(
+    cell: &CellResult,
+    column: &str,
+    value: impl Fn(&Shown) -> Option<f64>,
+) -> Vec<(f64, f64)> {
+    (0..cell.rows())
+        .filter_map(|row| {
+            let distance = cell.in_row(row, "distance")?.quantity()?.si;
+            Some((distance, value(cell.in_row(row, column)?)?))
+        })
+        .collect()
+}
+
+/// Returns the rules that judge on this quantity: those of the zones that run
+/// along the curve's own line, with their crossings, then those of assessments
+/// whose level no zone has drawn yet.
+fn limits(
+    engine: &Engine,
+    results: &Results,
+    curve: &CellResult,
+    quantity: Band,
+    rows: &[(f64, f64)],
+    upper: Option<&[(f64, f64)]>,
+) -> Vec<LimitLine> {
+    let Some(line) = engine.cell(curve.id) else {
+        return Vec::new();
+    };
+    let mut limits: Vec<LimitLine> = Vec::new();
+    for cell in &results.cells {
+        let Some(typed) = engine.cell(cell.id) else {
+            continue;
+        };
+        if cell.kind != Kind::Zone || !same_line(engine, line, typed) {
+            continue;
+        }
+        let id = typed.text("guidance").unwrap_or_default();
+        let value = cell
+            .shown("limit")
+            .and_then(Shown::quantity)
+            .map(|limit| limit.si);
+        let (Some(value), true) = (value, judges(id, quantity)) else {
+            continue;
+        };
+        let (nominal, safe) = match cell.shown("distance") {
+            Some(Shown::Extent { extent, high, .. }) => (Some(*extent), *high),
+            _ => (None, None),
+        };
+        limits.push(LimitLine {
+            label: format!("{id}, {}", typed.text("stay").unwrap_or_default()),
+            value,
+            crossing: nominal.and_then(crossing),
+            upper_crossing: safe.and_then(crossing),
+        });
+    }
+    for cell in &results.cells {
+        for verdict in &cell.verdicts {
+            let (Some(value), Some(stay)) = (verdict.judgement.limit, verdict.stay) else {
+                continue;
+            };
+            let drawn = |line: &LimitLine| (line.value - value).abs() <= 1e-9 * value;
+            if judges(&verdict.guidance, quantity) && !limits.iter().any(drawn) {
+                limits.push(LimitLine {
+                    label: format!(
+                        "{}, {}, without reach",
+                        verdict.guidance,
+                        wording::plain_time(stay)
+                    ),
+                    value,
+                    crossing: outermost(rows, value),
+                    upper_crossing: upper.and_then(|rows| outermost(rows, value)),
+                });
+            }
+        }
+    }
+    limits
+}
+
+/// Returns where a drawn series passes a value for the last time, between its
+/// rows on straight lines of the log scales.
+fn outermost(rows: &[(f64, f64)], value: f64) -> Option<Crossing> {
+    let pair = rows
+        .windows(2)
+        .rev()
+        .find(|pair| pair[0].1 > value && pair[1].1 <= value && pair[1].1 > 0.0)?;
+    let [(near, above), (far, below)] = [pair[0], pair[1]];
+    let share = (above / value).ln() / (above / below).ln();
+    let distance = near * (far / near).powf(share);
+    Some(Crossing {
+        distance,
+        text: format::safe_distance(distance),
+    })
+}
+
+fn judges(id: &str, quantity: Band) -> bool {
+    Band::of_guidance(id) == Some(quantity)
+}
+
+fn crossing(extent: Extent) -> Option<Crossing> {
+    match extent {
+        Extent::At(distance) => Some(Crossing {
+            distance,
+            text: wording::extent(extent),
+        }),
+        Extent::MetEverywhere | Extent::NotMetWithin(_) | Extent::NotAssessed => None,
+    }
+}
+
+/// Returns whether two cells name the same source, heading and height.
+fn same_line(engine: &Engine, a: &Cell, b: &Cell) -> bool {
+    let value = |cell: &Cell, field: &'static str| {
+        let id = engine.find(&cell.name)?;
+        Some(
+            engine
+                .value_of(id, Slot::Field(field))?
+                .as_quantity()?
+                .si
+                .to_bits(),
+        )
+    };
+    a.text("from") == b.text("from")
+        && value(a, "heading") == value(b, "heading")
+        && value(a, "z") == value(b, "z")
+}
+
+/// Returns the positions that stand on the curve's own line.
+fn positions(engine: &Engine, results: &Results, curve: &CellResult, column: &str) -> Vec<Marker> {
+    let Some(Datum::Line(line)) = engine.value_of(curve.id, Slot::Group("line")) else {
+        return Vec::new();
+    };
+    let (Some(first), Some(last)) = (line.views.points.first(), line.views.points.last()) else {
+        return Vec::new();
+    };
+    let Some(ahead) = (*last - *first).try_normalize() else {
+        return Vec::new();
+    };
+    let mut markers = Vec::new();
+    for cell in &results.cells {
+        let Some(sights) = sights(engine, cell.id) else {
+            continue;
+        };
+        let along = (sights.eye - *first).dot(ahead);
+        let aside = sights.eye - (*first + ahead * along);
+        let distance = line.distances.first().copied().unwrap_or(0.0) + along;
+        let in_range =
+            distance > 0.0 && line.distances.last().is_some_and(|last| distance <= *last);
+        if aside.length() > 0.05 || !in_range {
+            continue;
+        }
+        let Some(value) = cell.shown(column).and_then(Shown::quantity) else {
+            continue;
+        };
+        let word = results.word_of(engine, &cell.name);
+        markers.push(Marker {
+            label: format!("{} · {}", cell.name, word.unwrap_or("not assessed")),
+            distance,
+            value: value.si,
+            shape: word.map_or(Shape::NotAssessed, Shape::of_word),
+        });
+    }
+    markers
+}
