@@ -2,7 +2,6 @@
 //! its substituted numbers.
 
 use super::Sheet;
-use crate::entry::Entry;
 use crate::notebook::cell::{Content, Field, Form, Kind, Need, Spec};
 use crate::notebook::datum::Datum;
 use crate::notebook::engine::Slot;
@@ -152,7 +151,7 @@ fn text(field: &Field) -> String {
 
 /// Returns the rows of a field that is worked out from others.
 fn formula(sheet: &Sheet<'_>, cell: &CellResult, spec: &Spec) -> Option<Vec<Cell>> {
-    let entry: &Entry = sheet.engine.entry(cell.id, spec.name)?;
+    let entry = sheet.engine.entry(cell.id, spec.name)?;
     let worked_out = !entry.names().is_empty() || entry.is_single_literal().is_none();
     if !worked_out {
         return None;
