@@ -137,6 +137,24 @@ pub fn quantity(si: f64, unit: &Unit, figures: u32, rounding: Rounding) -> Strin
     )
 }
 
+/// Returns a quantity with every digit that it has: for faults, where a rounded
+/// number could look like one that is allowed.
+///
+/// # Examples
+///
+/// ```
+/// use farglow::units::{Unit, format};
+///
+/// assert_eq!(format::exactly(1.0001, &Unit::one()), "1.0001");
+/// ```
+#[must_use]
+pub fn exactly(si: f64, unit: &Unit) -> String {
+    let number = unit.from_si(si);
+    let text = format!("{}", number.abs());
+    let sign = if number < 0.0 { "−" } else { "" };
+    with_unit(&format!("{sign}{text}"), unit.symbol())
+}
+
 /// Returns a quantity in the unit that reads best, or in `hint` if that
 /// measures the same kind; a difference of temperatures is always in kelvin.
 ///

@@ -120,7 +120,7 @@ fn print_typed(engine: &Engine, cell: &CellResult, out: &mut dyn Write) -> io::R
         .iter()
         .map(|field| {
             let content = match &field.content {
-                Content::Text(text) => text.clone(),
+                Content::Text(text) => shortened(text),
                 Content::List(list) => list.join(", "),
                 Content::Count(number) => number.to_string(),
             };
@@ -138,6 +138,16 @@ fn print_typed(engine: &Engine, cell: &CellResult, out: &mut dyn Write) -> io::R
         writeln!(out, "  {}", fields.join(" · "))?;
     }
     Ok(())
+}
+
+/// Returns a text that fits on a line or two: a damaged entry may be endless.
+fn shortened(text: &str) -> String {
+    const LONGEST: usize = 240;
+    if text.chars().nth(LONGEST).is_none() {
+        return text.to_owned();
+    }
+    let kept: String = text.chars().take(LONGEST).collect();
+    format!("{kept}…")
 }
 
 fn print_outputs(engine: &Engine, cell: &CellResult, out: &mut dyn Write) -> io::Result<()> {

@@ -252,10 +252,7 @@ impl Expect {
             let unit = format::natural_unit(quantity.dimension, si, None);
             Err((
                 "out-of-range",
-                format!(
-                    "expected {wanted}, found {}",
-                    format::quantity(si, &unit, 6, format::Rounding::Nearest)
-                ),
+                format!("expected {wanted}, found {}", format::exactly(si, &unit)),
                 self.example(),
             ))
         }
