@@ -5,5 +5,6 @@ mod entry_reads_like_a_book;
 mod exposure_laws;
 mod graph_laws;
 mod json_laws;
+mod notebook_laws;
 mod printing_and_parsing_agree;
 mod view_factor_laws;
