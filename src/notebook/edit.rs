@@ -53,6 +53,25 @@ pub enum Edit {
         /// The content with basis and note.
         content: Option<Field>,
     },
+    /// All fields of a cell, in this order. Taking the removal of a field back
+    /// puts it where it stood.
+    SetFields {
+        /// The cell's name.
+        name: String,
+        /// Its fields.
+        fields: Vec<Field>,
+    },
+    /// The cell of this name gets its former one back, and the cells whose
+    /// texts had followed get their former fields. It takes a renaming back:
+    /// cells that mentioned the new name before are not caught by it.
+    Unrename {
+        /// Its name.
+        name: String,
+        /// The former one.
+        to: String,
+        /// The former fields of the cells that had followed, by name.
+        fields: Vec<(String, Vec<Field>)>,
+    },
     /// Several changes, made in order as one.
     Several(Vec<Edit>),
 }
@@ -119,6 +138,8 @@ impl Engine {
                 field,
                 content,
             } => self.set_field(name, field, content),
+            Edit::SetFields { name, fields } => self.set_fields(name, fields),
+            Edit::Unrename { name, to, fields } => self.unrename(name, to, fields),
             Edit::Several(edits) => {
                 let mut inverses = Vec::with_capacity(edits.len());
                 for edit in edits {

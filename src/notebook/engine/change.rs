@@ -72,27 +72,74 @@ impl Engine {
             });
         }
         self.free(&to)?;
-        // Cells that already mention the new name, in error so far, must not
-        // be caught by the way back: their own text is not touched.
         let mut followers: Vec<CellId> = self
             .mentioned
             .get(&name)
             .map(|cells| cells.iter().copied().collect())
             .unwrap_or_default();
+        let mut former = Vec::with_capacity(followers.len());
         for follower in &followers {
             let place = self.places[follower];
+            let fields = self.notebook.cells[place].fields.clone();
             self.follow(place, &name, &to);
+            if self.notebook.cells[place].fields != fields {
+                former.push((*follower, fields));
+            }
         }
-        self.notebook.cells[at].name.clone_from(&to);
-        let _ = self.index.remove(&name);
-        let _ = self.index.insert(to.clone(), id);
-        self.scene_changed |= self.notebook.cells[at].kind == Kind::Source;
+        self.call(id, at, &name, &to);
         followers.push(id);
         for follower in followers {
             let _ = self.link(follower);
         }
         self.relink_mentions(&to);
+        // Cells that mentioned the new name before, in error so far, must not
+        // be caught by the way back: it puts the very texts back.
+        let fields = former
+            .into_iter()
+            .map(|(follower, fields)| {
+                let place = self.places[&follower];
+                (self.notebook.cells[place].name.clone(), fields)
+            })
+            .collect();
+        Ok(Edit::Unrename {
+            name: to,
+            to: name,
+            fields,
+        })
+    }
+
+    pub(in crate::notebook) fn unrename(
+        &mut self,
+        name: String,
+        to: String,
+        fields: Vec<(String, Vec<Field>)>,
+    ) -> Result<Edit, Error> {
+        let (id, at) = self.locate(&name)?;
+        self.free(&to)?;
+        for (follower, fields) in &fields {
+            self.check_fields(follower, fields)?;
+        }
+        let mut changed = vec![id];
+        for (follower, fields) in fields {
+            let (follower, place) = self.locate(&follower)?;
+            self.notebook.cells[place].fields = fields;
+            changed.push(follower);
+        }
+        self.call(id, at, &name, &to);
+        for cell in changed {
+            self.relink(cell);
+        }
+        self.relink_mentions(&name);
+        self.relink_mentions(&to);
         Ok(Edit::Rename { name: to, to: name })
+    }
+
+    /// Gives a cell another name, and nothing else.
+    fn call(&mut self, id: CellId, at: usize, name: &str, to: &str) {
+        to.clone_into(&mut self.notebook.cells[at].name);
+        let _ = self.index.remove(name);
+        let _ = self.index.insert(to.to_owned(), id);
+        self.scene_changed |= self.notebook.cells[at].kind == Kind::Source;
     }
 
     /// Replaces a cell's name in every field of the cell at `place`.
@@ -130,19 +177,28 @@ impl Engine {
             });
         };
         let old = cell.fields.iter().position(|old| old.name == field);
-        let inverse = old.map(|place| cell.fields[place].clone());
+        let content_before = old.map(|place| cell.fields[place].clone());
+        let mut inverse = Edit::SetField {
+            name: name.clone(),
+            field,
+            content: content_before,
+        };
         match (old, content) {
             (Some(place), Some(mut content)) => {
                 content.name = spec.name;
                 cell.fields[place] = content;
             }
             (Some(place), None) => {
+                // A file may hold its fields in another order than the kind.
+                inverse = Edit::SetFields {
+                    name,
+                    fields: cell.fields.clone(),
+                };
                 let _ = cell.fields.remove(place);
             }
             (None, Some(mut content)) => {
                 content.name = spec.name;
-                // Where the kind lists it, so that files stay in one order and
-                // taking a change back restores the very same one.
+                // Where the kind lists it, so that files stay in one order.
                 let rank =
                     |name: &str| cell.kind.fields().iter().position(|spec| spec.name == name);
                 let place = cell
@@ -155,11 +211,31 @@ impl Engine {
             (None, None) => {}
         }
         self.relink(id);
-        Ok(Edit::SetField {
-            name,
-            field,
-            content: inverse,
-        })
+        Ok(inverse)
+    }
+
+    pub(in crate::notebook) fn set_fields(
+        &mut self,
+        name: String,
+        fields: Vec<Field>,
+    ) -> Result<Edit, Error> {
+        let (id, at) = self.locate(&name)?;
+        self.check_fields(&name, &fields)?;
+        let fields = std::mem::replace(&mut self.notebook.cells[at].fields, fields);
+        self.relink(id);
+        Ok(Edit::SetFields { name, fields })
+    }
+
+    fn check_fields(&self, name: &str, fields: &[Field]) -> Result<(), Error> {
+        let (_, at) = self.locate(name)?;
+        let kind = self.notebook.cells[at].kind;
+        match fields.iter().find(|field| kind.field(field.name).is_none()) {
+            Some(field) => Err(Error::NoField {
+                kind,
+                field: field.name,
+            }),
+            None => Ok(()),
+        }
     }
 
     fn locate(&self, name: &str) -> Result<(CellId, usize), Error> {
