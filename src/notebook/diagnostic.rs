@@ -16,6 +16,9 @@ pub struct Diagnostic {
     pub message: String,
     /// The remedy.
     pub hint: Option<String>,
+    /// The name that no cell has. The remedy then is the nearest name that a
+    /// cell has when the fault is told, which other cells' edits may change.
+    pub missing: Option<String>,
 }
 
 impl Diagnostic {
@@ -28,6 +31,7 @@ impl Diagnostic {
             span: None,
             message: message.into(),
             hint: None,
+            missing: None,
         }
     }
 
@@ -63,6 +67,7 @@ impl Diagnostic {
             span: fault.span,
             message: fault.message,
             hint: fault.hint,
+            missing: None,
         }
     }
 

@@ -7,6 +7,7 @@
 
 mod change;
 mod link;
+mod ring;
 
 use std::collections::{BTreeMap, BTreeSet, HashMap};
 use std::sync::Arc;
@@ -151,8 +152,11 @@ impl Engine {
     ///
     /// [`edit::Error`] where the change cannot be made; nothing is changed then.
     pub fn apply(&mut self, edit: Edit) -> Result<(Edit, Run), edit::Error> {
-        let inverse = self.change(edit)?;
-        Ok((inverse, self.run()))
+        let changed = self.change(edit);
+        // Also where several changes were taken back because one of them could
+        // not be made: cells that went and came back have new nodes.
+        let run = self.run();
+        changed.map(|inverse| (inverse, run))
     }
 
     /// Returns the number of the cell at this place.
@@ -165,6 +169,12 @@ impl Engine {
     #[must_use]
     pub fn cell(&self, id: CellId) -> Option<&Cell> {
         self.notebook.cells.get(*self.places.get(&id)?)
+    }
+
+    /// Returns the place of the cell of this number in the notebook, from 0.
+    #[must_use]
+    pub fn place(&self, id: CellId) -> Option<usize> {
+        self.places.get(&id).copied()
     }
 
     /// Returns the number of the cell of this name.
@@ -349,7 +359,21 @@ impl Engine {
         self.tasks.resize(node.index() + 1, None);
         self.owners.resize(node.index() + 1, (id, slot));
         self.owners[node.index()] = (id, slot);
-        self.slots.entry(id).or_default().push((slot, node));
+        // In an order of their own, not in that of the edits, because what is
+        // told of a cell follows it: fields as the kind lists them, then groups,
+        // then the check.
+        let kind = self.cell(id).map(|cell| cell.kind);
+        let rank = |slot: &Slot| match slot {
+            Slot::Field(name) => kind
+                .and_then(|kind| kind.fields().iter().position(|spec| spec.name == *name))
+                .unwrap_or(usize::MAX - 2),
+            Slot::Group(_) => usize::MAX - 1,
+            Slot::Check => usize::MAX,
+        };
+        let key = |slot: &Slot| (rank(slot), *slot);
+        let slots = self.slots.entry(id).or_default();
+        let at = slots.partition_point(|(own, _)| key(own) < key(&slot));
+        slots.insert(at, (slot, node));
         node
     }
 
@@ -461,7 +485,6 @@ impl Engine {
     fn run(&mut self) -> Run {
         self.gather_scene();
         let (tasks, owners) = (&self.tasks, &self.owners);
-        let (notebook, places) = (&self.notebook, &self.places);
         let owner = |node: Node| owners[node.index()].0;
         self.graph.run(
             &mut |node, values| match &tasks[node.index()] {
@@ -470,10 +493,13 @@ impl Engine {
                 // made: that cell is waited for.
                 None => Datum::Waiting(Arc::new(vec![owner(node)])),
             },
-            &mut |node, members| {
-                Datum::Fault(Arc::new(vec![ring(
-                    node, members, owners, notebook, places,
-                )]))
+            &mut |node, _| {
+                // Who is in it is told when the fault is, by the names of then.
+                let mut fault = Diagnostic::of_cell("ring", "waits for itself");
+                if let (_, Slot::Field(field)) = owners[node.index()] {
+                    fault.field = Some(field);
+                }
+                Datum::Fault(Arc::new(vec![fault]))
             },
         )
     }
@@ -524,55 +550,4 @@ fn check(notebook: &Notebook) -> Result<(), Vec<Error>> {
     } else {
         Err(errors)
     }
-}
-
-/// Says which cells wait for one another in a ring.
-fn ring(
-    node: Node,
-    members: &[Node],
-    owners: &[(CellId, Slot)],
-    notebook: &Notebook,
-    places: &HashMap<CellId, usize>,
-) -> Diagnostic {
-    const TOLD: usize = 8;
-    let label = |node: Node| {
-        let (id, slot) = owners[node.index()];
-        let cell = places.get(&id).and_then(|place| notebook.cells.get(*place));
-        match (cell, slot) {
-            (Some(cell), Slot::Field(field)) if outputs_of(cell.kind) != Some(slot) => {
-                format!("{}.{field}", cell.name)
-            }
-            (Some(cell), _) => cell.name.clone(),
-            (None, _) => String::new(),
-        }
-    };
-    let mut path: Vec<String> = Vec::new();
-    let start = members
-        .iter()
-        .position(|member| *member == node)
-        .unwrap_or(0);
-    // A long ring is told by its beginning: every member tells its own.
-    let around = members[start..].iter().chain(&members[..start]);
-    for label in around.take(3 * TOLD).map(|member| label(*member)) {
-        if !label.is_empty() && path.last() != Some(&label) {
-            path.push(label);
-        }
-    }
-    if members.len() > 3 * TOLD || path.len() > TOLD {
-        path.truncate(TOLD);
-        path.push("…".to_owned());
-    }
-    if path.len() > 1 && path.first() == path.last() {
-        let _ = path.pop();
-    }
-    path.extend(path.first().cloned());
-    let mut fault = Diagnostic::of_cell(
-        "ring",
-        format!("these wait for one another in a ring: {}", path.join(" → ")),
-    )
-    .with_hint("give one of them a quantity of its own");
-    if let (_, Slot::Field(field)) = owners[node.index()] {
-        fault.field = Some(field);
-    }
-    fault
 }

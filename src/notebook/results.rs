@@ -291,7 +291,9 @@ fn cell_result(engine: &Engine, bounds: &Bounds, id: CellId) -> CellResult {
     let mut waits = Vec::new();
     for (_, node) in engine.nodes(id) {
         match engine.value(*node) {
-            Some(Datum::Fault(faults)) => errors.extend(faults.iter().cloned()),
+            Some(Datum::Fault(faults)) => {
+                errors.extend(faults.iter().map(|fault| told(engine, *node, fault)));
+            }
             Some(Datum::Waiting(cells)) => waits.extend(cells.iter().copied()),
             _ => {}
         }
@@ -304,7 +306,8 @@ fn cell_result(engine: &Engine, bounds: &Bounds, id: CellId) -> CellResult {
         }
     }
     waits.retain(|cell| *cell != id);
-    waits.sort_unstable();
+    // In file order: numbers tell in which order cells were added.
+    waits.sort_unstable_by_key(|cell| (engine.place(*cell), *cell));
     waits.dedup();
     let state = if !unique.is_empty() {
         State::Error
@@ -339,6 +342,19 @@ fn cell_result(engine: &Engine, bounds: &Bounds, id: CellId) -> CellResult {
     }
     result.cautions = caution::of_cell(engine, id, &result);
     result
+}
+
+/// Returns a fault with what depends on the other cells as they are now.
+fn told(engine: &Engine, node: Node, fault: &Diagnostic) -> Diagnostic {
+    let mut fault = fault.clone();
+    if let Some(name) = &fault.missing {
+        fault.hint = Some(engine.remedy(name));
+    }
+    if fault.code == "ring" {
+        fault.message = engine.ring(node);
+        fault.hint = Some("give one of them a quantity of its own".to_owned());
+    }
+    fault
 }
 
 fn fill(engine: &Engine, bounds: &Bounds, node: Node, result: &mut CellResult) {

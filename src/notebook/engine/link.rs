@@ -94,7 +94,11 @@ impl<'e> Linker<'e> {
 
     /// Returns the node of an entry, if it was typed or has a default.
     pub(in crate::notebook) fn entry(&mut self, field: &'static str) -> Option<Node> {
-        self.engine.slot(self.id, Slot::Field(field))
+        // The node of a field that was removed is there until linking ends.
+        self.used
+            .contains(&Slot::Field(field))
+            .then(|| self.engine.slot(self.id, Slot::Field(field)))
+            .flatten()
     }
 
     /// Returns the node of an entry that has a default or must be there.
@@ -312,10 +316,16 @@ impl<'e> Linker<'e> {
             let _ = self.mentions.insert(text.clone());
             match self.engine.find(&text) {
                 None => {
-                    let fault = self
-                        .unknown("faces", &text)
-                        .with_hint("write `strongest`, the name of a source, or a heading in °");
-                    self.fault(fault);
+                    let fault = Diagnostic::of_field(
+                        "faces",
+                        "unknown-name",
+                        format!("no cell is named `{text}`"),
+                    );
+                    self.fault(
+                        fault.with_hint(
+                            "write `strongest`, the name of a source, or a heading in °",
+                        ),
+                    );
                     return None;
                 }
                 Some(id) if self.engine.cell(id).is_some_and(|c| c.kind == Kind::Source) => {
@@ -531,13 +541,21 @@ impl<'e> Linker<'e> {
     }
 
     fn unknown(&self, field: &'static str, name: &str) -> Diagnostic {
+        Diagnostic {
+            missing: Some(name.to_owned()),
+            ..Diagnostic::of_field(field, "unknown-name", format!("no cell is named `{name}`"))
+        }
+    }
+}
+
+impl Engine {
+    /// Returns the remedy for a name that no cell has.
+    pub(in crate::notebook) fn remedy(&self, name: &str) -> String {
         // A damaged file may hold very many unknown names: the search is bounded.
-        let cells = self.engine.notebook.cells.iter().take(2000);
+        let cells = self.notebook.cells.iter().take(2000);
         let known = cells.map(|cell| cell.name.as_str());
-        let hint = suggest(nearest(name, known))
-            .unwrap_or_else(|| "add a cell of that name, or name another".to_owned());
-        Diagnostic::of_field(field, "unknown-name", format!("no cell is named `{name}`"))
-            .with_hint(hint)
+        suggest(nearest(name, known))
+            .unwrap_or_else(|| "add a cell of that name, or name another".to_owned())
     }
 }
 
