@@ -44,8 +44,25 @@ const TEMPERATURES: &[&str] = &[
     "2000 °F",
     "-300 °C",
 ];
-const ANGLES: &[&str] = &["0 °", "90 °", "a", "door.heading", "-40 ± 2 °", "1", "500 mrad"];
-const TIMES: &[&str] = &["4 min", "8 h", "30 s", "a", "stand.stay", "2 * 1 min", "-1 s", "9 s"];
+const ANGLES: &[&str] = &[
+    "0 °",
+    "90 °",
+    "a",
+    "door.heading",
+    "-40 ± 2 °",
+    "1",
+    "500 mrad",
+];
+const TIMES: &[&str] = &[
+    "4 min",
+    "8 h",
+    "30 s",
+    "a",
+    "stand.stay",
+    "2 * 1 min",
+    "-1 s",
+    "9 s",
+];
 const NUMBERS: &[&str] = &[
     "0.9",
     "0.5 ± 0.3",
@@ -96,7 +113,13 @@ const GUIDANCE: &[&str] = &[
     "no-such-limit",
 ];
 const UNITS: &[&str] = &["m²", "kW/m²", "K", "m", "furlong", "°C", "%"];
-const WORDS: &[&str] = &["", "a remark", "Ofen 2 — „heiß“\n\t\\", "{\"farglow\": 1}", "\u{202e}x"];
+const WORDS: &[&str] = &[
+    "",
+    "a remark",
+    "Ofen 2 — „heiß“\n\t\\",
+    "{\"farglow\": 1}",
+    "\u{202e}x",
+];
 
 /// A list of numbers that decides everything; when it is used up, the first of
 /// every choice is taken.
