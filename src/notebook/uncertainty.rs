@@ -243,7 +243,8 @@ impl Record {
                     .copied()
                     .collect();
                 // What all draws agree on is not reached by any spread.
-                interval(&mut column, count).filter(|(low, high)| self.failed == 0 && low < high)
+                interval(&mut column, count)
+                    .filter(|(low, high)| self.failed == 0 && are_apart(*low, *high))
             })
             .collect();
         NodeBounds {
@@ -251,6 +252,15 @@ impl Record {
             failed: self.failed,
         }
     }
+}
+
+/// Returns whether two ranks differ by more than the rounding of the arithmetic
+/// between them.
+fn are_apart(low: f64, high: f64) -> bool {
+    low < high
+        && (low.is_infinite() || high.is_infinite() || {
+            high - low > 1e-12 * low.abs().max(high.abs())
+        })
 }
 
 /// Returns the number by which an output orders among the draws; NaN for one
