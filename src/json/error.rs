@@ -74,7 +74,7 @@ impl fmt::Display for Error {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
         let place = self.place;
         match &self.kind {
-            Kind::Empty => f.write_str("the file is empty: a JSON object was expected"),
+            Kind::Empty => f.write_str("the file is empty: a JSON object was expected, take a copy of it or start a new one"),
             Kind::TooLarge { size } => write!(
                 f,
                 "the file has {size} bytes, and at most {LARGEST} are read: split it"

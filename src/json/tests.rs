@@ -88,8 +88,14 @@ fn numbers_are_rounded_to_the_nearest() {
 #[test]
 fn faults_are_said_with_their_place() {
     for (text, expected) in [
-        ("", "the file is empty: a JSON object was expected"),
-        (" \r\n\t ", "the file is empty: a JSON object was expected"),
+        (
+            "",
+            "the file is empty: a JSON object was expected, take a copy of it or start a new one",
+        ),
+        (
+            " \r\n\t ",
+            "the file is empty: a JSON object was expected, take a copy of it or start a new one",
+        ),
         (
             "{\n  \"a\": [1, 2",
             "line 2, column 13: the file breaks off here, before the `[` of line 2, column 8 is closed: is a part of it missing?",
