@@ -463,7 +463,7 @@ impl Engine {
                     ) else {
                         continue;
                     };
-                    names.push(cell.name.clone());
+                    names.push(Arc::from(cell.name.as_str()));
                     shapes.push(shape);
                     emissions.push(emission);
                 }

@@ -210,6 +210,20 @@ impl Region {
         }
     }
 
+    /// Returns a ball that holds the region, quickly rather than narrowly.
+    fn ball(&self) -> (DVec3, f64) {
+        match self {
+            Self::Disc { centre, radius, .. } | Self::Sphere { centre, radius } => {
+                (*centre, *radius)
+            }
+            Self::Polygon { vertices, .. } => {
+                let first = vertices[0];
+                let distances = vertices.iter().map(|vertex| vertex.distance(first));
+                (first, distances.fold(0.0, f64::max))
+            }
+        }
+    }
+
     /// Says whether a point lies on a flat region or its edge, or on or inside
     /// a sphere: to 10⁻¹² of the lengths at play.
     ///
@@ -227,10 +241,19 @@ impl Region {
     /// refused.
     #[must_use]
     pub fn crosses(&self, from: DVec3, to: DVec3) -> bool {
-        if !from.is_finite() || !to.is_finite() || self.touches(from) || self.touches(to) {
+        if !from.is_finite() || !to.is_finite() {
             return true;
         }
         let way = to - from;
+        // Too far away to come near, with room for all rounding: most ways are.
+        let (centre, radius) = self.ball();
+        let apart = from.distance(centre) - way.length();
+        if apart > radius + 1e-6 * (radius + size(from) + size(to)) {
+            return false;
+        }
+        if self.touches(from) || self.touches(to) {
+            return true;
+        }
         match self {
             Self::Sphere { centre, radius } => distance_to_segment(*centre, from, to) <= *radius,
             Self::Disc {

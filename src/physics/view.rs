@@ -154,6 +154,25 @@ impl View {
         normal.dot(flux).clamp(0.0, 1.0)
     }
 
+    /// Returns a bound on the configuration factor over all receiver
+    /// orientations, in `0..=1`.
+    ///
+    /// Where the whole region is seen within 45° of its flux vector the bound
+    /// is the vector's length and is reached; else it is one.
+    ///
+    /// # Source
+    ///
+    /// Derived at [`exposure::strongest`](super::exposure::strongest); checked
+    /// against all orientations in `tests/laws/exposure_laws.rs`.
+    #[must_use]
+    pub fn ceiling(&self) -> f64 {
+        let length = self.flux.length();
+        if length > 0.0 && !self.lies_within_half_right_angle(self.flux / length) {
+            return 1.0;
+        }
+        length.min(1.0)
+    }
+
     /// Returns the flux vector of the part above a receiver's horizon.
     ///
     /// Its component along `normal` is the configuration factor.

@@ -242,13 +242,13 @@ impl RowsTask {
             .iter()
             .enumerate()
             .map(|(index, distance)| {
-                let point = line.views.points[index];
-                let views = line.views.at(index);
+                let irradiance =
+                    |weights: &[f64]| line.views.irradiance(index, orientation, weights).0;
                 Row {
                     distance: *distance,
                     clear_distance: distance - line.edge,
-                    irradiance: orientation.irradiance(point, views, &total).0,
-                    near_infrared: orientation.irradiance(point, views, &near_infrared).0,
+                    irradiance: irradiance(&total),
+                    near_infrared: irradiance(&near_infrared),
                 }
             })
             .collect();

@@ -143,7 +143,7 @@ pub struct Sights {
     /// The names of the sources that it lies behind.
     pub behind: Vec<String>,
     /// The names of all sources.
-    pub names: Vec<String>,
+    pub names: Vec<Arc<str>>,
     /// The eye's envelope; the first point is the stated one.
     pub around_eye: Views,
     /// The skin's envelope.
@@ -199,7 +199,7 @@ impl SightsTask {
             reach,
             behind: behind(form, eye)
                 .into_iter()
-                .map(|index| form.names[index].clone())
+                .map(|index| form.names[index].to_string())
                 .collect(),
             names: form.names.clone(),
             around_eye: look(Envelope::Eye)?,
@@ -252,7 +252,7 @@ pub struct Exposure {
     pub radiances: [f64; 4],
     /// For each source its name, its part of the total irradiance and its
     /// configuration factor, on that same receiver.
-    pub parts: Vec<(String, f64, f64)>,
+    pub parts: Vec<(Arc<str>, f64, f64)>,
     /// Which way the receiver faces for the total, a unit vector.
     pub normal: DVec3,
 }
@@ -349,22 +349,18 @@ impl ExposureTask {
         let orientation = self.facing.orientation(inputs);
         let weights = Band::ALL.map(|band| band.weights(heat));
         let views = sights.around_eye.at(0);
-        let [stated, worst_eye, worst_skin] = [0, 1, 2].map(|which| {
-            [0, 1, 2].map(|band: usize| match which {
-                0 => orientation.irradiance(sights.eye, views, &weights[band]).0,
-                1 => sights.around_eye.worst(orientation, &weights[band]),
-                _ => sights.around_skin.worst(orientation, &weights[band]),
-            })
-        });
-        let (_, normal) = orientation.irradiance(sights.eye, views, &weights[Band::Total as usize]);
-        let parts: Vec<(String, f64, f64)> = sights
+        let at_eye = |weights: &Vec<f64>| sights.around_eye.irradiance(0, orientation, weights);
+        let [total, near_infrared, skin] = weights.each_ref().map(at_eye);
+        let worst = |around: &Views| weights.each_ref().map(|w| around.worst(orientation, w));
+        let normal = total.1;
+        let parts: Vec<(Arc<str>, f64, f64)> = sights
             .names
             .iter()
             .zip(views)
             .zip(heat)
             .map(|((name, view), emission)| {
                 let factor = view.factor(normal);
-                (name.clone(), emission.total * factor, factor)
+                (Arc::clone(name), emission.total * factor, factor)
             })
             .collect();
         let seen: f64 = parts.iter().map(|(_, _, factor)| factor).sum();
@@ -383,9 +379,9 @@ impl ExposureTask {
             }
         }
         Ok(Datum::Exposure(Arc::new(Exposure {
-            stated,
-            worst_eye,
-            worst_skin,
+            stated: [total.0, near_infrared.0, skin.0],
+            worst_eye: worst(&sights.around_eye),
+            worst_skin: worst(&sights.around_skin),
             background: inputs.room(self.room).background * (1.0 - seen).max(0.0),
             radiances,
             parts,

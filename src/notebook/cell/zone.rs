@@ -1,14 +1,13 @@
 //! The ground inside which one rule is not met.
 
+mod track;
+
 use std::sync::Arc;
 
-use glam::DVec3;
-
 use super::Kind;
-use super::curve::{along, steps};
+use super::curve::along;
 use super::field::{self, Expect, Need, Spec};
-use super::position::sights::envelope;
-use super::position::{Band, Facing, Form, Orientation, Views};
+use super::position::{Band, Facing};
 use crate::graph::Node;
 use crate::guidance::{Allowed, Envelope, Library};
 use crate::notebook::Diagnostic;
@@ -16,6 +15,9 @@ use crate::notebook::datum::{Datum, Output, Slot};
 use crate::notebook::engine::{Linker, Slot as Own};
 use crate::notebook::task::{Inputs, Task};
 use crate::units::{Dimension, Quantity};
+
+pub use track::Track;
+use track::{Line, Rule};
 
 /// The fields of a zone.
 pub const FIELDS: &[Spec] = &[
@@ -161,144 +163,6 @@ impl Edge {
     }
 }
 
-/// The line of a zone with what is seen from it, stop by stop.
-#[derive(Clone, Debug)]
-pub struct Track {
-    form: Arc<Form>,
-    origin: DVec3,
-    ahead: DVec3,
-    z: f64,
-    ground: f64,
-    reach: f64,
-    envelope: Envelope,
-    /// How far the outline reaches along the line, m.
-    pub edge: f64,
-    /// Distances, growing, with what is seen from around each; nothing where a
-    /// source is touched.
-    stops: Vec<(f64, Option<Views>)>,
-}
-
-/// The nearest clear distance that is looked at, m.
-const NEAREST: f64 = 0.01;
-
-/// How many stops there are from the nearest to the farthest.
-const STOPS: u32 = 160;
-
-impl Track {
-    fn look(&self, distance: f64) -> Option<Views> {
-        let eye = (self.origin + self.ahead * distance).with_z(self.z);
-        let points = envelope(eye, self.ground, self.reach, self.envelope);
-        Views::look(&self.form, eye, points).ok()
-    }
-
-    /// Returns the distances at which a line is looked at: geometric steps,
-    /// and closer ones where the line passes a source, whose reach along the
-    /// line could fall between two steps.
-    fn distances(&self, farthest: f64) -> Vec<f64> {
-        let clear = farthest - self.edge;
-        let mut distances: Vec<f64> = steps(NEAREST.min(clear / 2.0), clear, STOPS)
-            .into_iter()
-            .map(|step| self.edge + step)
-            .collect();
-        for shape in &self.form.shapes {
-            let centre = shape.region.centre();
-            let foot = (centre - self.origin).dot(self.ahead);
-            let aside = (centre - self.origin).with_z(0.0) - self.ahead * foot;
-            let spread = shape.region.bounding_radius() + aside.length() + self.reach;
-            for share in [-2.0, -1.0, -0.5, -0.2, 0.0, 0.2, 0.5, 1.0, 2.0] {
-                distances.push(foot + share * spread);
-            }
-        }
-        distances.retain(|distance| *distance > self.edge && *distance <= farthest);
-        distances.sort_unstable_by(f64::total_cmp);
-        distances.dedup();
-        distances
-    }
-
-    /// Returns the worst irradiance at a distance, infinite where a source is
-    /// touched.
-    fn exposure(views: Option<&Views>, orientation: Orientation, weights: &[f64]) -> f64 {
-        views.map_or(f64::INFINITY, |views| views.worst(orientation, weights))
-    }
-
-    /// Returns the outermost distance at which the irradiance passes `limit`.
-    ///
-    /// # Accuracy
-    ///
-    /// 0.1 mm, given that between two stops the irradiance does not rise and
-    /// fall again.
-    fn outermost(&self, orientation: Orientation, weights: &[f64], limit: f64) -> Extent {
-        let over = |exposure: f64| exposure > limit;
-        let mut outside: Option<f64> = None;
-        for (distance, views) in self.stops.iter().rev() {
-            if over(Self::exposure(views.as_ref(), orientation, weights)) {
-                let Some(outside) = outside else {
-                    return Extent::NotMetWithin(*distance);
-                };
-                return Extent::At(self.narrow(*distance, outside, orientation, weights, limit));
-            }
-            outside = Some(*distance);
-        }
-        Extent::MetEverywhere
-    }
-
-    /// Narrows a crossing down, and returns its outer side.
-    ///
-    /// The Illinois variant of the regula falsi on the logarithm of exposure
-    /// over limit (Dowell and Jarratt 1971), with halving where a source is
-    /// touched or the steps stay large.
-    fn narrow(
-        &self,
-        inside: f64,
-        outside: f64,
-        orientation: Orientation,
-        weights: &[f64],
-        limit: f64,
-    ) -> f64 {
-        const WIDTH: f64 = 1e-4;
-        let height = |distance: f64| {
-            let exposure = Self::exposure(self.look(distance).as_ref(), orientation, weights);
-            if exposure > 0.0 {
-                (exposure / limit).ln()
-            } else {
-                f64::NEG_INFINITY
-            }
-        };
-        let (mut a, mut b) = (inside, outside);
-        let (mut fa, mut fb) = (height(a), height(b));
-        let mut side = 0_i8;
-        for round in 0..100 {
-            if b - a <= WIDTH {
-                break;
-            }
-            let straight = b - fb * (b - a) / (fb - fa);
-            let margin = 0.25 * WIDTH;
-            let next = if round % 4 < 3 && straight.is_finite() {
-                straight.clamp(a + margin, b - margin)
-            } else {
-                0.5 * (a + b)
-            };
-            let f = height(next);
-            if f > 0.0 {
-                a = next;
-                fa = f;
-                if side == 1 {
-                    fb /= 2.0;
-                }
-                side = 1;
-            } else {
-                b = next;
-                fb = f;
-                if side == -1 {
-                    fa /= 2.0;
-                }
-                side = -1;
-            }
-        }
-        b
-    }
-}
-
 /// Works out what is seen along a zone's line.
 #[derive(Clone, Debug, PartialEq)]
 pub(in crate::notebook) struct TrackTask {
@@ -342,7 +206,7 @@ impl TrackTask {
             )
             .with_hint("give a greater `farthest`"));
         }
-        let mut track = Track {
+        let line = Line {
             form,
             origin: shape.centre,
             ahead,
@@ -350,15 +214,8 @@ impl TrackTask {
             ground: inputs.si(self.ground),
             reach: inputs.si(self.reach),
             envelope: self.envelope,
-            edge,
-            stops: Vec::new(),
         };
-        track.stops = track
-            .distances(farthest)
-            .into_iter()
-            .map(|distance| (distance, track.look(distance)))
-            .collect();
-        Ok(Datum::Track(Arc::new(track)))
+        Ok(Datum::Track(Arc::new(Track::new(line, edge, farthest))))
     }
 }
 
@@ -390,7 +247,11 @@ impl EdgeTask {
         let stay = inputs.si(self.stay);
         let permitted = permitted(&self.guidance, stay);
         let extent = permitted.map_or(Extent::NotAssessed, |permitted| {
-            track.outermost(self.facing.orientation(inputs), &weights, permitted)
+            track.outermost(&Rule {
+                orientation: self.facing.orientation(inputs),
+                weights: &weights,
+                limit: permitted,
+            })
         });
         Ok(Datum::Edge(Edge {
             extent,

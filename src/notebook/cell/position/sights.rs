@@ -19,7 +19,7 @@ use crate::physics::view::{Sight, View};
 #[derive(Clone, Debug, PartialEq)]
 pub struct Form {
     /// Their names.
-    pub names: Vec<String>,
+    pub names: Vec<Arc<str>>,
     /// Their shapes, parallel to the names.
     pub shapes: Vec<Arc<Shape>>,
 }
@@ -27,7 +27,7 @@ pub struct Form {
 /// Gathers the shapes of all sources.
 #[derive(Clone, Debug, PartialEq)]
 pub(in crate::notebook) struct FormTask {
-    pub(in crate::notebook) names: Vec<String>,
+    pub(in crate::notebook) names: Vec<Arc<str>>,
     pub(in crate::notebook) shapes: Vec<Node>,
 }
 
@@ -252,9 +252,16 @@ pub enum Hit {
 pub struct Views {
     /// The points.
     pub points: Vec<DVec3>,
+    /// For each point the views of all sources.
     views: Vec<View>,
+    /// Parallel to the views, a bound on each one's factor in any orientation.
+    ceilings: Vec<f64>,
     sources: usize,
 }
+
+/// How far rounding may bring a factor above its bound, as a share of it and
+/// besides: the stated error of a factor that the horizon cuts.
+const ROUNDING: (f64, f64) = (1e-9, 1e-12);
 
 impl Views {
     /// Looks at every source of the scene from each of the points, all of them
@@ -278,11 +285,7 @@ impl Views {
                 }
             }
         }
-        Ok(Views {
-            points,
-            views,
-            sources: form.shapes.len(),
-        })
+        Ok(Views::new(form, points, views))
     }
 
     /// Looks at every source of the scene from each of the points, which have
@@ -304,11 +307,16 @@ impl Views {
                 );
             }
         }
-        Ok(Views {
+        Ok(Views::new(form, points, views))
+    }
+
+    fn new(form: &Form, points: Vec<DVec3>, views: Vec<View>) -> Views {
+        Views {
             points,
+            ceilings: views.iter().map(View::ceiling).collect(),
             views,
             sources: form.shapes.len(),
-        })
+        }
     }
 
     /// Returns the views of all sources from the point of this number.
@@ -317,17 +325,69 @@ impl Views {
         &self.views[point * self.sources..(point + 1) * self.sources]
     }
 
+    /// Returns the irradiance at the point of this number in W/m² for the
+    /// exitances `weights`, and the normal of the receiver.
+    #[must_use]
+    pub fn irradiance(
+        &self,
+        point: usize,
+        orientation: Orientation,
+        weights: &[f64],
+    ) -> (f64, DVec3) {
+        // One source by itself, seen under a narrow angle, is what its ceiling
+        // says: the answer of the long way, to the bit.
+        if let (Orientation::Strongest, [view], [weight]) = (orientation, self.at(point), weights)
+            && counts(*weight)
+        {
+            let ceiling = self.ceilings[point];
+            if ceiling > 0.0 && ceiling < 1.0 {
+                return (weight * ceiling, view.flux() / ceiling);
+            }
+        }
+        orientation.irradiance(self.points[point], self.at(point), weights)
+    }
+
     /// Returns the greatest irradiance over all points, W/m².
+    ///
+    /// Points that cannot be the worst, because even the sum of what each
+    /// source could send there at most is less, are passed over.
     #[must_use]
     pub fn worst(&self, orientation: Orientation, weights: &[f64]) -> f64 {
-        (0..self.points.len())
-            .map(|index| {
-                orientation
-                    .irradiance(self.points[index], self.at(index), weights)
-                    .0
-            })
-            .fold(0.0, f64::max)
+        let mut first = (0, f64::NEG_INFINITY);
+        for point in 0..self.points.len() {
+            let bound = self.bound(point, weights);
+            if bound > first.1 {
+                first = (point, bound);
+            }
+        }
+        let mut worst = 0.0;
+        if first.1 > worst {
+            worst = self.irradiance(first.0, orientation, weights).0.max(worst);
+        }
+        for point in (0..self.points.len()).filter(|point| *point != first.0) {
+            if self.bound(point, weights) > worst {
+                worst = self.irradiance(point, orientation, weights).0.max(worst);
+            }
+        }
+        worst
     }
+
+    /// Returns what the irradiance at a point stays below in any orientation.
+    fn bound(&self, point: usize, weights: &[f64]) -> f64 {
+        let (share, besides) = ROUNDING;
+        let ceilings = &self.ceilings[point * self.sources..(point + 1) * self.sources];
+        ceilings
+            .iter()
+            .zip(weights)
+            .filter(|(_, weight)| counts(**weight))
+            .map(|(ceiling, weight)| weight * (ceiling * (1.0 + share) + besides))
+            .sum()
+    }
+}
+
+/// Whether a weight counts for an irradiance at all.
+fn counts(weight: f64) -> bool {
+    weight.is_finite() && weight > 0.0
 }
 
 /// Returns the sources that a point lies behind, and so does not see.

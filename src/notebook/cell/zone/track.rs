@@ -1,0 +1,221 @@
+//! The line of a zone, and the search for where its rule begins to be met.
+
+use std::sync::{Arc, OnceLock};
+
+use glam::{DVec3, Vec3Swizzles};
+
+use super::Extent;
+use crate::guidance::Envelope;
+use crate::notebook::cell::curve::steps;
+use crate::notebook::cell::position::sights::envelope;
+use crate::notebook::cell::position::{Form, Orientation, Views};
+
+/// Where a zone's line runs, and who walks along it.
+#[derive(Clone, Debug)]
+pub(super) struct Line {
+    pub(super) form: Arc<Form>,
+    pub(super) origin: DVec3,
+    pub(super) ahead: DVec3,
+    pub(super) z: f64,
+    pub(super) ground: f64,
+    pub(super) reach: f64,
+    pub(super) envelope: Envelope,
+}
+
+/// What is asked at every distance: whether `limit` in W/m² is passed, for the
+/// exitances `weights` of the sources.
+pub(super) struct Rule<'a> {
+    pub(super) orientation: Orientation,
+    pub(super) weights: &'a [f64],
+    pub(super) limit: f64,
+}
+
+/// The line of a zone with the distances at which it is looked at, and what is
+/// seen from each of them that was looked at so far.
+#[derive(Clone, Debug)]
+pub struct Track {
+    line: Line,
+    /// How far the outline reaches along the line, m.
+    pub edge: f64,
+    /// For each source its centre on the plan and its bounding radius, m.
+    balls: Vec<(glam::DVec2, f64)>,
+    /// By distance, growing.
+    stops: Vec<Stop>,
+}
+
+/// One distance, m, with what is seen from around it: nothing where a source is
+/// touched. What is seen depends on nothing that could change afterwards, so
+/// that it does not matter who asks first.
+#[derive(Clone, Debug)]
+struct Stop {
+    distance: f64,
+    views: OnceLock<Option<Views>>,
+}
+
+/// The nearest clear distance that is looked at, m.
+const NEAREST: f64 = 0.01;
+
+/// How many stops there are from the nearest to the farthest.
+const STOPS: u32 = 160;
+
+impl Line {
+    fn look(&self, distance: f64) -> Option<Views> {
+        let eye = (self.origin + self.ahead * distance).with_z(self.z);
+        let points = envelope(eye, self.ground, self.reach, self.envelope);
+        Views::look(&self.form, eye, points).ok()
+    }
+
+    /// Returns the distances at which the line is looked at: geometric steps,
+    /// and closer ones where the line passes a source, whose reach along the
+    /// line could fall between two steps.
+    fn distances(&self, edge: f64, farthest: f64) -> Vec<f64> {
+        let clear = farthest - edge;
+        let mut distances: Vec<f64> = steps(NEAREST.min(clear / 2.0), clear, STOPS)
+            .into_iter()
+            .map(|step| edge + step)
+            .collect();
+        for shape in &self.form.shapes {
+            let centre = shape.region.centre();
+            let foot = (centre - self.origin).dot(self.ahead);
+            let aside = (centre - self.origin).with_z(0.0) - self.ahead * foot;
+            let spread = shape.region.bounding_radius() + aside.length() + self.reach;
+            for share in [-2.0, -1.0, -0.5, -0.2, 0.0, 0.2, 0.5, 1.0, 2.0] {
+                distances.push(foot + share * spread);
+            }
+        }
+        distances.retain(|distance| *distance > edge && *distance <= farthest);
+        distances.sort_unstable_by(f64::total_cmp);
+        distances.dedup();
+        distances
+    }
+}
+
+impl Rule<'_> {
+    /// Returns the worst irradiance, infinite where a source is touched.
+    fn exposure(&self, views: Option<&Views>) -> f64 {
+        views.map_or(f64::INFINITY, |views| {
+            views.worst(self.orientation, self.weights)
+        })
+    }
+
+    /// Returns the logarithm of exposure over limit: above zero where the rule
+    /// is not met.
+    fn height(&self, exposure: f64) -> f64 {
+        if exposure > 0.0 {
+            (exposure / self.limit).ln()
+        } else {
+            f64::NEG_INFINITY
+        }
+    }
+}
+
+impl Track {
+    pub(super) fn new(line: Line, edge: f64, farthest: f64) -> Track {
+        let balls = line.form.shapes.iter().map(|shape| {
+            let region = &shape.region;
+            (region.centre().xy(), region.bounding_radius())
+        });
+        Track {
+            edge,
+            balls: balls.collect(),
+            stops: line
+                .distances(edge, farthest)
+                .into_iter()
+                .map(|distance| Stop {
+                    distance,
+                    views: OnceLock::new(),
+                })
+                .collect(),
+            line,
+        }
+    }
+
+    /// Returns the outermost distance at which the irradiance passes the limit.
+    ///
+    /// # Accuracy
+    ///
+    /// 0.1 mm, given that between two stops the irradiance does not rise and
+    /// fall again.
+    pub(super) fn outermost(&self, rule: &Rule<'_>) -> Extent {
+        let mut outside: Option<&Stop> = None;
+        for stop in self.stops.iter().rev() {
+            if self.bound(stop.distance, rule.weights) > rule.limit
+                && rule.exposure(self.views(stop)) > rule.limit
+            {
+                return outside.map_or(Extent::NotMetWithin(stop.distance), |outside| {
+                    Extent::At(self.narrow(stop, outside, rule))
+                });
+            }
+            outside = Some(stop);
+        }
+        Extent::MetEverywhere
+    }
+
+    fn views<'a>(&'a self, stop: &'a Stop) -> Option<&'a Views> {
+        stop.views
+            .get_or_init(|| self.line.look(stop.distance))
+            .as_ref()
+    }
+
+    /// Returns what the irradiance around a distance stays below, in any
+    /// orientation: a region in a ball of radius R at a distance r sends at
+    /// most what the whole ball would, of which (R/r)² is seen.
+    fn bound(&self, distance: f64, weights: &[f64]) -> f64 {
+        let stand = (self.line.origin + self.line.ahead * distance).xy();
+        self.balls
+            .iter()
+            .zip(weights)
+            .map(|((centre, radius), weight)| {
+                let nearest = stand.distance(*centre) - self.line.reach;
+                if nearest > *radius {
+                    weight * (radius / nearest).powi(2) * (1.0 + 1e-9)
+                } else {
+                    f64::INFINITY
+                }
+            })
+            .sum()
+    }
+
+    /// Narrows a crossing between two stops down, and returns its outer side.
+    ///
+    /// The Illinois variant of the regula falsi (Dowell and Jarratt 1971) on
+    /// the logarithms of distance and of exposure over limit, which make a
+    /// nearly straight line; each guess but the first is aimed a little beyond
+    /// the crossing, so that it closes it in. Halving where a source is touched
+    /// or the steps stay large.
+    fn narrow(&self, inside: &Stop, outside: &Stop, rule: &Rule<'_>) -> f64 {
+        const WIDTH: f64 = 1e-4;
+        let at = |stop| rule.height(rule.exposure(self.views(stop)));
+        let between = |distance| rule.height(rule.exposure(self.line.look(distance).as_ref()));
+        let (mut a, mut fa) = (inside.distance, at(inside));
+        let (mut b, mut fb) = (outside.distance, at(outside));
+        let (mut side, mut beyond) = (0_i8, 0.0);
+        for round in 0..100 {
+            if b - a <= WIDTH {
+                break;
+            }
+            let straight = (b.ln() - fb * (b.ln() - a.ln()) / (fb - fa)).exp() + beyond;
+            let margin = 0.25 * WIDTH;
+            let next = if round % 4 < 3 && straight.is_finite() {
+                straight.clamp(a + margin, b - margin)
+            } else {
+                0.5 * (a + b)
+            };
+            let f = between(next);
+            if f > 0.0 {
+                (a, fa) = (next, f);
+                if side == 1 {
+                    fb /= 2.0;
+                }
+                (side, beyond) = (1, 0.4 * WIDTH);
+            } else {
+                (b, fb) = (next, f);
+                if side == -1 {
+                    fa /= 2.0;
+                }
+                (side, beyond) = (-1, -0.4 * WIDTH);
+            }
+        }
+        b
+    }
+}
