@@ -188,9 +188,7 @@ fn of_position(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
 /// Returns whether any assessment judges the position of this name.
 pub(super) fn is_assessed(engine: &Engine, position: &str) -> bool {
     engine
-        .notebook()
-        .cells
-        .iter()
+        .mentioning(position)
         .any(|cell| cell.kind == Kind::Assessment && cell.text("position") == Some(position))
 }
 

@@ -183,6 +183,12 @@ impl Engine {
         self.index.get(name).copied()
     }
 
+    /// Returns the cells that mention a name, in an entry or as a link.
+    pub(in crate::notebook) fn mentioning(&self, name: &str) -> impl Iterator<Item = &Cell> {
+        let cells = self.mentioned.get(name).into_iter().flatten();
+        cells.filter_map(|id| self.cell(*id))
+    }
+
     /// Returns the nodes of a cell with what they stand for.
     #[must_use]
     pub fn nodes(&self, id: CellId) -> &[(Slot, Node)] {

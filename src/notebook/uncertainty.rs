@@ -128,7 +128,7 @@ impl Engine {
         }
         let seeds: Vec<Node> = drawn.keys().copied().collect();
         let plan = self.graph().downstream(&seeds);
-        let mut records = self.records(&plan);
+        let mut records = self.records(&plan, count);
         let mut overlay = self.graph().overlay();
         let owner = |node: Node| self.owner(node).0;
         for number in 0..count {
@@ -150,13 +150,14 @@ impl Engine {
                     |task| task.run(node, values, &owner, Some(&draw)),
                 )
             });
-            for record in &mut records {
-                record.note(overlay.value(self.graph(), record.node));
+            // Where nothing differs the nominal ranks stand already.
+            for record in (records.iter_mut()).filter(|record| overlay.differs(record.node)) {
+                record.note(number, overlay.value(self.graph(), record.node));
             }
         }
         bounds.nodes = records
             .into_iter()
-            .map(|record| (record.node, record.bounds(count)))
+            .map(|record| (record.node, record.bounds()))
             .collect();
         Some(bounds)
     }
@@ -192,15 +193,17 @@ impl Engine {
     }
 
     /// Returns an empty record for every downstream node that has outputs.
-    fn records(&self, plan: &Plan) -> Vec<Record> {
+    fn records(&self, plan: &Plan, count: usize) -> Vec<Record> {
         plan.nodes()
             .filter_map(|node| {
-                let mut outputs = 0;
-                self.value(node)?.visit(&mut |_, _| outputs += 1);
-                (outputs > 0).then(|| Record {
+                let mut nominal = Vec::new();
+                self.value(node)?
+                    .visit(&mut |_, output| nominal.push(rank(&output)));
+                (!nominal.is_empty()).then(|| Record {
                     node,
-                    outputs,
-                    ranks: Vec::new(),
+                    moved: vec![None; nominal.len()],
+                    nominal,
+                    count,
                     failed: 0,
                 })
             })
@@ -211,44 +214,50 @@ impl Engine {
 /// The outputs of one node over all draws.
 struct Record {
     node: Node,
-    outputs: usize,
-    /// The ranks, draw by draw.
-    ranks: Vec<f64>,
+    /// The nominal ranks.
+    nominal: Vec<f64>,
+    /// For each output its ranks by draw, from the first draw that moves it on;
+    /// until then it has the nominal one.
+    moved: Vec<Option<Vec<f64>>>,
+    count: usize,
     failed: u32,
 }
 
 impl Record {
-    fn note(&mut self, datum: Option<&Datum>) {
+    fn note(&mut self, draw: usize, datum: Option<&Datum>) {
+        // Without a value in one draw there are no bounds: nothing more counts.
         let Some(datum) = datum.filter(|datum| datum.is_ready()) else {
             self.failed += 1;
             return;
         };
-        let before = self.ranks.len();
-        datum.visit(&mut |_, output| self.ranks.push(rank(&output)));
+        let mut at = 0;
+        datum.visit(&mut |_, output| {
+            if let (Some(nominal), Some(moved)) = (self.nominal.get(at), self.moved.get_mut(at)) {
+                let rank = rank(&output);
+                if let Some(ranks) = moved {
+                    ranks[draw] = rank;
+                } else if rank.to_bits() != nominal.to_bits() {
+                    let mut ranks = vec![*nominal; self.count];
+                    ranks[draw] = rank;
+                    *moved = Some(ranks);
+                }
+            }
+            at += 1;
+        });
         // A draw with other outputs than the nominal ones cannot be compared.
-        if self.ranks.len() - before != self.outputs {
-            self.ranks.truncate(before);
+        if at != self.nominal.len() {
             self.failed += 1;
         }
     }
 
-    fn bounds(self, count: usize) -> NodeBounds {
-        let ranks = (0..self.outputs)
-            .map(|output| {
-                let mut column: Vec<f64> = self
-                    .ranks
-                    .iter()
-                    .skip(output)
-                    .step_by(self.outputs)
-                    .copied()
-                    .collect();
-                // What all draws agree on is not reached by any spread.
-                interval(&mut column, count)
-                    .filter(|(low, high)| self.failed == 0 && are_apart(*low, *high))
-            })
-            .collect();
+    fn bounds(self) -> NodeBounds {
+        let ranks = self.moved.into_iter().map(|moved| {
+            // What no draw moves is not reached by any spread.
+            let mut ranks = moved.filter(|_| self.failed == 0)?;
+            interval(&mut ranks).filter(|(low, high)| are_apart(*low, *high))
+        });
         NodeBounds {
-            ranks,
+            ranks: ranks.collect(),
             failed: self.failed,
         }
     }
@@ -276,17 +285,18 @@ fn rank(output: &Output<'_>) -> f64 {
 
 /// Returns the probabilistically symmetric interval that covers 95 % of the
 /// draws, or `None` if one of them does not order.
-fn interval(column: &mut [f64], count: usize) -> Option<(f64, f64)> {
-    if column.len() != count || column.iter().any(|rank| rank.is_nan()) {
+fn interval(column: &mut [f64]) -> Option<(f64, f64)> {
+    if column.iter().any(|rank| rank.is_nan()) {
         return None;
     }
     // JCGM 101:2008, 7.7.2: q = pM, r = (M - q)/2, the interval from the r-th
     // to the (r+q)-th, counted from 1. Halves go outwards.
+    let count = column.len();
     let below = (count / 40).max(1) - 1;
     let above = count - 1 - below;
-    let (_, low, _) = column.select_nth_unstable_by(below, f64::total_cmp);
+    let (_, low, rest) = column.select_nth_unstable_by(below, f64::total_cmp);
     let low = *low;
-    let (_, high, _) = column.select_nth_unstable_by(above, f64::total_cmp);
+    let (_, high, _) = rest.select_nth_unstable_by(above - below - 1, f64::total_cmp);
     Some((low, *high))
 }
 
@@ -368,8 +378,8 @@ mod tests {
     #[test]
     fn the_interval_holds_the_middle_95_percent() {
         let mut column: Vec<f64> = (1..=1000).rev().map(f64::from).collect();
-        assert_eq!(interval(&mut column, 1000), Some((25.0, 976.0)));
+        assert_eq!(interval(&mut column), Some((25.0, 976.0)));
         column[3] = f64::NAN;
-        assert_eq!(interval(&mut column, 1000), None);
+        assert_eq!(interval(&mut column), None);
     }
 }
