@@ -1,7 +1,7 @@
 //! What is seen from a point: the scene's regions, the envelope around a
 //! position, and the way a receiver faces.
 
-use std::sync::Arc;
+use std::sync::{Arc, OnceLock};
 
 use glam::DVec3;
 
@@ -248,15 +248,28 @@ pub enum Hit {
 }
 
 /// What is seen from several points.
+///
+/// What is worked out from the views alone is kept from the first time that it
+/// is asked for: it depends on nothing that could change afterwards.
 #[derive(Clone, Debug)]
 pub struct Views {
     /// The points.
     pub points: Vec<DVec3>,
     /// For each point the views of all sources.
     views: Vec<View>,
-    /// Parallel to the views, a bound on each one's factor in any orientation.
-    ceilings: Vec<f64>,
     sources: usize,
+    alone: OnceLock<Alone>,
+    /// Parallel to the views, a bound on each one's factor in any orientation.
+    ceilings: OnceLock<Vec<f64>>,
+}
+
+/// What a single source sends the strongest way: its exitance times these.
+#[derive(Clone, Debug)]
+struct Alone {
+    /// The factor at each point, and the normal of the receiver.
+    points: Vec<(f64, DVec3)>,
+    /// The greatest of the factors.
+    worst: f64,
 }
 
 /// How far rounding may bring a factor above its bound, as a share of it and
@@ -285,7 +298,7 @@ impl Views {
                 }
             }
         }
-        Ok(Views::new(form, points, views))
+        Ok(Views::new(points, views, form.shapes.len()))
     }
 
     /// Looks at every source of the scene from each of the points, which have
@@ -307,15 +320,16 @@ impl Views {
                 );
             }
         }
-        Ok(Views::new(form, points, views))
+        Ok(Views::new(points, views, form.shapes.len()))
     }
 
-    fn new(form: &Form, points: Vec<DVec3>, views: Vec<View>) -> Views {
+    fn new(points: Vec<DVec3>, views: Vec<View>, sources: usize) -> Views {
         Views {
             points,
-            ceilings: views.iter().map(View::ceiling).collect(),
             views,
-            sources: form.shapes.len(),
+            sources,
+            alone: OnceLock::new(),
+            ceilings: OnceLock::new(),
         }
     }
 
@@ -334,17 +348,15 @@ impl Views {
         orientation: Orientation,
         weights: &[f64],
     ) -> (f64, DVec3) {
-        // One source by itself, seen under a narrow angle, is what its ceiling
-        // says: the answer of the long way, to the bit.
-        if let (Orientation::Strongest, [view], [weight]) = (orientation, self.at(point), weights)
-            && counts(*weight)
-        {
-            let ceiling = self.ceilings[point];
-            if ceiling > 0.0 && ceiling < 1.0 {
-                return (weight * ceiling, view.flux() / ceiling);
+        match (self.alone(orientation), weights) {
+            // The answer of the long way, to the bit: there the only weight is
+            // taken out before anything is worked out.
+            (Some(alone), [weight]) if counts(*weight) => {
+                let (factor, normal) = alone.points[point];
+                (weight * factor, normal)
             }
+            _ => orientation.irradiance(self.points[point], self.at(point), weights),
         }
-        orientation.irradiance(self.points[point], self.at(point), weights)
     }
 
     /// Returns the greatest irradiance over all points, W/m².
@@ -353,30 +365,43 @@ impl Views {
     /// source could send there at most is less, are passed over.
     #[must_use]
     pub fn worst(&self, orientation: Orientation, weights: &[f64]) -> f64 {
-        let mut first = (0, f64::NEG_INFINITY);
-        for point in 0..self.points.len() {
-            let bound = self.bound(point, weights);
-            if bound > first.1 {
-                first = (point, bound);
-            }
+        if let (Some(alone), [weight]) = (self.alone(orientation), weights)
+            && counts(*weight)
+        {
+            return weight * alone.worst;
         }
+        let bounds: Vec<f64> = (0..self.points.len())
+            .map(|point| self.bound(point, weights))
+            .collect();
+        let highest = (0..bounds.len()).max_by(|a, b| bounds[*a].total_cmp(&bounds[*b]));
         let mut worst = 0.0;
-        if first.1 > worst {
-            worst = self.irradiance(first.0, orientation, weights).0.max(worst);
-        }
-        for point in (0..self.points.len()).filter(|point| *point != first.0) {
-            if self.bound(point, weights) > worst {
+        for point in highest.into_iter().chain(0..bounds.len()) {
+            if bounds[point] > worst && (worst == 0.0 || Some(point) != highest) {
                 worst = self.irradiance(point, orientation, weights).0.max(worst);
             }
         }
         worst
     }
 
+    /// Returns what a single source sends the strongest way, if that is asked.
+    fn alone(&self, orientation: Orientation) -> Option<&Alone> {
+        (self.sources == 1 && orientation == Orientation::Strongest).then(|| {
+            self.alone.get_or_init(|| {
+                let factor = |view| exposure::strongest(std::slice::from_ref(view), &[1.0]);
+                let points: Vec<(f64, DVec3)> = self.views.iter().map(factor).collect();
+                let worst = points.iter().map(|(factor, _)| *factor).fold(0.0, f64::max);
+                Alone { points, worst }
+            })
+        })
+    }
+
     /// Returns what the irradiance at a point stays below in any orientation.
     fn bound(&self, point: usize, weights: &[f64]) -> f64 {
         let (share, besides) = ROUNDING;
-        let ceilings = &self.ceilings[point * self.sources..(point + 1) * self.sources];
-        ceilings
+        let ceilings = self
+            .ceilings
+            .get_or_init(|| self.views.iter().map(View::ceiling).collect());
+        ceilings[point * self.sources..(point + 1) * self.sources]
             .iter()
             .zip(weights)
             .filter(|(_, weight)| counts(**weight))
