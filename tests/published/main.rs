@@ -12,6 +12,7 @@ mod every_guidance_row;
 mod every_row;
 mod fixed_points;
 mod ladle_case;
+mod ladle_notebook;
 mod quadrature_of_planck;
 mod textbook_examples;
 mod time_to_pain;
