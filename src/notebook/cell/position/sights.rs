@@ -211,8 +211,9 @@ pub const SKIN_HEIGHTS: [f64; 6] = [0.3, 0.6, 0.9, 1.2, 1.5, 1.8];
 ///
 /// For the eye: the point itself first, then the six points at ± `reach`
 /// along x, y and z. For the skin: the [`SKIN_HEIGHTS`] above `ground` at the
-/// standing point and at ± `reach` around it. With a reach of zero only the
-/// distinct points are listed.
+/// standing point and at ± `reach` around it, and the points of the eye, since
+/// the face is skin and may be above the highest of them. With a reach of zero
+/// only the distinct points are listed.
 #[must_use]
 pub fn envelope(eye: DVec3, ground: f64, reach: f64, envelope: Envelope) -> Vec<DVec3> {
     let axes: &[DVec3] = match envelope {
@@ -234,6 +235,9 @@ pub fn envelope(eye: DVec3, ground: f64, reach: f64, envelope: Envelope) -> Vec<
                 points.extend([centre + *axis * reach, centre - *axis * reach]);
             }
         }
+    }
+    if envelope == Envelope::Skin {
+        points.extend(self::envelope(eye, ground, reach, Envelope::Eye));
     }
     points
 }
