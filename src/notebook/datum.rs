@@ -177,7 +177,12 @@ pub enum Output<'a> {
     /// A duration in seconds, or without end, or one after which nothing is said.
     Time(Span),
     /// A distance along a line, or that there is none.
-    Extent(zone::Extent),
+    Extent {
+        /// Where it is.
+        extent: zone::Extent,
+        /// Where the line ends, m.
+        end: f64,
+    },
     /// A word.
     Word(&'a str),
     /// No value here: it keeps the place of one, so that all draws of a node

@@ -173,13 +173,9 @@ impl Shown {
                     high: high.map(like),
                 }
             }
-            Output::Extent(extent) => {
-                let farthest = match extent {
-                    Extent::NotMetWithin(farthest) => farthest,
-                    Extent::At(_) | Extent::MetEverywhere | Extent::NotAssessed => f64::INFINITY,
-                };
+            Output::Extent { extent, end } => {
                 let like = |rank: f64| match rank {
-                    f64::INFINITY => Extent::NotMetWithin(farthest),
+                    f64::INFINITY => Extent::NotMetWithin(end),
                     f64::NEG_INFINITY => Extent::MetEverywhere,
                     distance => Extent::At(distance),
                 };
@@ -263,6 +259,15 @@ impl CellResult {
             .iter()
             .find(|figure| figure.name == name && figure.row == Some(row))
             .map(|figure| &figure.shown)
+    }
+
+    /// Returns how long the limit in a row allows on the bound; `None` where
+    /// the draws failed, so that nothing is known of it but that it is over.
+    #[must_use]
+    pub fn allowed(&self, row: usize) -> Option<Span> {
+        let judgement = &self.verdicts.get(row)?.judgement;
+        (self.failed == 0 || judgement.finding.counts_as_over())
+            .then(|| assessment::span(judgement.allowed))
     }
 
     /// Returns whether this is an assessment of the position of this name.
@@ -379,6 +384,20 @@ fn fill(engine: &Engine, bounds: &Bounds, node: Node, result: &mut CellResult) {
             });
         }
     });
+    if matches!(datum, Datum::Edge(_)) && result.failed > 0 {
+        // Without bounds an edge would pass for certain: it is none.
+        for figure in &mut result.figures {
+            match (&mut figure.shown, figure.name.as_str()) {
+                (Shown::Extent { extent, low, high }, _) => {
+                    (*extent, *low, *high) = (Extent::NotAssessed, None, None);
+                }
+                (Shown::Word(word), "state") => {
+                    Extent::NotAssessed.words().clone_into(word);
+                }
+                _ => {}
+            }
+        }
+    }
     if let Datum::Verdicts(verdicts) = datum {
         let stay = stay_bound(engine, bounds, result.id);
         judge(verdicts, node_bounds, stay, result);
@@ -429,6 +448,9 @@ fn judge(
         };
     }
     let governed = assessment::governing(&verdicts).map(|verdict| verdict.guidance.clone());
+    if let Some(governed) = &governed {
+        govern(&verdicts, governed, result);
+    }
     for figure in &mut result.figures {
         let word = match (figure.name.as_str(), figure.row) {
             ("finding", Some(row)) => {
@@ -450,6 +472,24 @@ fn judge(
     }
     result.verdicts = verdicts;
     result.overall = Some(overall);
+}
+
+/// Shows as allowed time of the whole that of the limit which governs on the
+/// bound, so that the two belong together.
+fn govern(verdicts: &[Verdict], governed: &str, result: &mut CellResult) {
+    let row = verdicts
+        .iter()
+        .position(|verdict| verdict.guidance == governed);
+    let Some(shown) = row.and_then(|row| result.in_row(row, "allowed_time").cloned()) else {
+        return;
+    };
+    let whole = result
+        .figures
+        .iter_mut()
+        .find(|figure| figure.name == "allowed_time" && figure.row.is_none());
+    if let Some(figure) = whole {
+        figure.shown = shown;
+    }
 }
 
 /// Returns what reaches a position, nominal, for drawings.

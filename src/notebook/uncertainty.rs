@@ -11,6 +11,7 @@ use rand_chacha::ChaCha8Rng;
 use rand_chacha::rand_core::{RngCore, SeedableRng};
 use sha2::{Digest, Sha256};
 
+use super::cell::zone::Extent;
 use super::datum::{Datum, Output};
 use super::engine::Engine;
 use crate::graph::{Node, Plan};
@@ -231,7 +232,15 @@ impl Record {
             return;
         };
         let mut at = 0;
+        let mut silent = false;
         datum.visit(&mut |_, output| {
+            silent |= matches!(
+                output,
+                Output::Extent {
+                    extent: Extent::NotAssessed,
+                    ..
+                }
+            );
             if let (Some(nominal), Some(moved)) = (self.nominal.get(at), self.moved.get_mut(at)) {
                 let rank = rank(&output);
                 if let Some(ranks) = moved {
@@ -244,8 +253,9 @@ impl Record {
             }
             at += 1;
         });
-        // A draw with other outputs than the nominal ones cannot be compared.
-        if at != self.nominal.len() {
+        // A draw with other outputs than the nominal ones cannot be compared,
+        // nor one in which guidance says nothing.
+        if at != self.nominal.len() || silent {
             self.failed += 1;
         }
     }
@@ -278,7 +288,7 @@ fn rank(output: &Output<'_>) -> f64 {
     match output {
         Output::Quantity(quantity) => quantity.si,
         Output::Time(span) => span.seconds(),
-        Output::Extent(extent) => extent.rank(),
+        Output::Extent { extent, .. } => extent.rank(),
         Output::Word(_) | Output::Nothing => f64::NAN,
     }
 }

@@ -155,15 +155,19 @@ fn shown(shown: &Shown) -> Value {
             };
             let end = |extent: &Extent| match extent {
                 Extent::At(distance) => Some(Value::from(*distance)),
-                Extent::MetEverywhere => Some(extent.words().into()),
-                Extent::NotMetWithin(_) => Some(extent.words().into()),
-                Extent::NotAssessed => None,
+                Extent::MetEverywhere | Extent::NotMetWithin(_) | Extent::NotAssessed => None,
             };
             bounds(
                 &mut object,
                 low.as_ref().and_then(end),
                 high.as_ref().and_then(end),
             );
+            if let Some(
+                bound @ (Extent::MetEverywhere | Extent::NotMetWithin(_) | Extent::NotAssessed),
+            ) = high
+            {
+                let _ = object.insert("high_text".to_owned(), bound.words().into());
+            }
             Value::Object(object)
         }
         Shown::Word(text) => Value::Object(word(text)),

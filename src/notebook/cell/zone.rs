@@ -142,17 +142,23 @@ pub struct Edge {
     pub extent: Extent,
     /// How far the outline reaches along the line, m.
     pub edge: f64,
+    /// Where the search along the line ends, m.
+    pub end: f64,
     /// The limit for the stay, as an irradiance in W/m².
     pub limit: Option<f64>,
 }
 
 impl Edge {
     pub(in crate::notebook) fn visit(&self, see: &mut dyn FnMut(Slot<'_>, Output<'_>)) {
-        see(Slot::named("distance"), Output::Extent(self.extent));
-        see(
-            Slot::named("clear_distance"),
-            Output::Extent(self.extent.from(self.edge)),
-        );
+        for (name, edge) in [("distance", 0.0), ("clear_distance", self.edge)] {
+            see(
+                Slot::named(name),
+                Output::Extent {
+                    extent: self.extent.from(edge),
+                    end: self.end - edge,
+                },
+            );
+        }
         see(
             Slot::named("limit"),
             self.limit.map_or(Output::Nothing, |limit| {
@@ -256,6 +262,7 @@ impl EdgeTask {
         Ok(Datum::Edge(Edge {
             extent,
             edge: track.edge,
+            end: track.end(),
             limit: permitted,
         }))
     }

@@ -91,11 +91,14 @@ impl Line {
 }
 
 impl Rule<'_> {
-    /// Returns the worst irradiance, infinite where a source is touched.
+    /// Returns the worst irradiance. Where a source is touched it is what all
+    /// sources together send out: no irradiance can be more. Touching is not
+    /// judged here, and a cool surface that is touched is no zone.
     fn exposure(&self, views: Option<&Views>) -> f64 {
-        views.map_or(f64::INFINITY, |views| {
-            views.worst(self.orientation, self.weights)
-        })
+        views.map_or_else(
+            || self.weights.iter().sum(),
+            |views| views.worst(self.orientation, self.weights),
+        )
     }
 
     /// Returns the logarithm of exposure over limit: above zero where the rule
@@ -149,6 +152,11 @@ impl Track {
             outside = Some(stop);
         }
         Extent::MetEverywhere
+    }
+
+    /// Returns where the line ends, m.
+    pub(super) fn end(&self) -> f64 {
+        self.stops.last().map_or(self.edge, |stop| stop.distance)
     }
 
     fn views<'a>(&'a self, stop: &'a Stop) -> Option<&'a Views> {
