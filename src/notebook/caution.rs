@@ -206,7 +206,7 @@ fn of_assessment(engine: &Engine, result: &CellResult, cautions: &mut Vec<Cautio
     );
     for limit in &limits {
         if limit.is_evidence() {
-            cautions.push(called("evidence", None, &[&limit.title]));
+            cautions.push(called("evidence", None, &[&limit.title, &limit.caution]));
         }
     }
     let near = result

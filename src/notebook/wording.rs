@@ -171,6 +171,27 @@ pub fn interval(name: &str, shown: &Shown, unit: Option<&Unit>) -> Option<String
     Some(format!("{} to {}", text(*low), text(*high)))
 }
 
+/// Returns a figure as people act on it: the unfavourable bound before the
+/// nominal value where there is one, else the value with its interval.
+#[must_use]
+pub fn beside(name: &str, shown: &Shown, unit: Option<&Unit>) -> String {
+    let nominal = nominal(name, shown, unit);
+    let acted_on = match shown {
+        Shown::Quantity { .. } => rounding(name) == Rounding::Up,
+        Shown::Time { .. } | Shown::Extent { .. } => true,
+        Shown::Word(_) => false,
+    };
+    match (
+        acted_on,
+        bound(name, shown, unit),
+        interval(name, shown, unit),
+    ) {
+        (true, Some(bound), _) => format!("{bound}   (nominal {nominal})"),
+        (false, _, Some(interval)) => format!("{nominal}   ({interval})"),
+        _ => nominal,
+    }
+}
+
 /// Returns the unit in which a cell's main value is to be shown, where its
 /// maker chose one.
 #[must_use]
@@ -219,6 +240,9 @@ pub fn zone(result: &CellResult, from: &str) -> String {
             safe.words().to_owned()
         }
     };
+    if let (Extent::NotMetWithin(end), Extent::At(_) | Extent::MetEverywhere) = (safe, *nominal) {
+        text.push_str(&format!(" (searched up to {})", format::safe_distance(end)));
+    }
     if let (Extent::At(_), Some(clear)) = (safe, result.shown("clear_distance")) {
         let clear = bound("clear_distance", clear, None)
             .unwrap_or_else(|| self::nominal("clear_distance", clear, None));
@@ -245,17 +269,13 @@ pub struct Sentence {
 pub fn finding(engine: &Engine, result: &CellResult) -> Option<Sentence> {
     let overall = result.overall.as_ref()?;
     let position = engine.cell(result.id)?.text("position")?;
-    let stay = engine
-        .find(position)
-        .and_then(|id| engine.value_of(id, Slot::Field("stay")))
-        .and_then(super::datum::Datum::as_quantity)
-        .map(|stay| stay.si);
-    let planned = stay.map_or_else(
-        || "no stay is stated".to_owned(),
-        |stay| format!("planned {}", plain_time(stay)),
-    );
+    let planned = planned(engine, position);
     let governing = assessment::governing(&result.verdicts);
-    let text = match (overall, governing) {
+    let mut text = match (overall, governing) {
+        (Overall::NotAssessed { .. }, _) if result.failed > 0 => format!(
+            "{planned}; the spreads reach values that cannot be, and without bounds nothing is \
+             assessed: narrow them"
+        ),
         (Overall::Over { .. }, Some(verdict)) => {
             let mut text = format!("{planned}, but {}", reached(verdict));
             let silent: Vec<&str> = result
@@ -292,10 +312,36 @@ pub fn finding(engine: &Engine, result: &CellResult) -> Option<Sentence> {
         }
         (_, None) => planned,
     };
+    let behind = engine
+        .find(position)
+        .and_then(|id| super::results::sights(engine, id))
+        .map_or(&[][..], |sights| &sights.behind);
+    if !behind.is_empty() {
+        text.push_str(&format!(
+            "; {} seen from behind, and counted as nothing",
+            behind.join(", ")
+        ));
+    }
     Some(Sentence {
         word: overall.word(),
         text,
     })
+}
+
+/// Returns how long people want to stay at a position, as it was typed.
+fn planned(engine: &Engine, position: &str) -> String {
+    let stay = engine.find(position).and_then(|id| {
+        let entry = engine.entry(id, "stay")?;
+        if entry.is_single_literal().is_some() {
+            return Some(entry.text().trim().to_owned());
+        }
+        let stay = engine.value_of(id, Slot::Field("stay"))?.as_quantity()?;
+        Some(format::of(stay, None, 4, Rounding::Nearest))
+    });
+    stay.map_or_else(
+        || "no stay is stated".to_owned(),
+        |stay| format!("planned {stay}"),
+    )
 }
 
 fn title(verdict: &Verdict) -> &'static str {

@@ -163,18 +163,8 @@ fn print_outputs(engine: &Engine, cell: &CellResult, out: &mut dyn Write) -> io:
         {
             continue;
         }
-        let nominal = wording::nominal(&figure.name, &figure.shown, unit.as_ref());
-        let bound = match wording::interval(&figure.name, &figure.shown, unit.as_ref()) {
-            Some(interval) => format!("   ({interval})"),
-            None => wording::bound(&figure.name, &figure.shown, unit.as_ref())
-                .map(|bound| format!("   (on the safe bound: {bound})"))
-                .unwrap_or_default(),
-        };
-        writeln!(
-            out,
-            "  {:<34} {nominal}{bound}",
-            wording::figure_label(figure)
-        )?;
+        let value = wording::beside(&figure.name, &figure.shown, unit.as_ref());
+        writeln!(out, "  {:<34} {value}", wording::figure_label(figure))?;
     }
     if cell.kind == Kind::Assessment {
         print_verdicts(cell, out)?;
@@ -200,7 +190,9 @@ fn print_verdicts(cell: &CellResult, out: &mut dyn Write) -> io::Result<()> {
             .ratio
             .map(|ratio| format!(", ratio {}", crate::units::format::safe_ratio(ratio)))
             .unwrap_or_default();
-        let allowed = wording::span(crate::notebook::cell::assessment::span(judgement.allowed));
+        let allowed = cell
+            .allowed(row)
+            .map_or_else(|| "not assessed".to_owned(), wording::span);
         writeln!(
             out,
             "  {:<22} {finding:<14} {exposure}{limit}{ratio}; allowed: {allowed}",

@@ -3,7 +3,7 @@
 
 use super::Sheet;
 use crate::drawing::mark::Shape;
-use crate::notebook::cell::{Kind, assessment};
+use crate::notebook::cell::Kind;
 use crate::notebook::results::{CellResult, State};
 use crate::notebook::wording;
 use crate::units::format;
@@ -174,7 +174,10 @@ fn verdicts(cell: &CellResult) -> Table {
                         .ratio
                         .map_or_else(|| "none".to_owned(), format::safe_ratio),
                 ),
-                Cell::plain(wording::span(assessment::span(judgement.allowed))),
+                Cell::plain(
+                    cell.allowed(row)
+                        .map_or_else(|| "not assessed".to_owned(), wording::span),
+                ),
                 Cell::finding(Shape::of_word(word), word),
             ]
         })
