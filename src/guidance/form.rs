@@ -49,7 +49,8 @@ impl Form {
             LOOKS => last,
             _ => first * (step * f64::from(k)).exp(),
         });
-        for t in times.clone() {
+        let mut looks = Vec::with_capacity(LOOKS as usize + 1);
+        for t in times {
             let limit = formula.look(t).filter(|limit| limit.is_finite());
             let Some(limit) = limit else {
                 return Err(format!(
@@ -74,18 +75,14 @@ impl Form {
                 ));
             }
             before = Some((t, limit));
+            looks.push((t, limit));
         }
-        Ok(formula.as_power(first, last, times).unwrap_or(formula))
+        Ok(formula.as_power(&looks).unwrap_or(formula))
     }
 
     /// Returns the power of time that agrees with this formula to 1e-13 at every look.
-    fn as_power(
-        &self,
-        first: f64,
-        last: f64,
-        mut times: impl Iterator<Item = f64>,
-    ) -> Option<Self> {
-        let (low, high) = (self.look(first)?, self.look(last)?);
+    fn as_power(&self, looks: &[(f64, f64)]) -> Option<Self> {
+        let (&(first, low), &(last, high)) = (looks.first()?, looks.last()?);
         let slope = (high / low).ln() / (last / first).ln();
         // Written exponents are short decimals; the fit is off by rounding alone.
         let short = (slope * 1e6).round() / 1e6;
@@ -102,11 +99,9 @@ impl Form {
             coefficient,
             exponent,
         };
-        times
-            .all(|t| {
-                self.look(t)
-                    .is_some_and(|limit| (power.at(t) - limit).abs() <= 1e-13 * limit)
-            })
+        looks
+            .iter()
+            .all(|&(t, limit)| (power.at(t) - limit).abs() <= 1e-13 * limit)
             .then_some(power)
     }
 

@@ -24,7 +24,8 @@ impl CellId {
 pub enum Datum {
     /// The node's own faults.
     Fault(Arc<Vec<Diagnostic>>),
-    /// Cells in error that this node depends on, by number.
+    /// Cells in error that this node depends on, by number: all of them, or the
+    /// first few of very many.
     Waiting(Arc<Vec<CellId>>),
     /// A quantity.
     Quantity(Quantity),

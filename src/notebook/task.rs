@@ -186,8 +186,13 @@ impl Task {
     }
 }
 
+/// How many cells in error a node names at most: a damaged file may hold very
+/// many, and each of them would stand in the list of everything behind it.
+const NAMED: usize = 32;
+
 /// Returns the cells in error that stand behind a node's inputs, if there are
-/// any: the first causes, not the cells between.
+/// any: the first causes, not the cells between, and the first [`NAMED`] of
+/// them by number.
 fn waiting(values: &Values<'_, Datum>, owner: &dyn Fn(Node) -> CellId) -> Option<Datum> {
     let mut causes: Vec<CellId> = Vec::new();
     for &input in values.inputs() {
@@ -203,6 +208,7 @@ fn waiting(values: &Values<'_, Datum>, owner: &dyn Fn(Node) -> CellId) -> Option
     }
     causes.sort_unstable();
     causes.dedup();
+    causes.truncate(NAMED);
     Some(Datum::Waiting(Arc::new(causes)))
 }
 

@@ -4,6 +4,8 @@
 //! (coverage factor 2) is the spread. The notebook is worked out once a draw,
 //! without changing it, and the central 95 % of each output are its bounds.
 
+mod record;
+
 use std::collections::BTreeMap;
 use std::f64::consts::SQRT_2;
 
@@ -11,10 +13,11 @@ use rand_chacha::ChaCha8Rng;
 use rand_chacha::rand_core::{RngCore, SeedableRng};
 use sha2::{Digest, Sha256};
 
-use super::cell::zone::Extent;
-use super::datum::{Datum, Output};
+use super::datum::Datum;
 use super::engine::Engine;
 use crate::graph::{Node, Plan};
+
+use record::{Record, rank};
 
 /// How the drawing is done.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -129,7 +132,7 @@ impl Engine {
         }
         let seeds: Vec<Node> = drawn.keys().copied().collect();
         let plan = self.graph().downstream(&seeds);
-        let mut records = self.records(&plan, count);
+        let mut records = self.records(&plan);
         let mut overlay = self.graph().overlay();
         let owner = |node: Node| self.owner(node).0;
         for number in 0..count {
@@ -151,9 +154,13 @@ impl Engine {
                     |task| task.run(node, values, &owner, Some(&draw)),
                 )
             });
-            // Where nothing differs the nominal ranks stand already.
-            for record in (records.iter_mut()).filter(|record| overlay.differs(record.node)) {
-                record.note(number, overlay.value(self.graph(), record.node));
+            for record in &mut records {
+                // What does not differ has its nominal values.
+                if overlay.differs(record.node) {
+                    record.note(number, count, overlay.value(self.graph(), record.node));
+                } else {
+                    record.note_nominal();
+                }
             }
         }
         bounds.nodes = records
@@ -194,7 +201,7 @@ impl Engine {
     }
 
     /// Returns an empty record for every downstream node that has outputs.
-    fn records(&self, plan: &Plan, count: usize) -> Vec<Record> {
+    fn records(&self, plan: &Plan) -> Vec<Record> {
         plan.nodes()
             .filter_map(|node| {
                 let mut nominal = Vec::new();
@@ -202,112 +209,13 @@ impl Engine {
                     .visit(&mut |_, output| nominal.push(rank(&output)));
                 (!nominal.is_empty()).then(|| Record {
                     node,
-                    moved: vec![None; nominal.len()],
+                    tails: vec![None; nominal.len()],
                     nominal,
-                    count,
                     failed: 0,
                 })
             })
             .collect()
     }
-}
-
-/// The outputs of one node over all draws.
-struct Record {
-    node: Node,
-    /// The nominal ranks.
-    nominal: Vec<f64>,
-    /// For each output its ranks by draw, from the first draw that moves it on;
-    /// until then it has the nominal one.
-    moved: Vec<Option<Vec<f64>>>,
-    count: usize,
-    failed: u32,
-}
-
-impl Record {
-    fn note(&mut self, draw: usize, datum: Option<&Datum>) {
-        // Without a value in one draw there are no bounds: nothing more counts.
-        let Some(datum) = datum.filter(|datum| datum.is_ready()) else {
-            self.failed += 1;
-            return;
-        };
-        let mut at = 0;
-        let mut silent = false;
-        datum.visit(&mut |_, output| {
-            silent |= matches!(
-                output,
-                Output::Extent {
-                    extent: Extent::NotAssessed,
-                    ..
-                }
-            );
-            if let (Some(nominal), Some(moved)) = (self.nominal.get(at), self.moved.get_mut(at)) {
-                let rank = rank(&output);
-                if let Some(ranks) = moved {
-                    ranks[draw] = rank;
-                } else if rank.to_bits() != nominal.to_bits() {
-                    let mut ranks = vec![*nominal; self.count];
-                    ranks[draw] = rank;
-                    *moved = Some(ranks);
-                }
-            }
-            at += 1;
-        });
-        // A draw with other outputs than the nominal ones cannot be compared,
-        // nor one in which guidance says nothing.
-        if at != self.nominal.len() || silent {
-            self.failed += 1;
-        }
-    }
-
-    fn bounds(self) -> NodeBounds {
-        let ranks = self.moved.into_iter().map(|moved| {
-            // What no draw moves is not reached by any spread.
-            let mut ranks = moved.filter(|_| self.failed == 0)?;
-            interval(&mut ranks).filter(|(low, high)| are_apart(*low, *high))
-        });
-        NodeBounds {
-            ranks: ranks.collect(),
-            failed: self.failed,
-        }
-    }
-}
-
-/// Returns whether two ranks differ by more than the rounding of the arithmetic
-/// between them.
-fn are_apart(low: f64, high: f64) -> bool {
-    low < high
-        && (low.is_infinite() || high.is_infinite() || {
-            high - low > 1e-12 * low.abs().max(high.abs())
-        })
-}
-
-/// Returns the number by which an output orders among the draws; NaN for one
-/// that does not order.
-fn rank(output: &Output<'_>) -> f64 {
-    match output {
-        Output::Quantity(quantity) => quantity.si,
-        Output::Time(span) => span.seconds(),
-        Output::Extent { extent, .. } => extent.rank(),
-        Output::Word(_) | Output::Nothing => f64::NAN,
-    }
-}
-
-/// Returns the probabilistically symmetric interval that covers 95 % of the
-/// draws, or `None` if one of them does not order.
-fn interval(column: &mut [f64]) -> Option<(f64, f64)> {
-    if column.iter().any(|rank| rank.is_nan()) {
-        return None;
-    }
-    // JCGM 101:2008, 7.7.2: q = pM, r = (M - q)/2, the interval from the r-th
-    // to the (r+q)-th, counted from 1. Halves go outwards.
-    let count = column.len();
-    let below = (count / 40).max(1) - 1;
-    let above = count - 1 - below;
-    let (_, low, rest) = column.select_nth_unstable_by(below, f64::total_cmp);
-    let low = *low;
-    let (_, high, _) = rest.select_nth_unstable_by(above - below - 1, f64::total_cmp);
-    Some((low, *high))
 }
 
 /// Returns `count` standard normal scores, one from each of as many equally
@@ -383,13 +291,5 @@ mod tests {
         }
         let correlation: f64 = a.iter().zip(&b).map(|(a, b)| a * b).sum::<f64>() / 1000.0;
         assert!(correlation.abs() < 0.1, "{correlation}");
-    }
-
-    #[test]
-    fn the_interval_holds_the_middle_95_percent() {
-        let mut column: Vec<f64> = (1..=1000).rev().map(f64::from).collect();
-        assert_eq!(interval(&mut column), Some((25.0, 976.0)));
-        column[3] = f64::NAN;
-        assert_eq!(interval(&mut column), None);
     }
 }

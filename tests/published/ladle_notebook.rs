@@ -41,8 +41,7 @@ fn cell<'a>(results: &'a Results, name: &str) -> &'a CellResult {
 fn si(shown: Option<&Shown>) -> f64 {
     shown
         .and_then(Shown::quantity)
-        .map(|quantity| quantity.si)
-        .unwrap_or_else(|| panic!("no quantity: {shown:?}"))
+        .map_or_else(|| panic!("no quantity: {shown:?}"), |quantity| quantity.si)
 }
 
 fn near(what: &str, found: f64, expected: f64, relative: f64) {

@@ -41,6 +41,9 @@ pub struct Track {
     balls: Vec<(glam::DVec2, f64)>,
     /// By distance, growing.
     stops: Vec<Stop>,
+    /// The first stop beyond the feet of all sources on the line: from here on
+    /// every step leads away from all of them.
+    beyond: usize,
 }
 
 /// One distance, m, with what is seen from around it: nothing where a source is
@@ -114,21 +117,25 @@ impl Rule<'_> {
 
 impl Track {
     pub(super) fn new(line: Line, edge: f64, farthest: f64) -> Track {
-        let balls = line.form.shapes.iter().map(|shape| {
-            let region = &shape.region;
-            (region.centre().xy(), region.bounding_radius())
-        });
+        let (mut balls, mut foot) = (Vec::new(), f64::NEG_INFINITY);
+        for shape in &line.form.shapes {
+            let centre = shape.region.centre();
+            balls.push((centre.xy(), shape.region.bounding_radius()));
+            foot = foot.max((centre - line.origin).dot(line.ahead));
+        }
+        let stops: Vec<Stop> = line
+            .distances(edge, farthest)
+            .into_iter()
+            .map(|distance| Stop {
+                distance,
+                views: OnceLock::new(),
+            })
+            .collect();
         Track {
+            beyond: stops.partition_point(|stop| stop.distance <= foot),
             edge,
-            balls: balls.collect(),
-            stops: line
-                .distances(edge, farthest)
-                .into_iter()
-                .map(|distance| Stop {
-                    distance,
-                    views: OnceLock::new(),
-                })
-                .collect(),
+            balls,
+            stops,
             line,
         }
     }
@@ -140,8 +147,13 @@ impl Track {
     /// 0.1 mm, given that between two stops the irradiance does not rise and
     /// fall again.
     pub(super) fn outermost(&self, rule: &Rule<'_>) -> Extent {
-        let mut outside: Option<&Stop> = None;
-        for stop in self.stops.iter().rev() {
+        // Beyond all sources the bound only falls: no stop in the part that is
+        // left out here could pass the limit.
+        let tail = &self.stops[self.beyond..];
+        let over =
+            tail.partition_point(|stop| self.bound(stop.distance, rule.weights) > rule.limit);
+        let mut outside = tail.get(over);
+        for stop in self.stops[..self.beyond + over].iter().rev() {
             if self.bound(stop.distance, rule.weights) > rule.limit
                 && rule.exposure(self.views(stop)) > rule.limit
             {
