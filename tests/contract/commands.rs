@@ -1,7 +1,7 @@
 //! The commands as a person meets them: help, templates, worksheets, pipes.
 
 use std::io::Read;
-use std::process::{Command, Stdio};
+use std::process::Stdio;
 
 use farglow::guidance::Library;
 use farglow::store::template;
