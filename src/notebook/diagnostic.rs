@@ -18,7 +18,7 @@ pub struct Diagnostic {
     pub hint: Option<String>,
     /// The name that no cell has. The remedy then is the nearest name that a
     /// cell has when the fault is told, which other cells' edits may change.
-    pub missing: Option<String>,
+    pub missing: Option<Box<str>>,
 }
 
 impl Diagnostic {

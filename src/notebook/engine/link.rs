@@ -542,7 +542,7 @@ impl<'e> Linker<'e> {
 
     fn unknown(&self, field: &'static str, name: &str) -> Diagnostic {
         Diagnostic {
-            missing: Some(name.to_owned()),
+            missing: Some(name.into()),
             ..Diagnostic::of_field(field, "unknown-name", format!("no cell is named `{name}`"))
         }
     }
