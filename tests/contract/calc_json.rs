@@ -21,7 +21,7 @@ const WHOLE: &str = r#"
       "height": "0.7 m", "temperature": "t", "emissivity": "0.95", "z": "1.2 m" },
     { "kind": "source", "name": "pot", "form": "pool", "outline": "disc", "diameter": "0.4 m",
       "temperature": "1100 °C", "emissivity": "0.3", "x": "3 m", "z": "0.6 m" },
-    { "kind": "position", "name": "charger", "from": "door", "distance": "2.5 m", "stay": "4 min" },
+    { "kind": "position", "name": "charger", "from": "door", "distance": "2.5 m", "faces": "door", "stay": "4 min" },
     { "kind": "position", "name": "gate", "from": "door", "distance": "120 m", "stay": "8 h" },
     { "kind": "curve", "name": "falloff", "from": "door", "points": 7 },
     { "kind": "assessment", "name": "near", "position": "charger",
