@@ -69,6 +69,17 @@ proptest! {
     #![proptest_config(config(1000))]
 
     #[test]
+    fn no_orientation_passes_a_views_ceiling(region in region(), point in place(), tries in proptest::collection::vec(heading(), 40)) {
+        let Some(view) = region.view(point).into_view() else { return Ok(()) };
+        let ceiling = view.ceiling();
+        prop_assert!((0.0..=1.0).contains(&ceiling), "{ceiling}");
+        for normal in tries.into_iter().chain([view.flux()]) {
+            let factor = view.factor(normal);
+            prop_assert!(factor <= ceiling * (1.0 + 1e-12) + 1e-13, "{normal}: {factor} above {ceiling}");
+        }
+    }
+
+    #[test]
     fn no_orientation_beats_the_strongest(regions in proptest::collection::vec(region(), 1..9), weights in proptest::collection::vec(0.0..10.0_f64, 9), point in place(), tries in proptest::collection::vec(heading(), 20)) {
         let Some(views) = views(&regions, point) else { return Ok(()) };
         let (found, normal) = strongest(&views, &weights);

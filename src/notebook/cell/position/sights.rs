@@ -429,3 +429,71 @@ pub fn behind(form: &Form, point: DVec3) -> Vec<usize> {
         .map(|(index, _)| index)
         .collect()
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::notebook::cell::source::Kind;
+    use crate::physics::region::Region;
+
+    fn form(centres: &[DVec3]) -> Form {
+        let shape = |centre: &DVec3| {
+            let region = Region::rectangle(*centre, DVec3::Y, DVec3::Z, 0.9, 0.7);
+            Arc::new(Shape {
+                region: region.expect("a door"),
+                kind: Kind::Opening,
+                centre: *centre,
+                ahead: DVec3::Y,
+            })
+        };
+        Form {
+            names: centres.iter().map(|_| Arc::from("door")).collect(),
+            shapes: centres.iter().map(shape).collect(),
+        }
+    }
+
+    #[test]
+    fn what_is_passed_over_or_kept_changes_no_bit_of_the_worst() {
+        let doors = [0.0, 3.0, -5.0].map(|x| DVec3::new(x, 0.0, 1.2));
+        let ways = [
+            Orientation::Strongest,
+            Orientation::Towards(doors[0]),
+            Orientation::Normal(DVec3::NEG_Y),
+            Orientation::Normal(DVec3::X),
+        ];
+        let mut compared = 0;
+        for sources in 1..=3 {
+            let form = form(&doors[..sources]);
+            for (x, y) in [
+                (0.0, 0.4),
+                (0.2, 1.0),
+                (1.5, 2.5),
+                (-2.0, 8.0),
+                (40.0, 0.35),
+            ] {
+                let eye = DVec3::new(x, y, 1.6);
+                for kind in [Envelope::Eye, Envelope::Skin] {
+                    let views = Views::look(&form, eye, envelope(eye, 0.0, 0.3, kind))
+                        .expect("it touches nothing");
+                    for weights in [[3e5, 2e5, 1e5], [0.0, 1e5, f64::NAN], [1e-300, 1e5, 9e5]] {
+                        for way in ways {
+                            let weights = &weights[..sources];
+                            let found = views.worst(way, weights);
+                            let each = (0..views.points.len()).map(|point| {
+                                way.irradiance(views.points[point], views.at(point), weights)
+                                    .0
+                            });
+                            let expected = each.fold(0.0, f64::max);
+                            assert!(
+                                found.to_bits() == expected.to_bits(),
+                                "{sources} from ({x}, {y}), {kind:?}, {way:?}: {found} {expected}"
+                            );
+                            compared += 1;
+                        }
+                    }
+                }
+            }
+        }
+        assert_eq!(compared, 360);
+    }
+}

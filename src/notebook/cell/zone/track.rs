@@ -239,3 +239,99 @@ impl Track {
         b
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::notebook::cell::source::{Kind, Shape};
+    use crate::physics::region::Region;
+
+    fn track(envelope: Envelope, heading: f64) -> Track {
+        let regions = [
+            Region::rectangle(DVec3::Z, DVec3::Y, DVec3::Z, 0.9, 0.7),
+            Region::disc(DVec3::new(2.0, 9.0, 0.6), DVec3::Z, 0.8),
+            Region::sphere(DVec3::new(-3.0, 4.0, 1.0), 0.4),
+        ];
+        let shapes = regions.map(|region| {
+            let region = region.expect("a source");
+            Arc::new(Shape {
+                centre: region.centre(),
+                region,
+                kind: Kind::Body,
+                ahead: DVec3::Y,
+            })
+        });
+        let line = Line {
+            form: Arc::new(Form {
+                names: ["door", "pool", "ball"].map(Arc::from).to_vec(),
+                shapes: shapes.to_vec(),
+            }),
+            origin: DVec3::Z,
+            ahead: DVec3::new(heading.sin(), heading.cos(), 0.0),
+            z: 1.6,
+            ground: 0.0,
+            reach: 0.3,
+            envelope,
+        };
+        Track::new(line, 0.0, 200.0)
+    }
+
+    /// A walk over every stop, from the farthest on, with nothing passed over.
+    fn walked(track: &Track, rule: &Rule<'_>) -> Option<(f64, f64)> {
+        let mut outside = f64::INFINITY;
+        for stop in track.stops.iter().rev() {
+            let exposure = rule.exposure(track.views(stop));
+            let bound = track.bound(stop.distance, rule.weights);
+            assert!(
+                exposure <= bound || exposure.is_infinite() && bound.is_infinite(),
+                "at {}: {exposure} above {bound}",
+                stop.distance
+            );
+            if exposure > rule.limit {
+                return Some((stop.distance, outside));
+            }
+            outside = stop.distance;
+        }
+        None
+    }
+
+    #[test]
+    fn nothing_that_is_passed_over_hides_the_outermost_crossing() {
+        let mut found = 0;
+        for envelope in [Envelope::Eye, Envelope::Skin] {
+            for heading in [0.0, 0.2, -0.7, 1.5] {
+                let track = track(envelope, heading);
+                for weights in [[3e5, 1e5, 2e5], [3e5, 0.0, 0.0], [1e2, 9e5, 1e4]] {
+                    for limit in [0.01, 10.0, 100.0, 1000.0, 8000.0, 1e7] {
+                        let rule = Rule {
+                            orientation: Orientation::Strongest,
+                            weights: &weights,
+                            limit,
+                        };
+                        let extent = track.outermost(&rule);
+                        match (walked(&track, &rule), extent) {
+                            (None, Extent::MetEverywhere) => {}
+                            (Some((farthest, f64::INFINITY)), Extent::NotMetWithin(end)) => {
+                                assert!(farthest == end, "{farthest} {end}");
+                            }
+                            (Some((inside, outside)), Extent::At(distance)) => {
+                                assert!(inside < distance && distance <= outside, "{distance}");
+                                let at = |distance: f64| {
+                                    rule.exposure(track.line.look(distance).as_ref())
+                                };
+                                let (before, here) = (at(distance - 1.01e-4), at(distance));
+                                assert!(
+                                    before > limit && here <= limit,
+                                    "{distance}: {before} and {here} about {limit}"
+                                );
+                                found += 1;
+                            }
+                            other => panic!("{limit}: {other:?}"),
+                        }
+                    }
+                }
+            }
+        }
+        assert!(found > 60, "{found}");
+    }
+}
