@@ -8,6 +8,7 @@
 
 pub mod caution;
 pub mod cell;
+pub mod date;
 pub mod datum;
 pub mod diagnostic;
 pub mod edit;
@@ -51,6 +52,7 @@ impl Notebook {
             confirmation.guidance == guidance
                 && confirmation.edition == edition
                 && !confirmation.by.trim().is_empty()
+                && date::is_date(&confirmation.date)
         })
     }
 }

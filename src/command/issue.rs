@@ -4,6 +4,7 @@ use std::io::{self, Write};
 use std::path::Path;
 
 use super::{CAUTION, Outcome, load};
+use crate::notebook::readiness;
 use crate::notebook::results::State;
 use crate::store::file;
 use crate::worksheet::layout::Paper;
@@ -92,6 +93,7 @@ pub fn write(
             writeln!(out, "  - {}", item.text)?;
         }
     }
+    confirmations(loaded, out)?;
     writeln!(out, "{CAUTION}")?;
     let whole = loaded
         .results
@@ -107,4 +109,27 @@ pub fn write(
         }
     }
     Ok(Outcome::Faults)
+}
+
+/// Prints what the notebook needs to say once the limits have been compared,
+/// ready to be filled in.
+fn confirmations(loaded: &load::Loaded, out: &mut dyn Write) -> io::Result<()> {
+    let open = readiness::unconfirmed(&loaded.engine);
+    if open.is_empty() {
+        return Ok(());
+    }
+    writeln!(
+        out,
+        "once you have compared each limit with its edition, fill in and put into the notebook:"
+    )?;
+    writeln!(out, "  \"confirmed\": [")?;
+    for (at, limit) in open.iter().enumerate() {
+        let comma = if at + 1 < open.len() { "," } else { "" };
+        writeln!(
+            out,
+            "    {{ \"guidance\": \"{}\", \"edition\": \"{}\", \"by\": \"\", \"date\": \"\" }}{comma}",
+            limit.id, limit.edition
+        )?;
+    }
+    writeln!(out, "  ]")
 }

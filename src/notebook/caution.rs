@@ -81,6 +81,11 @@ fn called(code: &str, field: Option<&'static str>, gaps: &[&str]) -> Caution {
 /// The share of a limit from which a measurement is called for.
 const NEAR: f64 = 0.8;
 
+/// Outside these temperatures in kelvin (200 °C to 2500 °C) a source is no hot
+/// one of the trade, and most likely a slip of the hand. Common practice, no
+/// source.
+const TRADE: std::ops::RangeInclusive<f64> = 473.15..=2773.15;
+
 /// Below this temperature in kelvin (400 °C) less than 4 % of a black body's
 /// radiation lies below 3000 nm.
 const COOL: f64 = 673.15;
@@ -143,13 +148,25 @@ fn of_source(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
             source::Kind::Opening => {}
         }
     }
+    if let Some(Datum::Shape(shape)) = engine.value_of(id, Slot::Group("shape"))
+        && shape.kind == source::Kind::Pool
+    {
+        cautions.push(called("pool-poured", None, &[]));
+    }
     if let Some(Datum::Emission(emission)) = engine.value_of(id, Slot::Group("emission"))
         && emission.skin > emission.total
     {
         cautions.push(called("band-above-whole", Some("emissivity"), &[]));
     }
-    if si(engine, id, "temperature").is_some_and(|temperature| temperature < COOL) {
-        cautions.push(called("cool-source", Some("temperature"), &[]));
+    if let Some(temperature) = si(engine, id, "temperature") {
+        if !TRADE.contains(&temperature) {
+            let unit =
+                format::natural_unit(crate::units::Dimension::TEMPERATURE, temperature, None);
+            let text = format::exactly(temperature, &unit);
+            cautions.push(called("odd-temperature", Some("temperature"), &[&text]));
+        } else if temperature < COOL {
+            cautions.push(called("cool-source", Some("temperature"), &[]));
+        }
     }
 }
 

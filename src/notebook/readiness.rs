@@ -2,8 +2,10 @@
 
 use super::caution::{is_assessed, is_unconfirmed, unconfirmed_limits};
 use super::cell::Kind;
+use super::date;
 use super::engine::Engine;
 use super::results::{CellResult, State};
+use crate::guidance::{Library, Limit};
 
 /// One thing that is left to do.
 #[derive(Clone, Debug, PartialEq, Eq)]
@@ -24,6 +26,19 @@ const NEEDED_LINES: [(&str, &str); 5] = [
     ("prepared_by", "who prepared it"),
     ("date", "the date"),
 ];
+
+/// Returns the limits in use, with their families, that are known only by recall
+/// and that nobody has confirmed.
+#[must_use]
+pub fn unconfirmed(engine: &Engine) -> Vec<&'static Limit> {
+    let used = engine
+        .notebook()
+        .cells
+        .iter()
+        .filter(|cell| matches!(cell.kind, Kind::Assessment | Kind::Zone))
+        .flat_map(|cell| cell.texts("guidance"));
+    unconfirmed_limits(engine, used)
+}
 
 /// Returns everything that is left to do, in the order in which it is best
 /// done.
@@ -94,12 +109,9 @@ pub(super) fn items(engine: &Engine, cells: &[CellResult]) -> Vec<Item> {
             });
         }
     }
-    let used = notebook
-        .cells
-        .iter()
-        .filter(|cell| matches!(cell.kind, Kind::Assessment | Kind::Zone))
-        .flat_map(|cell| cell.texts("guidance"));
-    let recalled = unconfirmed_limits(engine, used);
+    doubts(cells, engine, &mut items);
+    baseless(engine, &mut items);
+    let recalled = unconfirmed(engine);
     if !recalled.is_empty() {
         let ids: Vec<&str> = recalled.iter().map(|limit| limit.id.as_str()).collect();
         items.push(Item {
@@ -112,6 +124,18 @@ pub(super) fn items(engine: &Engine, cells: &[CellResult]) -> Vec<Item> {
             cell: None,
         });
     }
+    other_editions(engine, &mut items);
+    let mut missing = |what: &str| {
+        items.push(Item {
+            code: "job-line",
+            text: format!("fill in {what}"),
+            cell: None,
+        });
+    };
+    let empty = |text: Option<&str>| text.is_none_or(|text| text.trim().is_empty());
+    if empty(notebook.title.as_deref()) {
+        missing("the title");
+    }
     for (line, what) in NEEDED_LINES {
         let text = notebook
             .job
@@ -119,13 +143,130 @@ pub(super) fn items(engine: &Engine, cells: &[CellResult]) -> Vec<Item> {
             .into_iter()
             .find(|(name, _)| *name == line)
             .and_then(|(_, text)| text);
-        if text.is_none_or(|text| text.trim().is_empty()) {
-            items.push(Item {
-                code: "job-line",
-                text: format!("fill in {what}"),
-                cell: None,
-            });
+        if empty(text) {
+            missing(what);
+        } else if line == "date" && !text.is_some_and(date::is_date) {
+            missing("the date as in 2026-12-01");
         }
     }
     items
+}
+
+/// The cautions that most likely tell of a slip: they are answered by a note.
+const DOUBTS: [&str; 4] = [
+    "odd-temperature",
+    "band-above-whole",
+    "eye-height",
+    "behind",
+];
+
+fn doubts(cells: &[CellResult], engine: &Engine, items: &mut Vec<Item>) {
+    for cell in cells {
+        let answered = engine
+            .cell(cell.id)
+            .and_then(|typed| typed.text("note"))
+            .is_some_and(|note| !note.trim().is_empty());
+        for caution in &cell.cautions {
+            if !answered && DOUBTS.contains(&caution.code.as_str()) {
+                items.push(Item {
+                    code: "doubt",
+                    text: format!(
+                        "look at {} again, or say in its note why it is right: {}",
+                        cell.name, caution.text
+                    ),
+                    cell: Some(cell.name.clone()),
+                });
+            }
+        }
+    }
+}
+
+/// The inputs that a finding rests on: each says where it came from, unless it
+/// is worked out from others.
+const BASED: [(Kind, &[&str]); 3] = [
+    (Kind::Value, &["entry"]),
+    (
+        Kind::Source,
+        &[
+            "diameter",
+            "width",
+            "height",
+            "length",
+            "temperature",
+            "emissivity",
+            "near_ir_emissivity",
+        ],
+    ),
+    (Kind::Position, &["x", "y", "distance"]),
+];
+
+fn baseless(engine: &Engine, items: &mut Vec<Item>) {
+    for (place, cell) in engine.notebook().cells.iter().enumerate() {
+        let Some((_, fields)) = BASED.iter().find(|(kind, _)| *kind == cell.kind) else {
+            continue;
+        };
+        let missing: Vec<String> = fields
+            .iter()
+            .filter(|name| {
+                let typed = engine
+                    .id(place)
+                    .zip(cell.kind.field(name))
+                    .and_then(|(id, spec)| engine.entry(id, spec.name));
+                let is_input = typed.is_some_and(|entry| entry.names().is_empty());
+                let has_basis = cell.field(name).is_some_and(|field| field.basis.is_some())
+                    || (**name == "entry" && cell.field("basis").is_some());
+                is_input && !has_basis
+            })
+            .map(|name| match *name {
+                "entry" => "value".to_owned(),
+                name => name.replace('_', " "),
+            })
+            .collect();
+        if !missing.is_empty() {
+            items.push(Item {
+                code: "no-basis",
+                text: format!(
+                    "say where the {} of {} came from (its basis)",
+                    missing.join(", "),
+                    cell.name
+                ),
+                cell: Some(cell.name.clone()),
+            });
+        }
+    }
+}
+
+/// Says which confirmations do not count, and why.
+fn other_editions(engine: &Engine, items: &mut Vec<Item>) {
+    for line in &engine.notebook().confirmed {
+        let Some(limit) = Library::shipped().get(&line.guidance) else {
+            items.push(Item {
+                code: "confirmation",
+                text: format!("no guidance is known by the confirmed id {}", line.guidance),
+                cell: None,
+            });
+            continue;
+        };
+        let wrong = if line.edition != limit.edition {
+            format!(
+                "it names edition {}, but what is shipped is of {}: a limit of another edition \
+                 has to be added as your own",
+                line.edition, limit.edition
+            )
+        } else if line.by.trim().is_empty() {
+            "it does not say who compared it".to_owned()
+        } else if !date::is_date(&line.date) {
+            "its date is not one as in 2026-12-01".to_owned()
+        } else {
+            continue;
+        };
+        items.push(Item {
+            code: "confirmation",
+            text: format!(
+                "the confirmation of {} does not count: {wrong}",
+                line.guidance
+            ),
+            cell: None,
+        });
+    }
 }

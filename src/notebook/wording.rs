@@ -7,7 +7,7 @@ use super::cell::assessment::{self, Verdict};
 use super::cell::zone::Extent;
 use super::datum::Span;
 use super::engine::{Engine, Slot};
-use super::results::{CellResult, Figure, Shown};
+use super::results::{CellResult, Figure, Shown, State};
 use crate::guidance::{Finding, Library, Overall};
 use crate::units::format::{self, Rounding};
 use crate::units::{Dimension, Quantity, Unit};
@@ -27,7 +27,7 @@ pub fn label(name: &str) -> &str {
         "irradiance" => "irradiance",
         "near_ir_irradiance" => "near infrared, 780–3000 nm",
         "skin_irradiance" => "skin band, 380–3000 nm",
-        "background" => "from the room, apart",
+        "background" => "from air and walls, in no limit",
         "envelope_irradiance" => "worst within reach",
         "envelope_near_ir_irradiance" => "near infrared, worst at the eye",
         "envelope_skin_irradiance" => "skin band, worst within reach",
@@ -103,8 +103,8 @@ pub fn quantity(name: &str, quantity: Quantity, unit: Option<&Unit>) -> String {
 pub fn span(span: Span) -> String {
     match span {
         Span::Seconds(seconds) => format::safe_time(seconds),
-        Span::Capped(seconds) => format!("{}, beyond not assessed", plain_time(seconds)),
-        Span::Unlimited => "not limited by this".to_owned(),
+        Span::Capped(seconds) => format!("not assessed past {}", plain_time(seconds)),
+        Span::Unlimited => "sets no end".to_owned(),
     }
 }
 
@@ -222,36 +222,69 @@ pub fn permitted(verdict: &Verdict) -> Option<String> {
 }
 
 /// Returns where a zone ends in words, on the safe bound, with the nominal edge
-/// beside it.
+/// beside it, and what its rule does not judge.
 #[must_use]
-pub fn zone(result: &CellResult, from: &str) -> String {
+pub fn zone(engine: &Engine, result: &CellResult) -> String {
+    let typed = engine.cell(result.id);
+    let text = |field: &str| typed.and_then(|cell| cell.text(field)).unwrap_or_default();
+    let (from, guidance) = (text("from"), text("guidance"));
     let Some(Shown::Extent {
         extent: nominal,
         high,
         ..
     }) = result.shown("distance")
     else {
-        return "could not be worked out".to_owned();
+        return not_worked_out(result);
     };
+    let judged = Library::shipped()
+        .get(guidance)
+        .map_or("one effect", |limit| limit.organ.name());
     let safe = high.unwrap_or(*nominal);
-    let mut text = match safe {
-        Extent::At(_) => format!("met from {} from the centre of {from} on", extent(safe)),
-        Extent::MetEverywhere | Extent::NotMetWithin(_) | Extent::NotAssessed => {
-            safe.words().to_owned()
+    let mut words = match safe {
+        Extent::At(_) => {
+            let mut words = format!(
+                "not met closer than {} to the centre of {from}",
+                extent(safe)
+            );
+            if let Some(clear) = result.shown("clear_distance") {
+                let clear = bound("clear_distance", clear, None)
+                    .unwrap_or_else(|| self::nominal("clear_distance", clear, None));
+                words.push_str(&format!(", {clear} to its edge"));
+            }
+            words
+        }
+        Extent::MetEverywhere => "met at every distance that was searched".to_owned(),
+        Extent::NotMetWithin(end) => {
+            format!(
+                "met nowhere up to {}, where the search ended",
+                format::safe_distance(end)
+            )
+        }
+        Extent::NotAssessed if result.failed > 0 => {
+            "not assessed: the spreads reach values for which nothing can be said".to_owned()
+        }
+        Extent::NotAssessed => {
+            return format!(
+                "not assessed: {guidance} says nothing about a stay of {}",
+                text("stay")
+            );
         }
     };
-    if let (Extent::NotMetWithin(end), Extent::At(_) | Extent::MetEverywhere) = (safe, *nominal) {
-        text.push_str(&format!(" (searched up to {})", format::safe_distance(end)));
-    }
-    if let (Extent::At(_), Some(clear)) = (safe, result.shown("clear_distance")) {
-        let clear = bound("clear_distance", clear, None)
-            .unwrap_or_else(|| self::nominal("clear_distance", clear, None));
-        text.push_str(&format!(", {clear} from its edge"));
-    }
     if high.is_some() {
-        text.push_str(&format!(" (nominal {})", extent(*nominal)));
+        words.push_str(&format!(" (nominal {})", extent(*nominal)));
     }
-    text
+    words.push_str(&format!("; it judges {judged} alone"));
+    words
+}
+
+/// Says why a cell has no results.
+#[must_use]
+pub fn not_worked_out(result: &CellResult) -> String {
+    match (&result.state, result.errors.first()) {
+        (State::Waiting(cells), _) => format!("not worked out: it waits for {}", cells.join(", ")),
+        (_, Some(error)) => format!("not worked out: {error}"),
+        (_, None) => "not worked out".to_owned(),
+    }
 }
 
 /// A finding as a person reads it: its word and one sentence.
@@ -297,12 +330,15 @@ pub fn finding(engine: &Engine, result: &CellResult) -> Option<Sentence> {
                     .collect::<Vec<_>>()
                     .join(", ")
             };
-            let mut text = format!("{planned}; nothing here covers {}", names(missing));
-            if !within.is_empty() {
-                text.push_str(&format!("; within for {}", names(within)));
+            let mut text = format!("{planned}; no limit here covers {}", names(missing));
+            match governing.map(|verdict| (verdict, assessment::span(verdict.judgement.allowed))) {
+                Some((verdict, Span::Seconds(_))) => {
+                    text.push_str(&format!("; {}", allows(verdict)));
+                }
+                _ => text.push_str(", so that no allowed time can be given"),
             }
-            if let Some(verdict) = governing {
-                text.push_str(&format!("; of what is assessed, {}", allows(verdict)));
+            if !within.is_empty() {
+                text.push_str(&format!("; {} alone is within", names(within)));
             }
             text
         }
@@ -362,7 +398,8 @@ fn reached(verdict: &Verdict) -> String {
             verdict.guidance,
             title(verdict),
             seconds.floor()
-        ),
+        )
+        .replace("after 0 s", "at once"),
         Span::Seconds(seconds) => format!(
             "{what} of {} ({}) is reached after {}",
             verdict.guidance,
@@ -388,6 +425,6 @@ fn allows(verdict: &Verdict) -> String {
             title(verdict),
             plain_time(seconds)
         ),
-        Span::Unlimited => "no limit that is listed ends the stay".to_owned(),
+        Span::Unlimited => "no limit that is listed sets an end to it".to_owned(),
     }
 }

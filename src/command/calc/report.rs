@@ -65,19 +65,27 @@ fn print_findings(loaded: &Loaded, out: &mut dyn Write) -> io::Result<()> {
         let typed = loaded.engine.cell(cell.id);
         let text = |field: &str| typed.and_then(|cell| cell.text(field)).unwrap_or_default();
         match cell.kind {
+            Kind::Position if loaded.results.word_of(&loaded.engine, &cell.name).is_none() => {
+                lines.push(match cell.state {
+                    State::Ok => format!("{}: NOT ASSESSED: nothing here judges it", cell.name),
+                    State::Error | State::Waiting(_) => {
+                        format!("{}: {}", cell.name, wording::not_worked_out(cell))
+                    }
+                });
+            }
             Kind::Assessment => {
                 let sentence = wording::finding(&loaded.engine, cell).map_or_else(
-                    || "NOT ASSESSED: it could not be worked out".to_owned(),
+                    || wording::not_worked_out(cell),
                     |finding| format!("{}: {}", finding.word.to_uppercase(), finding.text),
                 );
                 lines.push(format!("{}: {sentence}", text("position")));
             }
             Kind::Zone => lines.push(format!(
-                "{} ({} for {}): {}",
+                "{} ({} for one stay of {}): {}",
                 cell.name,
                 text("guidance"),
                 text("stay"),
-                wording::zone(cell, text("from"))
+                wording::zone(&loaded.engine, cell)
             )),
             _ => {}
         }

@@ -81,13 +81,21 @@ pub(super) fn power_after_unit(symbol: &str) -> Diagnostic {
     })
 }
 
-pub(super) fn decimal_comma(is_call: bool) -> Diagnostic {
-    let hint = if is_call {
-        "write a decimal point (`2.5`); arguments are separated by a comma and a space (`max(2, 5)`)"
+/// `before` and `after` are the digits on both sides of the comma: the remedy
+/// shows the number that was typed, and never guesses between 1370 and 1.370.
+pub(super) fn decimal_comma(is_call: bool, before: &str, after: &str) -> Diagnostic {
+    let mut hint = if after.len() == 3 {
+        format!(
+            "if the comma parts thousands, write `{before}{after}`; if it is a decimal comma, \
+             write `{before}.{after}`"
+        )
     } else {
-        "write a decimal point: `2.5`"
+        format!("write a decimal point: `{before}.{after}`")
     };
-    Diagnostic::new("decimal-comma", "expected a decimal point, found a comma").with_hint(hint)
+    if is_call {
+        hint.push_str("; arguments are separated by a comma and a space, as in `max(2, 5)`");
+    }
+    Diagnostic::new("decimal-comma", "expected one number, found a comma in it").with_hint(hint)
 }
 
 pub(super) fn stray_comma() -> Diagnostic {

@@ -45,7 +45,7 @@ fn of_position(sheet: &Sheet<'_>, position: &CellResult) -> Vec<Block> {
         }
         let (word, text) = match wording::finding(sheet.engine, cell) {
             Some(sentence) => (sentence.word, sentence.text),
-            None => ("not assessed", "it could not be worked out".to_owned()),
+            None => ("not assessed", wording::not_worked_out(cell)),
         };
         blocks.push(Block::Finding {
             shape: Shape::of_word(word),
@@ -74,11 +74,11 @@ fn of_position(sheet: &Sheet<'_>, position: &CellResult) -> Vec<Block> {
 fn of_zone(sheet: &Sheet<'_>, cell: &CellResult) -> Block {
     let typed = sheet.engine.cell(cell.id);
     let text = |field: &str| typed.and_then(|cell| cell.text(field)).unwrap_or("");
-    let rule = format!("{} for {}", text("guidance"), text("stay"));
+    let rule = format!("{} for one stay of {}", text("guidance"), text("stay"));
     Block::Bullet(vec![
         Run::bold(format!("Zone {}", cell.name)),
         Run::plain(format!(" ({rule}): ")),
-        Run::bold(wording::zone(cell, text("from"))),
+        Run::bold(wording::zone(sheet.engine, cell)),
         Run::plain("."),
     ])
 }
@@ -87,11 +87,7 @@ fn faults(cell: &CellResult) -> Vec<Block> {
     let finding = |text: String| Block::Finding {
         shape: Shape::NotAssessed,
         word: "not worked out".to_owned(),
-        text: vec![
-            Run::plain(": "),
-            Run::bold(cell.name.clone()),
-            Run::plain(text),
-        ],
+        text: vec![Run::bold(cell.name.clone()), Run::plain(text)],
     };
     match &cell.state {
         State::Ok => Vec::new(),
@@ -164,7 +160,7 @@ fn verdicts(cell: &CellResult) -> Table {
                 .in_row(row, "finding")
                 .and_then(|shown| shown.word())
                 .unwrap_or("not assessed");
-            let limit = wording::permitted(verdict).unwrap_or_else(|| "none".to_owned());
+            let limit = wording::permitted(verdict).unwrap_or_else(|| "–".to_owned());
             vec![
                 Cell::plain(verdict.guidance.clone()),
                 Cell::plain(format::safe_irradiance(judgement.exposure)),
@@ -172,7 +168,7 @@ fn verdicts(cell: &CellResult) -> Table {
                 Cell::plain(
                     judgement
                         .ratio
-                        .map_or_else(|| "none".to_owned(), format::safe_ratio),
+                        .map_or_else(|| "–".to_owned(), format::safe_ratio),
                 ),
                 Cell::plain(
                     cell.allowed(row)

@@ -49,10 +49,11 @@ fn one(sheet: &Sheet<'_>, limit: &'static Limit) -> Vec<Block> {
         .find(|line| line.guidance == limit.id && line.edition == limit.edition);
     let known = match confirmed {
         Some(line) => format!(
-            "{}; compared with the edition by {} on {}",
-            limit.how_known.words(),
+            "compared with edition {} by {} on {}; shipped as {}",
+            line.edition,
             line.by,
-            line.date
+            line.date,
+            limit.how_known.word()
         ),
         None => limit.how_known.words().to_owned(),
     };

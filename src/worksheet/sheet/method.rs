@@ -28,7 +28,7 @@ pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
         blocks.push(Block::Paragraph(vec![Run::plain(format!(
             "Uncertainty: {} inputs carry a spread. Each is drawn from a normal distribution whose \
              expanded uncertainty (coverage factor 2) is the spread, {} times by Latin hypercube \
-             sampling with seed {}; emissivities are held at 1. Bounds are the central 95 % of the \
+             sampling with seed {}; a drawn emissivity above 1 counts as 1. Bounds are the central 95 % of the \
              draws (JCGM 101:2008); findings and distances are those of the unfavourable bound, \
              the nominal value stands beside it.",
             sheet.results.spreads, sheet.results.draws, sheet.results.seed

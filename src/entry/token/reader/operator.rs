@@ -94,12 +94,20 @@ impl Reader<'_> {
     fn comma(&mut self) {
         let digit = |sign: Option<char>| sign.is_some_and(|sign| sign.is_ascii_digit());
         let before = digit(self.text[..self.at].chars().next_back());
+        let head = self.text[..self.at]
+            .trim_end_matches(|sign: char| sign.is_ascii_digit())
+            .len();
+        let whole = self.text[head..self.at].to_owned();
         let span = self.take_sign();
         let is_decimal = before && digit(self.peek());
         let is_call = self.level().is_call;
         self.level().in_exponent = false;
         if is_decimal {
-            self.refuse(fault::decimal_comma(is_call), span, false);
+            let places: String = self.text[self.at..]
+                .chars()
+                .take_while(char::is_ascii_digit)
+                .collect();
+            self.refuse(fault::decimal_comma(is_call, &whole, &places), span, false);
         } else if is_call {
             self.push(Sign::Comma, span);
             self.after_value = false;
