@@ -13,6 +13,7 @@
 //! | pictures and paper | [`drawing`], [`worksheet`] |
 //! | the command line | [`command`] |
 
+pub mod app;
 pub mod command;
 pub mod drawing;
 pub mod entry;

@@ -1,0 +1,3 @@
+//! The window: the notebook on the desk.
+
+pub mod shared;
