@@ -1,3 +1,9 @@
 //! The window: the notebook on the desk.
 
+pub mod canvas;
+pub mod cautions;
+pub mod curve;
+pub mod rail;
+pub mod readiness;
 pub mod shared;
+pub mod theme;
