@@ -3,6 +3,7 @@
 pub mod canvas;
 pub mod cautions;
 pub mod curve;
+mod dashes;
 pub mod rail;
 pub mod readiness;
 pub mod shared;
