@@ -1,3 +1,351 @@
 //! The window: the notebook on the desk.
+//!
+//! Areas answer with an action; only the window changes the notebook, the files
+//! and itself. Everything that is drawn comes from one [`shared::Shared`].
 
+mod bar;
+mod cells;
+mod dashes;
+mod desk;
+mod files;
+mod follow;
+mod job;
+mod listen;
+mod open;
+pub mod preset;
+mod print;
 pub mod shared;
+mod shortcut;
+mod sign;
+mod style;
+
+use std::path::PathBuf;
+
+use iced::widget::{button, column, container, row, rule, space};
+use iced::{Alignment, Element, Length, Size, Subscription, Theme, window};
+
+use crate::drawing::font;
+use crate::drawing::role::{self, Role};
+use crate::notebook::datum::CellId;
+use crate::notebook::results::Results;
+use crate::store::settings::Settings;
+use desk::Desk;
+use shared::{Look, Measure, Shared};
+use style::{BODY, SMALL};
+
+pub use desk::Error;
+pub use open::{start, Unopened};
+
+/// How wide the column of cells is.
+const CELLS: f32 = 428.0;
+
+/// The window with everything in it.
+#[derive(Debug)]
+pub struct Window {
+    desk: Desk,
+    selected: Option<CellId>,
+    look: Look,
+    size: Size,
+    drawer: Drawer,
+    cells: cells::Area,
+    files: files::Area,
+    print: print::Area,
+    job: job::Area,
+    /// What the guard asks about.
+    pending: Option<files::Wish>,
+    /// What was said last: whether it is bad, and the words.
+    said: Option<(bool, String)>,
+    /// Where the window's settings live; nowhere in tests.
+    settings: Option<PathBuf>,
+}
+
+/// What is open under the bar.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
+enum Drawer {
+    #[default]
+    Shut,
+    Files,
+    Job,
+    Left,
+    Print,
+    Keys,
+}
+
+/// Everything that happens in the window.
+#[derive(Clone, Debug)]
+pub enum Message {
+    /// In the bar.
+    Bar(bar::Message),
+    /// In the cells.
+    Cells(cells::Message),
+    /// In the drawer with files.
+    Files(files::Message),
+    /// In the drawer with the worksheet.
+    Print(print::Message),
+    /// In the drawer with the job.
+    Job(job::Message),
+    /// An answer to the guard.
+    Guard(files::Answer),
+    /// A key was pressed.
+    Key(shortcut::Wish),
+    /// Shut what is open under the bar.
+    ShutDrawer,
+    /// Take away what was said.
+    Unsay,
+    /// Show the cell of this name.
+    Show(String),
+    /// The bounds of a state of the notebook were drawn.
+    BoundsDrawn(u64, Box<Results>),
+    /// Some of the work under way is done.
+    Advanced,
+    /// The window has another size.
+    Resized(Size),
+    /// The window was asked to close.
+    CloseRequested,
+}
+
+impl Window {
+    fn new(desk: Desk, settings: &Settings, place: Option<PathBuf>) -> Self {
+        let theme = match settings.theme.as_str() {
+            "dark" => role::Theme::Dark,
+            _ => role::Theme::Light,
+        };
+        let measure = match settings.measure.as_str() {
+            "us" => Measure::Us,
+            _ => Measure::Metric,
+        };
+        Window {
+            selected: None,
+            look: Look {
+                theme,
+                zoom: settings.zoom,
+                measure,
+            },
+            size: Size::new(settings.size.0, settings.size.1),
+            drawer: Drawer::Shut,
+            cells: cells::Area::new(),
+            files: files::Area::new(desk.file()),
+            print: print::Area::new(desk.file()),
+            job: job::Area::default(),
+            pending: None,
+            said: None,
+            settings: place,
+            desk,
+        }
+    }
+
+    /// Returns what every area may read.
+    fn shared(&self) -> Shared<'_> {
+        Shared {
+            engine: self.desk.engine(),
+            results: self.desk.results(),
+            fresh: self.desk.is_fresh(),
+            look: self.look,
+            selected: self.selected,
+        }
+    }
+
+    /// Returns the notebook as it stands, for whoever tests the window.
+    #[must_use]
+    pub fn notebook(&self) -> &crate::notebook::Notebook {
+        self.desk.engine().notebook()
+    }
+
+    /// Draws the bounds here and now, for whoever tests the window.
+    pub fn settle(&mut self) {
+        self.desk.settle();
+    }
+
+    /// Returns the title of the window.
+    #[must_use]
+    pub fn title(&self) -> String {
+        let title = self.notebook().title.as_deref().unwrap_or("Untitled job");
+        let mark = if self.desk.is_dirty() { " · not saved" } else { "" };
+        format!("{title}{mark} · farglow")
+    }
+
+    /// Returns the theme of the widgets that have no style of their own.
+    #[must_use]
+    pub fn theme(&self) -> Theme {
+        let colour = |role| style::colour(role, self.look);
+        Theme::custom(
+            "desk",
+            iced::theme::Palette {
+                background: colour(Role::Ground),
+                text: colour(Role::Ink),
+                primary: colour(Role::Action),
+                success: colour(Role::Within),
+                warning: colour(Role::CautionGround),
+                danger: colour(Role::Over),
+            },
+        )
+    }
+
+    /// Returns the window as it is seen.
+    #[must_use]
+    pub fn view(&self) -> Element<'_, Message> {
+        let shared = self.shared();
+        let look = self.look;
+        let mut page = column![bar::view(&self.desk, shared).map(Message::Bar), line(look)];
+        if let Some((bad, said)) = &self.said {
+            page = page.push(notice(*bad, said, look)).push(line(look));
+        }
+        if let Some(wish) = &self.pending {
+            page = page.push(files::guard(wish, look).map(Message::Guard)).push(line(look));
+        }
+        if let Some(drawer) = self.drawer(shared) {
+            page = page.push(drawer).push(line(look));
+        }
+        let cells = container(self.cells.view(shared).map(Message::Cells))
+            .width(Length::Fixed(CELLS))
+            .height(Length::Fill)
+            .style(style::ground(Role::Ground, look));
+        let right = space().width(Length::Fill).height(Length::Fill);
+        page = page.push(
+            row![
+                cells,
+                rule::vertical(1).style(move |_| rule_style(look)),
+                right
+            ]
+            .height(Length::Fill),
+        );
+        let typing = self.cells.is_typing() || self.drawer != Drawer::Shut;
+        listen::listen(
+            container(page)
+                .width(Length::Fill)
+                .height(Length::Fill)
+                .style(style::ground(Role::Ground, look)),
+            move |key, modifiers| shortcut::wish(key, modifiers, typing).map(Message::Key),
+        )
+    }
+
+    fn drawer<'a>(&'a self, shared: Shared<'a>) -> Option<Element<'a, Message>> {
+        let look = self.look;
+        let content = match self.drawer {
+            Drawer::Shut => return None,
+            Drawer::Files => self.files.view(shared).map(Message::Files),
+            Drawer::Job => job::view(shared).map(Message::Job),
+            Drawer::Print => self.print.view(shared).map(Message::Print),
+            Drawer::Left => left(shared),
+            Drawer::Keys => keys(look),
+        };
+        let shut = button(iced::widget::text("close").size(SMALL).font(style::REGULAR))
+            .padding([2, 6])
+            .style(style::plain(look))
+            .on_press(Message::ShutDrawer);
+        Some(
+            container(row![content, shut].spacing(16))
+                .padding([12, 20])
+                .width(Length::Fill)
+                .style(style::ground(Role::Panel, look))
+                .into(),
+        )
+    }
+
+    /// Returns what the window listens to. Nothing ticks while nothing is
+    /// worked out.
+    #[must_use]
+    pub fn subscription(&self) -> Subscription<Message> {
+        let mut all = vec![
+            window::resize_events().map(|(_, size)| Message::Resized(size)),
+            window::close_requests().map(|_| Message::CloseRequested),
+        ];
+        if self.desk.progress().is_some() {
+            let often = std::time::Duration::from_millis(150);
+            all.push(iced::time::every(often).map(|_| Message::Advanced));
+        }
+        Subscription::batch(all)
+    }
+}
+
+fn rule_style(look: Look) -> rule::Style {
+    rule::Style {
+        color: style::colour(Role::Line, look),
+        radius: 0.0.into(),
+        fill_mode: rule::FillMode::Full,
+        snap: true,
+    }
+}
+
+fn line<'a>(look: Look) -> Element<'a, Message> {
+    rule::horizontal(1).style(move |_| rule_style(look)).into()
+}
+
+/// What was said last.
+fn notice<'a>(bad: bool, said: &'a str, look: Look) -> Element<'a, Message> {
+    let role = if bad { Role::Over } else { Role::Ink };
+    container(
+        row![
+            style::words(said, BODY, role, look).width(Length::Fill),
+            button(iced::widget::text("all right").size(SMALL).font(style::REGULAR))
+                .padding([2, 6])
+                .style(style::plain(look))
+                .on_press(Message::Unsay),
+        ]
+        .spacing(10)
+        .align_y(Alignment::Center),
+    )
+    .padding([8, 20])
+    .width(Length::Fill)
+    .style(style::ground(Role::Panel, look))
+    .into()
+}
+
+/// What is left before issue.
+fn left(shared: Shared<'_>) -> Element<'_, Message> {
+    let look = shared.look;
+    let items = shared.results.readiness.iter().map(|item| {
+        let words = style::words(item.text.as_str(), SMALL, Role::Ink, look);
+        match &item.cell {
+            Some(cell) => row![
+                words,
+                button(iced::widget::text("show").size(SMALL).font(style::REGULAR))
+                    .padding([0, 6])
+                    .style(style::plain(look))
+                    .on_press(Message::Show(cell.clone())),
+            ]
+            .spacing(8)
+            .into(),
+            None => words.into(),
+        }
+    });
+    column(items).spacing(3).width(Length::Fill).into()
+}
+
+/// The list of keys.
+fn keys<'a>(look: Look) -> Element<'a, Message> {
+    let third = shortcut::ALL.len().div_ceil(3);
+    let columns = shortcut::ALL.chunks(third).map(|some| {
+        let lines = some.iter().map(|shortcut| {
+            row![
+                container(style::bold(shortcut.keys, SMALL, Role::Ink, look))
+                    .width(Length::Fixed(110.0)),
+                style::words(shortcut.about, SMALL, Role::Muted, look),
+            ]
+            .into()
+        });
+        column(lines).spacing(3).width(Length::Fill).into()
+    });
+    column![
+        row(columns).spacing(20),
+        bar::manners(look).map(Message::Bar)
+    ]
+    .spacing(10)
+    .width(Length::Fill)
+    .into()
+}
+
+/// Returns the settings of fonts for the window, and for whoever tests it.
+#[must_use]
+pub fn settings() -> iced::Settings {
+    iced::Settings {
+        fonts: font::Weight::ALL
+            .iter()
+            .map(|weight| std::borrow::Cow::Borrowed(weight.bytes()))
+            .collect(),
+        default_font: style::REGULAR,
+        default_text_size: BODY.into(),
+        antialiasing: true,
+        ..iced::Settings::default()
+    }
+}
