@@ -33,7 +33,9 @@ use desk::Desk;
 use shared::{Look, Measure, Shared};
 use style::{BODY, SMALL};
 
+pub use cells::TYPING;
 pub use desk::Error;
+pub use files::PATH;
 pub use open::{start, Unopened};
 
 /// How wide the column of cells is.
@@ -102,6 +104,15 @@ pub enum Message {
     Resized(Size),
     /// The window was asked to close.
     CloseRequested,
+}
+
+impl Message {
+    /// Says how far the column of cells is scrolled, and how much of it is
+    /// seen: what the window reports when it is scrolled.
+    #[must_use]
+    pub const fn seen(offset: f32, height: f32) -> Message {
+        Message::Cells(cells::Message::Scrolled(offset, height))
+    }
 }
 
 impl Window {

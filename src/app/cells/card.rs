@@ -1,6 +1,6 @@
 //! One cell as a card that reads as a sentence.
 
-use iced::widget::{button, column, container, mouse_area, row, space};
+use iced::widget::{button, column, container, mouse_area, rich_text, row, space, span};
 use iced::{Alignment, Element, Length};
 
 use super::figure::{self, Found};
@@ -191,10 +191,24 @@ fn origin(cell: &Cell) -> Option<String> {
 
 fn finding<'a>(found: Found, look: Look) -> Element<'a, Message> {
     let role = found.shape.role();
+    let mut words = column![
+        rich_text![
+            span(found.word)
+                .font(style::BOLD)
+                .color(style::colour(role, look)),
+            span(format!(": {}", found.text)).color(style::colour(role, look)),
+        ]
+        .on_link_click(iced::never)
+        .size(BODY)
+        .font(style::REGULAR)
+    ]
+    .width(Length::Fill);
+    if let Some(by) = found.by {
+        words = words.push(style::words(by, SMALL, Role::Muted, look));
+    }
     row![
-        container(sign(found.shape, 13.0, look)).padding([2, 0]),
-        style::bold(found.word, BODY, role, look),
-        style::words(found.text, SMALL, Role::Ink, look).width(Length::Fill),
+        container(sign(found.shape, 13.0, look)).padding([3, 0]),
+        words
     ]
     .spacing(7)
     .into()

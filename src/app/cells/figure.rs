@@ -6,6 +6,7 @@ use crate::drawing::mark::Shape;
 use crate::guidance::{self, Envelope, Library};
 use crate::notebook::cell::zone::Extent;
 use crate::notebook::cell::{Cell, Kind, assessment};
+use crate::notebook::datum::Span;
 use crate::notebook::results::{CellResult, Shown, State};
 use crate::notebook::wording;
 use crate::units::format::{self, Rounding};
@@ -33,6 +34,8 @@ pub struct Found {
     pub word: String,
     /// What follows the word.
     pub text: String,
+    /// What decides it, in smaller letters.
+    pub by: Option<String>,
 }
 
 /// Returns what the card of a cell says.
@@ -162,6 +165,7 @@ fn position(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
             shape: Shape::NotAssessed,
             word: "not assessed".to_owned(),
             text: "no assessment judges this position".to_owned(),
+            by: None,
         });
     }
     let verdicts: Vec<_> = judges.iter().flat_map(|other| &other.verdicts).cloned().collect();
@@ -265,6 +269,7 @@ pub fn limits(shared: &Shared<'_>, result: &CellResult) -> Vec<Found> {
                 shape: Shape::of_word(word),
                 word: word.to_owned(),
                 text: format!("{} · {exposure}{limit}", verdict.guidance),
+                by: None,
             }
         })
         .collect()
@@ -278,19 +283,46 @@ fn irradiance(shared: &Shared<'_>, si: f64) -> String {
 
 fn found(shared: &Shared<'_>, result: &CellResult) -> Option<Found> {
     let sentence = wording::finding(shared.engine, result)?;
-    Some(if shared.fresh {
-        Found {
-            shape: Shape::of_word(sentence.word),
-            word: sentence.word.to_owned(),
-            text: sentence.text,
-        }
-    } else {
+    if !shared.fresh {
         // A finding is on the bound, and there is none yet.
-        Found {
+        return Some(Found {
             shape: Shape::NotAssessed,
             word: "being worked out".to_owned(),
             text: format!("nominally {}", sentence.word),
-        }
+            by: None,
+        });
+    }
+    let shape = Shape::of_word(sentence.word);
+    let word = sentence.word.to_owned();
+    // Over has one thing to say, and says it in one line.
+    if shape == Shape::Over
+        && let Some(verdict) = assessment::governing(&result.verdicts)
+        && let Span::Seconds(seconds) = assessment::span(verdict.judgement.allowed)
+    {
+        let planned = verdict.stay.map_or_else(
+            || "no stay is stated".to_owned(),
+            |stay| format!("planned {}", wording::plain_time(stay)),
+        );
+        let reached = if seconds < 10.0 {
+            format!("limit reached after {} s: no planned stay", seconds.floor())
+        } else {
+            format!("limit reached after {}", format::safe_time(seconds))
+        };
+        let by = Library::shipped()
+            .get(&verdict.guidance)
+            .map(|limit| format!("{} · {}", limit.id, limit.title));
+        return Some(Found {
+            shape,
+            word,
+            text: format!("{planned}, {reached}"),
+            by,
+        });
+    }
+    Some(Found {
+        shape,
+        word,
+        text: sentence.text,
+        by: None,
     })
 }
 
@@ -299,6 +331,7 @@ fn unjudged(name: &str) -> Found {
         shape: Shape::NotAssessed,
         word: "not assessed".to_owned(),
         text: format!("{name} could not be worked out"),
+        by: None,
     }
 }
 
