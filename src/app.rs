@@ -4,7 +4,10 @@
 //! and itself. Everything that is drawn comes from one [`shared::Shared`].
 
 mod bar;
+pub mod canvas;
+pub mod cautions;
 mod cells;
+pub mod curve;
 mod dashes;
 mod desk;
 mod files;
@@ -14,29 +17,29 @@ mod listen;
 mod open;
 pub mod preset;
 mod print;
+pub mod rail;
+pub mod readiness;
 pub mod shared;
 mod shortcut;
-mod sign;
-mod style;
+pub mod theme;
 
 use std::path::PathBuf;
 
-use iced::widget::{button, column, container, row, rule, space};
+use iced::widget::{button, column, container, row, rule};
 use iced::{Alignment, Element, Length, Size, Subscription, Theme, window};
 
-use crate::drawing::font;
 use crate::drawing::role::{self, Role};
 use crate::notebook::datum::CellId;
 use crate::notebook::results::Results;
 use crate::store::settings::Settings;
 use desk::Desk;
 use shared::{Look, Measure, Shared};
-use style::{BODY, SMALL};
+use theme::{BODY, SMALL};
 
 pub use cells::TYPING;
 pub use desk::Error;
 pub use files::PATH;
-pub use open::{start, Unopened};
+pub use open::{Unopened, start};
 
 /// How wide the column of cells is.
 const CELLS: f32 = 428.0;
@@ -53,6 +56,10 @@ pub struct Window {
     files: files::Area,
     print: print::Area,
     job: job::Area,
+    curve: curve::Area,
+    rail: rail::Area,
+    cautions: cautions::Area,
+    readiness: readiness::Area,
     /// What the guard asks about.
     pending: Option<files::Wish>,
     /// What was said last: whether it is bad, and the words.
@@ -86,6 +93,14 @@ pub enum Message {
     Print(print::Message),
     /// In the drawer with the job.
     Job(job::Message),
+    /// In the drawing.
+    Curve(curve::Message),
+    /// On the distance rail.
+    Rail(rail::Message),
+    /// In the band of cautions.
+    Cautions(cautions::Message),
+    /// In the list of what is left.
+    Readiness(readiness::Message),
     /// An answer to the guard.
     Guard(files::Answer),
     /// A key was pressed.
@@ -94,8 +109,6 @@ pub enum Message {
     ShutDrawer,
     /// Take away what was said.
     Unsay,
-    /// Show the cell of this name.
-    Show(String),
     /// The bounds of a state of the notebook were drawn.
     BoundsDrawn(u64, Box<Results>),
     /// Some of the work under way is done.
@@ -113,12 +126,20 @@ impl Message {
     pub const fn seen(offset: f32, height: f32) -> Message {
         Message::Cells(cells::Message::Scrolled(offset, height))
     }
+
+    /// Says that the open field now holds this text: what it reports when a
+    /// text is put into it as one piece.
+    #[must_use]
+    pub fn typed(text: &str) -> Message {
+        Message::Cells(cells::Message::Typed(text.to_owned()))
+    }
 }
 
 impl Window {
     fn new(desk: Desk, settings: &Settings, place: Option<PathBuf>) -> Self {
         let theme = match settings.theme.as_str() {
             "dark" => role::Theme::Dark,
+            "contrast" => role::Theme::Contrast,
             _ => role::Theme::Light,
         };
         let measure = match settings.measure.as_str() {
@@ -138,6 +159,10 @@ impl Window {
             files: files::Area::new(desk.file()),
             print: print::Area::new(desk.file()),
             job: job::Area::default(),
+            curve: curve::Area::new(),
+            rail: rail::Area::new(),
+            cautions: cautions::Area::new(),
+            readiness: readiness::Area::new(),
             pending: None,
             said: None,
             settings: place,
@@ -171,25 +196,18 @@ impl Window {
     #[must_use]
     pub fn title(&self) -> String {
         let title = self.notebook().title.as_deref().unwrap_or("Untitled job");
-        let mark = if self.desk.is_dirty() { " · not saved" } else { "" };
+        let mark = if self.desk.is_dirty() {
+            " · not saved"
+        } else {
+            ""
+        };
         format!("{title}{mark} · farglow")
     }
 
     /// Returns the theme of the widgets that have no style of their own.
     #[must_use]
     pub fn theme(&self) -> Theme {
-        let colour = |role| style::colour(role, self.look);
-        Theme::custom(
-            "desk",
-            iced::theme::Palette {
-                background: colour(Role::Ground),
-                text: colour(Role::Ink),
-                primary: colour(Role::Action),
-                success: colour(Role::Within),
-                warning: colour(Role::CautionGround),
-                danger: colour(Role::Over),
-            },
-        )
+        theme::theme(self.look)
     }
 
     /// Returns the window as it is seen.
@@ -202,7 +220,9 @@ impl Window {
             page = page.push(notice(*bad, said, look)).push(line(look));
         }
         if let Some(wish) = &self.pending {
-            page = page.push(files::guard(wish, look).map(Message::Guard)).push(line(look));
+            page = page
+                .push(files::guard(wish, look).map(Message::Guard))
+                .push(line(look));
         }
         if let Some(drawer) = self.drawer(shared) {
             page = page.push(drawer).push(line(look));
@@ -210,8 +230,13 @@ impl Window {
         let cells = container(self.cells.view(shared).map(Message::Cells))
             .width(Length::Fixed(CELLS))
             .height(Length::Fill)
-            .style(style::ground(Role::Ground, look));
-        let right = space().width(Length::Fill).height(Length::Fill);
+            .style(theme::ground(Role::Ground, look));
+        let right = column![
+            self.curve.view(shared).map(Message::Curve),
+            self.rail.view(shared).map(Message::Rail),
+        ]
+        .width(Length::Fill)
+        .height(Length::Fill);
         page = page.push(
             row![
                 cells,
@@ -220,12 +245,13 @@ impl Window {
             ]
             .height(Length::Fill),
         );
+        page = page.push(self.cautions.view(shared).map(Message::Cautions));
         let typing = self.cells.is_typing() || self.drawer != Drawer::Shut;
         listen::listen(
             container(page)
                 .width(Length::Fill)
                 .height(Length::Fill)
-                .style(style::ground(Role::Ground, look)),
+                .style(theme::ground(Role::Ground, look)),
             move |key, modifiers| shortcut::wish(key, modifiers, typing).map(Message::Key),
         )
     }
@@ -237,25 +263,24 @@ impl Window {
             Drawer::Files => self.files.view(shared).map(Message::Files),
             Drawer::Job => job::view(shared).map(Message::Job),
             Drawer::Print => self.print.view(shared).map(Message::Print),
-            Drawer::Left => left(shared),
+            Drawer::Left => self.readiness.view(shared).map(Message::Readiness),
             Drawer::Keys => keys(look),
         };
-        let shut = button(iced::widget::text("close").size(SMALL).font(style::REGULAR))
+        let shut = button(iced::widget::text("close").size(SMALL).font(theme::REGULAR))
             .padding([2, 6])
-            .style(style::plain(look))
+            .style(theme::plain(look))
             .on_press(Message::ShutDrawer);
         Some(
             container(row![content, shut].spacing(16))
                 .padding([12, 20])
                 .width(Length::Fill)
-                .style(style::ground(Role::Panel, look))
+                .style(theme::ground(Role::Panel, look))
                 .into(),
         )
     }
 
     /// Returns what the window listens to. Nothing ticks while nothing is
     /// worked out.
-    #[must_use]
     pub fn subscription(&self) -> Subscription<Message> {
         let mut all = vec![
             window::resize_events().map(|(_, size)| Message::Resized(size)),
@@ -271,7 +296,7 @@ impl Window {
 
 fn rule_style(look: Look) -> rule::Style {
     rule::Style {
-        color: style::colour(Role::Line, look),
+        color: theme::colour(Role::Line, look),
         radius: 0.0.into(),
         fill_mode: rule::FillMode::Full,
         snap: true,
@@ -287,40 +312,23 @@ fn notice<'a>(bad: bool, said: &'a str, look: Look) -> Element<'a, Message> {
     let role = if bad { Role::Over } else { Role::Ink };
     container(
         row![
-            style::words(said, BODY, role, look).width(Length::Fill),
-            button(iced::widget::text("all right").size(SMALL).font(style::REGULAR))
-                .padding([2, 6])
-                .style(style::plain(look))
-                .on_press(Message::Unsay),
+            theme::words(said, BODY, role, look).width(Length::Fill),
+            button(
+                iced::widget::text("all right")
+                    .size(SMALL)
+                    .font(theme::REGULAR)
+            )
+            .padding([2, 6])
+            .style(theme::plain(look))
+            .on_press(Message::Unsay),
         ]
         .spacing(10)
         .align_y(Alignment::Center),
     )
     .padding([8, 20])
     .width(Length::Fill)
-    .style(style::ground(Role::Panel, look))
+    .style(theme::ground(Role::Panel, look))
     .into()
-}
-
-/// What is left before issue.
-fn left(shared: Shared<'_>) -> Element<'_, Message> {
-    let look = shared.look;
-    let items = shared.results.readiness.iter().map(|item| {
-        let words = style::words(item.text.as_str(), SMALL, Role::Ink, look);
-        match &item.cell {
-            Some(cell) => row![
-                words,
-                button(iced::widget::text("show").size(SMALL).font(style::REGULAR))
-                    .padding([0, 6])
-                    .style(style::plain(look))
-                    .on_press(Message::Show(cell.clone())),
-            ]
-            .spacing(8)
-            .into(),
-            None => words.into(),
-        }
-    });
-    column(items).spacing(3).width(Length::Fill).into()
 }
 
 /// The list of keys.
@@ -329,9 +337,9 @@ fn keys<'a>(look: Look) -> Element<'a, Message> {
     let columns = shortcut::ALL.chunks(third).map(|some| {
         let lines = some.iter().map(|shortcut| {
             row![
-                container(style::bold(shortcut.keys, SMALL, Role::Ink, look))
+                container(theme::bold(shortcut.keys, SMALL, Role::Ink, look))
                     .width(Length::Fixed(110.0)),
-                style::words(shortcut.about, SMALL, Role::Muted, look),
+                theme::words(shortcut.about, SMALL, Role::Muted, look),
             ]
             .into()
         });
@@ -350,11 +358,8 @@ fn keys<'a>(look: Look) -> Element<'a, Message> {
 #[must_use]
 pub fn settings() -> iced::Settings {
     iced::Settings {
-        fonts: font::Weight::ALL
-            .iter()
-            .map(|weight| std::borrow::Cow::Borrowed(weight.bytes()))
-            .collect(),
-        default_font: style::REGULAR,
+        fonts: theme::fonts(),
+        default_font: theme::REGULAR,
         default_text_size: BODY.into(),
         antialiasing: true,
         ..iced::Settings::default()

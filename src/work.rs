@@ -80,12 +80,7 @@ fn take<T>(place: &std::sync::Mutex<Option<T>>) -> Option<T> {
     place.lock().ok().and_then(|mut task| task.take())
 }
 
-fn run(
-    snapshot: &Snapshot,
-    settings: Settings,
-    flags: &Flags,
-    finished: impl FnOnce(Results),
-) {
+fn run(snapshot: &Snapshot, settings: Settings, flags: &Flags, finished: impl FnOnce(Results)) {
     let results = snapshot.results(settings, &mut |share| {
         #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss)]
         let thousandths = (share.clamp(0.0, 1.0) * 1000.0) as u32;

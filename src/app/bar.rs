@@ -6,7 +6,7 @@ use iced::{Alignment, Element, Length};
 
 use super::desk::Desk;
 use super::shared::{Look, Shared};
-use super::style::{self, BODY, SMALL};
+use super::theme::{self, BODY, SMALL};
 use crate::drawing::role::Role;
 
 /// What is wished for.
@@ -41,7 +41,11 @@ pub fn view<'a>(desk: &'a Desk, shared: Shared<'a>) -> Element<'a, Message> {
         1 => "1 left before issue".to_owned(),
         _ => format!("{left} left before issue"),
     };
-    let print = if left == 0 { "Print worksheet" } else { "Print draft" };
+    let print = if left == 0 {
+        "Print worksheet"
+    } else {
+        "Print draft"
+    };
     container(
         row![
             about(desk, shared),
@@ -51,7 +55,7 @@ pub fn view<'a>(desk: &'a Desk, shared: Shared<'a>) -> Element<'a, Message> {
             framed(left_words, Some(Message::Left), look),
             button(style_text(print))
                 .padding([7, 14])
-                .style(style::chief(look))
+                .style(theme::chief(look))
                 .on_press(Message::Print),
         ]
         .spacing(10)
@@ -59,7 +63,7 @@ pub fn view<'a>(desk: &'a Desk, shared: Shared<'a>) -> Element<'a, Message> {
     )
     .padding([8, 20])
     .width(Length::Fill)
-    .style(style::ground(Role::Panel, look))
+    .style(theme::ground(Role::Panel, look))
     .into()
 }
 
@@ -74,11 +78,15 @@ fn about<'a>(desk: &'a Desk, shared: Shared<'a>) -> Element<'a, Message> {
         .unwrap_or("Untitled job");
     let job = &notebook.job;
     let revision = job.revision.as_ref().map(|text| format!("revision {text}"));
-    let parts: Vec<&str> = [job.site.as_deref(), job.area.as_deref(), revision.as_deref()]
-        .into_iter()
-        .flatten()
-        .filter(|part| !part.trim().is_empty())
-        .collect();
+    let parts: Vec<&str> = [
+        job.site.as_deref(),
+        job.area.as_deref(),
+        revision.as_deref(),
+    ]
+    .into_iter()
+    .flatten()
+    .filter(|part| !part.trim().is_empty())
+    .collect();
     let line = if parts.is_empty() {
         "say which job this is".to_owned()
     } else {
@@ -86,24 +94,24 @@ fn about<'a>(desk: &'a Desk, shared: Shared<'a>) -> Element<'a, Message> {
     };
     let opened = button(
         row![
-            style::bold(title, 16.0, Role::Ink, look).wrapping(iced::widget::text::Wrapping::None),
-            style::words(line, BODY, Role::Muted, look)
+            theme::bold(title, 16.0, Role::Ink, look).wrapping(iced::widget::text::Wrapping::None),
+            theme::words(line, BODY, Role::Muted, look)
                 .wrapping(iced::widget::text::Wrapping::None),
         ]
         .spacing(16)
         .align_y(Alignment::Center),
     )
     .padding([4, 0])
-    .style(style::plain(look))
+    .style(theme::plain(look))
     .on_press(Message::Job);
     let mut words = row![
         container(opened).clip(true),
-        style::words(stored(desk), BODY, Role::Muted, look),
+        theme::words(stored(desk), BODY, Role::Muted, look),
     ]
     .spacing(16)
     .align_y(Alignment::Center);
     if let Some(progress) = desk.progress() {
-        words = words.push(style::words(
+        words = words.push(theme::words(
             format!("bounds {:.0} %", f64::from(progress) * 100.0),
             SMALL,
             Role::Muted,
@@ -126,14 +134,14 @@ pub fn stored(desk: &Desk) -> &'static str {
 fn style_text<'a>(text: impl iced::widget::text::IntoFragment<'a>) -> iced::widget::Text<'a> {
     iced::widget::text(text)
         .size(BODY)
-        .font(style::REGULAR)
+        .font(theme::REGULAR)
         .wrapping(iced::widget::text::Wrapping::None)
 }
 
 fn framed<'a>(text: String, message: Option<Message>, look: Look) -> Element<'a, Message> {
     button(style_text(text))
         .padding([7, 12])
-        .style(style::framed(look))
+        .style(theme::framed(look))
         .on_press_maybe(message)
         .into()
 }
@@ -156,9 +164,9 @@ fn step<'a>(
     };
     tooltip(
         framed(label, Some(message), look),
-        container(style::words(title.to_owned(), SMALL, Role::Ink, look))
+        container(theme::words(title.to_owned(), SMALL, Role::Ink, look))
             .padding([4, 8])
-            .style(style::card(style::Stand::Apart, look)),
+            .style(theme::card(theme::Stand::Apart, look)),
         tooltip::Position::Bottom,
     )
     .into()
@@ -168,8 +176,16 @@ fn step<'a>(
 pub fn manners<'a>(look: Look) -> Element<'a, Message> {
     column![
         row![
-            framed("light, dark, high contrast".to_owned(), Some(Message::Theme), look),
-            framed("metric or US units".to_owned(), Some(Message::Measure), look),
+            framed(
+                "light, dark, high contrast".to_owned(),
+                Some(Message::Theme),
+                look
+            ),
+            framed(
+                "metric or US units".to_owned(),
+                Some(Message::Measure),
+                look
+            ),
             space().width(Length::Fill),
         ]
         .spacing(10)

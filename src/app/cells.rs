@@ -12,7 +12,7 @@ use iced::widget::{button, column, container, keyed_column, row, scrollable, spa
 use iced::{Element, Length};
 
 use super::shared::Shared;
-use super::style::{self, SMALL, Stand};
+use super::theme::{self, SMALL, Stand};
 use crate::drawing::role::Role;
 use crate::notebook::cell::{Basis, Cell, Content, Field, Form, Kind};
 use crate::notebook::datum::CellId;
@@ -206,7 +206,12 @@ impl Area {
     }
 
     /// Follows a message.
-    pub fn update(&mut self, message: Message, engine: &Engine, selected: Option<CellId>) -> Action {
+    pub fn update(
+        &mut self,
+        message: Message,
+        engine: &Engine,
+        selected: Option<CellId>,
+    ) -> Action {
         match message {
             Message::Select(id) => {
                 if self.open.is_some_and(|open| open.cell != id) {
@@ -244,7 +249,9 @@ impl Area {
                 if self.open.is_some_and(|open| open.cell == id) {
                     let _ = self.close();
                 }
-                with_name(engine, id, |name| change(format!("remove {name}"), Edit::Remove { name }))
+                with_name(engine, id, |name| {
+                    change(format!("remove {name}"), Edit::Remove { name })
+                })
             }
             Message::Raise(id) => shift(engine, id, false),
             Message::Lower(id) => shift(engine, id, true),
@@ -413,7 +420,9 @@ impl Area {
         // Only what is seen, and a little around it, is built.
         let (from, to) = (self.offset - 400.0, self.offset + self.seen + 400.0);
         let (mut above, mut below, mut y) = (0.0, 0.0, 0.0);
-        let mut cards = keyed_column::<CellId, Message, _, _>([]).spacing(GAP).width(Length::Fill);
+        let mut cards = keyed_column::<CellId, Message, _, _>([])
+            .spacing(GAP)
+            .width(Length::Fill);
         for result in cells {
             let high = height::estimate(shared.engine, result, stand(result.id) == Stand::Selected);
             if y + high < from {
@@ -444,7 +453,7 @@ impl Area {
         })
         .height(Length::Fill)
         .width(Length::Fill)
-        .style(move |theme, status| style::scroll(look, theme, status))
+        .style(move |theme, status| theme::scroll(look, theme, status))
         .into()
     }
 
@@ -452,9 +461,9 @@ impl Area {
     fn bottom<'a>(&'a self, shared: Shared<'a>) -> Element<'a, Message> {
         let look = shared.look;
         let plain = |text: String, message: Message| {
-            button(iced::widget::text(text).size(SMALL).font(style::REGULAR))
+            button(iced::widget::text(text).size(SMALL).font(theme::REGULAR))
                 .padding([4, 10])
-                .style(style::framed(look))
+                .style(theme::framed(look))
                 .on_press(message)
         };
         let empty = shared.engine.notebook().cells.is_empty();
@@ -468,15 +477,16 @@ impl Area {
         };
         let kinds = Kind::ALL.into_iter().map(|kind| {
             row![
-                container(plain(kind.name().to_owned(), Message::Add(kind))).width(Length::Fixed(116.0)),
-                style::words(new::about(kind), SMALL, Role::Muted, look),
+                container(plain(kind.name().to_owned(), Message::Add(kind)))
+                    .width(Length::Fixed(116.0)),
+                theme::words(new::about(kind), SMALL, Role::Muted, look),
             ]
             .spacing(8)
             .align_y(iced::Alignment::Center)
             .into()
         });
         column![
-            style::words(said, SMALL, Role::Ink, look),
+            theme::words(said, SMALL, Role::Ink, look),
             column(kinds).spacing(4)
         ]
         .spacing(6)
@@ -558,7 +568,10 @@ fn describe_value(cell: &Cell, describe: impl FnOnce(&mut Field)) -> Action {
     change(
         format!("say where {} came from", cell.name),
         Edit::Several(vec![
-            content("basis", described.basis.map(|basis| basis.words().to_owned())),
+            content(
+                "basis",
+                described.basis.map(|basis| basis.words().to_owned()),
+            ),
             content("note", described.note),
         ]),
     )

@@ -58,9 +58,12 @@ impl<Message> Widget<Message, Theme, Renderer> for Dashes<'_, Message> {
         operation: &mut dyn Operation,
     ) {
         for layout in layout.children() {
-            self.content
-                .as_widget_mut()
-                .operate(&mut tree.children[0], layout, renderer, operation);
+            self.content.as_widget_mut().operate(
+                &mut tree.children[0],
+                layout,
+                renderer,
+                operation,
+            );
         }
     }
 

@@ -7,7 +7,7 @@ use iced::widget::{button, column, container, row, text_input};
 use iced::{Alignment, Element, Length};
 
 use super::shared::{Look, Shared};
-use super::style::{self, BODY, SMALL};
+use super::theme::{self, BODY, SMALL};
 use crate::drawing::role::Role;
 use crate::store::template::{self, Template};
 
@@ -57,7 +57,9 @@ impl Area {
     #[must_use]
     pub fn new(path: Option<&Path>) -> Self {
         Area {
-            path: path.map(|path| path.display().to_string()).unwrap_or_default(),
+            path: path
+                .map(|path| path.display().to_string())
+                .unwrap_or_default(),
         }
     }
 
@@ -99,15 +101,15 @@ impl Area {
     pub fn view<'a>(&'a self, shared: Shared<'a>) -> Element<'a, Message> {
         let look = shared.look;
         let act = |text: &'static str, message: Message| {
-            button(iced::widget::text(text).size(BODY).font(style::REGULAR))
+            button(iced::widget::text(text).size(BODY).font(theme::REGULAR))
                 .padding([5, 12])
-                .style(style::framed(look))
+                .style(theme::framed(look))
                 .on_press(message)
         };
         let templates = template::ALL.iter().map(|template| {
             row![
                 act(template.name, Message::Begin(template)),
-                style::words(template.about, SMALL, Role::Muted, look),
+                theme::words(template.about, SMALL, Role::Muted, look),
             ]
             .spacing(10)
             .align_y(Alignment::Center)
@@ -115,26 +117,29 @@ impl Area {
         });
         column![
             row![
-                style::words("File", BODY, Role::Ink, look),
-                text_input("path of a notebook, such as /home/you/door.farglow", &self.path)
-                    .id(PATH)
-                    .on_input(Message::PathTyped)
-                    .on_submit(Message::Open)
-                    .size(BODY)
-                    .font(style::REGULAR)
-                    .padding([5, 8])
-                    .width(Length::Fill)
-                    .style(style::typing(look)),
+                theme::words("File", BODY, Role::Ink, look),
+                text_input(
+                    "path of a notebook, such as /home/you/door.farglow",
+                    &self.path
+                )
+                .id(PATH)
+                .on_input(Message::PathTyped)
+                .on_submit(Message::Open)
+                .size(BODY)
+                .font(theme::REGULAR)
+                .padding([5, 8])
+                .width(Length::Fill)
+                .style(theme::typing(look)),
                 act("open it", Message::Open),
                 act("save here", Message::Save),
             ]
             .spacing(10)
             .align_y(Alignment::Center),
-            style::words("Or begin with a template:", SMALL, Role::Muted, look),
+            theme::words("Or begin with a template:", SMALL, Role::Muted, look),
             column(templates).spacing(4),
             row![
                 act("empty", Message::BeginEmpty),
-                style::words("a notebook with nothing in it", SMALL, Role::Muted, look),
+                theme::words("a notebook with nothing in it", SMALL, Role::Muted, look),
             ]
             .spacing(10)
             .align_y(Alignment::Center),
@@ -174,7 +179,10 @@ pub enum Answer {
 pub fn guard<'a>(wish: &Wish, look: Look) -> Element<'a, Answer> {
     let (question, go_on, save) = match wish {
         Wish::Replace(path, why) => (
-            format!("{} {why}. Saving replaces what is in it now.", path.display()),
+            format!(
+                "{} {why}. Saving replaces what is in it now.",
+                path.display()
+            ),
             "replace it",
             false,
         ),
@@ -190,22 +198,25 @@ pub fn guard<'a>(wish: &Wish, look: Look) -> Element<'a, Answer> {
         ),
     };
     let act = |text: &'static str, answer: Answer| {
-        button(iced::widget::text(text).size(BODY).font(style::REGULAR))
+        button(iced::widget::text(text).size(BODY).font(theme::REGULAR))
             .padding([4, 12])
-            .style(style::framed(look))
+            .style(theme::framed(look))
             .on_press(answer)
     };
-    let mut answers = row![
-        style::words(question, BODY, Role::CautionInk, look).width(Length::Fill)
-    ]
-    .spacing(10)
-    .align_y(Alignment::Center);
+    let mut answers =
+        row![theme::words(question, BODY, Role::CautionInk, look).width(Length::Fill)]
+            .spacing(10)
+            .align_y(Alignment::Center);
     if save {
         answers = answers.push(act("save first", Answer::SaveFirst));
     }
-    container(answers.push(act(go_on, Answer::GoOn)).push(act("stay", Answer::Stay)))
-        .padding([8, 20])
-        .width(Length::Fill)
-        .style(style::ground(Role::CautionGround, look))
-        .into()
+    container(
+        answers
+            .push(act(go_on, Answer::GoOn))
+            .push(act("stay", Answer::Stay)),
+    )
+    .padding([8, 20])
+    .width(Length::Fill)
+    .style(theme::ground(Role::CautionGround, look))
+    .into()
 }

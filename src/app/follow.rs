@@ -10,7 +10,9 @@ use iced::{Task, exit};
 use super::desk::{Desk, Standing};
 use super::files::{self, Answer, Wish};
 use super::shared::Measure;
-use super::{Drawer, Message, Window, bar, cells, job, print, shortcut};
+use super::{
+    Drawer, Message, Window, bar, cautions, cells, curve, job, print, rail, readiness, shortcut,
+};
 use crate::drawing::role::Theme;
 use crate::notebook::Notebook;
 use crate::notebook::edit::Edit;
@@ -43,7 +45,9 @@ impl Window {
         match message {
             Message::Bar(wish) => return self.follow_bar(wish),
             Message::Cells(message) => {
-                let action = self.cells.update(message, self.desk.engine(), self.selected);
+                let action = self
+                    .cells
+                    .update(message, self.desk.engine(), self.selected);
                 return self.follow_cells(action);
             }
             Message::Files(message) => return self.follow_files(message),
@@ -63,9 +67,25 @@ impl Window {
             Message::Key(wish) => return self.follow_key(wish),
             Message::ShutDrawer => self.shut(),
             Message::Unsay => self.said = None,
-            Message::Show(name) => {
-                self.selected = self.desk.engine().find(&name);
-                return self.reveal();
+            Message::Curve(message) => {
+                if let curve::Action::SelectCell(id) = self.curve.update(message) {
+                    return self.select(id);
+                }
+            }
+            Message::Rail(message) => {
+                if let rail::Action::SelectCell(id) = self.rail.update(message) {
+                    return self.select(id);
+                }
+            }
+            Message::Cautions(message) => {
+                if let cautions::Action::SelectCell(id) = self.cautions.update(message) {
+                    return self.select(id);
+                }
+            }
+            Message::Readiness(message) => {
+                if let readiness::Action::SelectCell(id) = self.readiness.update(message) {
+                    return self.select(id);
+                }
             }
             Message::BoundsDrawn(round, results) => self.desk.take_bounds(round, *results),
             Message::Advanced => {}
@@ -124,6 +144,15 @@ impl Window {
         }
     }
 
+    /// Selects a cell that another area speaks of, and brings it into view.
+    fn select(&mut self, id: crate::notebook::datum::CellId) -> Task<Message> {
+        if self.cells.open_place().is_some_and(|open| open.cell != id) {
+            let _ = self.cells.close();
+        }
+        self.selected = Some(id);
+        self.reveal()
+    }
+
     /// Makes a change, or says why it cannot be made.
     fn change(&mut self, title: String, edit: Edit, joins: bool) -> bool {
         match self.desk.change(title, edit, joins) {
@@ -175,18 +204,18 @@ impl Window {
             self.pending = Some(wish);
             return Task::none();
         }
-        self.grant(wish)
+        self.grant(&wish)
     }
 
-    fn grant(&mut self, wish: Wish) -> Task<Message> {
+    fn grant(&mut self, wish: &Wish) -> Task<Message> {
         self.pending = None;
-        let desk = match &wish {
+        let desk = match wish {
             Wish::Close => {
                 self.remember();
                 return exit();
             }
             Wish::Replace(path, _) => {
-                self.save(&path.clone());
+                self.save(path);
                 return Task::none();
             }
             Wish::Open(path) => Desk::open(path),
@@ -221,7 +250,7 @@ impl Window {
                 self.pending = None;
                 Task::none()
             }
-            Answer::GoOn => self.grant(wish),
+            Answer::GoOn => self.grant(&wish),
             Answer::SaveFirst => match self.desk.file().map(Path::to_owned) {
                 None => {
                     self.pending = None;
@@ -238,7 +267,7 @@ impl Window {
                         self.pending = None;
                         return Task::none();
                     }
-                    self.grant(wish)
+                    self.grant(&wish)
                 }
             },
         }
@@ -329,7 +358,8 @@ impl Window {
             Key::Theme => {
                 self.look.theme = match self.look.theme {
                     Theme::Light => Theme::Dark,
-                    _ => Theme::Light,
+                    Theme::Dark => Theme::Contrast,
+                    Theme::Contrast => Theme::Light,
                 };
                 self.remember();
             }
@@ -375,7 +405,11 @@ impl Window {
                 let task = self.follow(Message::Cells(cells::Message::ToggleAdding));
                 // The kinds stand under the last card.
                 let end = operation::snap_to_end(cells::COLUMN);
-                return if last > 0 { Task::batch([task, end]) } else { task };
+                return if last > 0 {
+                    Task::batch([task, end])
+                } else {
+                    task
+                };
             }
             (Key::Above | Key::Below, _) => return self.step(wish == Key::Below),
             (Key::Next | Key::Previous, _) if self.drawer != Drawer::Shut => {
@@ -435,9 +469,7 @@ impl Window {
             return Task::none();
         };
         match self.cells.reveal(self.shared(), id) {
-            Some(y) => {
-                operation::scroll_to(cells::COLUMN, operation::AbsoluteOffset { x: 0.0, y })
-            }
+            Some(y) => operation::scroll_to(cells::COLUMN, operation::AbsoluteOffset { x: 0.0, y }),
             None => Task::none(),
         }
     }
@@ -453,10 +485,14 @@ impl Window {
             return;
         };
         let settings = Settings {
-            size: (self.size.width * self.look.zoom, self.size.height * self.look.zoom),
+            size: (
+                self.size.width * self.look.zoom,
+                self.size.height * self.look.zoom,
+            ),
             theme: match self.look.theme {
+                Theme::Light => "light",
                 Theme::Dark => "dark",
-                _ => "light",
+                Theme::Contrast => "contrast",
             }
             .to_owned(),
             zoom: self.look.zoom,
@@ -465,10 +501,7 @@ impl Window {
                 Measure::Us => "us",
             }
             .to_owned(),
-            last: self
-                .desk
-                .file()
-                .and_then(|path| path.canonicalize().ok()),
+            last: self.desk.file().and_then(|path| path.canonicalize().ok()),
         };
         if let Err(error) = settings::save(place, &settings) {
             self.said = Some((true, format!("the window's settings are not kept: {error}")));

@@ -4,7 +4,7 @@ use iced::widget::{column, container, row, text_input};
 use iced::{Alignment, Element, Length};
 
 use super::shared::Shared;
-use super::style::{self, BODY, SMALL};
+use super::theme::{self, BODY, SMALL};
 use crate::drawing::role::Role;
 use crate::notebook::edit::Edit;
 
@@ -76,14 +76,14 @@ pub fn view(shared: Shared<'_>) -> Element<'_, Message> {
     let notebook = shared.engine.notebook();
     let line = |label: String, about: &'static str, text: &str, line: Line, id: &'static str| {
         row![
-            container(style::words(label, SMALL, Role::Muted, look)).width(Length::Fixed(110.0)),
+            container(theme::words(label, SMALL, Role::Muted, look)).width(Length::Fixed(110.0)),
             text_input(about, text)
                 .id(id)
                 .on_input(move |text| Message::Typed(line, text))
                 .size(BODY)
-                .font(style::REGULAR)
+                .font(theme::REGULAR)
                 .padding([4, 8])
-                .style(style::typing(look)),
+                .style(theme::typing(look)),
         ]
         .spacing(8)
         .align_y(Alignment::Center)

@@ -80,10 +80,7 @@ fn run(window: Window, settings: &Settings) -> Result<(), Unopened> {
     // The window is made once; a program that boots twice would find it gone.
     let window = std::cell::RefCell::new(Some(window));
     let boot = move || {
-        let mut window = window
-            .borrow_mut()
-            .take()
-            .expect("the program boots once");
+        let mut window = window.borrow_mut().take().expect("the program boots once");
         let task = window.draw_bounds();
         (window, task)
     };
@@ -119,7 +116,13 @@ fn can_open(
     if !set("DISPLAY") {
         return Err(Unopened::NoDisplay);
     }
-    for name in ["libX11.so.6", "libX11-xcb.so.1", "libXcursor.so.1", "libXi.so.6", "libxkbcommon-x11.so.0"] {
+    for name in [
+        "libX11.so.6",
+        "libX11-xcb.so.1",
+        "libXcursor.so.1",
+        "libXi.so.6",
+        "libxkbcommon-x11.so.0",
+    ] {
         if !library(name) {
             return Err(Unopened::NoLibrary(name));
         }
@@ -139,8 +142,11 @@ fn library(name: &str) -> bool {
             [inner, folder]
         });
     let listed = || {
-        std::fs::read("/etc/ld.so.cache")
-            .is_ok_and(|cache| cache.windows(name.len()).any(|part| part == name.as_bytes()))
+        std::fs::read("/etc/ld.so.cache").is_ok_and(|cache| {
+            cache
+                .windows(name.len())
+                .any(|part| part == name.as_bytes())
+        })
     };
     folders.into_iter().any(|folder| folder.join(name).exists()) || listed()
 }
@@ -164,7 +170,10 @@ mod tests {
         let missing = can_open(&display, &|name| name != "libxkbcommon-x11.so.0")
             .expect_err("the library is missing");
         let text = missing.to_string();
-        assert!(text.contains("libxkbcommon-x11-0") && !text.contains('\n'), "{text}");
+        assert!(
+            text.contains("libxkbcommon-x11-0") && !text.contains('\n'),
+            "{text}"
+        );
         assert!(can_open(&display, &|_| true).is_ok());
         let wayland = |name: &str| (name == "WAYLAND_DISPLAY").then(|| "wayland-0".into());
         assert!(can_open(&wayland, &|_| false).is_ok());

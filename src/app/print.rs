@@ -8,7 +8,7 @@ use iced::{Alignment, Element, Length};
 
 use super::desk::Desk;
 use super::shared::Shared;
-use super::style::{self, BODY, SMALL};
+use super::theme::{self, BODY, SMALL};
 use crate::drawing::role::Role;
 use crate::store::{file, schema};
 use crate::worksheet::layout::Paper;
@@ -78,13 +78,16 @@ impl Area {
         let look = shared.look;
         let left = &shared.results.readiness;
         let paper = |text: &'static str, paper: Paper| {
-            button(iced::widget::text(text).size(SMALL).font(style::REGULAR))
+            button(iced::widget::text(text).size(SMALL).font(theme::REGULAR))
                 .padding([2, 10])
-                .style(style::choice(self.paper == paper, look))
+                .style(theme::choice(self.paper == paper, look))
                 .on_press(Message::Chosen(paper))
         };
         let (words, said) = if left.is_empty() {
-            ("write the worksheet", "Nothing is left: it is issued as final.".to_owned())
+            (
+                "write the worksheet",
+                "Nothing is left: it is issued as final.".to_owned(),
+            )
         } else {
             (
                 "write the draft",
@@ -101,26 +104,26 @@ impl Area {
         let ready = shared.fresh.then_some(Message::Write);
         column![
             row![
-                style::words("Worksheet", BODY, Role::Ink, look),
+                theme::words("Worksheet", BODY, Role::Ink, look),
                 text_input("path of the PDF", &self.path)
                     .id(PATH)
                     .on_input(Message::PathTyped)
                     .on_submit_maybe(ready.clone())
                     .size(BODY)
-                    .font(style::REGULAR)
+                    .font(theme::REGULAR)
                     .padding([5, 8])
                     .width(Length::Fill)
-                    .style(style::typing(look)),
+                    .style(theme::typing(look)),
                 paper("A4", Paper::A4),
                 paper("letter", Paper::Letter),
-                button(iced::widget::text(words).size(BODY).font(style::REGULAR))
+                button(iced::widget::text(words).size(BODY).font(theme::REGULAR))
                     .padding([5, 12])
-                    .style(style::chief(look))
+                    .style(theme::chief(look))
                     .on_press_maybe(ready),
             ]
             .spacing(10)
             .align_y(Alignment::Center),
-            style::words(said, SMALL, Role::Muted, look),
+            theme::words(said, SMALL, Role::Muted, look),
         ]
         .spacing(6)
         .into()

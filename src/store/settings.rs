@@ -113,7 +113,9 @@ fn read(bytes: &[u8]) -> Result<Settings, String> {
             if (least..=most).contains(&number) {
                 Ok(number)
             } else {
-                Err(format!("expected {key} from {least} to {most}, found {number}"))
+                Err(format!(
+                    "expected {key} from {least} to {most}, found {number}"
+                ))
             }
         }
         Some(_) => Err(format!("expected a number for {key}")),

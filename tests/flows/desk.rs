@@ -54,7 +54,10 @@ impl Desk {
     pub fn click(&mut self, text: &str) {
         let mut ui = self.ui();
         if let Err(error) = ui.click(text) {
-            panic!("`{text}` cannot be clicked: {error}; shown: {:#?}", self.shown());
+            panic!(
+                "`{text}` cannot be clicked: {error}; shown: {:#?}",
+                self.shown()
+            );
         }
         let messages: Vec<Message> = ui.into_messages().collect();
         self.take(messages);
@@ -76,12 +79,20 @@ impl Desk {
     pub fn keys_into(&mut self, id: &'static str, events: &[Event]) {
         let mut ui = self.ui();
         if let Err(error) = ui.click(selector::id(id)) {
-            panic!("the field {id} is not open: {error}; shown: {:#?}", self.shown());
+            panic!(
+                "the field {id} is not open: {error}; shown: {:#?}",
+                self.shown()
+            );
         }
         let end = named(Named::End);
         let _ = ui.simulate(std::iter::once(end).chain(events.iter().cloned()));
         let messages: Vec<Message> = ui.into_messages().collect();
         self.take(messages);
+    }
+
+    /// Puts a text into the open field as one piece, in place of what is there.
+    pub fn paste(&mut self, text: &str) {
+        let _ = self.window.update(Message::typed(text));
     }
 
     /// Presses a key that no field waits for.
@@ -93,7 +104,10 @@ impl Desk {
     }
 
     pub fn command(&mut self, letter: char) {
-        self.press(Key::Character(letter.to_string().into()), Modifiers::COMMAND);
+        self.press(
+            Key::Character(letter.to_string().into()),
+            Modifiers::COMMAND,
+        );
     }
 
     /// Opens the field that reads so, and types another text into it.
@@ -115,11 +129,19 @@ impl Desk {
     }
 
     pub fn expect(&self, words: &str) {
-        assert!(self.shows(words), "`{words}` is not shown: {:#?}", self.shown());
+        assert!(
+            self.shows(words),
+            "`{words}` is not shown: {:#?}",
+            self.shown()
+        );
     }
 
     pub fn expect_not(&self, words: &str) {
-        assert!(!self.shows(words), "`{words}` is shown: {:#?}", self.shown());
+        assert!(
+            !self.shows(words),
+            "`{words}` is shown: {:#?}",
+            self.shown()
+        );
     }
 
     pub fn notebook(&self) -> &Notebook {

@@ -71,7 +71,10 @@ fn nothing_is_lost_without_a_question() {
     assert_eq!(desk.text("charger", "distance"), Some("3 m"));
     desk.click("ladle");
     desk.click("save first");
-    assert!(desk.notebook().find("charger").is_none(), "the template is open");
+    assert!(
+        desk.notebook().find("charger").is_none(),
+        "the template is open"
+    );
     let text = fs::read_to_string(&file).expect("it is there");
     assert!(text.contains("\"entry\": \"3 m\""), "{text}");
 }
@@ -135,7 +138,11 @@ fn a_protected_file_is_said_with_the_remedy() {
 fn files_that_are_no_notebooks_are_said_and_the_desk_stays() {
     let folder = folder();
     for (name, text, said) in [
-        ("newer.farglow", "{\"farglow\": 2, \"cells\": []}", "newer program"),
+        (
+            "newer.farglow",
+            "{\"farglow\": 2, \"cells\": []}",
+            "newer program",
+        ),
         ("damaged.farglow", "{\"farglow\": 1, \"cells\": [", "line 1"),
         ("empty.farglow", "", "empty"),
         ("unknown.farglow", "{\"farglow\": 1, \"cels\": []}", "cels"),
@@ -148,7 +155,11 @@ fn files_that_are_no_notebooks_are_said_and_the_desk_stays() {
         desk.click("open it");
         desk.expect(said);
         assert_eq!(desk.notebook().cells.len(), 12, "{name}");
-        assert_eq!(fs::read_to_string(&file).ok().as_deref(), Some(text), "{name}");
+        assert_eq!(
+            fs::read_to_string(&file).ok().as_deref(),
+            Some(text),
+            "{name}"
+        );
     }
     let mut desk = Desk::tall(preset::demo());
     desk.command('o');

@@ -19,7 +19,12 @@ fn the_demo_reads_as_sentences_with_the_bound_before_the_nominal() {
     let sentence = ["charger", "stands", "2.5 m", "from", "door"];
     let first = at("charger");
     for (place, word) in sentence.iter().enumerate() {
-        assert_eq!(&shown[first + place], word, "{:?}", &shown[first..first + 9]);
+        assert_eq!(
+            &shown[first + place],
+            word,
+            "{:?}",
+            &shown[first..first + 9]
+        );
     }
     // 290 kW/m² nominal and 312 kW/m² on the bound are those of `calc`.
     assert!(at("312 kW/m²") < at("nominal 290 kW/m²"));
@@ -32,7 +37,12 @@ fn every_template_shows_every_cell_and_a_finding_for_every_position() {
         let shown = desk.shown();
         for cell in &desk.notebook().cells {
             if cell.kind != farglow::notebook::Kind::Note {
-                assert!(shown.contains(&cell.name), "{}: {}", template.name, cell.name);
+                assert!(
+                    shown.contains(&cell.name),
+                    "{}: {}",
+                    template.name,
+                    cell.name
+                );
             }
         }
         let words = ["over", "within", "not assessed"];
@@ -46,7 +56,11 @@ fn every_template_shows_every_cell_and_a_finding_for_every_position() {
             .iter()
             .filter(|text| words.iter().any(|word| text.starts_with(word)))
             .count();
-        assert!(found >= positions, "{}: {found} of {positions}: {shown:#?}", template.name);
+        assert!(
+            found >= positions,
+            "{}: {found} of {positions}: {shown:#?}",
+            template.name
+        );
     }
 }
 
@@ -68,9 +82,14 @@ fn of_two_thousand_cells_only_those_that_are_seen_are_built() {
     assert!(shown.iter().any(|text| text == "link_0"), "{shown:#?}");
     assert!(shown.len() < 400, "{} texts are built", shown.len());
     // Scrolled far down, other cards are there and the first are not.
-    let _ = desk.window.update(farglow::app::Message::seen(60_000.0, 800.0));
+    let _ = desk
+        .window
+        .update(farglow::app::Message::seen(60_000.0, 800.0));
     let shown = desk.shown();
     assert!(!shown.iter().any(|text| text == "link_0"), "{shown:#?}");
-    assert!(shown.iter().any(|text| text.starts_with("link_")), "{shown:#?}");
+    assert!(
+        shown.iter().any(|text| text.starts_with("link_")),
+        "{shown:#?}"
+    );
     assert!(shown.len() < 400, "{} texts are built", shown.len());
 }

@@ -1,14 +1,14 @@
 //! One cell as a card that reads as a sentence.
 
-use iced::widget::{button, column, container, mouse_area, rich_text, row, space, span};
+use iced::widget::{button, column, container, mouse_area, row, space};
 use iced::{Alignment, Element, Length};
 
 use super::figure::{self, Found};
 use super::sentence::{self, Piece};
 use super::{Area, Message, Part, Place, field};
+use crate::app::canvas;
 use crate::app::shared::{Look, Shared};
-use crate::app::sign::sign;
-use crate::app::style::{self, BODY, RESULT, SMALL, Stand};
+use crate::app::theme::{self, BODY, RESULT, SMALL, Stand};
 use crate::drawing::mark::Shape;
 use crate::drawing::role::Role;
 use crate::notebook::cell::{Cell, Kind};
@@ -39,18 +39,18 @@ pub fn view<'a>(
         .spacing(12)
         .align_y(Alignment::Start);
     if let Some(large) = told.large {
-        let mut right = column![style::bold(large, RESULT, ink, look)].align_x(Alignment::End);
+        let mut right = column![theme::bold(large, RESULT, ink, look)].align_x(Alignment::End);
         if let Some(under) = told.under {
-            right = right.push(style::words(under, SMALL, Role::Muted, look));
+            right = right.push(theme::words(under, SMALL, Role::Muted, look));
         }
         first = first.push(container(right).max_width(170));
     }
     body = body.push(first);
     if let Some(origin) = origin(cell) {
-        body = body.push(style::words(origin, SMALL, Role::Muted, look));
+        body = body.push(theme::words(origin, SMALL, Role::Muted, look));
     }
     for line in told.lines {
-        body = body.push(style::words(line, SMALL, Role::Muted, look));
+        body = body.push(theme::words(line, SMALL, Role::Muted, look));
     }
     for found in told.findings {
         body = body.push(finding(found, look));
@@ -74,34 +74,35 @@ pub fn view<'a>(
         container(body)
             .padding([9, 14])
             .width(Length::Fill)
-            .style(style::card(stand, look)),
+            .style(theme::card(stand, look)),
     )
     .on_press(Message::Select(id))
     .into()
 }
 
 /// The kind, and what can be done with the whole cell.
-fn head<'a>(
-    shared: Shared<'a>,
-    cell: &Cell,
-    id: CellId,
-    selected: bool,
-) -> Element<'a, Message> {
+fn head<'a>(shared: Shared<'a>, cell: &Cell, id: CellId, selected: bool) -> Element<'a, Message> {
     let look = shared.look;
-    let kind = style::words(cell.kind.name(), SMALL, Role::Muted, look);
+    let kind = theme::words(cell.kind.name(), SMALL, Role::Muted, look);
     if !selected {
         return kind.into();
     }
     let tool = |text: &'static str, message: Message| {
-        button(iced::widget::text(text).size(SMALL).font(style::REGULAR))
+        button(iced::widget::text(text).size(SMALL).font(theme::REGULAR))
             .padding([0, 5])
-            .style(style::plain(look))
+            .style(theme::plain(look))
             .on_press(message)
     };
     row![
         kind,
         space().width(Length::Fill),
-        tool("rename", Message::Open(Place { cell: id, part: Part::Name })),
+        tool(
+            "rename",
+            Message::Open(Place {
+                cell: id,
+                part: Part::Name
+            })
+        ),
         tool("up", Message::Raise(id)),
         tool("down", Message::Lower(id)),
         tool("copy", Message::Duplicate(id)),
@@ -127,7 +128,7 @@ fn sentence_of<'a>(
                 pieces.extend(
                     words
                         .split(' ')
-                        .map(|word| style::words(word, BODY, Role::Ink, look).into()),
+                        .map(|word| theme::words(word, BODY, Role::Ink, look).into()),
                 );
             }
             Piece::Field(field, after) => {
@@ -160,7 +161,11 @@ fn piece_of<'a>(
         part: Part::Field(name),
     };
     if area.is_open(place) && !sentence::is_chosen(cell, name) {
-        let widest = if cell.kind == Kind::Note { WIDE } else { WIDEST };
+        let widest = if cell.kind == Kind::Note {
+            WIDE
+        } else {
+            WIDEST
+        };
         return field::open(shared.look, &area.text(cell, name), widest);
     }
     let faulty = result.errors.iter().any(|error| error.field == Some(name));
@@ -176,7 +181,7 @@ fn name<'a>(area: &'a Area, cell: &'a Cell, id: CellId, look: Look) -> Element<'
         let draft = area.draft().unwrap_or(&cell.name);
         return field::open(look, draft, WIDEST);
     }
-    style::bold(cell.name.as_str(), BODY, Role::Ink, look).into()
+    theme::bold(cell.name.as_str(), BODY, Role::Ink, look).into()
 }
 
 /// Where a cell's main input came from.
@@ -192,22 +197,18 @@ fn origin(cell: &Cell) -> Option<String> {
 fn finding<'a>(found: Found, look: Look) -> Element<'a, Message> {
     let role = found.shape.role();
     let mut words = column![
-        rich_text![
-            span(found.word)
-                .font(style::BOLD)
-                .color(style::colour(role, look)),
-            span(format!(": {}", found.text)).color(style::colour(role, look)),
+        row![
+            theme::bold(format!("{}:", found.word), BODY, role, look),
+            theme::words(found.text, BODY, role, look).width(Length::Fill),
         ]
-        .on_link_click(iced::never)
-        .size(BODY)
-        .font(style::REGULAR)
+        .spacing(5)
     ]
     .width(Length::Fill);
     if let Some(by) = found.by {
-        words = words.push(style::words(by, SMALL, Role::Muted, look));
+        words = words.push(theme::words(by, SMALL, Role::Muted, look));
     }
     row![
-        container(sign(found.shape, 13.0, look)).padding([3, 0]),
+        container(canvas::shape(found.shape, 13.0, look)).padding([3, 0]),
         words
     ]
     .spacing(7)
@@ -217,9 +218,9 @@ fn finding<'a>(found: Found, look: Look) -> Element<'a, Message> {
 fn limit_line<'a>(found: Found, look: Look) -> Element<'a, Message> {
     let role = found.shape.role();
     row![
-        container(sign(found.shape, 11.0, look)).padding([3, 0]),
-        style::words(found.word, SMALL, role, look),
-        style::words(found.text, SMALL, Role::Muted, look).width(Length::Fill),
+        container(canvas::shape(found.shape, 11.0, look)).padding([3, 0]),
+        theme::words(found.word, SMALL, role, look),
+        theme::words(found.text, SMALL, Role::Muted, look).width(Length::Fill),
     ]
     .spacing(7)
     .into()
@@ -230,8 +231,8 @@ fn state<'a>(cell: &Cell, result: &CellResult, look: Look) -> Element<'a, Messag
     match &result.state {
         State::Ok => space().into(),
         State::Waiting(names) => row![
-            sign(Shape::NotAssessed, 12.0, look),
-            style::words(
+            canvas::shape(Shape::NotAssessed, 12.0, look),
+            theme::words(
                 format!("waiting for {}", names.join(", ")),
                 SMALL,
                 Role::Muted,
@@ -250,7 +251,7 @@ fn state<'a>(cell: &Cell, result: &CellResult, look: Look) -> Element<'a, Messag
             let mut all = column(faults).spacing(4);
             if result.errors.len() > 4 {
                 let more = format!("and {} more", result.errors.len() - 4);
-                all = all.push(style::words(more, SMALL, Role::Over, look));
+                all = all.push(theme::words(more, SMALL, Role::Over, look));
             }
             all.into()
         }
@@ -269,7 +270,7 @@ fn editing<'a>(
     let mut lines = column![].spacing(4);
     match place.part {
         Part::Name => {
-            lines = lines.push(style::words(
+            lines = lines.push(theme::words(
                 "letters a to z, digits and underscores; every mention follows",
                 SMALL,
                 Role::Muted,
@@ -277,11 +278,16 @@ fn editing<'a>(
             ));
         }
         Part::Field(name) => {
-            lines = lines.push(field::strip(shared, cell, name, &super::note_of(cell, name)));
+            lines = lines.push(field::strip(
+                shared,
+                cell,
+                name,
+                &super::note_of(cell, name),
+            ));
         }
     }
     if let Some(refused) = area.refused() {
-        lines = lines.push(style::words(refused, SMALL, Role::Over, look));
+        lines = lines.push(theme::words(refused, SMALL, Role::Over, look));
     }
     Some(lines.into())
 }
@@ -297,8 +303,13 @@ fn others<'a>(
     let look = shared.look;
     let lines = sentence::others(cell).into_iter().map(|name| {
         row![
-            container(style::words(sentence::label(name), SMALL, Role::Muted, look))
-                .width(Length::Fixed(140.0)),
+            container(theme::words(
+                sentence::label(name),
+                SMALL,
+                Role::Muted,
+                look
+            ))
+            .width(Length::Fixed(140.0)),
             piece_of(area, shared, cell, id, name, "", result),
         ]
         .spacing(8)
@@ -316,16 +327,17 @@ fn cautions<'a>(result: &CellResult, selected: bool, look: Look) -> Element<'a, 
         format!("{count} cautions")
     };
     let head = row![
-        sign(Shape::Caution, 12.0, look),
-        style::words(text, SMALL, Role::Muted, look),
+        canvas::shape(Shape::Caution, 12.0, look),
+        theme::words(text, SMALL, Role::Muted, look),
     ]
     .spacing(7)
     .align_y(Alignment::Center);
     if !selected {
         return head.into();
     }
-    let texts = result.cautions.iter().map(|caution| {
-        style::words(caution.text.clone(), SMALL, Role::Muted, look).into()
-    });
+    let texts = result
+        .cautions
+        .iter()
+        .map(|caution| theme::words(caution.text.clone(), SMALL, Role::Muted, look).into());
     column![head, column(texts).spacing(2)].spacing(2).into()
 }

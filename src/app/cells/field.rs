@@ -6,7 +6,7 @@ use iced::{Element, Length, widget};
 use super::{Message, Part, Place, sentence};
 use crate::app::dashes::dashes;
 use crate::app::shared::{Look, Shared};
-use crate::app::style::{self, BODY, SMALL};
+use crate::app::theme::{self, BODY, SMALL};
 use crate::drawing::font::{self, Weight};
 use crate::drawing::role::Role;
 use crate::notebook::Diagnostic;
@@ -34,16 +34,16 @@ pub fn shown<'a>(
     };
     let dashes_role = if faulty { Role::Over } else { Role::Action };
     let opened = button(dashes(
-        style::words(text, BODY, role, look),
-        style::colour(dashes_role, look),
+        theme::words(text, BODY, role, look),
+        theme::colour(dashes_role, look),
     ))
     .padding(0)
-    .style(style::plain(look))
+    .style(theme::plain(look))
     .on_press(Message::Open(place));
     if after.is_empty() {
         return opened.into();
     }
-    row![opened, style::words(after, BODY, Role::Ink, look)].into()
+    row![opened, theme::words(after, BODY, Role::Ink, look)].into()
 }
 
 /// Returns a field that is open for typing, as wide as what is typed.
@@ -56,10 +56,10 @@ pub fn open<'a>(look: Look, text: &str, widest: f32) -> Element<'a, Message> {
         .on_input(Message::Typed)
         .on_submit(Message::Keep)
         .size(BODY)
-        .font(style::REGULAR)
+        .font(theme::REGULAR)
         .padding([0, 4])
         .width(Length::Fixed(wide.clamp(70.0, widest)))
-        .style(style::typing(look))
+        .style(theme::typing(look))
         .into()
 }
 
@@ -74,7 +74,7 @@ pub fn strip<'a>(
     let look = shared.look;
     let mut strip = column![].spacing(6);
     if let Some(spec) = cell.kind.field(field) {
-        strip = strip.push(style::words(spec.about, SMALL, Role::Muted, look));
+        strip = strip.push(theme::words(spec.about, SMALL, Role::Muted, look));
     }
     let names = |kinds: &[crate::notebook::Kind]| {
         shared
@@ -125,9 +125,9 @@ fn origin<'a>(cell: &Cell, field: &'static str, note: &str, look: Look) -> Eleme
         .on_input(Message::Remarked)
         .on_submit(Message::Keep)
         .size(SMALL)
-        .font(style::REGULAR)
+        .font(theme::REGULAR)
         .padding([2, 6])
-        .style(style::typing(look));
+        .style(theme::typing(look));
     column![row(bases).spacing(4).wrap().vertical_spacing(4), remark]
         .spacing(6)
         .into()
@@ -135,9 +135,9 @@ fn origin<'a>(cell: &Cell, field: &'static str, note: &str, look: Look) -> Eleme
 
 fn pill<'a>(text: String, chosen: bool, message: Message, look: Look) -> Element<'a, Message> {
     // The role comes from the button's style, so that a chosen one reads.
-    button(iced::widget::text(text).size(SMALL).font(style::REGULAR))
+    button(iced::widget::text(text).size(SMALL).font(theme::REGULAR))
         .padding([1, 8])
-        .style(style::choice(chosen, look))
+        .style(theme::choice(chosen, look))
         .on_press(message)
         .into()
 }
@@ -163,13 +163,13 @@ pub fn fault<'a>(cell: &Cell, fault: &Diagnostic, look: Look) -> Element<'a, Mes
         let after = part(span.end.max(span.start + 1)..span.end + 24);
         lines = lines.push(
             row![
-                style::words(before, SMALL, Role::Muted, look),
+                theme::words(before, SMALL, Role::Muted, look),
                 dashes(
-                    style::bold(marked, SMALL, Role::Over, look),
-                    style::colour(Role::Over, look)
+                    theme::bold(marked, SMALL, Role::Over, look),
+                    theme::colour(Role::Over, look)
                 ),
-                style::words(after, SMALL, Role::Muted, look),
-                style::words(
+                theme::words(after, SMALL, Role::Muted, look),
+                theme::words(
                     format!("   character {}", span.start + 1),
                     SMALL,
                     Role::Muted,
@@ -185,14 +185,14 @@ pub fn fault<'a>(cell: &Cell, fault: &Diagnostic, look: Look) -> Element<'a, Mes
         }
         _ => String::new(),
     };
-    lines = lines.push(style::words(
+    lines = lines.push(theme::words(
         format!("{place}{}", fault.message),
         SMALL,
         Role::Over,
         look,
     ));
     if let Some(hint) = &fault.hint {
-        lines = lines.push(style::words(hint.clone(), SMALL, Role::Ink, look));
+        lines = lines.push(theme::words(hint.clone(), SMALL, Role::Ink, look));
     }
     lines.into()
 }

@@ -168,7 +168,11 @@ fn position(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
             by: None,
         });
     }
-    let verdicts: Vec<_> = judges.iter().flat_map(|other| &other.verdicts).cloned().collect();
+    let verdicts: Vec<_> = judges
+        .iter()
+        .flat_map(|other| &other.verdicts)
+        .cloned()
+        .collect();
     let governing = assessment::governing(&verdicts)
         .and_then(|verdict| Library::shipped().get(&verdict.guidance));
     let total = one(shared, result, "irradiance");
@@ -191,7 +195,11 @@ fn position(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
             "skin_irradiance",
             "skin band, worst within reach",
         ),
-        _ => ("envelope_irradiance", "irradiance", "in all, worst within reach"),
+        _ => (
+            "envelope_irradiance",
+            "irradiance",
+            "in all, worst within reach",
+        ),
     };
     let mut lines = vec![what.to_owned()];
     if let Some(stated) = one(shared, result, stated) {
@@ -349,11 +357,18 @@ fn zone(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
     if let (Extent::At(_), Some(Shown::Extent { extent, high, .. })) =
         (safe, result.shown("clear_distance"))
     {
-        lines.push(format!(
-            "from the centre of {}, {} from its edge; farther out the rule is met",
-            cell.text("from").unwrap_or_default(),
-            distance(shared, high.unwrap_or(*extent))
-        ));
+        let from = cell.text("from").unwrap_or_default();
+        let (centre, clear) = (
+            distance(shared, safe),
+            distance(shared, high.unwrap_or(*extent)),
+        );
+        lines.push(if centre == clear {
+            format!("from the face of {from}; farther out the rule is met")
+        } else {
+            format!(
+                "from the centre of {from}, {clear} from its edge; farther out the rule is met"
+            )
+        });
     }
     Told {
         large: Some(distance(shared, safe)),

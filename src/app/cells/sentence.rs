@@ -20,7 +20,13 @@ use Piece::{Field, Name, Words};
 pub fn sentence(cell: &Cell) -> Vec<Piece> {
     match cell.kind {
         Kind::Value => vec![Name, Words("is"), Field("entry", "")],
-        Kind::Formula => vec![Name, Words("is"), Field("entry", ""), Words("in"), Field("unit", "")],
+        Kind::Formula => vec![
+            Name,
+            Words("is"),
+            Field("entry", ""),
+            Words("in"),
+            Field("unit", ""),
+        ],
         Kind::Surroundings => vec![
             Name,
             Words("has air at"),
@@ -91,7 +97,13 @@ pub fn sentence(cell: &Cell) -> Vec<Piece> {
 }
 
 fn source(cell: &Cell) -> Vec<Piece> {
-    let mut pieces = vec![Name, Words("is"), Words(article(cell)), Field("outline", ""), Field("form", ",")];
+    let mut pieces = vec![
+        Name,
+        Words("is"),
+        Words(article(cell)),
+        Field("outline", ""),
+        Field("form", ","),
+    ];
     match (cell.text("outline"), cell.text("form")) {
         (Some("rectangle"), Some("pool")) => {
             pieces.extend([Field("width", ""), Words("×"), Field("length", ",")]);
@@ -123,7 +135,11 @@ pub fn others(cell: &Cell) -> Vec<&'static str> {
         .fields()
         .iter()
         .map(|spec| spec.name)
-        .filter(|name| !told.iter().any(|piece| matches!(piece, Field(field, _) if field == name)))
+        .filter(|name| {
+            !told
+                .iter()
+                .any(|piece| matches!(piece, Field(field, _) if field == name))
+        })
         .filter(|name| fits(cell, name))
         .collect()
 }

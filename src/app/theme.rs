@@ -1,18 +1,29 @@
-//! How the pieces of the window look: roles as colours, and the text sizes.
+//! How the pieces of the window look: roles as colours, the bundled font, and
+//! the sizes of text.
+//!
+//! Sizes are those at 100 %: the window's own scale factor multiplies all of
+//! them by the zoom, so nothing here does so again.
+
+use std::borrow::Cow;
 
 use iced::widget::{button, container, scrollable, text, text_input};
 use iced::{Background, Border, Color, Font, Theme, font};
 
 use super::shared::Look;
-use crate::drawing::font::FAMILY;
-use crate::drawing::role::{Colour, Role};
+use crate::drawing::font::{FAMILY, Weight};
+use crate::drawing::role::{self, Colour, Role};
 
 /// The size of body text.
 pub const BODY: f32 = 14.0;
-/// The size of secondary text.
+/// The size of secondary text, and the least there is.
 pub const SMALL: f32 = 13.0;
 /// The size of a cell's result.
 pub const RESULT: f32 = 17.0;
+
+/// The step that distances between things are counted in.
+pub const STEP: f32 = 8.0;
+/// The radius of a card's corners.
+pub const CORNER: f32 = 9.0;
 
 /// The bundled font.
 pub const REGULAR: Font = Font::with_name(FAMILY);
@@ -23,13 +34,46 @@ pub const BOLD: Font = Font {
     ..REGULAR
 };
 
+/// Returns the files of the bundled font, for whoever opens a window.
+#[must_use]
+pub fn fonts() -> Vec<Cow<'static, [u8]>> {
+    Weight::ALL
+        .iter()
+        .map(|weight| Cow::Borrowed(weight.bytes()))
+        .collect()
+}
+
 /// Returns the colour of a role.
+#[must_use]
 pub const fn colour(role: Role, look: Look) -> Color {
     rgb(role.colour(look.theme))
 }
 
-const fn rgb(colour: Colour) -> Color {
+/// Returns a drawing's colour as the window's.
+#[must_use]
+pub const fn rgb(colour: Colour) -> Color {
     Color::from_rgb8(colour.red, colour.green, colour.blue)
+}
+
+/// Returns the theme of the widgets that have no style of their own.
+#[must_use]
+pub fn theme(look: Look) -> Theme {
+    let name = match look.theme {
+        role::Theme::Light => "farglow light",
+        role::Theme::Dark => "farglow dark",
+        role::Theme::Contrast => "farglow contrast",
+    };
+    Theme::custom(
+        name,
+        iced::theme::Palette {
+            background: colour(Role::Ground, look),
+            text: colour(Role::Ink, look),
+            primary: colour(Role::Action, look),
+            success: colour(Role::Within, look),
+            warning: colour(Role::CautionGround, look),
+            danger: colour(Role::Over, look),
+        },
+    )
 }
 
 /// Returns a text in a role's colour.
@@ -64,6 +108,36 @@ pub fn ground(role: Role, look: Look) -> impl Fn(&Theme) -> container::Style {
     }
 }
 
+/// Returns the style of a panel that holds a drawing: a hair line around it.
+pub fn panel(look: Look) -> impl Fn(&Theme) -> container::Style {
+    move |_| container::Style {
+        background: Some(Background::Color(colour(Role::Panel, look))),
+        text_color: Some(colour(Role::Ink, look)),
+        border: Border {
+            color: colour(Role::Line, look),
+            width: 1.0,
+            radius: CORNER.into(),
+        },
+        ..container::Style::default()
+    }
+}
+
+/// Returns the style of the band of cautions.
+pub fn cautions(look: Look) -> impl Fn(&Theme) -> container::Style {
+    let framed = look.theme == role::Theme::Contrast;
+    move |_| container::Style {
+        background: Some(Background::Color(colour(Role::CautionGround, look))),
+        text_color: Some(colour(Role::CautionInk, look)),
+        border: Border {
+            color: colour(Role::CautionInk, look),
+            // Without a tint only a frame sets the band apart.
+            width: if framed { 2.0 } else { 0.0 },
+            radius: 0.0.into(),
+        },
+        ..container::Style::default()
+    }
+}
+
 /// How a card stands to the selected one.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Stand {
@@ -92,7 +166,7 @@ pub fn card(stand: Stand, look: Look) -> impl Fn(&Theme) -> container::Style {
                 Stand::Selected => 2.0,
                 Stand::Linked | Stand::Apart => 1.0,
             },
-            radius: 9.0.into(),
+            radius: CORNER.into(),
         },
         ..container::Style::default()
     }
@@ -126,14 +200,14 @@ pub fn framed(look: Look) -> impl Fn(&Theme, button::Status) -> button::Style {
 pub fn chief(look: Look) -> impl Fn(&Theme, button::Status) -> button::Style {
     move |_, status| {
         let (ground, ink) = match status {
-            button::Status::Disabled => (Role::Line, Role::Ink),
+            button::Status::Disabled => (Role::Panel, Role::Muted),
             _ => (Role::Action, Role::Card),
         };
         button::Style {
             background: Some(Background::Color(colour(ground, look))),
             text_color: colour(ink, look),
             border: Border {
-                color: colour(ground, look),
+                color: colour(Role::Action, look),
                 width: 1.0,
                 radius: 7.0.into(),
             },
@@ -144,13 +218,23 @@ pub fn chief(look: Look) -> impl Fn(&Theme, button::Status) -> button::Style {
 
 /// Returns the style of a word that can be acted on, without a frame.
 pub fn plain(look: Look) -> impl Fn(&Theme, button::Status) -> button::Style {
+    link(Role::Action, Role::Ground, look)
+}
+
+/// Returns the style of a word in `ink` that can be acted on; the ground under
+/// it changes to `hovered` while the pointer rests on it.
+pub fn link(
+    ink: Role,
+    hovered: Role,
+    look: Look,
+) -> impl Fn(&Theme, button::Status) -> button::Style {
     move |_, status| button::Style {
         background: matches!(status, button::Status::Hovered | button::Status::Pressed)
-            .then(|| Background::Color(colour(Role::Ground, look))),
+            .then(|| Background::Color(colour(hovered, look))),
         text_color: colour(
             match status {
                 button::Status::Disabled => Role::Muted,
-                _ => Role::Action,
+                _ => ink,
             },
             look,
         ),
