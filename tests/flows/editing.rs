@@ -15,7 +15,7 @@ fn a_distance_that_is_typed_changes_the_finding_and_undo_takes_it_back() {
     assert_eq!(desk.text("charger", "distance"), Some("14 m"));
     desk.expect_not("limit reached after 3 s");
     // One field, one change: however many letters it took.
-    desk.click("Undo change distance of ch…");
+    desk.click("Undo change distance of cha…");
     desk.window.settle();
     assert_eq!(desk.text("charger", "distance"), Some("2.5 m"));
     desk.expect("limit reached after 3 s: no planned stay");

@@ -174,8 +174,6 @@ fn the_worksheet_is_written_as_a_draft_with_what_is_left() {
     let file = demo_in(folder.path());
     let mut desk = on(&file);
     desk.click("6 left before issue");
-    desk.expect("confirm value of t_hearth for this job");
-    desk.expect("fill in who prepared it");
     desk.command('p');
     desk.expect("marked DRAFT on every page: 6 things are left");
     desk.click("write the draft");

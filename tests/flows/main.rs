@@ -4,5 +4,4 @@
 mod desk;
 mod editing;
 mod files;
-mod pictures;
 mod reading;

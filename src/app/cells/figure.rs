@@ -365,9 +365,7 @@ fn zone(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
         lines.push(if centre == clear {
             format!("from the face of {from}; farther out the rule is met")
         } else {
-            format!(
-                "from the centre of {from}, {clear} from its edge; farther out the rule is met"
-            )
+            format!("from the centre of {from}, {clear} from its edge; farther out the rule is met")
         });
     }
     Told {
