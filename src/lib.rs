@@ -11,6 +11,8 @@
 //! | the linked cells | [`notebook`] |
 //! | files | [`store`] |
 //! | pictures and paper | [`drawing`], [`worksheet`] |
+//! | work off the calling thread | [`work`] |
+//! | the window | [`app`] |
 //! | the command line | [`command`] |
 
 pub mod app;
@@ -26,4 +28,5 @@ pub mod physics;
 pub mod spelling;
 pub mod store;
 pub mod units;
+pub mod work;
 pub mod worksheet;

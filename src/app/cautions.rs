@@ -165,7 +165,7 @@ fn line<'a>(called: &Called, look: Look) -> Element<'a, Message> {
             if last {
                 format!("{name}:")
             } else {
-                name.clone()
+                format!("{name},")
             },
             SMALL,
             Role::CautionInk,

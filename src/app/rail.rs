@@ -13,7 +13,10 @@ use crate::drawing::role::Role;
 use crate::notebook::datum::CellId;
 
 /// How high the panel is, at 100 %.
-const HEIGHT: f32 = 236.0;
+const HEIGHT: f32 = 216.0;
+
+/// How much room a scrolling bar takes.
+const BAR: f32 = 16.0;
 
 /// The area's own state.
 #[derive(Clone, Debug, Default)]
@@ -174,16 +177,22 @@ fn drawn(shared: Shared<'_>, rail: Rail) -> Element<'_, Message> {
         .filter_map(|name| Some((name.to_owned(), shared.engine.find(name)?)))
         .collect::<Vec<_>>();
     responsive(move |size| {
-        let width = f64::from(size.width) / SCALE;
-        let height = rail::height(&rail, width).max(f64::from(size.height) / SCALE);
-        let ruler = Canvas::new(Ruler {
-            rail: rail.clone(),
-            ids: ids.clone(),
-            look,
-        })
-        .width(Length::Fill)
-        .height((height * SCALE) as f32);
-        scrollable(ruler)
+        let needed = |width: f32| (rail::height(&rail, f64::from(width) / SCALE) * SCALE) as f32;
+        let ruler = |height: f32| {
+            Canvas::new(Ruler {
+                rail: rail.clone(),
+                ids: ids.clone(),
+                look,
+            })
+            .width(Length::Fill)
+            .height(height)
+        };
+        if needed(size.width) <= size.height {
+            return ruler(size.height).into();
+        }
+        // What scrolls leaves room for the bar beside it.
+        let room = container(ruler(needed(size.width - BAR))).padding(iced::padding::right(BAR));
+        scrollable(room)
             .style(move |theme, status| theme::scroll(look, theme, status))
             .into()
     })

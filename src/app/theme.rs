@@ -111,7 +111,7 @@ pub fn ground(role: Role, look: Look) -> impl Fn(&Theme) -> container::Style {
 /// Returns the style of a panel that holds a drawing: a hair line around it.
 pub fn panel(look: Look) -> impl Fn(&Theme) -> container::Style {
     move |_| container::Style {
-        background: Some(Background::Color(colour(Role::Panel, look))),
+        background: Some(Background::Color(colour(Role::Card, look))),
         text_color: Some(colour(Role::Ink, look)),
         border: Border {
             color: colour(Role::Line, look),

@@ -73,6 +73,8 @@ pub struct Rail {
     pub pins: Vec<Pin>,
     /// Positions on the line, in file order.
     pub stands: Vec<Stand>,
+    /// Positions that stand on other lines.
+    pub elsewhere: Vec<String>,
     /// What belongs here and has no place on the ruler.
     pub notes: Vec<String>,
     /// The unit of the ruler.
@@ -80,19 +82,6 @@ pub struct Rail {
 }
 
 impl Rail {
-    /// Returns how far the shading is known, in metres.
-    #[must_use]
-    pub fn reach(&self) -> f64 {
-        self.stretches.last().map_or(0.0, |last| last.to)
-    }
-
-    /// Returns the strength on the ramp of a step, `0..=1`.
-    #[must_use]
-    pub fn strength(&self, step: usize) -> f64 {
-        let steps = self.levels.len() + 1;
-        (step.min(self.levels.len()) as f64 + 0.5) / steps as f64
-    }
-
     /// Returns the rail as it is while bounds are being worked out: no pin and
     /// no finding holds yet, and each says so.
     #[must_use]

@@ -67,7 +67,7 @@ pub fn colour(strength: f64, theme: Theme) -> Colour {
 /// Returns the hatch that stands for a strength where there are no tints: the
 /// stronger, the closer its lines; none in the other themes.
 ///
-/// Strengths are taken as [`colour`] takes them. Lines are 16 to 1.6 points
+/// Strengths are taken as [`colour`] takes them. Lines are 11 to 1.1 points
 /// apart, in even ratios, so that equal steps of strength look alike.
 ///
 /// # Examples
@@ -86,7 +86,7 @@ pub fn hatch(strength: f64, theme: Theme) -> Option<Hatch> {
         strength.clamp(0.0, 1.0)
     };
     (theme == Theme::Contrast).then(|| Hatch {
-        spacing: 16.0 * 0.1_f64.powf(strength),
+        spacing: 11.0 * 0.1_f64.powf(strength),
         angle: 45.0,
         width: 0.7,
         role: Role::Ink,
@@ -127,6 +127,23 @@ mod tests {
             let rise = colour(1.0, theme).lightness() - colour(0.0, theme).lightness();
             assert!(rise * sign > 70.0, "{theme:?}: {rise}");
         }
+    }
+
+    #[test]
+    fn without_tints_the_hatch_grows_closer_with_strength() {
+        let spacing = |strength| {
+            hatch(strength, Theme::Contrast)
+                .expect("this theme hatches")
+                .spacing
+        };
+        for (strength, expected) in [(0.0, 11.0), (1.0, 1.1), (7.0, 1.1), (f64::NAN, 1.1)] {
+            let got = spacing(strength);
+            assert!(
+                (got - expected).abs() < 1e-12,
+                "{strength}: {got}, wanted {expected}"
+            );
+        }
+        assert!(hatch(0.5, Theme::Light).is_none() && hatch(0.5, Theme::Dark).is_none());
     }
 
     #[test]

@@ -175,8 +175,9 @@ impl Role {
                 Role::Ground | Role::Panel | Role::Card | Role::CautionGround | Role::Masonry => {
                     Colour::new(0xff, 0xff, 0xff)
                 }
-                Role::Line
-                | Role::Ink
+                // Grey, or the lines of a grid would hide those that mean something.
+                Role::Line => Colour::new(0x76, 0x76, 0x76),
+                Role::Ink
                 | Role::Muted
                 | Role::Action
                 | Role::Over

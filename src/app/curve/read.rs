@@ -11,8 +11,8 @@ use crate::notebook::datum::{Datum, Span};
 use crate::notebook::engine::Slot;
 use crate::notebook::results::{CellResult, Shown};
 use crate::notebook::wording;
-use crate::units::format::{self, Rounding};
 use crate::units::Unit;
+use crate::units::format::{self, Rounding};
 
 /// What is met at one distance, at the point itself: reach is not counted.
 #[derive(Clone, Debug, PartialEq)]
@@ -105,7 +105,9 @@ impl Readout {
                 )
             }
             Some((id, Span::Unlimited)) => format!("{id}: not limited by this"),
-            Some((id, span)) => format!("{id} allows {}", wording::span(*span)),
+            Some((id, span)) => {
+                format!("{id} allows {}, without reach", wording::span(*span))
+            }
         }
     }
 }

@@ -34,7 +34,7 @@ impl Rail {
         let probe = Probe::new(engine, line, Orientation::Strongest)?;
         let mut rail = Rail {
             about: format!(
-                "from the face of {}, {}, at {}",
+                "from the face of {}, {}, at {}, facing strongest",
                 line.source,
                 line.way(),
                 lengths.standing(line.height)
@@ -45,11 +45,11 @@ impl Rail {
             stretches: Vec::new(),
             pins: Vec::new(),
             stands: Vec::new(),
+            elsewhere: Vec::new(),
             notes: Vec::new(),
             lengths,
         };
         let mut bands = Vec::new();
-        let mut elsewhere = Vec::new();
         for result in &results.cells {
             let Some(cell) = engine.cell(result.id) else {
                 continue;
@@ -61,26 +61,20 @@ impl Rail {
                 }
                 Kind::Position => match line.standing(engine, result.id) {
                     Some(distance) => rail.stand(engine, results, line, result, distance),
-                    None => elsewhere.push(result.name.as_str()),
+                    None => rail.elsewhere.push(result.name.clone()),
                 },
                 _ => {}
             }
         }
         rail.tell_apart(engine);
-        if !elsewhere.is_empty() {
-            rail.notes
-                .push(format!("not on this line: {}", elsewhere.join(", ")));
-        }
         let band = [Band::NearInfrared, Band::Skin, Band::Total]
             .into_iter()
             .find(|band| bands.contains(band))
             .unwrap_or(Band::NearInfrared);
         rail.quantity = match band {
-            Band::Total => "irradiance, all wavelengths, facing strongest, nominal (W/m²)",
-            Band::NearInfrared => {
-                "near infrared irradiance, 780–3000 nm, facing strongest, nominal (W/m²)"
-            }
-            Band::Skin => "irradiance in 380–3000 nm, facing strongest, nominal (W/m²)",
+            Band::Total => "all wavelengths, nominal (W/m²)",
+            Band::NearInfrared => "near infrared, 780–3000 nm, nominal (W/m²)",
+            Band::Skin => "380–3000 nm, nominal (W/m²)",
         }
         .to_owned();
         rail.shade(&probe, line.edge, band);

@@ -10,6 +10,7 @@ use crate::drawing::mark::{Anchor, Fill, Mark, Rectangle, Shape, Stroke, Text};
 use crate::drawing::picture::Picture;
 use crate::drawing::role::Role;
 
+const HEADING: &str = "Distance rail";
 const TITLE: f64 = 10.0;
 const SMALL: f64 = 7.5;
 const LINE: f64 = 10.0;
@@ -102,6 +103,8 @@ pub(super) struct Plan<'a> {
     /// The names of flags that found no room.
     left_out: Vec<&'a str>,
     notes: Vec<String>,
+    /// What stands beside the title.
+    about: String,
 }
 
 impl<'a> Plan<'a> {
@@ -184,6 +187,16 @@ impl<'a> Plan<'a> {
         }
         placed.reverse();
         let mut notes: Vec<String> = Vec::new();
+        let mut about = rail.about.clone();
+        if !rail.elsewhere.is_empty() {
+            let text = format!("not on this line: {}", rail.elsewhere.join(", "));
+            let longer = format!("{about} · {text}");
+            if font::width(&longer, SMALL, Weight::Regular) <= width - title_width() {
+                about = longer;
+            } else {
+                notes.extend(wrapped(&text, width));
+            }
+        }
         if !left_out.is_empty() {
             let text = format!("and {} more: {}", left_out.len(), left_out.join(", "));
             notes.push(fit(&text, width, SMALL, Weight::Regular));
@@ -198,6 +211,7 @@ impl<'a> Plan<'a> {
             flags: placed,
             left_out,
             notes,
+            about,
         }
     }
 
@@ -216,20 +230,49 @@ impl<'a> Plan<'a> {
         SIDE + (self.width - 2.0 * SIDE) * (distance / self.end).clamp(0.0, 1.0)
     }
 
+    /// The steps that the ruler shows, the weakest and the strongest.
+    fn steps(&self) -> (usize, usize) {
+        let shown = self
+            .rail
+            .stretches
+            .iter()
+            .filter(|stretch| stretch.from < self.end)
+            .map(|stretch| stretch.step);
+        let last = shown.clone().max().unwrap_or(0);
+        (shown.min().unwrap_or(0), last)
+    }
+
+    /// The strength on the ramp of a step: the whole ramp is used by what the
+    /// ruler shows.
+    fn strength(&self, step: usize) -> f64 {
+        let (first, last) = self.steps();
+        let above = step.saturating_sub(first) as f64;
+        ((above + 0.5) / (last - first + 1) as f64).min(1.0)
+    }
+
+    /// The texts between the steps that the ruler shows.
+    fn level_texts(&self) -> &[String] {
+        let (first, last) = self.steps();
+        self.rail.level_texts.get(first..last).unwrap_or_default()
+    }
+
     /// The width of one swatch of the legend.
     fn swatch(&self) -> f64 {
-        let texts = self.rail.level_texts.iter();
-        let widest = texts
+        let widest = self
+            .level_texts()
+            .iter()
             .map(|text| font::width(text, SMALL, Weight::Regular))
             .fold(0.0, f64::max);
-        let steps = (self.rail.levels.len() + 1) as f64;
-        (widest + 6.0)
+        let (first, last) = self.steps();
+        let steps = (last - first + 1) as f64;
+        (widest + 4.0)
             .max(14.0)
             .min((self.width - 2.0 * SIDE) / steps)
     }
 
     fn legend_width(&self) -> f64 {
-        self.swatch() * (self.rail.levels.len() + 1) as f64
+        let (first, last) = self.steps();
+        self.swatch() * (last - first + 1) as f64
     }
 
     /// Whether the legend and its title stand in one row.
@@ -285,9 +328,9 @@ impl<'a> Plan<'a> {
     }
 
     fn title(&self, picture: &mut Picture) {
-        let title = Text::new(DVec2::new(0.0, TITLE), TITLE, "Distance rail").bold();
-        let left = title.width() + 8.0;
-        let about = fit(&self.rail.about, self.width - left, SMALL, Weight::Regular);
+        let title = Text::new(DVec2::new(0.0, TITLE), TITLE, HEADING).bold();
+        let left = title_width();
+        let about = fit(&self.about, self.width - left, SMALL, Weight::Regular);
         picture.push(Mark::Text(title));
         picture.push(Mark::Text(
             Text::new(DVec2::new(left, TITLE), SMALL, about).role(Role::Muted),
@@ -300,22 +343,23 @@ impl<'a> Plan<'a> {
             if to > from {
                 picture.push(Mark::Area {
                     outline: Rectangle::new(from, top, to - from, BAR).corners(),
-                    fill: Some(Fill::Ramp(self.rail.strength(stretch.step))),
+                    fill: Some(Fill::Ramp(self.strength(stretch.step))),
                     hatch: None,
                     edge: None,
                 });
             }
         }
-        // A hair between the steps tells neighbours apart on any print.
+        // A hair with pale edges tells neighbours apart on any print.
         for pair in self.rail.stretches.windows(2) {
             let x = self.x(pair[0].to);
             if pair[0].to < self.end {
-                let hair = Stroke::hair(Role::Card);
-                picture.push(Mark::line(
-                    DVec2::new(x, top),
-                    DVec2::new(x, top + BAR),
-                    hair,
-                ));
+                let ends = [DVec2::new(x, top), DVec2::new(x, top + BAR)];
+                for stroke in [
+                    Stroke::solid(Role::Card, 1.3),
+                    Stroke::solid(Role::Ink, 0.4),
+                ] {
+                    picture.push(Mark::line(ends[0], ends[1], stroke));
+                }
             }
         }
         let frame = Rectangle::new(SIDE, top, self.width - 2.0 * SIDE, BAR);
@@ -431,18 +475,19 @@ impl<'a> Plan<'a> {
             row += LINE + 2.0;
             SIDE
         };
-        for step in 0..=self.rail.levels.len() {
-            let x = left + wide * step as f64;
+        let (first, last) = self.steps();
+        for step in first..=last {
+            let x = left + wide * (step - first) as f64;
             picture.push(Mark::Area {
                 outline: Rectangle::new(x, row, wide, 7.0).corners(),
-                fill: Some(Fill::Ramp(self.rail.strength(step))),
+                fill: Some(Fill::Ramp(self.strength(step))),
                 hatch: None,
                 edge: Some(Stroke::hair(Role::Ink)),
             });
         }
         let baseline = row + 7.0 + LINE - 1.5;
         let mut free = if self.beside() { left - 8.0 } else { 0.0 };
-        for (step, text) in (1_u32..).zip(&self.rail.level_texts) {
+        for (step, text) in (1_u32..).zip(self.level_texts()) {
             let at = DVec2::new(left + wide * f64::from(step), baseline);
             let text = Text::new(at, SMALL, text.as_str()).anchored(Anchor::Middle);
             let extent = text.extent();
@@ -459,6 +504,11 @@ impl<'a> Plan<'a> {
             ));
         }
     }
+}
+
+/// How much of the first row the heading takes.
+fn title_width() -> f64 {
+    font::width(HEADING, TITLE, Weight::SemiBold) + 8.0
 }
 
 /// Writes a number of the ruler, with its unit.

@@ -25,6 +25,7 @@ fn base() -> Rail {
             stand("charger", 2.5, Shape::Over),
             stand("crane_hand", 8.2, Shape::NotAssessed),
         ],
+        elsewhere: Vec::new(),
         notes: Vec::new(),
         lengths: Lengths::Metres,
     }
@@ -71,7 +72,8 @@ fn crowded() -> Rail {
             stand(&format!("person_{i}"), 8.8 + 0.05 * f64::from(i), shape)
         })
         .collect();
-    rail.notes = vec!["not on this line: one, two, three".into(); 3];
+    rail.elsewhere = (0..30).map(|i| format!("person_{i}")).collect();
+    rail.notes = vec!["skin, 10 s: met everywhere".into(); 3];
     rail
 }
 
@@ -324,11 +326,12 @@ fn positions_off_the_line_are_named_and_not_drawn() {
         .map(|stand| stand.cell.as_str())
         .collect();
     assert_eq!(names, ["charger"]);
-    assert!(
-        rail.notes.contains(&"not on this line: spotter".to_owned()),
-        "{:?}",
-        rail.notes
-    );
+    assert_eq!(rail.elsewhere, ["spotter"]);
+    let told = picture(&rail, 493.0, 140.0)
+        .texts()
+        .iter()
+        .any(|text| text.text.contains("not on this line: spotter"));
+    assert!(told, "the picture does not name the spotter");
 }
 
 #[test]
@@ -346,8 +349,27 @@ fn feet_are_rounded_outwards_for_safety_and_inwards_for_people() {
 }
 
 #[test]
-fn steps_of_the_shading_differ_on_the_ramp() {
+fn the_shading_uses_the_whole_ramp_for_what_is_shown() {
+    use crate::drawing::mark::Fill;
     let rail = base();
-    let strengths: Vec<f64> = (0..5).map(|step| rail.strength(step)).collect();
-    assert_eq!(strengths, [0.1, 0.3, 0.5, 0.7, 0.9]);
+    let picture = picture(&rail, 493.0, 140.0);
+    let mut strengths: Vec<f64> = picture
+        .marks
+        .iter()
+        .filter_map(|mark| match mark {
+            Mark::Area {
+                fill: Some(Fill::Ramp(strength)),
+                ..
+            } => Some(*strength),
+            _ => None,
+        })
+        .collect();
+    strengths.sort_by(f64::total_cmp);
+    strengths.dedup();
+    // The ruler ends before 30 m: three of the five stretches are on it.
+    let expected = [1.0 / 6.0, 0.5, 5.0 / 6.0];
+    assert_eq!(strengths.len(), expected.len(), "{strengths:?}");
+    for (got, wanted) in strengths.iter().zip(expected) {
+        assert!((got - wanted).abs() < 1e-12, "{got}, wanted {wanted}");
+    }
 }
