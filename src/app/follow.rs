@@ -119,7 +119,9 @@ impl Window {
             cells::Action::Focus(id) => {
                 self.selected = Some(id);
                 self.job.break_run();
+                let reveal = self.reveal();
                 Task::batch([
+                    reveal,
                     operation::focus(cells::TYPING),
                     operation::select_all(cells::TYPING),
                 ])
@@ -239,6 +241,7 @@ impl Window {
         self.files = files::Area::new(self.desk.file());
         self.print = print::Area::new(self.desk.file());
         self.job.break_run();
+        self.remember();
     }
 
     fn answer(&mut self, answer: Answer) -> Task<Message> {
@@ -301,6 +304,7 @@ impl Window {
                 (true, error.to_string())
             }
         });
+        self.remember();
     }
 
     fn shut(&mut self) {
@@ -341,14 +345,14 @@ impl Window {
                 }
             },
             Key::Undo | Key::Redo => {
-                let title = if wish == Key::Undo {
-                    self.desk.undo().map(|title| format!("took back: {title}"))
+                // The buttons name what comes next: nothing needs to be said.
+                let _ = if wish == Key::Undo {
+                    self.desk.undo()
                 } else {
-                    self.desk.redo().map(|title| format!("made again: {title}"))
+                    self.desk.redo()
                 };
                 self.cells.break_run();
                 self.job.break_run();
-                self.said = title.map(|title| (false, title));
                 self.drop_lost_selection();
             }
             Key::Close => return self.wish(Wish::Close),
