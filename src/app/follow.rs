@@ -83,9 +83,15 @@ impl Window {
                 }
             }
             Message::Readiness(message) => {
-                if let readiness::Action::SelectCell(id) = self.readiness.update(message) {
-                    return self.select(id);
-                }
+                return match self.readiness.update(message) {
+                    readiness::Action::None => Task::none(),
+                    readiness::Action::SelectCell(id) => self.select(id),
+                    readiness::Action::OpenJob => self.follow_key(shortcut::Wish::Job),
+                    readiness::Action::AddPosition => {
+                        let add = cells::Message::Add(crate::notebook::Kind::Position);
+                        self.follow(Message::Cells(add))
+                    }
+                };
             }
             Message::BoundsDrawn(round, results) => self.desk.take_bounds(round, *results),
             Message::Advanced => {}
