@@ -59,10 +59,12 @@ impl Window {
                     });
                 }
             }
-            Message::Job(message) => {
-                let job::Action::Change { title, edit, joins } = self.job.update(message);
-                let _ = self.change(title, edit, joins);
-            }
+            Message::Job(message) => match self.job.update(message, self.desk.engine()) {
+                job::Action::Change { title, edit, joins } => {
+                    let _ = self.change(title, edit, joins);
+                }
+                job::Action::Say(said) => self.said = Some((true, said)),
+            },
             Message::Guard(answer) => return self.answer(answer),
             Message::Key(wish) => return self.follow_key(wish),
             Message::ShutDrawer => self.shut(),
@@ -478,7 +480,8 @@ impl Window {
         let Some(id) = self.selected else {
             return Task::none();
         };
-        match self.cells.reveal(self.shared(), id) {
+        let (engine, results) = (self.desk.engine(), self.desk.results());
+        match self.cells.reveal(engine, results, id) {
             Some(y) => operation::scroll_to(cells::COLUMN, operation::AbsoluteOffset { x: 0.0, y }),
             None => Task::none(),
         }

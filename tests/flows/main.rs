@@ -4,4 +4,5 @@
 mod desk;
 mod editing;
 mod files;
+mod pictures;
 mod reading;
