@@ -235,6 +235,8 @@ impl Window {
             self.curve.view(shared).map(Message::Curve),
             self.rail.view(shared).map(Message::Rail),
         ]
+        .spacing(12)
+        .padding([14, 18])
         .width(Length::Fill)
         .height(Length::Fill);
         page = page.push(

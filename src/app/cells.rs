@@ -19,6 +19,7 @@ use crate::notebook::datum::CellId;
 use crate::notebook::edit::Edit;
 use crate::notebook::engine::Engine;
 use crate::notebook::name;
+use crate::notebook::results::Results;
 
 pub use field::TYPING;
 
@@ -383,16 +384,20 @@ impl Area {
         Some((engine.cell(place.cell)?, field))
     }
 
-    /// Returns how far the column must be scrolled so that a cell is seen;
-    /// `None` where it is seen already.
-    #[must_use]
-    pub fn reveal(&self, shared: Shared<'_>, id: CellId) -> Option<f32> {
+    /// Brings a cell into view, and returns how far the column must be scrolled
+    /// for it; `None` where it is seen already.
+    pub fn reveal(&mut self, engine: &Engine, results: &Results, id: CellId) -> Option<f32> {
         let mut y = 14.0;
-        for result in &shared.results.cells {
-            let high = height::estimate(shared.engine, result, result.id == id);
+        for result in &results.cells {
+            let high = height::estimate(engine, result, result.id == id);
             if result.id == id {
                 let seen = y >= self.offset && y + high.min(self.seen) <= self.offset + self.seen;
-                return (!seen).then_some((y - 60.0).max(0.0));
+                if seen {
+                    return None;
+                }
+                // Built at once, so that a field in it can take the typing.
+                self.offset = (y - 60.0_f32).max(0.0);
+                return Some(self.offset);
             }
             y += high + GAP;
         }

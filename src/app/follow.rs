@@ -59,10 +59,12 @@ impl Window {
                     });
                 }
             }
-            Message::Job(message) => {
-                let job::Action::Change { title, edit, joins } = self.job.update(message);
-                let _ = self.change(title, edit, joins);
-            }
+            Message::Job(message) => match self.job.update(message, self.desk.engine()) {
+                job::Action::Change { title, edit, joins } => {
+                    let _ = self.change(title, edit, joins);
+                }
+                job::Action::Say(said) => self.said = Some((true, said)),
+            },
             Message::Guard(answer) => return self.answer(answer),
             Message::Key(wish) => return self.follow_key(wish),
             Message::ShutDrawer => self.shut(),
@@ -83,9 +85,15 @@ impl Window {
                 }
             }
             Message::Readiness(message) => {
-                if let readiness::Action::SelectCell(id) = self.readiness.update(message) {
-                    return self.select(id);
-                }
+                return match self.readiness.update(message) {
+                    readiness::Action::None => Task::none(),
+                    readiness::Action::SelectCell(id) => self.select(id),
+                    readiness::Action::OpenJob => self.follow_key(shortcut::Wish::Job),
+                    readiness::Action::AddPosition => {
+                        let add = cells::Message::Add(crate::notebook::Kind::Position);
+                        self.follow(Message::Cells(add))
+                    }
+                };
             }
             Message::BoundsDrawn(round, results) => self.desk.take_bounds(round, *results),
             Message::Advanced => {}
@@ -119,7 +127,9 @@ impl Window {
             cells::Action::Focus(id) => {
                 self.selected = Some(id);
                 self.job.break_run();
+                let reveal = self.reveal();
                 Task::batch([
+                    reveal,
                     operation::focus(cells::TYPING),
                     operation::select_all(cells::TYPING),
                 ])
@@ -239,6 +249,7 @@ impl Window {
         self.files = files::Area::new(self.desk.file());
         self.print = print::Area::new(self.desk.file());
         self.job.break_run();
+        self.remember();
     }
 
     fn answer(&mut self, answer: Answer) -> Task<Message> {
@@ -301,6 +312,7 @@ impl Window {
                 (true, error.to_string())
             }
         });
+        self.remember();
     }
 
     fn shut(&mut self) {
@@ -341,14 +353,14 @@ impl Window {
                 }
             },
             Key::Undo | Key::Redo => {
-                let title = if wish == Key::Undo {
-                    self.desk.undo().map(|title| format!("took back: {title}"))
+                // The buttons name what comes next: nothing needs to be said.
+                let _ = if wish == Key::Undo {
+                    self.desk.undo()
                 } else {
-                    self.desk.redo().map(|title| format!("made again: {title}"))
+                    self.desk.redo()
                 };
                 self.cells.break_run();
                 self.job.break_run();
-                self.said = title.map(|title| (false, title));
                 self.drop_lost_selection();
             }
             Key::Close => return self.wish(Wish::Close),
@@ -468,7 +480,8 @@ impl Window {
         let Some(id) = self.selected else {
             return Task::none();
         };
-        match self.cells.reveal(self.shared(), id) {
+        let (engine, results) = (self.desk.engine(), self.desk.results());
+        match self.cells.reveal(engine, results, id) {
             Some(y) => operation::scroll_to(cells::COLUMN, operation::AbsoluteOffset { x: 0.0, y }),
             None => Task::none(),
         }

@@ -1,12 +1,15 @@
 //! The title and the job block, as they stand on the worksheet.
 
-use iced::widget::{column, container, row, text_input};
+use iced::widget::{button, column, container, row, space, text, text_input};
 use iced::{Alignment, Element, Length};
 
 use super::shared::Shared;
 use super::theme::{self, BODY, SMALL};
 use crate::drawing::role::Role;
+use crate::guidance::{Library, Limit};
 use crate::notebook::edit::Edit;
+use crate::notebook::engine::Engine;
+use crate::notebook::{Confirmation, Kind, Notebook};
 
 /// A line that is typed into.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -22,6 +25,8 @@ pub enum Line {
 pub enum Message {
     /// A line's text.
     Typed(Line, String),
+    /// Somebody compared a limit with the edition in force.
+    Compared(&'static Limit),
 }
 
 /// What the window is to do.
@@ -36,6 +41,8 @@ pub enum Action {
         /// Whether it belongs to the last one.
         joins: bool,
     },
+    /// Say this.
+    Say(String),
 }
 
 /// The job block.
@@ -51,8 +58,14 @@ impl Area {
     }
 
     /// Follows a message.
-    pub fn update(&mut self, message: Message) -> Action {
-        let Message::Typed(line, text) = message;
+    pub fn update(&mut self, message: Message, engine: &Engine) -> Action {
+        let (line, text) = match message {
+            Message::Typed(line, text) => (line, text),
+            Message::Compared(limit) => {
+                self.typed = None;
+                return compared(engine.notebook(), limit);
+            }
+        };
         let joins = self.typed.replace(line) == Some(line);
         let text = (!text.is_empty()).then_some(text);
         match line {
@@ -68,6 +81,91 @@ impl Area {
             },
         }
     }
+}
+
+/// Takes a person's word that a limit was compared with its edition: the one
+/// who prepares the sheet, on the sheet's date.
+fn compared(notebook: &Notebook, limit: &'static Limit) -> Action {
+    let filled = |text: &Option<String>| text.clone().filter(|text| !text.trim().is_empty());
+    let (Some(by), Some(date)) = (
+        filled(&notebook.job.prepared_by),
+        filled(&notebook.job.date),
+    ) else {
+        return Action::Say(
+            "fill in who prepared this sheet and its date first: a limit is confirmed by a \
+             person, on a day"
+                .to_owned(),
+        );
+    };
+    let mut confirmed = notebook.confirmed.clone();
+    confirmed.retain(|other| other.guidance != limit.id);
+    confirmed.push(Confirmation {
+        guidance: limit.id.clone(),
+        edition: limit.edition.clone(),
+        by,
+        date,
+    });
+    Action::Change {
+        title: format!("confirm {}", limit.id),
+        edit: Edit::SetConfirmed(confirmed),
+        joins: false,
+    }
+}
+
+/// Returns the limits in use that are recalled and that nobody has confirmed.
+fn recalled(notebook: &Notebook) -> Vec<&'static Limit> {
+    let mut open: Vec<&'static Limit> = Vec::new();
+    let used = notebook
+        .cells
+        .iter()
+        .filter(|cell| matches!(cell.kind, Kind::Assessment | Kind::Zone))
+        .flat_map(|cell| cell.texts("guidance"));
+    for limit in used.flat_map(|id| Library::shipped().family(id)) {
+        if limit.needs_confirming()
+            && !notebook.is_confirmed(&limit.id, &limit.edition)
+            && !open.iter().any(|known| known.id == limit.id)
+        {
+            open.push(limit);
+        }
+    }
+    open
+}
+
+/// The limits that wait for somebody's word.
+fn confirming(shared: Shared<'_>) -> Element<'_, Message> {
+    let look = shared.look;
+    let limits = recalled(shared.engine.notebook());
+    if limits.is_empty() {
+        return space().into();
+    }
+    let lines = limits.into_iter().map(|limit| {
+        row![
+            button(
+                text(format!("I compared {}", limit.id))
+                    .size(SMALL)
+                    .font(theme::REGULAR)
+            )
+            .padding([2, 10])
+            .style(theme::framed(look))
+            .on_press(Message::Compared(limit)),
+            theme::words(limit.citation(), SMALL, Role::Muted, look).width(Length::Fill),
+        ]
+        .spacing(10)
+        .align_y(Alignment::Center)
+        .into()
+    });
+    column![
+        theme::words(
+            "These limits are recalled, not read. Compare each with its edition in force where \
+             you work, then say so:",
+            SMALL,
+            Role::Ink,
+            look
+        ),
+        column(lines).spacing(4),
+    ]
+    .spacing(6)
+    .into()
 }
 
 /// Returns the drawer with title and job.
@@ -112,10 +210,14 @@ pub fn view(shared: Shared<'_>) -> Element<'_, Message> {
     }
     let half = lines.len().div_ceil(2);
     let right = lines.split_off(half);
-    row![
-        column(lines).spacing(6).width(Length::Fill),
-        column(right).spacing(6).width(Length::Fill),
+    column![
+        row![
+            column(lines).spacing(6).width(Length::Fill),
+            column(right).spacing(6).width(Length::Fill),
+        ]
+        .spacing(24),
+        confirming(shared),
     ]
-    .spacing(24)
+    .spacing(12)
     .into()
 }

@@ -165,3 +165,16 @@ fn figures_are_shown_in_us_units_and_entries_stay_as_typed() {
     desk.expect("1250 ± 25 °C");
     desk.expect_not("312 kW/m²");
 }
+
+#[test]
+fn a_cell_far_down_is_brought_into_view_and_takes_the_typing() {
+    let mut desk = Desk::new(preset::chain(300));
+    let _ = desk.window.update(farglow::app::Message::seen(0.0, 700.0));
+    for _ in 0..200 {
+        desk.press(Key::Named(Named::ArrowDown), Modifiers::empty());
+    }
+    desk.press(Key::Named(Named::Tab), Modifiers::empty());
+    desk.expect("link_199");
+    desk.paste("7 m");
+    assert_eq!(desk.text("link_199", "entry"), Some("7 m"));
+}

@@ -174,6 +174,8 @@ fn the_worksheet_is_written_as_a_draft_with_what_is_left() {
     let file = demo_in(folder.path());
     let mut desk = on(&file);
     desk.click("6 left before issue");
+    desk.expect("confirm value of t_hearth for this job");
+    desk.expect("fill in who prepared it");
     desk.command('p');
     desk.expect("marked DRAFT on every page: 6 things are left");
     desk.click("write the draft");
@@ -192,4 +194,33 @@ fn the_job_is_filled_in_and_counts_at_once() {
     desk.expect("5 left before issue");
     desk.command('z');
     assert_eq!(desk.notebook().job.prepared_by.as_deref(), Some(""));
+}
+
+#[test]
+fn a_limit_is_confirmed_by_a_person_on_a_day() {
+    let mut desk = Desk::tall(preset::demo());
+    desk.command('j');
+    desk.click("I compared eu-2006-25-m");
+    desk.expect("fill in who prepared this sheet and its date first");
+    desk.type_into("prepared_by", "", "A. Smith");
+    desk.type_into("date", "", "2026-12-01");
+    for id in [
+        "eu-2006-25-m",
+        "eu-2006-25-n",
+        "eu-2006-25-o",
+        "icnirp-2013-ir-eye",
+        "icnirp-2013-skin",
+        "pain-time",
+    ] {
+        desk.click(&format!("I compared {id}"));
+    }
+    // Three inputs of the demo are still to be confirmed for the job.
+    desk.expect("3 left before issue");
+    let confirmed = &desk.notebook().confirmed;
+    assert_eq!(confirmed.len(), 6);
+    assert!(
+        confirmed
+            .iter()
+            .all(|word| word.by == "A. Smith" && word.date == "2026-12-01")
+    );
 }

@@ -5,4 +5,5 @@ mod areas;
 mod desk;
 mod editing;
 mod files;
+mod pictures;
 mod reading;

@@ -196,13 +196,14 @@ fn origin(cell: &Cell) -> Option<String> {
 
 fn finding<'a>(found: Found, look: Look) -> Element<'a, Message> {
     let role = found.shape.role();
-    let mut words = column![
-        row![
-            theme::bold(format!("{}:", found.word), BODY, role, look),
-            theme::words(found.text, BODY, role, look).width(Length::Fill),
-        ]
-        .spacing(5)
-    ]
+    let word = theme::bold(format!("{}:", found.word), BODY, role, look);
+    let short = found.text.chars().count() < 60;
+    let mut words = if short {
+        let text = theme::words(found.text, BODY, role, look).width(Length::Fill);
+        column![row![word, text].spacing(5)]
+    } else {
+        column![word, theme::words(found.text, SMALL, Role::Ink, look)]
+    }
     .width(Length::Fill);
     if let Some(by) = found.by {
         words = words.push(theme::words(by, SMALL, Role::Muted, look));

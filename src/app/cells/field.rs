@@ -33,13 +33,17 @@ pub fn shown<'a>(
         None => (sentence::absent(cell.kind, field).to_owned(), Role::Muted),
     };
     let dashes_role = if faulty { Role::Over } else { Role::Action };
-    let opened = button(dashes(
-        theme::words(text, BODY, role, look),
-        theme::colour(dashes_role, look),
-    ))
-    .padding(0)
-    .style(theme::plain(look))
-    .on_press(Message::Open(place));
+    let words = theme::words(text, BODY, role, look);
+    // Prose has no dashes: its lines are no fields of a sentence.
+    let words = if cell.kind == crate::notebook::Kind::Note {
+        words.into()
+    } else {
+        dashes(words, theme::colour(dashes_role, look))
+    };
+    let opened = button(words)
+        .padding(0)
+        .style(theme::plain(look))
+        .on_press(Message::Open(place));
     if after.is_empty() {
         return opened.into();
     }

@@ -97,12 +97,16 @@ pub fn sentence(cell: &Cell) -> Vec<Piece> {
 }
 
 fn source(cell: &Cell) -> Vec<Piece> {
+    let article = match cell.text("form") {
+        Some("opening") => "an",
+        _ => "a",
+    };
     let mut pieces = vec![
         Name,
         Words("is"),
-        Words(article(cell)),
-        Field("outline", ""),
+        Words(article),
         Field("form", ","),
+        Field("outline", ""),
     ];
     match (cell.text("outline"), cell.text("form")) {
         (Some("rectangle"), Some("pool")) => {
@@ -120,10 +124,6 @@ fn source(cell: &Cell) -> Vec<Piece> {
         Field("emissivity", ""),
     ]);
     pieces
-}
-
-const fn article(_cell: &Cell) -> &'static str {
-    "a"
 }
 
 /// Returns the fields that the sentence leaves out and this cell can use, in
