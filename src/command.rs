@@ -1,10 +1,10 @@
 //! The command line: one file per subcommand.
 
 pub mod calc;
-pub mod demo;
 pub mod issue;
 pub mod load;
 pub mod templates;
+pub mod window;
 
 use std::ffi::OsString;
 use std::io::{self, Write};
@@ -25,6 +25,7 @@ const ABOUT: &str = "Where may a person stand near a hot source, for how long, a
                      writes the worksheet to sign and file.";
 
 const AFTER: &str = "A first job:\n  \
+    farglow                                            the window, on the demo or the notebook last open\n  \
     farglow templates                                  what there is to start from\n  \
     farglow templates --new ladle -o my-ladle.farglow  a notebook of your own, to be edited as text\n  \
     farglow calc my-ladle.farglow                      every figure, finding and caution\n  \
@@ -35,9 +36,13 @@ const AFTER: &str = "A first job:\n  \
 
 #[derive(Debug, Parser)]
 #[command(name = "farglow", version, about = ABOUT, after_help = AFTER, max_term_width = 100)]
+#[command(args_conflicts_with_subcommands = true)]
 struct Arguments {
     #[command(subcommand)]
     command: Option<Command>,
+    /// The notebook to open in the window; else the one last open, else the demo
+    #[arg(value_name = "FILE")]
+    file: Option<PathBuf>,
 }
 
 #[derive(Debug, Subcommand)]
@@ -152,7 +157,7 @@ pub fn run(
 
 fn dispatch(arguments: Arguments, out: &mut dyn Write, err: &mut dyn Write) -> io::Result<Outcome> {
     match arguments.command {
-        None => demo::run(out, err),
+        None => window::run(arguments.file.as_deref(), err),
         Some(Command::Calc { files, json, jobs }) => {
             calc::run(&files, json, usize::from(jobs), out, err)
         }

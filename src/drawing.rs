@@ -10,5 +10,6 @@ pub mod hatch;
 pub mod label;
 pub mod mark;
 pub mod picture;
+pub mod rail;
 pub mod ramp;
 pub mod role;

@@ -11,8 +11,11 @@
 //! | the linked cells | [`notebook`] |
 //! | files | [`store`] |
 //! | pictures and paper | [`drawing`], [`worksheet`] |
+//! | work off the calling thread | [`work`] |
+//! | the window | [`app`] |
 //! | the command line | [`command`] |
 
+pub mod app;
 pub mod command;
 pub mod drawing;
 pub mod entry;
@@ -25,4 +28,5 @@ pub mod physics;
 pub mod spelling;
 pub mod store;
 pub mod units;
+pub mod work;
 pub mod worksheet;

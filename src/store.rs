@@ -2,4 +2,5 @@
 
 pub mod file;
 pub mod schema;
+pub mod settings;
 pub mod template;

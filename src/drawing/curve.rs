@@ -5,13 +5,13 @@
 //! the plot, and a position that finds no room in the plot is named there too.
 
 mod data;
-mod plot;
+pub(super) mod plot;
 mod scale;
 
 use glam::DVec2;
 
 use crate::drawing::font::Weight;
-use crate::drawing::mark::{Anchor, Mark, Shape, Text};
+use crate::drawing::mark::{Anchor, Mark, Rectangle, Shape, Text};
 use crate::drawing::picture::Picture;
 use crate::drawing::role::Role;
 
@@ -107,16 +107,7 @@ const DEPTH: f64 = 1e6;
 /// assert!(picture.texts().iter().any(|text| text.text == "irradiance (kW/m²)"));
 /// ```
 pub fn picture(curve: &Curve, width: f64, height: f64) -> Picture {
-    let width = if width.is_finite() {
-        width.max(240.0)
-    } else {
-        240.0
-    };
-    let height = if height.is_finite() {
-        height.max(160.0)
-    } else {
-        160.0
-    };
+    let (width, height) = drawn(width, height);
     let mut picture = Picture::new(width, height);
     picture.push(Mark::Text(
         Text::new(
@@ -136,6 +127,59 @@ pub fn picture(curve: &Curve, width: f64, height: f64) -> Picture {
         return picture;
     };
     Plot::new(curve, picture, x, y).finish()
+}
+
+/// The size that is really drawn.
+fn drawn(width: f64, height: f64) -> (f64, f64) {
+    let at_least = |size: f64, least: f64| {
+        if size.is_finite() {
+            size.max(least)
+        } else {
+            least
+        }
+    };
+    (at_least(width, 240.0), at_least(height, 160.0))
+}
+
+/// Where the plot stands in its picture, and what its axes say there.
+#[derive(Clone, Debug)]
+pub struct Axes {
+    /// The frame of the plot, in points.
+    pub area: Rectangle,
+    x: scale::Scale,
+    y: scale::Scale,
+    unit: f64,
+}
+
+impl Axes {
+    /// Returns the distance in metres above a point of the lower axis, `None`
+    /// beside the plot.
+    #[must_use]
+    pub fn distance(&self, x: f64) -> Option<f64> {
+        let share = (x - self.area.from.x) / self.area.width();
+        (0.0..=1.0).contains(&share).then(|| self.x.value(share))
+    }
+
+    /// Returns the place of a distance in metres and a value in SI units, `None`
+    /// outside the plot.
+    #[must_use]
+    pub fn place(&self, distance: f64, value: f64) -> Option<DVec2> {
+        let at = DVec2::new(
+            self.area.from.x + self.x.fraction(distance) * self.area.width(),
+            self.area.to.y - self.y.fraction(value / self.unit) * self.area.height(),
+        );
+        let inside = at.is_finite() && self.area.grown(0.01).holds(&Rectangle { from: at, to: at });
+        inside.then_some(at)
+    }
+}
+
+/// Returns the axes of the picture of the same size; `None` where there is
+/// nothing to draw.
+#[must_use]
+pub fn axes(curve: &Curve, width: f64, height: f64) -> Option<Axes> {
+    let (width, height) = drawn(width, height);
+    let (x, y) = domains(curve)?;
+    Some(Plot::new(curve, Picture::new(width, height), x, y).axes())
 }
 
 /// The range of both axes, or nothing to show.

@@ -4,7 +4,8 @@
 
 use std::sync::LazyLock;
 
-use crate::drawing::role::{Colour, Theme};
+use crate::drawing::hatch::Hatch;
+use crate::drawing::role::{Colour, Role, Theme};
 
 /// The published table: 256 lines of red, green, blue in `0..=1`, dark to light.
 const TABLE: &str = include_str!("../../resources/ramp/lajolla.txt");
@@ -57,8 +58,39 @@ pub fn colour(strength: f64, theme: Theme) -> Colour {
     let index = match theme {
         Theme::Light => last - step.min(last),
         Theme::Dark => step.min(last),
+        // Told by `hatch` alone.
+        Theme::Contrast => return Role::Card.colour(theme),
     };
     COLOURS.get(index).copied().unwrap_or(Colour::new(0, 0, 0))
+}
+
+/// Returns the hatch that stands for a strength where there are no tints: the
+/// stronger, the closer its lines; none in the other themes.
+///
+/// Strengths are taken as [`colour`] takes them. Lines are 11 to 1.1 points
+/// apart, in even ratios, so that equal steps of strength look alike.
+///
+/// # Examples
+///
+/// ```
+/// use farglow::drawing::{ramp, role::Theme};
+///
+/// let weak = ramp::hatch(0.1, Theme::Contrast).expect("this theme hatches");
+/// let strong = ramp::hatch(0.9, Theme::Contrast).expect("this theme hatches");
+/// assert!(weak.spacing > strong.spacing);
+/// ```
+pub fn hatch(strength: f64, theme: Theme) -> Option<Hatch> {
+    let strength = if strength.is_nan() {
+        1.0
+    } else {
+        strength.clamp(0.0, 1.0)
+    };
+    (theme == Theme::Contrast).then(|| Hatch {
+        spacing: 11.0 * 0.1_f64.powf(strength),
+        angle: 45.0,
+        width: 0.7,
+        role: Role::Ink,
+    })
 }
 
 #[cfg(test)]
@@ -95,6 +127,23 @@ mod tests {
             let rise = colour(1.0, theme).lightness() - colour(0.0, theme).lightness();
             assert!(rise * sign > 70.0, "{theme:?}: {rise}");
         }
+    }
+
+    #[test]
+    fn without_tints_the_hatch_grows_closer_with_strength() {
+        let spacing = |strength| {
+            hatch(strength, Theme::Contrast)
+                .expect("this theme hatches")
+                .spacing
+        };
+        for (strength, expected) in [(0.0, 11.0), (1.0, 1.1), (7.0, 1.1), (f64::NAN, 1.1)] {
+            let got = spacing(strength);
+            assert!(
+                (got - expected).abs() < 1e-12,
+                "{strength}: {got}, wanted {expected}"
+            );
+        }
+        assert!(hatch(0.5, Theme::Light).is_none() && hatch(0.5, Theme::Dark).is_none());
     }
 
     #[test]

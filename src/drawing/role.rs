@@ -75,6 +75,13 @@ pub enum Theme {
     Light,
     /// Light ink on dark ground.
     Dark,
+    /// Black on white, with hatching in place of tints.
+    Contrast,
+}
+
+impl Theme {
+    /// Every theme.
+    pub const ALL: [Theme; 3] = [Theme::Light, Theme::Dark, Theme::Contrast];
 }
 
 /// What a mark is for.
@@ -164,6 +171,21 @@ impl Role {
                 Role::Steel => Colour::new(0xaa, 0xb2, 0xba),
                 Role::Draft => Colour::new(0x46, 0x4d, 0x54),
             },
+            Theme::Contrast => match self {
+                Role::Ground | Role::Panel | Role::Card | Role::CautionGround | Role::Masonry => {
+                    Colour::new(0xff, 0xff, 0xff)
+                }
+                // Grey, or the lines of a grid would hide those that mean something.
+                Role::Line => Colour::new(0x76, 0x76, 0x76),
+                Role::Ink
+                | Role::Muted
+                | Role::Action
+                | Role::Over
+                | Role::Within
+                | Role::CautionInk
+                | Role::Steel => Colour::new(0x00, 0x00, 0x00),
+                Role::Draft => Colour::new(0xc0, 0xc0, 0xc0),
+            },
         }
     }
 
@@ -175,9 +197,10 @@ impl Role {
                 &[Role::Ground, Role::Panel, Role::Card]
             }
             Role::CautionInk => &[Role::CautionGround, Role::Card],
+            // The word on the button that the eye should find.
+            Role::Card => &[Role::Action],
             Role::Ground
             | Role::Panel
-            | Role::Card
             | Role::Line
             | Role::CautionGround
             | Role::Masonry
@@ -194,7 +217,7 @@ mod tests {
     #[test]
     fn every_text_role_reads_on_each_of_its_grounds() {
         let mut pairs = 0;
-        for theme in [Theme::Light, Theme::Dark] {
+        for theme in Theme::ALL {
             for role in Role::ALL {
                 for ground in role.grounds() {
                     // A caution's ink stands on a plain card in print alone.
@@ -210,7 +233,22 @@ mod tests {
                 }
             }
         }
-        assert_eq!(pairs, 33, "pairs looked at: {pairs}, wanted 33");
+        assert_eq!(pairs, 53, "pairs looked at: {pairs}, wanted 53");
+    }
+
+    #[test]
+    fn the_contrast_theme_is_black_on_white() {
+        for role in Role::ALL {
+            for ground in role.grounds() {
+                let found = role
+                    .colour(Theme::Contrast)
+                    .contrast(ground.colour(Theme::Contrast));
+                assert!(
+                    found > 20.9,
+                    "{role:?} on {ground:?}: {found:.2}, wanted 21"
+                );
+            }
+        }
     }
 
     #[test]

@@ -188,6 +188,47 @@ impl History {
         Ok(())
     }
 
+    /// Makes a change that belongs to the last one, such as the next letter of
+    /// the same entry: both are taken back together.
+    ///
+    /// # Errors
+    ///
+    /// [`Error`] where the change cannot be made; nothing is changed then.
+    pub fn extend(
+        &mut self,
+        engine: &mut Engine,
+        title: impl Into<String>,
+        edit: Edit,
+    ) -> Result<(), Error> {
+        let Some((_, before)) = self.done.last() else {
+            return self.apply(engine, title, edit);
+        };
+        let covered = match (before, &edit) {
+            (
+                Edit::SetField { name, field, .. },
+                Edit::SetField {
+                    name: other,
+                    field: same,
+                    ..
+                },
+            ) => name == other && field == same,
+            (Edit::SetJob { line, .. }, Edit::SetJob { line: same, .. }) => line == same,
+            (Edit::SetTitle(_), Edit::SetTitle(_)) => true,
+            _ => false,
+        };
+        let (inverse, _) = engine.apply(edit)?;
+        self.undone.clear();
+        if let Some((last, before)) = self.done.last_mut() {
+            *last = title.into();
+            // What the field held before the first letter covers the rest.
+            if !covered {
+                let first = std::mem::replace(before, Edit::Several(Vec::new()));
+                *before = Edit::Several(vec![inverse, first]);
+            }
+        }
+        Ok(())
+    }
+
     /// Takes the last change back, and returns its title.
     pub fn undo(&mut self, engine: &mut Engine) -> Option<String> {
         Self::step(&mut self.done, &mut self.undone, engine)

@@ -64,16 +64,24 @@ fn plot(engine: &Engine, results: &Results, cell: &CellResult, quantity: Band) -
     }
 }
 
+/// Returns a column against the distances, in one pass: a table may have
+/// thousands of rows.
 fn series(
     cell: &CellResult,
     column: &str,
     value: impl Fn(&Shown) -> Option<f64>,
 ) -> Vec<(f64, f64)> {
-    (0..cell.rows())
-        .filter_map(|row| {
-            let distance = cell.in_row(row, "distance")?.quantity()?.si;
-            Some((distance, value(cell.in_row(row, column)?)?))
-        })
+    let mut rows = vec![(None, None); cell.rows()];
+    for figure in &cell.figures {
+        let Some(row) = figure.row else { continue };
+        if figure.name == "distance" {
+            rows[row].0 = figure.shown.quantity().map(|distance| distance.si);
+        } else if figure.name == column {
+            rows[row].1 = value(&figure.shown);
+        }
+    }
+    rows.into_iter()
+        .filter_map(|(distance, value)| distance.zip(value))
         .collect()
 }
 

@@ -3,7 +3,7 @@
 use glam::DVec2;
 
 use crate::drawing::curve::scale::Scale;
-use crate::drawing::curve::{Curve, LimitLine, drawable};
+use crate::drawing::curve::{Axes, Curve, LimitLine, drawable};
 use crate::drawing::font::{self, Weight};
 use crate::drawing::label::{self, Field, Wish};
 use crate::drawing::mark::{Anchor, Backing, Dash, Fill, Mark, Rectangle, Shape, Stroke, Text};
@@ -17,7 +17,7 @@ const LINE: f64 = 10.0;
 const SYMBOL: f64 = 7.0;
 
 /// Shortens a text to a width with an ellipsis.
-pub(super) fn fit(text: &str, width: f64, size: f64, weight: Weight) -> String {
+pub(in crate::drawing) fn fit(text: &str, width: f64, size: f64, weight: Weight) -> String {
     if font::width(text, size, weight) <= width {
         return text.to_owned();
     }
@@ -56,11 +56,7 @@ pub(super) struct Plot<'a> {
 impl<'a> Plot<'a> {
     pub(super) fn new(curve: &'a Curve, picture: Picture, xs: (f64, f64), ys: (f64, f64)) -> Self {
         let (width, height) = (picture.width, picture.height);
-        let unit = if curve.y_unit.is_finite() && curve.y_unit > 0.0 {
-            curve.y_unit
-        } else {
-            1.0
-        };
+        let unit = unit_of(curve);
         let y = Scale::new(ys.0 / unit, ys.1 / unit);
         let x = Scale::new(xs.0, xs.1);
         let tick_width = |scale: &Scale| {
@@ -107,6 +103,20 @@ impl<'a> Plot<'a> {
         }
     }
 
+    pub(super) fn axes(self) -> Axes {
+        let unit = self.unit();
+        Axes {
+            area: self.area,
+            x: self.x,
+            y: self.y,
+            unit,
+        }
+    }
+
+    fn unit(&self) -> f64 {
+        unit_of(self.curve)
+    }
+
     pub(super) fn finish(mut self) -> Picture {
         self.legend();
         self.grid();
@@ -122,11 +132,7 @@ impl<'a> Plot<'a> {
     }
 
     fn at(&self, distance: f64, value: f64) -> DVec2 {
-        let unit = if self.curve.y_unit.is_finite() && self.curve.y_unit > 0.0 {
-            self.curve.y_unit
-        } else {
-            1.0
-        };
+        let unit = self.unit();
         DVec2::new(
             self.area.from.x + self.x.fraction(distance) * self.area.width(),
             self.area.to.y - self.y.fraction(value / unit) * self.area.height(),
@@ -591,6 +597,14 @@ impl<'a> Plot<'a> {
                 );
             }
         }
+    }
+}
+
+fn unit_of(curve: &Curve) -> f64 {
+    if curve.y_unit.is_finite() && curve.y_unit > 0.0 {
+        curve.y_unit
+    } else {
+        1.0
     }
 }
 

@@ -67,6 +67,12 @@ impl Scale {
         (value / low).ln() / (high / low).ln()
     }
 
+    /// Returns the value at a share of the scale's length, 0 at the low end.
+    pub(super) fn value(&self, fraction: f64) -> f64 {
+        let (low, high) = self.ends();
+        low * (high / low).powf(fraction)
+    }
+
     /// Returns the ticks: 1, 2, 5 of every decade, or the decades alone, or every
     /// other one …, so that there are at most `most` (never fewer than the ends).
     pub(super) fn ticks(&self, most: f64) -> Vec<f64> {
@@ -145,6 +151,15 @@ mod tests {
         );
         assert_eq!(Scale::new(2.0, 10.0).between(20.0), Vec::<f64>::new());
         assert_eq!(Scale::new(1e-6, 1e6).between(300.0), Vec::<f64>::new());
+    }
+
+    #[test]
+    fn values_and_fractions_agree() {
+        let scale = Scale::new(0.6, 19.0);
+        for share in [0.0, 0.1, 0.5, 0.9, 1.0] {
+            let back = scale.fraction(scale.value(share));
+            assert!((back - share).abs() < 1e-12, "{back}, wanted {share}");
+        }
     }
 
     #[test]

@@ -1,8 +1,9 @@
 //! The curves: irradiance against distance with limit lines, crossings and the
-//! positions on that line.
+//! positions on that line, and under them the rails: where may I stand?
 
 use super::Sheet;
 use crate::drawing::curve::{self, Curve};
+use crate::drawing::rail::{self, Lengths, Line, Rail};
 use crate::notebook::cell::Kind;
 use crate::notebook::results::State;
 use crate::worksheet::block::Block;
@@ -23,6 +24,41 @@ pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
         blocks.push(Block::Picture {
             picture: curve::picture(&shown, SIZE.0, SIZE.1),
             caption: caption(&shown),
+        });
+    }
+    blocks.extend(rails(sheet));
+    blocks
+}
+
+/// One rail for every line on which a zone or a curve runs or a position stands.
+fn rails(sheet: &Sheet<'_>) -> Vec<Block> {
+    let mut blocks = Vec::new();
+    for line in Line::all(sheet.engine) {
+        let Some(rail) = Rail::of(sheet.engine, sheet.results, &line, Lengths::Metres) else {
+            continue;
+        };
+        let drawn = sheet.results.cells.iter().any(|cell| {
+            matches!(cell.kind, Kind::Zone | Kind::Curve) && line.carries(sheet.engine, cell.id)
+        });
+        if !drawn && rail.stands.is_empty() {
+            continue;
+        }
+        let height = rail::height(&rail, SIZE.0);
+        let caption = "Clear distances, from the edge of the source's outline. Filled pins: where \
+                       a rule is met from, on the safe bound and with the reach counted; hollow \
+                       pins: the same on the nominal values."
+            .to_owned();
+        let picture = Block::Picture {
+            picture: rail::picture(&rail, SIZE.0, height),
+            caption,
+        };
+        blocks.push(if blocks.is_empty() {
+            Block::Together(vec![
+                Block::Heading("Where a person may stand".to_owned()),
+                picture,
+            ])
+        } else {
+            picture
         });
     }
     blocks

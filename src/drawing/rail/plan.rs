@@ -1,0 +1,558 @@
+//! Where everything on the rail goes: flags in lanes above the ruler, so that
+//! no flag covers another and no pole runs through one.
+
+use glam::DVec2;
+
+use super::{Lengths, Pin, Rail, Stand};
+use crate::drawing::curve::plot::fit;
+use crate::drawing::font::{self, Weight};
+use crate::drawing::mark::{Anchor, Fill, Mark, Rectangle, Shape, Stroke, Text};
+use crate::drawing::picture::Picture;
+use crate::drawing::role::Role;
+
+const HEADING: &str = "Distance rail";
+const TITLE: f64 = 10.0;
+const SMALL: f64 = 7.5;
+const LINE: f64 = 10.0;
+const SYMBOL: f64 = 7.0;
+/// The height of a flag with its two lines, and what stays free under it.
+const LANE: f64 = 2.0 * LINE + 4.0;
+/// The height of the shaded ruler.
+const BAR: f64 = 14.0;
+/// How far the ruler stands in from the sheet's sides.
+const SIDE: f64 = 12.0;
+/// From a pole to the words of its flag.
+const BESIDE: f64 = 7.0;
+/// Between a flag and the next pole to its right.
+const APART: f64 = 5.0;
+
+/// What a flag stands for.
+#[derive(Clone, Copy, Debug)]
+enum Of<'a> {
+    Pin(&'a Pin),
+    Stand(&'a Stand),
+}
+
+impl<'a> Of<'a> {
+    fn distance(&self) -> f64 {
+        match self {
+            Of::Pin(pin) => pin.distance,
+            Of::Stand(stand) => stand.distance,
+        }
+    }
+
+    fn cell(self) -> &'a str {
+        match self {
+            Of::Pin(pin) => &pin.cell,
+            Of::Stand(stand) => &stand.cell,
+        }
+    }
+
+    fn name(self) -> &'a str {
+        match self {
+            Of::Pin(pin) => &pin.label,
+            Of::Stand(stand) => &stand.cell,
+        }
+    }
+
+    fn lines(&self) -> [String; 2] {
+        match self {
+            Of::Pin(pin) => [
+                format!("{}: {}", pin.label, pin.text),
+                pin.nominal
+                    .as_ref()
+                    .map_or_else(String::new, |(_, text)| format!("nominal {text}")),
+            ],
+            Of::Stand(stand) => [
+                format!("{} {}", stand.cell, stand.text),
+                stand.finding.clone(),
+            ],
+        }
+    }
+
+    /// What is left out first where there is no room: greatest first.
+    fn rank(&self) -> u8 {
+        match self {
+            Of::Pin(_) => 0,
+            Of::Stand(stand) => match stand.shape {
+                Shape::Over => 1,
+                Shape::Within => 3,
+                _ => 2,
+            },
+        }
+    }
+}
+
+/// A flag in its lane.
+#[derive(Clone, Debug)]
+struct Flag<'a> {
+    of: Of<'a>,
+    x: f64,
+    lane: usize,
+    lines: [String; 2],
+}
+
+/// A rail laid out at a width.
+#[derive(Debug)]
+pub(super) struct Plan<'a> {
+    rail: &'a Rail,
+    width: f64,
+    /// How many metres the ruler shows.
+    end: f64,
+    flags: Vec<Flag<'a>>,
+    /// The names of flags that found no room.
+    left_out: Vec<&'a str>,
+    notes: Vec<String>,
+    /// What stands beside the title.
+    about: String,
+}
+
+impl<'a> Plan<'a> {
+    pub(super) fn new(rail: &'a Rail, width: f64) -> Self {
+        let pins = rail.pins.iter().map(Of::Pin);
+        let all = pins.chain(rail.stands.iter().map(Of::Stand));
+        let known = all.filter(|of| of.distance().is_finite() && of.distance() >= 0.0);
+        Self::with(rail, width, known.collect(), Vec::new())
+    }
+
+    /// Lays out as many flags as a height has room for.
+    pub(super) fn fitted(rail: &'a Rail, width: f64, height: f64) -> Self {
+        let mut plan = Self::new(rail, width);
+        while plan.height() > height && !plan.flags.is_empty() {
+            let mut kept: Vec<Of<'a>> = plan.flags.iter().map(|flag| flag.of).collect();
+            // The last of the least needed: ties go to the farthest.
+            let Some(last) = (0..kept.len()).max_by(|a, b| {
+                let key = |of: &Of<'_>| (of.rank(), of.distance());
+                let (a, b) = (key(&kept[*a]), key(&kept[*b]));
+                a.0.cmp(&b.0).then(a.1.total_cmp(&b.1))
+            }) else {
+                break;
+            };
+            let mut left_out = plan.left_out.clone();
+            left_out.push(kept.remove(last).name());
+            plan = Self::with(rail, width, kept, left_out);
+        }
+        plan
+    }
+
+    fn with(rail: &'a Rail, width: f64, mut all: Vec<Of<'a>>, left_out: Vec<&'a str>) -> Self {
+        let width = if width.is_finite() {
+            width.max(240.0)
+        } else {
+            240.0
+        };
+        all.sort_by(|a, b| a.distance().total_cmp(&b.distance()));
+        let room = width - 2.0 * SIDE;
+        let flags: Vec<(Of<'a>, [String; 2], f64)> = all
+            .into_iter()
+            .map(|of| {
+                let most = room * 0.45;
+                let [first, second] = of.lines();
+                let lines = [
+                    fit(&first, most, SMALL, Weight::SemiBold),
+                    fit(&second, most, SMALL, Weight::Regular),
+                ];
+                let wide = font::width(&lines[0], SMALL, Weight::SemiBold).max(font::width(
+                    &lines[1],
+                    SMALL,
+                    Weight::Regular,
+                ));
+                (of, lines, wide)
+            })
+            .collect();
+        // The words stand to the right of their pole: the ruler goes on until
+        // the last of them has room.
+        let needed = flags.iter().map(|(of, _, wide)| {
+            of.distance() * room / (room + SIDE - wide - BESIDE).max(room * 0.4)
+        });
+        let end = needed.fold(5.0, f64::max);
+        let x = |distance: f64| SIDE + room * (distance / end).min(1.0);
+        let mut placed: Vec<Flag<'a>> = Vec::new();
+        // From the right: a flag stands above every pole that its words pass.
+        for (of, lines, wide) in flags.into_iter().rev() {
+            let at = x(of.distance());
+            let right = at + BESIDE + wide;
+            let lane = placed
+                .iter()
+                .filter(|other| other.x - SYMBOL / 2.0 <= right + APART)
+                .map(|other| other.lane + 1)
+                .max()
+                .unwrap_or(0);
+            placed.push(Flag {
+                of,
+                x: at,
+                lane,
+                lines,
+            });
+        }
+        placed.reverse();
+        let mut notes: Vec<String> = Vec::new();
+        let mut about = rail.about.clone();
+        if !rail.elsewhere.is_empty() {
+            let text = format!("not on this line: {}", rail.elsewhere.join(", "));
+            let longer = format!("{about} · {text}");
+            if font::width(&longer, SMALL, Weight::Regular) <= width - title_width() {
+                about = longer;
+            } else {
+                notes.extend(wrapped(&text, width));
+            }
+        }
+        if !left_out.is_empty() {
+            let text = format!("and {} more: {}", left_out.len(), left_out.join(", "));
+            notes.push(fit(&text, width, SMALL, Weight::Regular));
+        }
+        for note in &rail.notes {
+            notes.extend(wrapped(note, width));
+        }
+        Self {
+            rail,
+            width,
+            end,
+            flags: placed,
+            left_out,
+            notes,
+            about,
+        }
+    }
+
+    pub(super) fn height(&self) -> f64 {
+        let lanes = self.flags.iter().map(|flag| flag.lane + 1).max();
+        TITLE + 8.0 + lanes.unwrap_or(0) as f64 * LANE + SYMBOL + BAR + self.under()
+    }
+
+    /// What stands under the ruler: its numbers, the legend, the notes.
+    fn under(&self) -> f64 {
+        let legend = if self.beside() { 1.0 } else { 2.0 };
+        4.0 + LINE + 8.0 + legend * (LINE + 2.0) + LINE * self.notes.len() as f64 + 10.0
+    }
+
+    fn x(&self, distance: f64) -> f64 {
+        SIDE + (self.width - 2.0 * SIDE) * (distance / self.end).clamp(0.0, 1.0)
+    }
+
+    /// The steps that the ruler shows, the weakest and the strongest.
+    fn steps(&self) -> (usize, usize) {
+        let shown = self
+            .rail
+            .stretches
+            .iter()
+            .filter(|stretch| stretch.from < self.end)
+            .map(|stretch| stretch.step);
+        let last = shown.clone().max().unwrap_or(0);
+        (shown.min().unwrap_or(0), last)
+    }
+
+    /// The strength on the ramp of a step: the whole ramp is used by what the
+    /// ruler shows.
+    fn strength(&self, step: usize) -> f64 {
+        let (first, last) = self.steps();
+        let above = step.saturating_sub(first) as f64;
+        ((above + 0.5) / (last - first + 1) as f64).min(1.0)
+    }
+
+    /// The texts between the steps that the ruler shows.
+    fn level_texts(&self) -> &[String] {
+        let (first, last) = self.steps();
+        self.rail.level_texts.get(first..last).unwrap_or_default()
+    }
+
+    /// The width of one swatch of the legend.
+    fn swatch(&self) -> f64 {
+        let widest = self
+            .level_texts()
+            .iter()
+            .map(|text| font::width(text, SMALL, Weight::Regular))
+            .fold(0.0, f64::max);
+        let (first, last) = self.steps();
+        let steps = (last - first + 1) as f64;
+        (widest + 4.0)
+            .max(14.0)
+            .min((self.width - 2.0 * SIDE) / steps)
+    }
+
+    fn legend_width(&self) -> f64 {
+        let (first, last) = self.steps();
+        self.swatch() * (last - first + 1) as f64
+    }
+
+    /// Whether the legend and its title stand in one row.
+    fn beside(&self) -> bool {
+        let title = font::width(&self.rail.quantity, SMALL, Weight::Regular);
+        title + 16.0 + self.legend_width() <= self.width - SIDE
+    }
+
+    /// Returns the height that the picture really has.
+    fn drawn(&self, height: f64) -> f64 {
+        let least = self.height();
+        if height.is_finite() {
+            height.max(least)
+        } else {
+            least
+        }
+    }
+
+    /// Returns the boxes of the flags, with the cells that they stand for.
+    pub(super) fn hits(&self, height: f64) -> Vec<(Rectangle, String)> {
+        let top = self.drawn(height) - self.under() - BAR;
+        self.flags
+            .iter()
+            .map(|flag| {
+                let wide = flag
+                    .lines
+                    .iter()
+                    .map(|line| font::width(line, SMALL, Weight::SemiBold))
+                    .fold(0.0, f64::max);
+                let left = flag.x - SYMBOL / 2.0;
+                let area = Rectangle::new(
+                    left,
+                    Self::lane(top, flag.lane),
+                    SYMBOL / 2.0 + BESIDE + wide,
+                    2.0 * LINE,
+                );
+                (area, flag.of.cell().to_owned())
+            })
+            .collect()
+    }
+
+    pub(super) fn picture(&self, height: f64) -> Picture {
+        let height = self.drawn(height);
+        let mut picture = Picture::new(self.width, height);
+        self.title(&mut picture);
+        // What is left over stands between the title and the flags.
+        let top = height - self.under() - BAR;
+        self.ruler(&mut picture, top);
+        self.poles(&mut picture, top);
+        self.words(&mut picture, top);
+        self.legend(&mut picture, top + BAR);
+        picture
+    }
+
+    fn title(&self, picture: &mut Picture) {
+        let title = Text::new(DVec2::new(0.0, TITLE), TITLE, HEADING).bold();
+        let left = title_width();
+        let about = fit(&self.about, self.width - left, SMALL, Weight::Regular);
+        picture.push(Mark::Text(title));
+        picture.push(Mark::Text(
+            Text::new(DVec2::new(left, TITLE), SMALL, about).role(Role::Muted),
+        ));
+    }
+
+    fn ruler(&self, picture: &mut Picture, top: f64) {
+        for stretch in &self.rail.stretches {
+            let (from, to) = (self.x(stretch.from), self.x(stretch.to));
+            if to > from {
+                picture.push(Mark::Area {
+                    outline: Rectangle::new(from, top, to - from, BAR).corners(),
+                    fill: Some(Fill::Ramp(self.strength(stretch.step))),
+                    hatch: None,
+                    edge: None,
+                });
+            }
+        }
+        // A hair with pale edges tells neighbours apart on any print.
+        for pair in self.rail.stretches.windows(2) {
+            let x = self.x(pair[0].to);
+            if pair[0].to < self.end {
+                let ends = [DVec2::new(x, top), DVec2::new(x, top + BAR)];
+                for stroke in [
+                    Stroke::solid(Role::Card, 1.3),
+                    Stroke::solid(Role::Ink, 0.4),
+                ] {
+                    picture.push(Mark::line(ends[0], ends[1], stroke));
+                }
+            }
+        }
+        let frame = Rectangle::new(SIDE, top, self.width - 2.0 * SIDE, BAR);
+        picture.push(Mark::frame(frame, Stroke::solid(Role::Ink, 0.75)));
+
+        let unit = self.rail.lengths.metres();
+        let end = self.end / unit;
+        let (step, parts) = tick(end, (self.width - 2.0 * SIDE) / 46.0);
+        let count = (end / step * f64::from(parts) * (1.0 + 1e-9)).floor() as u32;
+        let mut free = f64::NEG_INFINITY;
+        for index in 0..=count {
+            let value = step * f64::from(index) / f64::from(parts);
+            let x = self.x(value * unit);
+            let whole = index % parts == 0;
+            let foot = top + BAR;
+            let down = DVec2::new(0.0, if whole { 4.0 } else { 2.0 });
+            let at = DVec2::new(x, foot);
+            picture.push(Mark::line(at, at + down, Stroke::hair(Role::Ink)));
+            if !whole {
+                continue;
+            }
+            let text = number(value, self.rail.lengths);
+            let text = Text::new(DVec2::new(x, foot + 4.0 + LINE - 1.0), SMALL, text)
+                .anchored(Anchor::Middle);
+            let extent = text.extent();
+            if extent.from.x > free && extent.from.x >= 0.0 && extent.to.x <= self.width {
+                free = extent.to.x + 4.0;
+                picture.push(Mark::Text(text));
+            }
+        }
+    }
+
+    fn lane(top: f64, lane: usize) -> f64 {
+        top - SYMBOL - (lane + 1) as f64 * LANE
+    }
+
+    fn poles(&self, picture: &mut Picture, top: f64) {
+        for flag in &self.flags {
+            let role = match flag.of {
+                Of::Pin(_) => Role::Action,
+                Of::Stand(stand) => stand.shape.role(),
+            };
+            let head = DVec2::new(flag.x, Self::lane(top, flag.lane) + LINE * 0.5);
+            let foot = DVec2::new(flag.x, top + BAR);
+            // A pale edge keeps the pole apart from the shading under it.
+            let inside = DVec2::new(flag.x, top + 0.4);
+            let edge = Stroke::solid(Role::Card, 2.6);
+            picture.push(Mark::line(inside, foot - DVec2::new(0.0, 0.4), edge));
+            picture.push(Mark::line(head, foot, Stroke::solid(role, 1.0)));
+        }
+        for pin in &self.rail.pins {
+            if let Some((distance, _)) = pin.nominal
+                && distance.is_finite()
+                && (0.0..=self.end).contains(&distance)
+                && distance != pin.distance
+            {
+                picture.push(Mark::Shape {
+                    shape: Shape::NominalPin,
+                    at: DVec2::new(self.x(distance), top),
+                    size: SYMBOL - 1.0,
+                });
+            }
+        }
+        for flag in &self.flags {
+            let (shape, at) = match flag.of {
+                Of::Pin(_) => (Shape::Pin, DVec2::new(flag.x, top)),
+                Of::Stand(stand) => {
+                    let middle = Self::lane(top, flag.lane) + LINE * 0.5;
+                    (stand.shape, DVec2::new(flag.x, middle))
+                }
+            };
+            picture.push(Mark::Shape {
+                shape,
+                at,
+                size: SYMBOL,
+            });
+        }
+    }
+
+    fn words(&self, picture: &mut Picture, top: f64) {
+        for flag in &self.flags {
+            let baseline = Self::lane(top, flag.lane) + (LINE + font::CAP_HEIGHT * SMALL) / 2.0;
+            let at = DVec2::new(flag.x + BESIDE, baseline);
+            let role = match flag.of {
+                Of::Pin(_) => Role::Action,
+                Of::Stand(_) => Role::Ink,
+            };
+            let [first, second] = &flag.lines;
+            picture.push(Mark::Text(
+                Text::new(at, SMALL, first.as_str()).bold().role(role),
+            ));
+            if second.is_empty() {
+                continue;
+            }
+            let role = match flag.of {
+                Of::Stand(stand) if stand.shape != Shape::NotAssessed => stand.shape.role(),
+                _ => Role::Muted,
+            };
+            let at = at + DVec2::new(0.0, LINE);
+            picture.push(Mark::Text(Text::new(at, SMALL, second.as_str()).role(role)));
+        }
+    }
+
+    fn legend(&self, picture: &mut Picture, foot: f64) {
+        let mut row = foot + 4.0 + LINE + 8.0;
+        let title = fit(&self.rail.quantity, self.width, SMALL, Weight::Regular);
+        let at = DVec2::new(0.0, row + 7.0);
+        picture.push(Mark::Text(Text::new(at, SMALL, title).role(Role::Muted)));
+        let wide = self.swatch();
+        let left = if self.beside() {
+            self.width - SIDE - self.legend_width()
+        } else {
+            row += LINE + 2.0;
+            SIDE
+        };
+        let (first, last) = self.steps();
+        for step in first..=last {
+            let x = left + wide * (step - first) as f64;
+            picture.push(Mark::Area {
+                outline: Rectangle::new(x, row, wide, 7.0).corners(),
+                fill: Some(Fill::Ramp(self.strength(step))),
+                hatch: None,
+                edge: Some(Stroke::hair(Role::Ink)),
+            });
+        }
+        let baseline = row + 7.0 + LINE - 1.5;
+        let mut free = if self.beside() { left - 8.0 } else { 0.0 };
+        for (step, text) in (1_u32..).zip(self.level_texts()) {
+            let at = DVec2::new(left + wide * f64::from(step), baseline);
+            let text = Text::new(at, SMALL, text.as_str()).anchored(Anchor::Middle);
+            let extent = text.extent();
+            if extent.from.x >= free && extent.to.x <= self.width {
+                free = extent.to.x + 3.0;
+                picture.push(Mark::Text(text));
+            }
+        }
+        for note in &self.notes {
+            row += LINE;
+            let at = DVec2::new(0.0, row + 7.0 + LINE - 1.5);
+            picture.push(Mark::Text(
+                Text::new(at, SMALL, note.as_str()).role(Role::Muted),
+            ));
+        }
+    }
+}
+
+/// How much of the first row the heading takes.
+fn title_width() -> f64 {
+    font::width(HEADING, TITLE, Weight::SemiBold) + 8.0
+}
+
+/// Writes a number of the ruler, with its unit.
+fn number(value: f64, lengths: Lengths) -> String {
+    // Steps are 1, 2, 5 times powers of ten: three places hold any of them.
+    let text = format!("{value:.3}");
+    let text = text.trim_end_matches('0').trim_end_matches('.');
+    format!("{text} {}", lengths.symbol())
+}
+
+/// Returns the step between numbers on a ruler, 1, 2 or 5 times a power of
+/// ten so that there are at most `most`, and into how many parts it is divided.
+fn tick(end: f64, most: f64) -> (f64, u32) {
+    let least = end / most.max(1.0);
+    let mut decade = 10_f64.powi(least.log10().floor() as i32);
+    for _ in 0..3 {
+        for (digit, parts) in [(1.0, 5), (2.0, 4), (5.0, 5)] {
+            if digit * decade >= least * (1.0 - 1e-9) {
+                return (digit * decade, parts);
+            }
+        }
+        decade *= 10.0;
+    }
+    (end, 1)
+}
+
+/// Breaks a note into lines at its spaces.
+fn wrapped(text: &str, width: f64) -> Vec<String> {
+    let mut lines: Vec<String> = Vec::new();
+    for word in text.split_whitespace() {
+        match lines.last_mut() {
+            Some(line) => {
+                let longer = format!("{line} {word}");
+                if font::width(&longer, SMALL, Weight::Regular) <= width {
+                    *line = longer;
+                } else {
+                    lines.push(word.to_owned());
+                }
+            }
+            None => lines.push(word.to_owned()),
+        }
+    }
+    lines
+        .iter()
+        .map(|line| fit(line, width, SMALL, Weight::Regular))
+        .collect()
+}

@@ -1,0 +1,9 @@
+//! The whole window from presets, without a display: clicks, letters and keys
+//! in, shown text and the stored notebook out.
+
+mod areas;
+mod desk;
+mod editing;
+mod files;
+mod pictures;
+mod reading;
