@@ -11,7 +11,7 @@ use std::io::{self, Write};
 use std::path::PathBuf;
 use std::process::ExitCode;
 
-use clap::{Parser, Subcommand, ValueEnum};
+use clap::{CommandFactory, Parser, Subcommand, ValueEnum};
 
 use crate::worksheet::layout;
 
@@ -129,6 +129,14 @@ pub fn run(
     out: &mut dyn Write,
     err: &mut dyn Write,
 ) -> ExitCode {
+    let arguments: Vec<OsString> = arguments.into_iter().collect();
+    if let Some((typed, near)) = mistyped(&arguments) {
+        let _ = writeln!(
+            err,
+            "farglow: no command and no file is named `{typed}`, did you mean `{near}`?"
+        );
+        return ExitCode::from(Outcome::Unusable.code());
+    }
     let outcome = match Arguments::try_parse_from(arguments) {
         Ok(arguments) => match dispatch(arguments, out, err) {
             Ok(outcome) => outcome,
@@ -153,6 +161,21 @@ pub fn run(
         }
     };
     ExitCode::from(outcome.code())
+}
+
+/// Returns a first word that is neither a command nor a file, with the command
+/// that was most likely meant: it would else be taken for a notebook's name.
+fn mistyped(arguments: &[OsString]) -> Option<(String, String)> {
+    let typed = arguments.get(1)?.to_str()?;
+    let names: Vec<String> = Arguments::command()
+        .get_subcommands()
+        .map(|command| command.get_name().to_owned())
+        .collect();
+    if names.iter().any(|name| name == typed) || std::path::Path::new(typed).exists() {
+        return None;
+    }
+    let near = crate::spelling::nearest(typed, names.iter().map(String::as_str))?;
+    Some((typed.to_owned(), near.to_owned()))
 }
 
 fn dispatch(arguments: Arguments, out: &mut dyn Write, err: &mut dyn Write) -> io::Result<Outcome> {

@@ -45,6 +45,26 @@ const MAY_NAME: &[(&str, &[&str])] = &[
             "drawing", "store", "notebook", "guidance", "units", "spelling",
         ],
     ),
+    ("work", &["notebook"]),
+    (
+        "app",
+        &[
+            "work",
+            "worksheet",
+            "drawing",
+            "store",
+            "notebook",
+            "guidance",
+            "physics",
+            "entry",
+            "material",
+            "graph",
+            "json",
+            "units",
+            "numeric",
+            "spelling",
+        ],
+    ),
     ("command", ALL),
 ];
 

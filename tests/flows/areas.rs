@@ -324,7 +324,11 @@ fn the_pointer_reads_distance_irradiance_and_allowed_time() {
     let mut read = ui(area.view(job.shared(LOOK)), size, LOOK);
     assert!(read.find("2.50 m from the face").is_ok());
     let charger = job.results.cell("charger").expect("the demo has a charger");
-    let value = |name: &str| charger.shown(name).and_then(|shown| shown.quantity());
+    let value = |name: &str| {
+        charger
+            .shown(name)
+            .and_then(farglow::notebook::results::Shown::quantity)
+    };
     let nominal = value("near_ir_irradiance").expect("a position has it").si;
     let told = format!(
         "(nominal {})",
