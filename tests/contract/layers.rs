@@ -5,6 +5,7 @@ use std::fs;
 use std::path::{Path, PathBuf};
 
 const ALL: &[&str] = &[
+    "app",
     "command",
     "drawing",
     "entry",
@@ -17,6 +18,7 @@ const ALL: &[&str] = &[
     "spelling",
     "store",
     "units",
+    "work",
     "worksheet",
 ];
 
