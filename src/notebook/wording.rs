@@ -236,9 +236,7 @@ pub fn zone(engine: &Engine, result: &CellResult) -> String {
     else {
         return not_worked_out(result);
     };
-    let judged = Library::shipped()
-        .get(guidance)
-        .map_or("one effect", |limit| limit.organ.name());
+    let judged = organ(guidance);
     let safe = high.unwrap_or(*nominal);
     let mut words = match safe {
         Extent::At(_) => {
@@ -275,6 +273,14 @@ pub fn zone(engine: &Engine, result: &CellResult) -> String {
     }
     words.push_str(&format!("; it judges {judged} alone"));
     words
+}
+
+/// Returns what the guidance of this id protects.
+#[must_use]
+pub fn organ(guidance: &str) -> &'static str {
+    Library::shipped()
+        .get(guidance)
+        .map_or("one effect", |limit| limit.organ.name())
 }
 
 /// Says why a cell has no results.

@@ -4,7 +4,6 @@
 use super::line::si;
 use super::{Lengths, Line, Pin, Probe, Rail, Stand, Stretch};
 use crate::drawing::mark::Shape;
-use crate::guidance::Library;
 use crate::notebook::cell::assessment::{self, Verdict};
 use crate::notebook::cell::position::{Band, Orientation};
 use crate::notebook::cell::zone::Extent;
@@ -219,10 +218,7 @@ impl Rail {
 
 /// Returns what a zone's rule is called: what it protects, and for how long.
 fn rule(engine: &Engine, cell: &Cell, result: &CellResult) -> String {
-    let organ = cell
-        .text("guidance")
-        .and_then(|id| Library::shipped().get(id))
-        .map_or("unknown", |limit| limit.organ.name());
+    let organ = wording::organ(cell.text("guidance").unwrap_or_default());
     let organ = organ.split(" (").next().unwrap_or(organ);
     let stay = si(engine, result.id, "stay").map_or_else(
         || cell.text("stay").unwrap_or_default().to_owned(),
