@@ -48,7 +48,7 @@ pub fn file(path: &Path) -> Result<Loaded, Error> {
 ///
 /// # Errors
 ///
-/// As [`file`].
+/// As [`file()`].
 pub fn bytes(bytes: Vec<u8>) -> Result<Loaded, Error> {
     let stored = schema::read(&bytes)?;
     let engine = Engine::open(stored.notebook).map_err(Error::Engine)?;

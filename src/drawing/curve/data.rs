@@ -56,7 +56,7 @@ fn plot(engine: &Engine, results: &Results, cell: &CellResult, quantity: Band) -
         ),
         y_unit: 1.0,
         inverse_square: rows.last().copied(),
-        limits: limits(engine, results, cell, quantity, &rows, upper.as_deref()),
+        limits: limits(engine, results, cell, quantity),
         positions: positions(engine, results, cell, column),
         rows,
         upper,
@@ -86,15 +86,13 @@ fn series(
 }
 
 /// Returns the rules that judge on this quantity: those of the zones that run
-/// along the curve's own line, with their crossings, then those of assessments
-/// whose level no zone has drawn yet.
+/// along the curve's own line, with their crossings. A crossing read off the
+/// curve would leave the reach out: a person there could be judged over.
 fn limits(
     engine: &Engine,
     results: &Results,
     curve: &CellResult,
     quantity: Band,
-    rows: &[(f64, f64)],
-    upper: Option<&[(f64, f64)]>,
 ) -> Vec<LimitLine> {
     let Some(line) = engine.cell(curve.id) else {
         return Vec::new();
@@ -126,43 +124,7 @@ fn limits(
             upper_crossing: safe.and_then(crossing),
         });
     }
-    for cell in &results.cells {
-        for verdict in &cell.verdicts {
-            let (Some(value), Some(stay)) = (verdict.judgement.limit, verdict.stay) else {
-                continue;
-            };
-            let drawn = |line: &LimitLine| (line.value - value).abs() <= 1e-9 * value;
-            if judges(&verdict.guidance, quantity) && !limits.iter().any(drawn) {
-                limits.push(LimitLine {
-                    label: format!(
-                        "{}, {}, without reach",
-                        verdict.guidance,
-                        wording::plain_time(stay)
-                    ),
-                    value,
-                    crossing: outermost(rows, value),
-                    upper_crossing: upper.and_then(|rows| outermost(rows, value)),
-                });
-            }
-        }
-    }
     limits
-}
-
-/// Returns where a drawn series passes a value for the last time, between its
-/// rows on straight lines of the log scales.
-fn outermost(rows: &[(f64, f64)], value: f64) -> Option<Crossing> {
-    let pair = rows
-        .windows(2)
-        .rev()
-        .find(|pair| pair[0].1 > value && pair[1].1 <= value && pair[1].1 > 0.0)?;
-    let [(near, above), (far, below)] = [pair[0], pair[1]];
-    let share = (above / value).ln() / (above / below).ln();
-    let distance = near * (far / near).powf(share);
-    Some(Crossing {
-        distance,
-        text: format::safe_distance(distance),
-    })
 }
 
 fn judges(id: &str, quantity: Band) -> bool {
