@@ -11,6 +11,7 @@ mod plan;
 use crate::drawing::mark::{Rectangle, Shape};
 use crate::drawing::picture::Picture;
 
+pub use data::Shading;
 pub use line::{Lengths, Line, Probe, Reading};
 
 /// Where a rule begins to be met.

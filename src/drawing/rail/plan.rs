@@ -352,7 +352,11 @@ impl<'a> Plan<'a> {
         // A hair with pale edges tells neighbours apart on any print.
         for pair in self.rail.stretches.windows(2) {
             let x = self.x(pair[0].to);
-            if pair[0].to < self.end {
+            // A sliver is told by its shade alone.
+            let narrow = pair
+                .iter()
+                .any(|stretch| self.x(stretch.to) - self.x(stretch.from) < 2.5);
+            if pair[0].to < self.end && !narrow {
                 let ends = [DVec2::new(x, top), DVec2::new(x, top + BAR)];
                 for stroke in [
                     Stroke::solid(Role::Card, 1.3),
