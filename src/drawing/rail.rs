@@ -80,6 +80,8 @@ pub struct Rail {
     pub notes: Vec<String>,
     /// The unit of the ruler.
     pub lengths: Lengths,
+    /// Whether pins and findings hold; not while bounds are being worked out.
+    pub settled: bool,
 }
 
 impl Rail {
@@ -87,6 +89,7 @@ impl Rail {
     /// no finding holds yet, and each says so.
     #[must_use]
     pub fn provisional(mut self) -> Rail {
+        self.settled = false;
         for pin in &mut self.pins {
             pin.nominal = Some((pin.distance, pin.text.clone()));
             pin.text = "being worked out".to_owned();

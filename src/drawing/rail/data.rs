@@ -61,6 +61,7 @@ impl Rail {
             elsewhere: Vec::new(),
             notes: Vec::new(),
             lengths,
+            settled: true,
         };
         let mut bands = Vec::new();
         for result in &results.cells {
@@ -80,6 +81,10 @@ impl Rail {
             }
         }
         rail.tell_apart(engine);
+        if rail.pins.is_empty() && rail.stands.is_empty() && rail.notes.is_empty() {
+            rail.notes
+                .push("no zone runs along this line and no position stands on it".to_owned());
+        }
         let band = [Band::NearInfrared, Band::Skin, Band::Total]
             .into_iter()
             .find(|band| bands.contains(band))

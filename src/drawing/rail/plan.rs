@@ -429,7 +429,8 @@ impl<'a> Plan<'a> {
         }
         for flag in &self.flags {
             let (shape, at) = match flag.of {
-                Of::Pin(_) => (Shape::Pin, DVec2::new(flag.x, top)),
+                Of::Pin(_) if self.rail.settled => (Shape::Pin, DVec2::new(flag.x, top)),
+                Of::Pin(_) => (Shape::NominalPin, DVec2::new(flag.x, top)),
                 Of::Stand(stand) => {
                     let middle = Self::lane(top, flag.lane) + LINE * 0.5;
                     (stand.shape, DVec2::new(flag.x, middle))
@@ -448,6 +449,7 @@ impl<'a> Plan<'a> {
             let baseline = Self::lane(top, flag.lane) + (LINE + font::CAP_HEIGHT * SMALL) / 2.0;
             let at = DVec2::new(flag.x + BESIDE, baseline);
             let role = match flag.of {
+                _ if !self.rail.settled => Role::Muted,
                 Of::Pin(_) => Role::Action,
                 Of::Stand(_) => Role::Ink,
             };

@@ -28,6 +28,7 @@ fn base() -> Rail {
         elsewhere: Vec::new(),
         notes: Vec::new(),
         lengths: Lengths::Metres,
+        settled: true,
     }
 }
 
@@ -208,6 +209,17 @@ fn nothing_holds_while_bounds_are_worked_out() {
             .iter()
             .all(|stand| stand.shape == Shape::NotAssessed)
     );
+    let picture = picture(&rail, 493.0, 140.0);
+    let filled = picture.marks.iter().any(|mark| {
+        matches!(
+            mark,
+            Mark::Shape {
+                shape: Shape::Pin,
+                ..
+            }
+        )
+    });
+    assert!(!filled, "a filled pin is drawn");
     assert!(rail.pins.iter().all(|pin| pin.text == "being worked out"));
 }
 
