@@ -25,7 +25,7 @@ pub mod theme;
 
 use std::path::PathBuf;
 
-use iced::widget::{button, column, container, row, rule};
+use iced::widget::{button, column, container, row, rule, scrollable};
 use iced::{Alignment, Element, Length, Size, Subscription, Theme, window};
 
 use crate::drawing::role::{self, Role};
@@ -273,11 +273,15 @@ impl Window {
             .style(theme::plain(look))
             .on_press(Message::ShutDrawer);
         Some(
-            container(row![content, shut].spacing(16))
-                .padding([12, 20])
-                .width(Length::Fill)
-                .style(theme::ground(Role::Panel, look))
-                .into(),
+            container(
+                // A long drawer scrolls, so that the desk stays in sight.
+                scrollable(row![content, shut].spacing(16).padding([12, 20]))
+                    .style(move |theme, status| theme::scroll(look, theme, status)),
+            )
+            .max_height(320)
+            .width(Length::Fill)
+            .style(theme::ground(Role::Panel, look))
+            .into(),
         )
     }
 

@@ -2,7 +2,10 @@
 //! the demo; or saying why no window can be had.
 
 use std::ffi::OsStr;
+use std::panic::{self, AssertUnwindSafe};
 use std::path::{Path, PathBuf};
+use std::sync::Arc;
+use std::sync::atomic::{AtomicBool, Ordering};
 
 use iced::{Size, Task, window};
 
@@ -79,12 +82,15 @@ fn first(
 fn run(window: Window, settings: &Settings) -> Result<(), Unopened> {
     // The window is made once; a program that boots twice would find it gone.
     let window = std::cell::RefCell::new(Some(window));
+    let begun = Arc::new(AtomicBool::new(false));
+    let beginning = Arc::clone(&begun);
     let boot = move || {
+        beginning.store(true, Ordering::Relaxed);
         let mut window = window.borrow_mut().take().expect("the program boots once");
         let task = window.draw_bounds();
         (window, task)
     };
-    iced::application(boot, Window::update, Window::view)
+    let application = iced::application(boot, Window::update, Window::view)
         .title(Window::title)
         .theme(Window::theme)
         .scale_factor(|window: &Window| window.look.zoom)
@@ -95,9 +101,35 @@ fn run(window: Window, settings: &Settings) -> Result<(), Unopened> {
             min_size: Some(Size::new(720.0, 480.0)),
             exit_on_close_request: false,
             ..window::Settings::default()
-        })
-        .run()
-        .map_err(|error| Unopened::Refused(error.to_string()))
+        });
+    guarded(&begun, || {
+        application
+            .run()
+            .map_err(|error| Unopened::Refused(error.to_string()))
+    })
+}
+
+/// Runs the event loop, which panics where the display does not answer: until
+/// the window has begun, that is said like every other reason.
+fn guarded(
+    begun: &Arc<AtomicBool>,
+    run: impl FnOnce() -> Result<(), Unopened>,
+) -> Result<(), Unopened> {
+    let usual = Arc::new(panic::take_hook());
+    let (later, known) = (Arc::clone(&usual), Arc::clone(begun));
+    panic::set_hook(Box::new(move |info| {
+        if known.load(Ordering::Relaxed) {
+            later(info);
+        }
+    }));
+    let outcome = panic::catch_unwind(AssertUnwindSafe(run));
+    panic::set_hook(Box::new(move |info| usual(info)));
+    match outcome {
+        Ok(outcome) => outcome,
+        // Our own mistakes stay what they are.
+        Err(payload) if begun.load(Ordering::Relaxed) => panic::resume_unwind(payload),
+        Err(_) => Err(Unopened::Refused("the display does not answer".to_owned())),
+    }
 }
 
 /// Returns whether a window can be had: the event loop itself panics where it
