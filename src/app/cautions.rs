@@ -43,7 +43,7 @@ pub struct Area {
 }
 
 /// What happens in the band.
-#[derive(Clone, Debug)]
+#[derive(Clone, Copy, Debug)]
 pub enum Message {
     /// Show all cautions.
     Open,

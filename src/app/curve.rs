@@ -33,7 +33,7 @@ pub struct Area {
 }
 
 /// What happens in the area.
-#[derive(Clone, Debug)]
+#[derive(Clone, Copy, Debug)]
 pub enum Message {
     /// Show this curve.
     Choose(CellId),

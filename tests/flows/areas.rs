@@ -8,7 +8,7 @@ use farglow::app::{self, cautions, curve, rail, readiness, theme};
 use farglow::drawing::role::{Role, Theme};
 use farglow::notebook::datum::CellId;
 use farglow::notebook::engine::Engine;
-use farglow::notebook::results::Results;
+use farglow::notebook::results::{Results, Shown};
 use farglow::notebook::snapshot::Snapshot;
 use farglow::notebook::uncertainty::Settings;
 use farglow::store::{schema, template};
@@ -334,7 +334,7 @@ fn the_pointer_reads_distance_irradiance_and_allowed_time() {
     let mut read = ui(area.view(job.shared(LOOK)), size, LOOK);
     assert!(read.find("2.50 m from the face").is_ok());
     let charger = job.results.cell("charger").expect("the demo has a charger");
-    let value = |name: &str| charger.shown(name).and_then(|shown| shown.quantity());
+    let value = |name: &str| charger.shown(name).and_then(Shown::quantity);
     let nominal = value("near_ir_irradiance").expect("a position has it").si;
     let told = format!(
         "(nominal {})",
