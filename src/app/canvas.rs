@@ -285,7 +285,7 @@ fn paint_hatch(frame: &mut Frame, outline: &[DVec2], hatch: Hatch, theme: role::
     if lines.is_empty() {
         return;
     }
-    let drawn = path(lines.iter().map(<[glam::DVec2; 2]>::as_slice), false);
+    let drawn = path(lines.iter().map(<[DVec2; 2]>::as_slice), false);
     let style = canvas::Stroke::default()
         .with_width(hatch.width as f32)
         .with_color(rgb(hatch.role.colour(theme)));

@@ -65,7 +65,7 @@ impl Area {
             Message::Choose(id) => {
                 self.chosen = Some(id);
                 self.pointed = None;
-                Action::None
+                Action::SelectCell(id)
             }
             Message::Pointed(distance) => {
                 self.pointed = distance;
@@ -94,7 +94,7 @@ impl Area {
                 let curve = Curve::of(shared.engine, shared.results, cell);
                 let readout = self
                     .pointed
-                    .and_then(|distance| Readout::of(shared, cell, distance));
+                    .and_then(|distance| Readout::of(shared, cell, &curve, distance));
                 panel
                     .push(plot(curve, readout.as_ref(), look))
                     .push(told(readout.as_ref(), look))
@@ -133,7 +133,7 @@ impl Area {
     /// Returns the curve that is shown: the selected one, else the chosen one,
     /// else the first.
     fn shown<'a>(&self, shared: Shared<'a>, curves: &[&'a CellResult]) -> Option<&'a CellResult> {
-        [self.chosen, shared.selected]
+        [shared.selected, self.chosen]
             .into_iter()
             .flatten()
             .find_map(|id| curves.iter().find(|cell| cell.id == id))

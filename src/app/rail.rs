@@ -1,19 +1,25 @@
 //! The distance rail under the drawing: where may a person stand?
 
+use std::cell::RefCell;
+use std::fmt;
+
 use iced::widget::canvas::{self, Canvas};
-use iced::widget::{button, column, container, responsive, row, scrollable, text};
+use iced::widget::{button, column, container, pick_list, responsive, row, scrollable, text};
 use iced::{Alignment, Element, Event, Length, Rectangle, Renderer, Theme, mouse};
 
 use super::canvas::{Held, SCALE};
 use super::shared::{Look, Measure, Shared};
 use super::theme::{self, BODY, REGULAR, SMALL, words};
 use crate::drawing::mark::Rectangle as Box;
-use crate::drawing::rail::{self, Lengths, Line, Rail};
+use crate::drawing::rail::{self, Lengths, Line, Rail, Shading};
 use crate::drawing::role::Role;
 use crate::notebook::datum::CellId;
 
 /// How high the panel is, at 100 %.
 const HEIGHT: f32 = 216.0;
+
+/// How much higher where there are lines to choose from.
+const CHOICES: f32 = 34.0;
 
 /// How much room a scrolling bar takes.
 const BAR: f32 = 16.0;
@@ -25,6 +31,8 @@ pub struct Area {
     chosen: Option<(String, String)>,
     /// What was selected when it was chosen: another selection chooses anew.
     selected: Option<CellId>,
+    /// The shading that was shown last.
+    shading: RefCell<Option<Shading>>,
 }
 
 /// What happens in the area.
@@ -93,12 +101,13 @@ impl Area {
             panel = panel.push(choices(shared, &lines, line.as_ref()));
         }
         let known = line.and_then(|line| {
-            Rail::of(shared.engine, shared.results, &line, lengths(look)).map(|rail| {
-                if shared.fresh {
-                    rail
-                } else {
-                    rail.provisional()
-                }
+            let mut held = self.shading.borrow_mut();
+            let (engine, results) = (shared.engine, shared.results);
+            let rail = Rail::held(engine, results, &line, lengths(look), &mut held)?;
+            Some(if shared.fresh {
+                rail
+            } else {
+                rail.provisional()
             })
         });
         panel = panel.push(match known {
@@ -108,7 +117,7 @@ impl Area {
         container(panel)
             .padding([10, 14])
             .width(Length::Fill)
-            .height(HEIGHT)
+            .height(HEIGHT + if lines.len() > 1 { CHOICES } else { 0.0 })
             .style(theme::panel(look))
             .into()
     }
@@ -123,19 +132,47 @@ pub const fn lengths(look: Look) -> Lengths {
     }
 }
 
+/// A line that can be chosen.
+#[derive(Clone, Debug, PartialEq, Eq)]
+struct Choice {
+    source: String,
+    way: String,
+}
+
+impl fmt::Display for Choice {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        write!(f, "{}, {}", self.source, self.way)
+    }
+}
+
+/// More lines than this are chosen from a list that opens.
+const BUTTONS: usize = 4;
+
 fn choices<'a>(shared: Shared<'a>, lines: &[Line], shown: Option<&Line>) -> Element<'a, Message> {
     let look = shared.look;
+    let selected = shared.selected;
+    let choose = move |choice: Choice| Message::Choose(choice.source, choice.way, selected);
+    let choice = |line: &Line| Choice {
+        source: line.source.clone(),
+        way: line.way(),
+    };
+    if lines.len() > BUTTONS {
+        let all: Vec<Choice> = lines.iter().map(choice).collect();
+        return pick_list(all, shown.map(choice), choose)
+            .text_size(SMALL)
+            .font(REGULAR)
+            .padding([2, 10])
+            .style(theme::pick(look))
+            .menu_style(theme::menu(look))
+            .into();
+    }
     let choices = lines.iter().map(|line| {
         let is_shown = shown.is_some_and(|shown| shown.same(line));
-        let label = format!("{}, {}", line.source, line.way());
-        button(text(label).size(SMALL).font(REGULAR))
+        let choice = choice(line);
+        button(text(choice.to_string()).size(SMALL).font(REGULAR))
             .padding([2, 10])
             .style(theme::choice(is_shown, look))
-            .on_press(Message::Choose(
-                line.source.clone(),
-                line.way(),
-                shared.selected,
-            ))
+            .on_press(choose(choice))
             .into()
     });
     row(choices)

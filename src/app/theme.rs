@@ -6,7 +6,7 @@
 
 use std::borrow::Cow;
 
-use iced::widget::{button, container, scrollable, text, text_input};
+use iced::widget::{button, container, overlay, pick_list, scrollable, text, text_input};
 use iced::{Background, Border, Color, Font, Theme, font};
 
 use super::shared::Look;
@@ -187,8 +187,17 @@ pub fn framed(look: Look) -> impl Fn(&Theme, button::Status) -> button::Style {
             background: Some(Background::Color(colour(ground, look))),
             text_color: colour(role, look),
             border: Border {
-                color: colour(Role::Line, look),
-                width: 1.0,
+                // Where muted ink is black too, only the frame tells what rests.
+                color: match (look.theme, status) {
+                    (role::Theme::Contrast, button::Status::Disabled) => colour(Role::Line, look),
+                    (role::Theme::Contrast, _) => colour(Role::Ink, look),
+                    _ => colour(Role::Line, look),
+                },
+                width: match (look.theme, status) {
+                    (role::Theme::Contrast, button::Status::Disabled) => 1.0,
+                    (role::Theme::Contrast, _) => 2.0,
+                    _ => 1.0,
+                },
                 radius: 7.0.into(),
             },
             ..button::Style::default()
@@ -267,6 +276,37 @@ pub fn choice(chosen: bool, look: Look) -> impl Fn(&Theme, button::Status) -> bu
     }
 }
 
+/// Returns the style of a list that opens, shut.
+pub fn pick(look: Look) -> impl Fn(&Theme, pick_list::Status) -> pick_list::Style {
+    move |_, _| pick_list::Style {
+        text_color: colour(Role::Ink, look),
+        placeholder_color: colour(Role::Muted, look),
+        handle_color: colour(Role::Action, look),
+        background: Background::Color(colour(Role::Card, look)),
+        border: Border {
+            color: colour(Role::Line, look),
+            width: 1.0,
+            radius: 7.0.into(),
+        },
+    }
+}
+
+/// Returns the style of a list that opens, open.
+pub fn menu(look: Look) -> impl Fn(&Theme) -> overlay::menu::Style {
+    move |_| overlay::menu::Style {
+        background: Background::Color(colour(Role::Card, look)),
+        border: Border {
+            color: colour(Role::Line, look),
+            width: 1.0,
+            radius: 7.0.into(),
+        },
+        text_color: colour(Role::Ink, look),
+        selected_text_color: colour(Role::Card, look),
+        selected_background: Background::Color(colour(Role::Action, look)),
+        shadow: iced::Shadow::default(),
+    }
+}
+
 /// Returns the style of a field that is open for typing.
 pub fn typing(look: Look) -> impl Fn(&Theme, text_input::Status) -> text_input::Style {
     move |_, _| text_input::Style {
@@ -306,5 +346,56 @@ pub fn scroll(look: Look, theme: &Theme, status: scrollable::Status) -> scrollab
         horizontal_rail: rail,
         gap: None,
         ..usual
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::app::shared::Measure;
+
+    fn look(theme: role::Theme) -> Look {
+        Look {
+            theme,
+            zoom: 1.0,
+            measure: Measure::Metric,
+        }
+    }
+
+    #[test]
+    fn no_text_is_smaller_than_13() {
+        for size in [BODY, SMALL, RESULT] {
+            assert!(size >= 13.0, "{size}, wanted at least 13");
+        }
+        let smallest = (7.5 * crate::app::canvas::SCALE) as f32;
+        assert!((smallest - 13.0).abs() < 1e-5, "{smallest}, wanted 13");
+    }
+
+    #[test]
+    fn widgets_without_a_style_take_the_roles_of_the_theme() {
+        for own in role::Theme::ALL {
+            let look = look(own);
+            let palette = theme(look).palette();
+            for (found, role) in [
+                (palette.background, Role::Ground),
+                (palette.text, Role::Ink),
+                (palette.primary, Role::Action),
+                (palette.danger, Role::Over),
+            ] {
+                assert_eq!(found, colour(role, look), "{role:?} in {own:?}");
+            }
+        }
+    }
+
+    #[test]
+    fn what_rests_is_told_from_what_can_be_pressed_in_every_theme() {
+        for own in role::Theme::ALL {
+            let look = look(own);
+            let (at, style) = (theme(look), framed(look));
+            let active = style(&at, button::Status::Active);
+            let rests = style(&at, button::Status::Disabled);
+            let same = active.text_color == rests.text_color && active.border == rests.border;
+            assert!(!same, "{own:?}: {active:?}");
+        }
     }
 }

@@ -14,6 +14,7 @@ use crate::drawing::font::Weight;
 use crate::drawing::mark::{Anchor, Mark, Rectangle, Shape, Text};
 use crate::drawing::picture::Picture;
 use crate::drawing::role::Role;
+use crate::notebook::cell::position::Band;
 
 use plot::{BODY, Plot, TITLE, fit};
 
@@ -57,6 +58,8 @@ pub struct Marker {
 pub struct Curve {
     /// What the plot is of.
     pub title: String,
+    /// The band that is drawn.
+    pub band: Band,
     /// The quantity along the bottom, with its unit: `distance from the face (m)`.
     pub x_label: String,
     /// The quantity upwards, with its unit.
@@ -90,9 +93,11 @@ const DEPTH: f64 = 1e6;
 ///
 /// ```
 /// use farglow::drawing::curve::{self, Curve};
+/// use farglow::notebook::cell::position::Band;
 ///
 /// let curve = Curve {
 ///     title: "door, straight out".into(),
+///     band: Band::Total,
 ///     x_label: "distance (m)".into(),
 ///     y_label: "irradiance (kW/m²)".into(),
 ///     y_unit: 1000.0,

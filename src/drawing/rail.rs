@@ -11,6 +11,7 @@ mod plan;
 use crate::drawing::mark::{Rectangle, Shape};
 use crate::drawing::picture::Picture;
 
+pub use data::Shading;
 pub use line::{Lengths, Line, Probe, Reading};
 
 /// Where a rule begins to be met.
@@ -79,6 +80,8 @@ pub struct Rail {
     pub notes: Vec<String>,
     /// The unit of the ruler.
     pub lengths: Lengths,
+    /// Whether pins and findings hold; not while bounds are being worked out.
+    pub settled: bool,
 }
 
 impl Rail {
@@ -86,6 +89,7 @@ impl Rail {
     /// no finding holds yet, and each says so.
     #[must_use]
     pub fn provisional(mut self) -> Rail {
+        self.settled = false;
         for pin in &mut self.pins {
             pin.nominal = Some((pin.distance, pin.text.clone()));
             pin.text = "being worked out".to_owned();

@@ -52,6 +52,7 @@ pub fn plot() -> Picture {
         }),
     };
     let curve = Curve {
+        band: farglow::notebook::cell::position::Band::NearInfrared,
         title: "door: near-infrared irradiance at the eye, straight out, 1.60 m above the floor"
             .into(),
         x_label: "distance from the face of the door (m)".into(),

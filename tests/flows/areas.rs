@@ -8,7 +8,7 @@ use farglow::app::{self, cautions, curve, rail, readiness, theme};
 use farglow::drawing::role::{Role, Theme};
 use farglow::notebook::datum::CellId;
 use farglow::notebook::engine::Engine;
-use farglow::notebook::results::Results;
+use farglow::notebook::results::{Results, Shown};
 use farglow::notebook::snapshot::Snapshot;
 use farglow::notebook::uncertainty::Settings;
 use farglow::store::{schema, template};
@@ -36,6 +36,16 @@ impl Job {
         let results = Snapshot::of(&engine)
             .results(Settings::default(), &mut |_| true)
             .expect("nothing stops the draws");
+        Job { engine, results }
+    }
+
+    /// A job without bounds, which cost too much with many sources.
+    fn nominal(text: &str) -> Job {
+        let notebook = schema::read(text.as_bytes())
+            .expect("the text is a notebook")
+            .notebook;
+        let engine = Engine::open(notebook).expect("its names are legal");
+        let results = Snapshot::of(&engine).nominal();
         Job { engine, results }
     }
 
@@ -324,11 +334,7 @@ fn the_pointer_reads_distance_irradiance_and_allowed_time() {
     let mut read = ui(area.view(job.shared(LOOK)), size, LOOK);
     assert!(read.find("2.50 m from the face").is_ok());
     let charger = job.results.cell("charger").expect("the demo has a charger");
-    let value = |name: &str| {
-        charger
-            .shown(name)
-            .and_then(farglow::notebook::results::Shown::quantity)
-    };
+    let value = |name: &str| charger.shown(name).and_then(Shown::quantity);
     let nominal = value("near_ir_irradiance").expect("a position has it").si;
     let told = format!(
         "(nominal {})",
@@ -410,6 +416,81 @@ fn a_click_on_a_flag_selects_its_cell() {
     }
 }
 
+/// The demo with a second hot thing beside the door.
+fn two_sources() -> Job {
+    Job::new(&template::DEMO.text.replace(
+        "    {\n      \"kind\": \"formula\",",
+        "    { \"kind\": \"source\", \"name\": \"pot\", \"form\": \"body\", \"outline\": \"sphere\", \
+         \"diameter\": \"0.5 m\", \"temperature\": \"900 °C\", \"emissivity\": \"0.8\", \
+         \"x\": \"30 m\", \"y\": \"0 m\", \"z\": \"1 m\" },\n    {\n      \"kind\": \"formula\",",
+    ))
+}
+
+#[test]
+fn a_chosen_line_stays_until_something_on_another_one_is_selected() {
+    let job = two_sources();
+    let mut area = rail::Area::new();
+    let size = Size::new(980.0, 250.0);
+    let mut view = ui(area.view(job.shared(LOOK)), size, LOOK);
+    assert!(view.find("door, straight out").is_ok());
+    click(&mut view, "pot, heading 0 °");
+    for message in view.into_messages().collect::<Vec<_>>() {
+        assert_eq!(area.update(message), rail::Action::None);
+    }
+    compare(
+        "rail-other-line",
+        ui(area.view(job.shared(LOOK)), size, LOOK),
+        LOOK,
+    );
+    let selected = Shared {
+        selected: Some(job.id("charger")),
+        ..job.shared(LOOK)
+    };
+    compare(
+        "rail-selected-line",
+        ui(area.view(selected), size, LOOK),
+        LOOK,
+    );
+}
+
+#[test]
+fn many_lines_are_chosen_from_a_list() {
+    let pots: String = (0..9)
+        .map(|i| {
+            format!(
+                "    {{ \"kind\": \"source\", \"name\": \"pot_{i}\", \"form\": \"body\", \
+                 \"outline\": \"sphere\", \"diameter\": \"0.5 m\", \"temperature\": \"900 °C\", \
+                 \"emissivity\": \"0.8\", \"x\": \"{} m\", \"y\": \"0 m\", \"z\": \"1 m\" }},\n",
+                30 + 2 * i
+            )
+        })
+        .collect();
+    let formula = "    {\n      \"kind\": \"formula\",";
+    let job = Job::nominal(&template::DEMO.text.replace(formula, &(pots + formula)));
+    let area = rail::Area::new();
+    let view = ui(area.view(job.shared(LOOK)), Size::new(980.0, 250.0), LOOK);
+    compare("rail-many-lines", view, LOOK);
+}
+
+#[test]
+fn the_rail_is_told_in_feet_and_says_when_bounds_are_not_there_yet() {
+    let job = Job::demo();
+    let size = Size::new(980.0, 250.0);
+    let us = Look {
+        measure: Measure::Us,
+        ..LOOK
+    };
+    let area = rail::Area::new();
+    compare("rail-feet", ui(area.view(job.shared(us)), size, us), us);
+    let nominal = Snapshot::of(&job.engine).nominal();
+    let shared = Shared {
+        results: &nominal,
+        fresh: false,
+        ..job.shared(LOOK)
+    };
+    compare("rail-nominal", ui(area.view(shared), size, LOOK), LOOK);
+}
+
 #[test]
 fn what_is_missing_or_broken_is_said() {
     let empty = Job::new("{\"farglow\": 1, \"cells\": []}");
@@ -463,7 +544,17 @@ fn every_picture_that_is_kept_is_compared() {
     let mut expected: Vec<String> = ["cautions", "cautions-open", "curve", "rail", "readiness"]
         .iter()
         .flat_map(|area| themes.map(|theme| format!("{area}-{theme}-tiny-skia.sha256")))
-        .chain(["curve-readout-tiny-skia.sha256".to_owned()])
+        .chain(
+            [
+                "curve-readout",
+                "rail-feet",
+                "rail-many-lines",
+                "rail-nominal",
+                "rail-other-line",
+                "rail-selected-line",
+            ]
+            .map(|name| format!("{name}-tiny-skia.sha256")),
+        )
         .collect();
     expected.sort();
     assert_eq!(kept, expected);

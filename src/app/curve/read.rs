@@ -2,6 +2,7 @@
 
 use crate::app::rail::lengths;
 use crate::app::shared::{Look, Measure, Shared};
+use crate::drawing::curve::Curve;
 use crate::drawing::rail::{Line, Probe, Reading};
 use crate::guidance::{Allowed, Library};
 use crate::notebook::Kind;
@@ -32,7 +33,12 @@ pub(super) struct Readout {
 impl Readout {
     /// Reads a curve at a distance; `None` where a source is touched or in
     /// error.
-    pub(super) fn of(shared: Shared<'_>, cell: &CellResult, distance: f64) -> Option<Readout> {
+    pub(super) fn of(
+        shared: Shared<'_>,
+        cell: &CellResult,
+        curve: &Curve,
+        distance: f64,
+    ) -> Option<Readout> {
         let line = Line::of(shared.engine, cell.id)?.at_height_of(shared.engine, cell.id);
         let orientation = orientation(shared, cell);
         let probe = Probe::new(shared.engine, &line, orientation)?;
@@ -40,16 +46,10 @@ impl Readout {
         let bound = |column: &str| above_nominal(cell, column, distance);
         let factors = (bound("near_ir_irradiance"), bound("irradiance"));
         let upper = |nominal: f64, factor: Option<f64>| factor.map(|factor| nominal * factor);
-        let curve = crate::drawing::curve::Curve::of(shared.engine, shared.results, cell);
-        let is_total = curve.y_label.starts_with("irradiance, all");
         let readout = Readout {
             distance,
             clear: distance - line.edge,
-            drawn: if is_total {
-                reading.total
-            } else {
-                reading.near_infrared
-            },
+            drawn: reading.band(curve.band),
             near_infrared: (
                 reading.near_infrared,
                 upper(reading.near_infrared, factors.0),

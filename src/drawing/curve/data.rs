@@ -45,6 +45,7 @@ fn plot(engine: &Engine, results: &Results, cell: &CellResult, quantity: Band) -
     let upper = bounded.then(|| series(cell, column, Shown::upper));
     let height = typed.and_then(|cell| cell.text("z")).unwrap_or("1.6 m");
     Curve {
+        band: quantity,
         title: format!("{}: from {from}, at {height}", cell.name),
         x_label: format!("horizontal distance from the centre of {from} (m)"),
         y_label: format!(

@@ -15,6 +15,7 @@ fn base() -> Curve {
         })
         .collect();
     Curve {
+        band: Band::NearInfrared,
         title: "door: near-infrared irradiance, straight out at 1.60 m".into(),
         x_label: "distance from the face of the door (m)".into(),
         y_label: "near-infrared irradiance (W/m²)".into(),

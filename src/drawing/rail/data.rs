@@ -30,6 +30,19 @@ impl Rail {
     /// nothing is known about any distance.
     #[must_use]
     pub fn of(engine: &Engine, results: &Results, line: &Line, lengths: Lengths) -> Option<Rail> {
+        Rail::held(engine, results, line, lengths, &mut None)
+    }
+
+    /// Returns the same as [`Rail::of`], with the shading taken from what is
+    /// held where that still holds, and put there where not: it is what costs.
+    #[must_use]
+    pub fn held(
+        engine: &Engine,
+        results: &Results,
+        line: &Line,
+        lengths: Lengths,
+        held: &mut Option<Shading>,
+    ) -> Option<Rail> {
         let probe = Probe::new(engine, line, Orientation::Strongest)?;
         let mut rail = Rail {
             about: format!(
@@ -47,6 +60,7 @@ impl Rail {
             elsewhere: Vec::new(),
             notes: Vec::new(),
             lengths,
+            settled: true,
         };
         let mut bands = Vec::new();
         for result in &results.cells {
@@ -66,6 +80,10 @@ impl Rail {
             }
         }
         rail.tell_apart(engine);
+        if rail.pins.is_empty() && rail.stands.is_empty() && rail.notes.is_empty() {
+            rail.notes
+                .push("no zone runs along this line and no position stands on it".to_owned());
+        }
         let band = [Band::NearInfrared, Band::Skin, Band::Total]
             .into_iter()
             .find(|band| bands.contains(band))
@@ -76,7 +94,7 @@ impl Rail {
             Band::Skin => "380–3000 nm, nominal (W/m²)",
         }
         .to_owned();
-        rail.shade(&probe, line.edge, band);
+        rail.shade(probe, line.edge, band, held);
         Some(rail)
     }
 
@@ -179,9 +197,8 @@ impl Rail {
         }
     }
 
-    /// Works out the shading: steps of the row 1, 2, 5 between the weakest and
-    /// the strongest irradiance on the ruler.
-    fn shade(&mut self, probe: &Probe, edge: f64, band: Band) {
+    /// Shades the ruler as far as the flags need it.
+    fn shade(&mut self, probe: Probe, edge: f64, band: Band, held: &mut Option<Shading>) {
         let flags = self
             .pins
             .iter()
@@ -189,6 +206,39 @@ impl Rail {
             .chain(self.stands.iter().map(|stand| stand.distance));
         // Flags read to the right of their poles: the ruler goes on beyond.
         let reach = flags.fold(LEAST, f64::max) * 2.2;
+        let shading = match held {
+            Some(known) if known.holds(&probe, edge, reach, band) => known,
+            _ => held.insert(Shading::new(probe, edge, reach, band)),
+        };
+        self.levels.clone_from(&shading.levels);
+        self.stretches.clone_from(&shading.stretches);
+        self.level_texts = self
+            .levels
+            .iter()
+            .map(|level| format::significant(*level, 1, Rounding::Nearest))
+            .collect();
+    }
+}
+
+/// The shading of a ruler, with what it was worked out from.
+#[derive(Clone, Debug)]
+pub struct Shading {
+    probe: Probe,
+    edge: f64,
+    reach: f64,
+    band: Band,
+    levels: Vec<f64>,
+    stretches: Vec<Stretch>,
+}
+
+impl Shading {
+    fn holds(&self, probe: &Probe, edge: f64, reach: f64, band: Band) -> bool {
+        self.edge == edge && self.reach == reach && self.band == band && self.probe.same(probe)
+    }
+
+    /// Works out the shading: steps of the row 1, 2, 5 between the weakest and
+    /// the strongest irradiance on the ruler.
+    fn new(probe: Probe, edge: f64, reach: f64, band: Band) -> Self {
         let samples: Vec<(f64, f64)> = (0..=POINTS)
             .map(|index| {
                 let share = (f64::from(index) / f64::from(POINTS)).powf(1.6);
@@ -206,13 +256,15 @@ impl Rail {
         let (low, high) = drawn.fold((f64::INFINITY, 0.0_f64), |(low, high), value| {
             (low.min(value), high.max(value))
         });
-        self.levels = levels(low, high);
-        self.level_texts = self
-            .levels
-            .iter()
-            .map(|level| format::significant(*level, 1, Rounding::Nearest))
-            .collect();
-        self.stretches = stretches(&samples, &self.levels);
+        let levels = levels(low, high);
+        Shading {
+            stretches: stretches(&samples, &levels),
+            levels,
+            probe,
+            edge,
+            reach,
+            band,
+        }
     }
 }
 

@@ -1,5 +1,6 @@
 //! A straight line over the floor from a source, and what is met along it.
 
+use std::collections::BTreeMap;
 use std::sync::Arc;
 
 use glam::DVec3;
@@ -45,18 +46,21 @@ impl Line {
     pub fn all(engine: &Engine) -> Vec<Line> {
         let cells = &engine.notebook().cells;
         let mut lines: Vec<Line> = Vec::new();
+        // The places of each source's lines: there may be thousands of sources.
+        let mut known: BTreeMap<String, Vec<usize>> = BTreeMap::new();
         for kinds in [&[Kind::Zone, Kind::Curve][..], &[Kind::Source][..]] {
-            for cell in cells.iter().filter(|cell| kinds.contains(&cell.kind)) {
-                let known = match cell.kind {
-                    Kind::Source => lines.iter().any(|line| line.source == cell.name),
-                    _ => false,
-                };
-                if let Some(line) = engine
-                    .find(&cell.name)
-                    .and_then(|id| Line::drawn_by(engine, id))
-                    && !known
-                    && !lines.iter().any(|other| other.same(&line))
+            for (place, cell) in cells.iter().enumerate() {
+                if !kinds.contains(&cell.kind)
+                    || (cell.kind == Kind::Source && known.contains_key(&cell.name))
                 {
+                    continue;
+                }
+                let Some(line) = engine.id(place).and_then(|id| Line::drawn_by(engine, id)) else {
+                    continue;
+                };
+                let own = known.entry(line.source.clone()).or_default();
+                if !own.iter().any(|at| lines[*at].same(&line)) {
+                    own.push(lines.len());
                     lines.push(line);
                 }
             }
@@ -239,6 +243,17 @@ impl Probe {
             ahead: line.ahead,
             height: line.height,
         })
+    }
+
+    /// Returns whether two probes read the same everywhere.
+    #[must_use]
+    pub fn same(&self, other: &Probe) -> bool {
+        (Arc::ptr_eq(&self.form, &other.form) || self.form == other.form)
+            && self.weights == other.weights
+            && self.orientation == other.orientation
+            && self.origin == other.origin
+            && self.ahead == other.ahead
+            && self.height == other.height
     }
 
     /// Returns what is met at a distance in metres from the centre of the

@@ -1,14 +1,12 @@
 //! Where everything on the rail goes: flags in lanes above the ruler, so that
 //! no flag covers another and no pole runs through one.
 
-use glam::DVec2;
+mod paint;
 
-use super::{Lengths, Pin, Rail, Stand};
+use super::{Pin, Rail, Stand};
 use crate::drawing::curve::plot::fit;
 use crate::drawing::font::{self, Weight};
-use crate::drawing::mark::{Anchor, Fill, Mark, Rectangle, Shape, Stroke, Text};
-use crate::drawing::picture::Picture;
-use crate::drawing::role::Role;
+use crate::drawing::mark::{Rectangle, Shape};
 
 const HEADING: &str = "Distance rail";
 const TITLE: f64 = 10.0;
@@ -281,6 +279,11 @@ impl<'a> Plan<'a> {
         title + 16.0 + self.legend_width() <= self.width - SIDE
     }
 
+    /// The top of a lane, over a ruler whose top is given.
+    fn lane(top: f64, lane: usize) -> f64 {
+        top - SYMBOL - (lane + 1) as f64 * LANE
+    }
+
     /// Returns the height that the picture really has.
     fn drawn(&self, height: f64) -> f64 {
         let least = self.height();
@@ -313,226 +316,11 @@ impl<'a> Plan<'a> {
             })
             .collect()
     }
-
-    pub(super) fn picture(&self, height: f64) -> Picture {
-        let height = self.drawn(height);
-        let mut picture = Picture::new(self.width, height);
-        self.title(&mut picture);
-        // What is left over stands between the title and the flags.
-        let top = height - self.under() - BAR;
-        self.ruler(&mut picture, top);
-        self.poles(&mut picture, top);
-        self.words(&mut picture, top);
-        self.legend(&mut picture, top + BAR);
-        picture
-    }
-
-    fn title(&self, picture: &mut Picture) {
-        let title = Text::new(DVec2::new(0.0, TITLE), TITLE, HEADING).bold();
-        let left = title_width();
-        let about = fit(&self.about, self.width - left, SMALL, Weight::Regular);
-        picture.push(Mark::Text(title));
-        picture.push(Mark::Text(
-            Text::new(DVec2::new(left, TITLE), SMALL, about).role(Role::Muted),
-        ));
-    }
-
-    fn ruler(&self, picture: &mut Picture, top: f64) {
-        for stretch in &self.rail.stretches {
-            let (from, to) = (self.x(stretch.from), self.x(stretch.to));
-            if to > from {
-                picture.push(Mark::Area {
-                    outline: Rectangle::new(from, top, to - from, BAR).corners(),
-                    fill: Some(Fill::Ramp(self.strength(stretch.step))),
-                    hatch: None,
-                    edge: None,
-                });
-            }
-        }
-        // A hair with pale edges tells neighbours apart on any print.
-        for pair in self.rail.stretches.windows(2) {
-            let x = self.x(pair[0].to);
-            if pair[0].to < self.end {
-                let ends = [DVec2::new(x, top), DVec2::new(x, top + BAR)];
-                for stroke in [
-                    Stroke::solid(Role::Card, 1.3),
-                    Stroke::solid(Role::Ink, 0.4),
-                ] {
-                    picture.push(Mark::line(ends[0], ends[1], stroke));
-                }
-            }
-        }
-        let frame = Rectangle::new(SIDE, top, self.width - 2.0 * SIDE, BAR);
-        picture.push(Mark::frame(frame, Stroke::solid(Role::Ink, 0.75)));
-
-        let unit = self.rail.lengths.metres();
-        let end = self.end / unit;
-        let (step, parts) = tick(end, (self.width - 2.0 * SIDE) / 46.0);
-        let count = (end / step * f64::from(parts) * (1.0 + 1e-9)).floor() as u32;
-        let mut free = f64::NEG_INFINITY;
-        for index in 0..=count {
-            let value = step * f64::from(index) / f64::from(parts);
-            let x = self.x(value * unit);
-            let whole = index % parts == 0;
-            let foot = top + BAR;
-            let down = DVec2::new(0.0, if whole { 4.0 } else { 2.0 });
-            let at = DVec2::new(x, foot);
-            picture.push(Mark::line(at, at + down, Stroke::hair(Role::Ink)));
-            if !whole {
-                continue;
-            }
-            let text = number(value, self.rail.lengths);
-            let text = Text::new(DVec2::new(x, foot + 4.0 + LINE - 1.0), SMALL, text)
-                .anchored(Anchor::Middle);
-            let extent = text.extent();
-            if extent.from.x > free && extent.from.x >= 0.0 && extent.to.x <= self.width {
-                free = extent.to.x + 4.0;
-                picture.push(Mark::Text(text));
-            }
-        }
-    }
-
-    fn lane(top: f64, lane: usize) -> f64 {
-        top - SYMBOL - (lane + 1) as f64 * LANE
-    }
-
-    fn poles(&self, picture: &mut Picture, top: f64) {
-        for flag in &self.flags {
-            let role = match flag.of {
-                Of::Pin(_) => Role::Action,
-                Of::Stand(stand) => stand.shape.role(),
-            };
-            let head = DVec2::new(flag.x, Self::lane(top, flag.lane) + LINE * 0.5);
-            let foot = DVec2::new(flag.x, top + BAR);
-            // A pale edge keeps the pole apart from the shading under it.
-            let inside = DVec2::new(flag.x, top + 0.4);
-            let edge = Stroke::solid(Role::Card, 2.6);
-            picture.push(Mark::line(inside, foot - DVec2::new(0.0, 0.4), edge));
-            picture.push(Mark::line(head, foot, Stroke::solid(role, 1.0)));
-        }
-        for pin in &self.rail.pins {
-            if let Some((distance, _)) = pin.nominal
-                && distance.is_finite()
-                && (0.0..=self.end).contains(&distance)
-                && distance != pin.distance
-            {
-                picture.push(Mark::Shape {
-                    shape: Shape::NominalPin,
-                    at: DVec2::new(self.x(distance), top),
-                    size: SYMBOL - 1.0,
-                });
-            }
-        }
-        for flag in &self.flags {
-            let (shape, at) = match flag.of {
-                Of::Pin(_) => (Shape::Pin, DVec2::new(flag.x, top)),
-                Of::Stand(stand) => {
-                    let middle = Self::lane(top, flag.lane) + LINE * 0.5;
-                    (stand.shape, DVec2::new(flag.x, middle))
-                }
-            };
-            picture.push(Mark::Shape {
-                shape,
-                at,
-                size: SYMBOL,
-            });
-        }
-    }
-
-    fn words(&self, picture: &mut Picture, top: f64) {
-        for flag in &self.flags {
-            let baseline = Self::lane(top, flag.lane) + (LINE + font::CAP_HEIGHT * SMALL) / 2.0;
-            let at = DVec2::new(flag.x + BESIDE, baseline);
-            let role = match flag.of {
-                Of::Pin(_) => Role::Action,
-                Of::Stand(_) => Role::Ink,
-            };
-            let [first, second] = &flag.lines;
-            picture.push(Mark::Text(
-                Text::new(at, SMALL, first.as_str()).bold().role(role),
-            ));
-            if second.is_empty() {
-                continue;
-            }
-            let role = match flag.of {
-                Of::Stand(stand) if stand.shape != Shape::NotAssessed => stand.shape.role(),
-                _ => Role::Muted,
-            };
-            let at = at + DVec2::new(0.0, LINE);
-            picture.push(Mark::Text(Text::new(at, SMALL, second.as_str()).role(role)));
-        }
-    }
-
-    fn legend(&self, picture: &mut Picture, foot: f64) {
-        let mut row = foot + 4.0 + LINE + 8.0;
-        let title = fit(&self.rail.quantity, self.width, SMALL, Weight::Regular);
-        let at = DVec2::new(0.0, row + 7.0);
-        picture.push(Mark::Text(Text::new(at, SMALL, title).role(Role::Muted)));
-        let wide = self.swatch();
-        let left = if self.beside() {
-            self.width - SIDE - self.legend_width()
-        } else {
-            row += LINE + 2.0;
-            SIDE
-        };
-        let (first, last) = self.steps();
-        for step in first..=last {
-            let x = left + wide * (step - first) as f64;
-            picture.push(Mark::Area {
-                outline: Rectangle::new(x, row, wide, 7.0).corners(),
-                fill: Some(Fill::Ramp(self.strength(step))),
-                hatch: None,
-                edge: Some(Stroke::hair(Role::Ink)),
-            });
-        }
-        let baseline = row + 7.0 + LINE - 1.5;
-        let mut free = if self.beside() { left - 8.0 } else { 0.0 };
-        for (step, text) in (1_u32..).zip(self.level_texts()) {
-            let at = DVec2::new(left + wide * f64::from(step), baseline);
-            let text = Text::new(at, SMALL, text.as_str()).anchored(Anchor::Middle);
-            let extent = text.extent();
-            if extent.from.x >= free && extent.to.x <= self.width {
-                free = extent.to.x + 3.0;
-                picture.push(Mark::Text(text));
-            }
-        }
-        for note in &self.notes {
-            row += LINE;
-            let at = DVec2::new(0.0, row + 7.0 + LINE - 1.5);
-            picture.push(Mark::Text(
-                Text::new(at, SMALL, note.as_str()).role(Role::Muted),
-            ));
-        }
-    }
 }
 
 /// How much of the first row the heading takes.
 fn title_width() -> f64 {
     font::width(HEADING, TITLE, Weight::SemiBold) + 8.0
-}
-
-/// Writes a number of the ruler, with its unit.
-fn number(value: f64, lengths: Lengths) -> String {
-    // Steps are 1, 2, 5 times powers of ten: three places hold any of them.
-    let text = format!("{value:.3}");
-    let text = text.trim_end_matches('0').trim_end_matches('.');
-    format!("{text} {}", lengths.symbol())
-}
-
-/// Returns the step between numbers on a ruler, 1, 2 or 5 times a power of
-/// ten so that there are at most `most`, and into how many parts it is divided.
-fn tick(end: f64, most: f64) -> (f64, u32) {
-    let least = end / most.max(1.0);
-    let mut decade = 10_f64.powi(least.log10().floor() as i32);
-    for _ in 0..3 {
-        for (digit, parts) in [(1.0, 5), (2.0, 4), (5.0, 5)] {
-            if digit * decade >= least * (1.0 - 1e-9) {
-                return (digit * decade, parts);
-            }
-        }
-        decade *= 10.0;
-    }
-    (end, 1)
 }
 
 /// Breaks a note into lines at its spaces.

@@ -28,6 +28,7 @@ fn base() -> Rail {
         elsewhere: Vec::new(),
         notes: Vec::new(),
         lengths: Lengths::Metres,
+        settled: true,
     }
 }
 
@@ -208,6 +209,17 @@ fn nothing_holds_while_bounds_are_worked_out() {
             .iter()
             .all(|stand| stand.shape == Shape::NotAssessed)
     );
+    let picture = picture(&rail, 493.0, 140.0);
+    let filled = picture.marks.iter().any(|mark| {
+        matches!(
+            mark,
+            Mark::Shape {
+                shape: Shape::Pin,
+                ..
+            }
+        )
+    });
+    assert!(!filled, "a filled pin is drawn");
     assert!(rail.pins.iter().all(|pin| pin.text == "being worked out"));
 }
 
@@ -371,5 +383,79 @@ fn the_shading_uses_the_whole_ramp_for_what_is_shown() {
     assert_eq!(strengths.len(), expected.len(), "{strengths:?}");
     for (got, wanted) in strengths.iter().zip(expected) {
         assert!((got - wanted).abs() < 1e-12, "{got}, wanted {wanted}");
+    }
+}
+
+#[test]
+fn a_held_shading_is_used_while_nothing_it_hangs_on_changes() {
+    use crate::notebook::edit::Edit;
+    let (mut engine, results) = worked_out(template::DEMO.text);
+    let line = Line::all(&engine).remove(0);
+    let mut held = None;
+    let rail = |engine: &Engine, held: &mut Option<Shading>| {
+        Rail::held(engine, &results, &line, Lengths::Metres, held).expect("no fault")
+    };
+    let first = rail(&engine, &mut held);
+    assert_eq!(rail(&engine, &mut held), first, "held as it was");
+    let name = engine
+        .notebook()
+        .cells
+        .iter()
+        .position(|cell| cell.name == "t_hearth")
+        .and_then(|place| engine.id(place))
+        .expect("the demo has a hearth");
+    let field = engine
+        .cell(name)
+        .and_then(|cell| cell.field("entry"))
+        .cloned();
+    let mut hotter = field.expect("a value has an entry");
+    hotter.content = crate::notebook::cell::Content::Text("1400 °C".into());
+    let edit = Edit::SetField {
+        name: "t_hearth".into(),
+        field: "entry",
+        content: Some(hotter),
+    };
+    let _ = engine.apply(edit).expect("the entry can be changed");
+    let after = rail(&engine, &mut held);
+    assert_ne!(
+        after.stretches, first.stretches,
+        "a hotter hearth shades farther"
+    );
+    let fresh = Rail::of(&engine, &results, &line, Lengths::Metres).expect("no fault");
+    assert_eq!(after, fresh, "held equals fresh");
+}
+
+#[test]
+fn every_source_has_a_line_and_a_selected_cell_finds_its_own() {
+    let text = template::DEMO.text.replace(
+        "    {\n      \"kind\": \"formula\",",
+        "    { \"kind\": \"source\", \"name\": \"pot\", \"form\": \"body\", \"outline\": \"sphere\", \
+         \"diameter\": \"0.5 m\", \"temperature\": \"900 °C\", \"emissivity\": \"0.8\", \
+         \"x\": \"30 m\", \"y\": \"0 m\", \"z\": \"1 m\" },\n    {\n      \"kind\": \"formula\",",
+    );
+    let (engine, _) = worked_out(&text);
+    let lines = Line::all(&engine);
+    let names: Vec<(String, String)> = lines
+        .iter()
+        .map(|line| (line.source.clone(), line.way()))
+        .collect();
+    let expected = [("door", "straight out"), ("pot", "heading 0 °")];
+    assert_eq!(
+        names,
+        expected.map(|(source, way)| (source.to_owned(), way.to_owned()))
+    );
+    // A sphere reaches out by its radius.
+    assert!((lines[1].edge - 0.25).abs() < 1e-12, "{}", lines[1].edge);
+    for (cell, source) in [
+        ("pot", Some("pot")),
+        ("charger", Some("door")),
+        ("charger_limits", Some("door")),
+        ("eye_4_min", Some("door")),
+        ("spotter", None),
+        ("bay", None),
+    ] {
+        let id = engine.find(cell).expect("the cell is there");
+        let found = Line::of(&engine, id).map(|line| line.source);
+        assert_eq!(found.as_deref(), source, "{cell}");
     }
 }
