@@ -54,7 +54,7 @@ fn rails(sheet: &Sheet<'_>) -> Vec<Block> {
         };
         blocks.push(if blocks.is_empty() {
             Block::Together(vec![
-                Block::Heading("Where a person may stand".to_owned()),
+                Block::Heading("Where each rule begins to be met".to_owned()),
                 picture,
             ])
         } else {
