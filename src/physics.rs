@@ -10,6 +10,8 @@ pub mod exposure;
 mod hazard;
 pub mod planck;
 pub mod region;
+pub mod spectrum;
+pub mod subtense;
 pub mod surface;
 pub mod view;
 pub mod view_factor;
