@@ -12,6 +12,7 @@ mod hazard;
 pub mod planck;
 pub mod radiant;
 pub mod region;
+pub mod scene;
 pub mod screen;
 pub mod surface;
 pub mod view;
