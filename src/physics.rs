@@ -14,6 +14,8 @@ pub mod radiant;
 pub mod region;
 pub mod scene;
 pub mod screen;
+pub mod spectrum;
+pub mod subtense;
 pub mod surface;
 pub mod view;
 pub mod view_factor;
