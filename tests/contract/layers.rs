@@ -71,7 +71,7 @@ const MAY_NAME: &[(&str, &[&str])] = &[
 
 /// Files that may name more than their module.
 const MORE: &[(&str, &[&str])] = &[
-    ("entry/function.rs", &["physics"]),
+    ("entry/function/radiation.rs", &["physics"]),
     // Tests of the rail read a template.
     ("drawing/rail/tests.rs", &["store"]),
 ];
