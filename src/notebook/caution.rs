@@ -145,7 +145,7 @@ fn of_source(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
         match shape.kind {
             source::Kind::Pool => cautions.push(called("near-infrared-assumed", None, &[])),
             source::Kind::Body => cautions.push(called("near-infrared-as-total", None, &[])),
-            source::Kind::Opening => {}
+            source::Kind::Opening | source::Kind::Screen => {}
         }
     }
     if let Some(Datum::Shape(shape)) = engine.value_of(id, Slot::Group("shape"))
@@ -154,7 +154,7 @@ fn of_source(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
         cautions.push(called("pool-poured", None, &[]));
     }
     if let Some(Datum::Emission(emission)) = engine.value_of(id, Slot::Group("emission"))
-        && emission.skin > emission.total
+        && emission.face.skin > emission.face.total
     {
         cautions.push(called("band-above-whole", Some("emissivity"), &[]));
     }

@@ -12,9 +12,10 @@ mod ring;
 use std::collections::{BTreeMap, BTreeSet, HashMap};
 use std::sync::Arc;
 
-use super::cell::{Cell, Kind, position, surroundings};
+use super::cell::{Cell, Kind, surroundings};
 use super::datum::{CellId, Datum};
 use super::edit::{self, Edit};
+use super::scene::{Form, FormTask, Heat, HeatTask, LayoutTask};
 use super::task::Task;
 use super::{Diagnostic, Notebook, name};
 use crate::entry::Entry;
@@ -85,6 +86,7 @@ pub struct Engine {
     tasks: Vec<Option<Task>>,
     /// Whose each node is, by the node's number.
     owners: Vec<(CellId, Slot)>,
+    layout: Node,
     form: Node,
     heat: Node,
     room: Node,
@@ -103,7 +105,7 @@ impl Engine {
     pub fn open(notebook: Notebook) -> Result<Engine, Vec<Error>> {
         check(&notebook)?;
         let mut graph = Graph::new();
-        let [form, heat, room] = [graph.add(), graph.add(), graph.add()];
+        let [layout, form, heat, room] = [graph.add(), graph.add(), graph.add(), graph.add()];
         let hidden = |name| (CellId::SCENE, Slot::Group(name));
         let mut engine = Engine {
             notebook: Notebook::default(),
@@ -115,8 +117,9 @@ impl Engine {
             mentions: BTreeMap::new(),
             mentioned: HashMap::new(),
             graph,
-            tasks: vec![None; 3],
-            owners: vec![hidden("form"), hidden("heat"), hidden("room")],
+            tasks: vec![None; 4],
+            owners: ["layout", "form", "heat", "room"].map(hidden).to_vec(),
+            layout,
             form,
             heat,
             room,
@@ -226,11 +229,22 @@ impl Engine {
         self.value(self.slot(id, slot)?)
     }
 
-    /// Returns where all sources are, unless one of them is in error.
+    /// Returns where all sources and screens are, unless one of them is in
+    /// error.
     #[must_use]
-    pub fn form(&self) -> Option<&Arc<position::Form>> {
+    pub fn form(&self) -> Option<&Arc<Form>> {
         match self.value(self.form)? {
             Datum::Form(form) => Some(form),
+            _ => None,
+        }
+    }
+
+    /// Returns what all sources and screens send, unless one of them is in
+    /// error.
+    #[must_use]
+    pub fn heat(&self) -> Option<&Arc<Heat>> {
+        match self.value(self.heat)? {
+            Datum::Heat(heat) => Some(heat),
             _ => None,
         }
     }
@@ -458,7 +472,8 @@ impl Engine {
         if !std::mem::take(&mut self.scene_changed) {
             return;
         }
-        let (mut names, mut shapes, mut emissions) = (Vec::new(), Vec::new(), Vec::new());
+        let (mut names, mut ids) = (Vec::new(), Vec::new());
+        let (mut shapes, mut emissions) = (Vec::new(), Vec::new());
         let (mut air, mut radiant) = (None, None);
         for (cell, id) in self.notebook.cells.iter().zip(&self.ids) {
             match cell.kind {
@@ -470,6 +485,7 @@ impl Engine {
                         continue;
                     };
                     names.push(Arc::from(cell.name.as_str()));
+                    ids.push(*id);
                     shapes.push(shape);
                     emissions.push(emission);
                 }
@@ -480,8 +496,20 @@ impl Engine {
                 _ => {}
             }
         }
-        self.set(self.form, Task::Form(position::FormTask { names, shapes }));
-        self.set(self.heat, Task::Heat(position::HeatTask { emissions }));
+        let layout = LayoutTask {
+            names: names.clone(),
+            ids,
+            shapes: shapes.clone(),
+        };
+        self.set(self.layout, Task::Layout(layout));
+        let form = FormTask {
+            names,
+            shapes,
+            layout: self.layout,
+            air: false,
+        };
+        self.set(self.form, Task::Form(form));
+        self.set(self.heat, Task::Heat(HeatTask { emissions }));
         self.set(
             self.room,
             Task::Room(surroundings::RoomTask { air, radiant }),

@@ -3,6 +3,7 @@
 use std::sync::Arc;
 
 use super::Diagnostic;
+use super::scene;
 use super::cell::field::Expect;
 use super::cell::{assessment, curve, position, source, surroundings, zone};
 use super::datum::{CellId, Datum};
@@ -22,8 +23,10 @@ pub(super) enum Task {
     Shape(source::ShapeTask),
     Emission(source::EmissionTask),
     Source(source::OutcomeTask),
-    Form(position::FormTask),
-    Heat(position::HeatTask),
+    Layout(scene::LayoutTask),
+    Apart(scene::ApartTask),
+    Form(scene::FormTask),
+    Heat(scene::HeatTask),
     Room(surroundings::RoomTask),
     Sights(position::SightsTask),
     Exposure(position::ExposureTask),
@@ -64,21 +67,28 @@ impl<'a> Inputs<'a> {
         }
     }
 
-    pub(super) fn emission(self, node: Node) -> &'a crate::physics::surface::Emission {
+    pub(super) fn emission(self, node: Node) -> &'a Arc<source::Emitted> {
         match self.datum(node) {
             Datum::Emission(emission) => emission,
             _ => panic!("{LINKED}"),
         }
     }
 
-    pub(super) fn form(self, node: Node) -> &'a Arc<position::Form> {
+    pub(super) fn layout(self, node: Node) -> &'a scene::Layout {
+        match self.datum(node) {
+            Datum::Layout(layout) => layout,
+            _ => panic!("{LINKED}"),
+        }
+    }
+
+    pub(super) fn form(self, node: Node) -> &'a Arc<scene::Form> {
         match self.datum(node) {
             Datum::Form(form) => form,
             _ => panic!("{LINKED}"),
         }
     }
 
-    pub(super) fn heat(self, node: Node) -> &'a [crate::physics::surface::Emission] {
+    pub(super) fn heat(self, node: Node) -> &'a Arc<scene::Heat> {
         match self.datum(node) {
             Datum::Heat(heat) => heat,
             _ => panic!("{LINKED}"),
@@ -131,6 +141,8 @@ impl Task {
             Task::Shape(task) => task.inputs(&mut nodes),
             Task::Emission(task) => task.inputs(&mut nodes),
             Task::Source(task) => task.inputs(&mut nodes),
+            Task::Layout(task) => task.inputs(&mut nodes),
+            Task::Apart(task) => task.inputs(&mut nodes),
             Task::Form(task) => task.inputs(&mut nodes),
             Task::Heat(task) => task.inputs(&mut nodes),
             Task::Room(task) => task.inputs(&mut nodes),
@@ -159,6 +171,7 @@ impl Task {
         match self {
             Task::Fault(faults) => return Datum::Fault(Arc::clone(faults)),
             Task::Stuck(cell) => return Datum::Waiting(Arc::new(vec![*cell])),
+            Task::Layout(task) => return task.run(values),
             _ => {}
         }
         if let Some(waiting) = waiting(values, owner) {
@@ -166,11 +179,12 @@ impl Task {
         }
         let inputs = Inputs { values };
         let result = match self {
-            Task::Fault(_) | Task::Stuck(_) => unreachable!("answered above"),
+            Task::Fault(_) | Task::Stuck(_) | Task::Layout(_) => unreachable!("answered above"),
             Task::Entry(task) => task.run(node, inputs, draw),
             Task::Shape(task) => task.run(inputs),
             Task::Emission(task) => task.run(inputs),
             Task::Source(task) => task.run(inputs),
+            Task::Apart(task) => task.run(inputs),
             Task::Form(task) => task.run(inputs),
             Task::Heat(task) => task.run(inputs),
             Task::Room(task) => task.run(inputs),

@@ -16,12 +16,14 @@ use crate::guidance::Envelope;
 use crate::notebook::Diagnostic;
 use crate::notebook::datum::{Datum, Output, Slot};
 use crate::notebook::engine::{Linker, Slot as Own};
+use crate::notebook::scene::Weights;
 use crate::notebook::task::{Inputs, Task};
 use crate::units::{Dimension, Quantity};
 
-pub use sights::{Band, Form, Orientation, Views};
-pub(in crate::notebook) use sights::{Facing, FormTask, HeatTask};
-use sights::{Hit, behind, envelope};
+pub use crate::notebook::scene::Form;
+pub(in crate::notebook) use sights::Facing;
+pub use sights::{Band, Orientation, Views};
+use sights::{Hit, envelope};
 
 /// The fields of a position.
 pub const FIELDS: &[Spec] = &[
@@ -142,8 +144,8 @@ pub struct Sights {
     pub reach: f64,
     /// The names of the sources that it lies behind.
     pub behind: Vec<String>,
-    /// The names of all sources.
-    pub names: Vec<Arc<str>>,
+    /// Where everything is.
+    pub form: Arc<Form>,
     /// The eye's envelope; the first point is the stated one.
     pub around_eye: Views,
     /// The skin's envelope.
@@ -197,11 +199,12 @@ impl SightsTask {
             eye,
             ground,
             reach,
-            behind: behind(form, eye)
+            behind: form
+                .behind(eye)
                 .into_iter()
                 .map(|index| form.names[index].to_string())
                 .collect(),
-            names: form.names.clone(),
+            form: Arc::clone(form),
             around_eye: look(Envelope::Eye)?,
             around_skin: look(Envelope::Skin)?,
         })))
@@ -347,28 +350,20 @@ impl ExposureTask {
         let sights = inputs.sights(self.sights);
         let heat = inputs.heat(self.heat);
         let orientation = self.facing.orientation(inputs);
-        let weights = Band::ALL.map(|band| band.weights(heat));
-        let views = sights.around_eye.at(0);
-        let at_eye = |weights: &Vec<f64>| sights.around_eye.irradiance(0, orientation, weights);
+        let weights = Band::ALL.map(|band| heat.weights(band));
+        let at_eye =
+            |weights: &Weights<'_>| sights.around_eye.irradiance(0, orientation, weights);
         let [total, near_infrared, skin] = weights.each_ref().map(at_eye);
         let worst = |around: &Views| weights.each_ref().map(|w| around.worst(orientation, w));
         let normal = total.1;
-        let parts: Vec<(Arc<str>, f64, f64)> = sights
-            .names
-            .iter()
-            .zip(views)
-            .zip(heat)
-            .map(|((name, view), emission)| {
-                let factor = view.factor(normal);
-                (Arc::clone(name), emission.total * factor, factor)
-            })
-            .collect();
+        let parts = self::parts(sights, &weights[Band::Total as usize], normal);
         let seen: f64 = parts.iter().map(|(_, _, factor)| factor).sum();
         let mut radiances = [0.0_f64; 4];
-        for (view, emission) in views.iter().zip(heat) {
+        for (part, view) in sights.around_eye.parts(0) {
             if view.flux() == DVec3::ZERO {
                 continue;
             }
+            let emission = &heat.parts[part];
             for (greatest, exitance) in radiances.iter_mut().zip([
                 emission.blue_light,
                 emission.retinal_2006,
@@ -388,6 +383,26 @@ impl ExposureTask {
             normal,
         })))
     }
+}
+
+/// Returns for each emitter its name, what it sends to a receiver of this
+/// normal at the stated point in W/m², and its configuration factor there:
+/// that of all of it that is seen, behind a mesh or a filter too.
+fn parts(sights: &Sights, weights: &Weights<'_>, normal: DVec3) -> Vec<(Arc<str>, f64, f64)> {
+    let form = &sights.form;
+    let mut parts: Vec<(Arc<str>, f64, f64)> = form
+        .names
+        .iter()
+        .map(|name| (Arc::clone(name), 0.0, 0.0))
+        .collect();
+    let arriving = sights.around_eye.arriving(0, weights);
+    for ((part, view), exitance) in sights.around_eye.parts(0).zip(arriving.iter()) {
+        let factor = view.factor(normal);
+        let (_, sent, seen) = &mut parts[form.owner(part)];
+        *sent += exitance * factor;
+        *seen += factor;
+    }
+    parts
 }
 
 pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {

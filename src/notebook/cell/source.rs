@@ -12,6 +12,7 @@ use crate::notebook::engine::Linker;
 use crate::notebook::task::{Inputs, Task};
 use crate::physics::planck;
 use crate::physics::region::Region;
+use crate::physics::scene::{Barrier, Part};
 use crate::physics::surface::Emission;
 use crate::units::{Dimension, Quantity};
 
@@ -146,6 +147,8 @@ pub enum Kind {
     Pool,
     /// A body seen from all sides.
     Body,
+    /// No source but a screen, which heats up and sends too.
+    Screen,
 }
 
 /// The outline of a source, with the nodes of its sizes.
@@ -164,10 +167,11 @@ pub(in crate::notebook) enum Outline {
     },
 }
 
-/// A source's place and outline in the room.
+/// The place and the outline of a source or a screen in the room.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Shape {
-    /// What emits, where.
+    /// The outline that people see first: of an opening its outer edge, of a
+    /// pool its rim.
     pub region: Region,
     /// Which form it is.
     pub kind: Kind,
@@ -175,6 +179,81 @@ pub struct Shape {
     pub centre: DVec3,
     /// Its heading on the plan, a horizontal unit vector.
     pub ahead: DVec3,
+    /// How far it reaches behind its outline, m: the wall around an opening,
+    /// the freeboard of a pool.
+    pub depth: f64,
+    /// What of it emits, each of one exitance.
+    pub parts: Vec<Part>,
+    /// What it hides or dims.
+    pub barrier: Option<Barrier>,
+}
+
+impl Shape {
+    /// Returns the shape of a region that emits as a whole.
+    #[must_use]
+    pub fn simple(region: Region, kind: Kind, centre: DVec3, ahead: DVec3) -> Shape {
+        let part = Part {
+            region: region.clone(),
+            through: None,
+            less: None,
+        };
+        Shape {
+            region,
+            kind,
+            centre,
+            ahead,
+            depth: 0.0,
+            parts: vec![part],
+            barrier: None,
+        }
+    }
+
+    /// Returns whether this is a source, not a screen.
+    #[must_use]
+    pub fn is_source(&self) -> bool {
+        self.kind != Kind::Screen
+    }
+
+    /// Returns whether a point lies behind the outline of an opening or a rim,
+    /// in the wall's tunnel or above the metal.
+    #[must_use]
+    pub fn swallows(&self, point: DVec3) -> bool {
+        if self.depth <= 0.0 {
+            return false;
+        }
+        let Some(normal) = self.region.normal() else {
+            return false;
+        };
+        let above = (point - self.region.centre()).dot(normal);
+        (-self.depth..=0.0).contains(&above) && self.region.touches(point - normal * above)
+    }
+
+    /// Returns whether the straight way between two points meets this source.
+    /// A screen can be reached past.
+    #[must_use]
+    pub fn is_met(&self, from: DVec3, to: DVec3) -> bool {
+        self.is_source() && self.region.crosses(from, to)
+    }
+}
+
+/// What a source or a screen emits.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Emitted {
+    /// What the hot surface itself sends.
+    pub face: Emission,
+    /// What each part of the shape sends.
+    pub parts: Vec<Emission>,
+}
+
+impl Emitted {
+    /// Returns what is sent where all of it is of one exitance.
+    #[must_use]
+    pub fn simple(face: Emission) -> Emitted {
+        Emitted {
+            face,
+            parts: vec![face],
+        }
+    }
 }
 
 /// Returns the horizontal unit vector of a heading in radians, clockwise from
@@ -225,7 +304,7 @@ impl ShapeTask {
         let ahead = direction(heading);
         let (normal, up) = match self.kind {
             Kind::Pool => (DVec3::Z, ahead),
-            Kind::Opening | Kind::Body => {
+            Kind::Opening | Kind::Body | Kind::Screen => {
                 let (sin, cos) = inputs.si(self.tilt).sin_cos();
                 (ahead * cos + DVec3::Z * sin, DVec3::Z * cos - ahead * sin)
             }
@@ -241,12 +320,9 @@ impl ShapeTask {
             Diagnostic::of_cell("no-such-shape", error.to_string())
                 .with_hint("check the sizes and the place of the source")
         })?;
-        Ok(Datum::Shape(Arc::new(Shape {
-            region,
-            kind: self.kind,
-            centre,
-            ahead,
-        })))
+        Ok(Datum::Shape(Arc::new(Shape::simple(
+            region, self.kind, centre, ahead,
+        ))))
     }
 }
 
@@ -269,10 +345,10 @@ impl EmissionTask {
         let emissivity = inputs.si(self.emissivity);
         let near_infrared = inputs.maybe(self.near_infrared).unwrap_or(match self.kind {
             Kind::Pool => (POOL_NEAR_INFRARED * emissivity).min(1.0),
-            Kind::Opening | Kind::Body => emissivity,
+            Kind::Opening | Kind::Body | Kind::Screen => emissivity,
         });
         Emission::grey(inputs.si(self.temperature), emissivity, near_infrared)
-            .map(Datum::Emission)
+            .map(|face| Datum::Emission(Arc::new(Emitted::simple(face))))
             .map_err(|error| {
                 Diagnostic::of_field("temperature", "no-such-emission", error.to_string())
                     .with_hint("check the temperature and the emissivities")
@@ -334,7 +410,7 @@ impl OutcomeTask {
 
     pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
         let area = inputs.shape(self.shape).region.area();
-        let emission = inputs.emission(self.emission);
+        let emission = &inputs.emission(self.emission).face;
         let temperature = inputs.si(self.temperature);
         let outcome = Outcome {
             exitance: emission.total,
@@ -372,7 +448,7 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
         let not_here: &[&str] = match kind {
             Kind::Opening => &["freeboard"],
             Kind::Pool => &["wall_thickness", "tilt"],
-            Kind::Body => &["wall_thickness", "freeboard", "tilt"],
+            Kind::Body | Kind::Screen => &["wall_thickness", "freeboard", "tilt"],
         };
         linker.refuse(not_here, "does not belong to this form of source");
     }
@@ -409,6 +485,7 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
             temperature,
         })),
     );
+    linker.apart();
 }
 
 fn outline_of(linker: &mut Linker<'_>, kind: Kind, outline: &'static str) -> Option<Outline> {
@@ -446,7 +523,7 @@ fn outline_of(linker: &mut Linker<'_>, kind: Kind, outline: &'static str) -> Opt
             let (form, fits) = match kind {
                 Kind::Opening => ("an opening", "disc or rectangle"),
                 Kind::Pool => ("a pool", "disc or rectangle"),
-                Kind::Body => ("a body", "sphere"),
+                Kind::Body | Kind::Screen => ("a body", "sphere"),
             };
             linker.fault(
                 Diagnostic::of_field(

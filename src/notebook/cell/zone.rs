@@ -249,7 +249,8 @@ impl EdgeTask {
         let limit = library
             .get(&self.guidance)
             .expect("ids are checked while linking");
-        let weights = Band::judged(limit.metric.exposure()).judged_weights(inputs.heat(self.heat));
+        let heat = inputs.heat(self.heat);
+        let weights = heat.judged(Band::judged(limit.metric.exposure()));
         let stay = inputs.si(self.stay);
         let permitted = permitted(&self.guidance, stay);
         let extent = permitted.map_or(Extent::NotAssessed, |permitted| {

@@ -12,6 +12,7 @@ use crate::notebook::cell::field::{Content, Expect, Form, Need, Spec};
 use crate::notebook::cell::position::Facing;
 use crate::notebook::cell::{Cell, Kind, assessment, curve, position, source, surroundings, zone};
 use crate::notebook::datum::CellId;
+use crate::notebook::scene::ApartTask;
 use crate::notebook::task::{EntryTask, Pick, Task};
 use crate::spelling::nearest;
 use crate::units::Unit;
@@ -85,6 +86,17 @@ impl<'e> Linker<'e> {
     /// the room.
     pub(in crate::notebook) fn scene(&self) -> [Node; 3] {
         [self.engine.form, self.engine.heat, self.engine.room]
+    }
+
+    /// Sets the node that says whether this source or screen stands clear of
+    /// all others.
+    pub(in crate::notebook) fn apart(&mut self) {
+        let task = ApartTask {
+            layout: self.engine.layout,
+            id: self.id,
+            screen: self.cell.kind != Kind::Source,
+        };
+        let _ = self.group("apart", Some(Task::Apart(task)));
     }
 
     /// Returns whether a field was typed.
