@@ -15,6 +15,7 @@ pub mod surroundings;
 pub mod value;
 pub mod zone;
 
+use std::borrow::Cow;
 use std::fmt;
 
 pub use field::{Basis, Content, Field, Form, Need, Spec};
@@ -187,7 +188,33 @@ impl Cell {
     pub fn text(&self, name: &str) -> Option<&str> {
         match &self.field(name)?.content {
             Content::Text(text) => Some(text),
+            Content::List(_) | Content::Count(_) | Content::Pairs(_) => None,
+        }
+    }
+
+    /// Returns the pairs of a field, if it was typed and holds them: as such,
+    /// or as one text.
+    #[must_use]
+    pub fn pairs(&self, name: &str) -> Option<Cow<'_, [[String; 2]]>> {
+        match &self.field(name)?.content {
+            Content::Pairs(pairs) => Some(Cow::Borrowed(pairs)),
+            Content::Text(text) => field::pairs(text).map(Cow::Owned),
             Content::List(_) | Content::Count(_) => None,
+        }
+    }
+
+    /// Returns the text in which a fault is found: of a field, or of one entry
+    /// of a field of pairs.
+    #[must_use]
+    pub fn faulty(&self, fault: &super::Diagnostic) -> Option<String> {
+        let field = fault.field?;
+        match fault.item {
+            None => Some(self.field(field)?.content.to_text()),
+            Some((pair, side)) => self
+                .pairs(field)?
+                .get(usize::from(pair))?
+                .get(usize::from(side))
+                .cloned(),
         }
     }
 
@@ -197,7 +224,7 @@ impl Cell {
         match self.field(name).map(|field| &field.content) {
             Some(Content::Text(text)) => vec![text.as_str()],
             Some(Content::List(list)) => list.iter().map(String::as_str).collect(),
-            Some(Content::Count(_)) | None => Vec::new(),
+            Some(Content::Count(_) | Content::Pairs(_)) | None => Vec::new(),
         }
     }
 }

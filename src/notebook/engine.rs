@@ -9,9 +9,11 @@ mod change;
 mod link;
 mod ring;
 
+use std::borrow::Cow;
 use std::collections::{BTreeMap, BTreeSet, HashMap};
 use std::sync::Arc;
 
+use super::cell::field::Item;
 use super::cell::{Cell, Kind, surroundings};
 use super::datum::{CellId, Datum};
 use super::edit::{self, Edit};
@@ -28,10 +30,32 @@ pub(in crate::notebook) use link::Linker;
 pub enum Slot {
     /// One input field.
     Field(&'static str),
+    /// One entry of a field of pairs: the pair and the side, from 0.
+    Item(&'static str, Item),
     /// One group of outputs, or a step towards it.
     Group(&'static str),
     /// The faults of the cell that are found while linking.
     Check,
+}
+
+impl Slot {
+    /// Returns the field that it belongs to.
+    #[must_use]
+    pub const fn field(self) -> Option<&'static str> {
+        match self {
+            Slot::Field(field) | Slot::Item(field, _) => Some(field),
+            Slot::Group(_) | Slot::Check => None,
+        }
+    }
+
+    /// Returns the name by which draws of its literals are keyed.
+    pub(in crate::notebook) fn key(self) -> Cow<'static, str> {
+        match self {
+            Slot::Field(field) | Slot::Group(field) => Cow::Borrowed(field),
+            Slot::Item(field, (pair, side)) => Cow::Owned(format!("{field}[{pair}][{side}]")),
+            Slot::Check => Cow::Borrowed(""),
+        }
+    }
 }
 
 /// Why a notebook cannot be opened at all.
@@ -312,13 +336,13 @@ impl Engine {
     /// Returns all nodes with an entry, in file order.
     pub(in crate::notebook) fn entries(
         &self,
-    ) -> impl Iterator<Item = (CellId, &'static str, Node, &Entry)> {
+    ) -> impl Iterator<Item = (CellId, Slot, Node, &Entry)> {
         self.ids.iter().flat_map(move |id| {
             self.nodes(*id)
                 .iter()
                 .filter_map(move |(slot, node)| match (slot, self.task(*node)) {
-                    (Slot::Field(field), Some(Task::Entry(task))) => {
-                        Some((*id, *field, *node, &*task.entry))
+                    (Slot::Field(_) | Slot::Item(..), Some(Task::Entry(task))) => {
+                        Some((*id, *slot, *node, &*task.entry))
                     }
                     _ => None,
                 })
@@ -384,7 +408,7 @@ impl Engine {
         // then the check.
         let kind = self.cell(id).map(|cell| cell.kind);
         let rank = |slot: &Slot| match slot {
-            Slot::Field(name) => kind
+            Slot::Field(name) | Slot::Item(name, _) => kind
                 .and_then(|kind| kind.fields().iter().position(|spec| spec.name == *name))
                 .unwrap_or(usize::MAX - 2),
             Slot::Group(_) => usize::MAX - 1,
@@ -530,8 +554,10 @@ impl Engine {
             &mut |node, _| {
                 // Who is in it is told when the fault is, by the names of then.
                 let mut fault = Diagnostic::of_cell("ring", "waits for itself");
-                if let (_, Slot::Field(field)) = owners[node.index()] {
-                    fault.field = Some(field);
+                let (_, slot) = owners[node.index()];
+                fault.field = slot.field();
+                if let Slot::Item(_, item) = slot {
+                    fault.item = Some(item);
                 }
                 Datum::Fault(Arc::new(vec![fault]))
             },

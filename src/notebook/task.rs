@@ -4,7 +4,7 @@ use std::sync::Arc;
 
 use super::Diagnostic;
 use super::scene;
-use super::cell::field::Expect;
+use super::cell::field::{Expect, Item};
 use super::cell::{assessment, curve, position, source, surroundings, zone};
 use super::datum::{CellId, Datum};
 use super::uncertainty::Draw;
@@ -180,7 +180,9 @@ impl Task {
         let inputs = Inputs { values };
         let result = match self {
             Task::Fault(_) | Task::Stuck(_) | Task::Layout(_) => unreachable!("answered above"),
-            Task::Entry(task) => task.run(node, inputs, draw),
+            Task::Entry(task) => task
+                .run(node, inputs, draw)
+                .map_err(|fault| fault.in_item(task.item)),
             Task::Shape(task) => task.run(inputs),
             Task::Emission(task) => task.run(inputs),
             Task::Source(task) => task.run(inputs),
@@ -230,6 +232,8 @@ fn waiting(values: &Values<'_, Datum>, owner: &dyn Fn(Node) -> CellId) -> Option
 #[derive(Clone, Debug, PartialEq)]
 pub(super) struct EntryTask {
     pub(super) field: &'static str,
+    /// Which entry of a field of pairs it is.
+    pub(super) item: Option<Item>,
     pub(super) entry: Arc<Entry>,
     pub(super) expect: Expect,
     /// The unit that the result is to be shown in, where that was said.

@@ -146,9 +146,30 @@ impl Engine {
     fn follow(&mut self, place: usize, from: &str, to: &str) {
         let kind = self.notebook.cells[place].kind;
         for field in &mut self.notebook.cells[place].fields {
+            if let Content::Pairs(pairs) = &mut field.content {
+                for text in pairs.iter_mut().flatten() {
+                    if let Ok(entry) = crate::entry::Entry::parse(text) {
+                        *text = entry.renamed(from, to);
+                    }
+                }
+                continue;
+            }
+            let form = kind.field(field.name).map(|spec| spec.form);
             let Content::Text(text) = &mut field.content else {
                 continue;
             };
+            if matches!(form, Some(Form::Pairs(_))) {
+                // Pairs as one text: entry by entry, and one text again.
+                if let Some(mut pairs) = crate::notebook::cell::field::pairs(text) {
+                    for text in pairs.iter_mut().flatten() {
+                        if let Ok(entry) = crate::entry::Entry::parse(text) {
+                            *text = entry.renamed(from, to);
+                        }
+                    }
+                    *text = Content::Pairs(pairs).to_text();
+                }
+                continue;
+            }
             match kind.field(field.name).map(|spec| spec.form) {
                 Some(Form::Cell(_)) if text == from => to.clone_into(text),
                 Some(Form::Facing) if text.trim() == from => to.clone_into(text),

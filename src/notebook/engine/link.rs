@@ -8,7 +8,7 @@ use crate::entry::{self, Entry, NameUse};
 use crate::graph::Node;
 use crate::guidance::Library;
 use crate::notebook::Diagnostic;
-use crate::notebook::cell::field::{Content, Expect, Form, Need, Spec};
+use crate::notebook::cell::field::{Content, Expect, Form, Need, Pairs, Spec};
 use crate::notebook::cell::position::Facing;
 use crate::notebook::cell::{Cell, Kind, assessment, curve, position, source, surroundings, zone};
 use crate::notebook::datum::CellId;
@@ -53,6 +53,8 @@ impl<'e> Linker<'e> {
                     expect.dimension = Some(unit.dimension());
                 }
                 self.entry_field(spec, expect);
+            } else if let Form::Pairs(pairs) = spec.form {
+                self.pair_field(spec, pairs);
             } else if matches!(spec.need, Need::Required) && cell.field(spec.name).is_none() {
                 self.fault(missing(spec));
             }
@@ -292,7 +294,7 @@ impl<'e> Linker<'e> {
         };
         let number = match self.cell.field(field).map(|field| &field.content) {
             Some(Content::Count(number)) => *number,
-            Some(Content::Text(_) | Content::List(_)) => f64::NAN,
+            Some(Content::Text(_) | Content::List(_) | Content::Pairs(_)) => f64::NAN,
             None => match spec.need {
                 Need::Default(text) => text.parse().unwrap_or(f64::NAN),
                 Need::Required | Need::Optional => return None,
@@ -319,7 +321,7 @@ impl<'e> Linker<'e> {
         let text = match self.cell.field("faces").map(|field| &field.content) {
             None => return Some(Facing::Strongest),
             Some(Content::Text(text)) => text.trim().to_owned(),
-            Some(Content::List(_) | Content::Count(_)) => String::new(),
+            Some(Content::List(_) | Content::Count(_) | Content::Pairs(_)) => String::new(),
         };
         if text == "strongest" {
             return Some(Facing::Strongest);
@@ -346,7 +348,7 @@ impl<'e> Linker<'e> {
                 Some(_) => {}
             }
         }
-        let heading = self.set_entry("faces", &text, Expect::HEADING, None);
+        let heading = self.set_entry(Slot::Field("faces"), &text, Expect::HEADING, None);
         Some(Facing::Heading {
             heading,
             tilt: self.entry("tilt"),
@@ -385,7 +387,7 @@ impl<'e> Linker<'e> {
         let cell = Arc::clone(&self.cell);
         let text = match (cell.field(spec.name).map(|f| &f.content), spec.need) {
             (Some(Content::Text(text)), _) => text.as_str(),
-            (Some(Content::List(_) | Content::Count(_)), _) => "",
+            (Some(Content::List(_) | Content::Count(_) | Content::Pairs(_)), _) => "",
             (None, Need::Default(text)) => text,
             (None, Need::Optional) => return,
             (None, Need::Required) => {
@@ -397,23 +399,88 @@ impl<'e> Linker<'e> {
             }
         };
         let unit = self.unit.clone();
-        let _ = self.set_entry(spec.name, text, expect, unit);
+        let _ = self.set_entry(Slot::Field(spec.name), text, expect, unit);
+    }
+
+    fn pair_field(&mut self, spec: &'static Spec, form: &'static Pairs) {
+        let cell = Arc::clone(&self.cell);
+        if cell.field(spec.name).is_none() {
+            return;
+        }
+        let Some(pairs) = cell.pairs(spec.name) else {
+            let found = cell.field(spec.name).map(|field| field.content.to_text());
+            self.fault(
+                Diagnostic::of_field(
+                    spec.name,
+                    "not-pairs",
+                    format!(
+                        "expected pairs such as `{}`, found `{}`",
+                        form.example,
+                        found.unwrap_or_default()
+                    ),
+                )
+                .with_hint("part the two of a pair by a comma, and pairs by a semicolon"),
+            );
+            return;
+        };
+        if !(form.least..=form.most).contains(&pairs.len()) {
+            self.fault(
+                Diagnostic::of_field(
+                    spec.name,
+                    "pair-count",
+                    format!(
+                        "expected from {} to {} pairs, found {}",
+                        form.least,
+                        form.most,
+                        pairs.len()
+                    ),
+                )
+                .with_hint(format!("write them as in `{}`", form.example)),
+            );
+            return;
+        }
+        for (number, pair) in (0_u16..).zip(pairs.iter()) {
+            for (side, (text, expect)) in (0_u8..).zip(pair.iter().zip(form.sides)) {
+                let slot = Slot::Item(spec.name, (number, side));
+                let _ = self.set_entry(slot, text, expect, None);
+            }
+        }
+    }
+
+    /// Returns the nodes of a field of pairs, if it was typed and has as many
+    /// as it may.
+    pub(in crate::notebook) fn pairs(&self, field: &'static str) -> Option<Vec<[Node; 2]>> {
+        let node = |number, side| {
+            let slot = Slot::Item(field, (number, side));
+            self.used
+                .contains(&slot)
+                .then(|| self.engine.slot(self.id, slot))
+                .flatten()
+        };
+        let pairs: Vec<[Node; 2]> = (0_u16..)
+            .map_while(|number| Some([node(number, 0)?, node(number, 1)?]))
+            .collect();
+        (!pairs.is_empty()).then_some(pairs)
     }
 
     fn set_entry(
         &mut self,
-        field: &'static str,
+        slot: Slot,
         text: &str,
         expect: Expect,
         unit: Option<Unit>,
     ) -> Node {
-        let slot = Slot::Field(field);
+        let field = slot.field().expect("an entry stands in a field");
+        let item = match slot {
+            Slot::Item(_, item) => Some(item),
+            _ => None,
+        };
         let entry = match self.parsed(slot, text) {
             Ok(entry) => entry,
             Err(faults) => {
                 let faults = faults
                     .into_iter()
-                    .map(|fault| Diagnostic::from_entry(field, fault))
+                    .map(|fault| Diagnostic::from_entry(field, fault).in_item(item))
                     .collect();
                 return self.set(slot, Task::Fault(Arc::new(faults)));
             }
@@ -423,7 +490,7 @@ impl<'e> Linker<'e> {
         for name in entry.names() {
             match self.pick(field, name) {
                 Ok(pick) => picks.push(pick),
-                Err(fault) => faults.push(fault),
+                Err(fault) => faults.push(fault.in_item(item)),
             }
         }
         if faults.is_empty() {
@@ -431,6 +498,7 @@ impl<'e> Linker<'e> {
                 slot,
                 Task::Entry(EntryTask {
                     field,
+                    item,
                     entry,
                     expect,
                     unit,

@@ -264,17 +264,29 @@ impl Dice {
         self.fill(notebook.cells[at].kind, field)
     }
 
+    fn entry(&mut self, dimension: Option<Dimension>) -> &'static str {
+        self.pick(match dimension {
+            Some(Dimension::LENGTH) => LENGTHS,
+            Some(Dimension::TEMPERATURE) => TEMPERATURES,
+            Some(Dimension::ANGLE) => ANGLES,
+            Some(Dimension::TIME) => TIMES,
+            Some(Dimension::NONE) => NUMBERS,
+            _ => ANYTHING,
+        })
+    }
+
     fn fill(&mut self, kind: Kind, field: &str) -> Field {
         let spec = kind.field(field).expect("a field of the kind");
         let content = match spec.form {
-            Form::Entry(expect) => match expect.dimension {
-                Some(Dimension::LENGTH) => self.text(LENGTHS),
-                Some(Dimension::TEMPERATURE) => self.text(TEMPERATURES),
-                Some(Dimension::ANGLE) => self.text(ANGLES),
-                Some(Dimension::TIME) => self.text(TIMES),
-                Some(Dimension::NONE) => self.text(NUMBERS),
-                _ => self.text(ANYTHING),
-            },
+            Form::Entry(expect) => Content::Text(self.entry(expect.dimension).to_owned()),
+            Form::Pairs(pairs) => {
+                let count = pairs.least + self.upto(3);
+                Content::Pairs(
+                    (0..count)
+                        .map(|_| pairs.sides.map(|side| self.entry(side.dimension).to_owned()))
+                        .collect(),
+                )
+            }
             Form::Word(words) => {
                 let mut list = words.to_vec();
                 list.push("other");
@@ -304,7 +316,7 @@ impl Dice {
             Form::Text => self.text(WORDS),
         };
         let mut filled = Field::new(spec.name, content);
-        if matches!(spec.form, Form::Entry(_) | Form::Facing) && self.upto(4) == 1 {
+        if matches!(spec.form, Form::Entry(_) | Form::Facing | Form::Pairs(_)) && self.upto(4) == 1 {
             filled.wrapped = true;
             if self.upto(2) == 1 {
                 filled.basis = Some(Basis::ALL[self.upto(6)]);
@@ -395,6 +407,7 @@ pub fn reach(notebook: &Notebook, from: &str) -> BTreeSet<String> {
                 Content::Text(text) => vec![text.as_str()],
                 Content::List(list) => list.iter().map(String::as_str).collect(),
                 Content::Count(_) => Vec::new(),
+                Content::Pairs(pairs) => pairs.iter().flatten().map(String::as_str).collect(),
             };
             texts.iter().any(|text| {
                 text.split(|sign: char| !(sign.is_alphanumeric() || sign == '_'))
