@@ -11,6 +11,8 @@ mod hazard;
 pub mod planck;
 pub mod region;
 pub mod scene;
+pub mod spectrum;
+pub mod subtense;
 pub mod surface;
 pub mod view;
 pub mod view_factor;

@@ -16,37 +16,63 @@ use crate::physics::scene::{Barrier, Part};
 use crate::physics::surface::Emission;
 use crate::units::{Dimension, Quantity};
 
+/// The corners of a polygon.
+const VERTICES: Pairs = Pairs {
+    sides: [Expect::COORDINATE; 2],
+    least: 3,
+    most: 200,
+    example: "0 m, 0 m; 1 m, 0 m; 0 m, 1 m",
+};
+
+/// A table of emissivities.
+const SPECTRUM: Pairs = Pairs {
+    sides: [Expect::SIZE, Expect::EMISSIVITY],
+    least: 2,
+    most: 200,
+    example: "1 µm, 0.4; 3 µm, 0.3; 10 µm, 0.2",
+};
+
+/// A vessel leans by less than a right angle.
+const VESSEL_TILT: Expect = Expect::of(Dimension::ANGLE, Range::Lean);
+
 /// The fields of a source.
 pub const FIELDS: &[Spec] = &[
     Spec {
         name: "form",
         form: Form::Word(&["opening", "pool", "body"]),
         need: Need::Required,
-        about: "an opening in a wall, a pool with its surface upwards, or a body seen from all sides",
+        about: "an opening in a wall, a pool of melt in its vessel, or a body seen from all sides",
     },
     Spec {
         name: "outline",
-        form: Form::Word(&["disc", "rectangle", "sphere"]),
+        form: Form::Word(&[
+            "disc",
+            "rectangle",
+            "polygon",
+            "sphere",
+            "cylinder",
+            "plate",
+        ]),
         need: Need::Required,
-        about: "disc or rectangle for an opening or a pool, sphere for a body",
+        about: "disc, rectangle or polygon for an opening or a pool; sphere, cylinder or plate for a body",
     },
     Spec {
         name: "diameter",
         form: Form::Entry(Expect::SIZE),
         need: Need::Optional,
-        about: "diameter of a disc or a sphere",
+        about: "diameter of a disc, a sphere or a cylinder",
     },
     Spec {
         name: "width",
         form: Form::Entry(Expect::SIZE),
         need: Need::Optional,
-        about: "width of a rectangle",
+        about: "width of a rectangle or a plate",
     },
     Spec {
         name: "height",
         form: Form::Entry(Expect::SIZE),
         need: Need::Optional,
-        about: "height of a rectangular opening",
+        about: "height of a rectangular opening or a plate; of a cylinder from end to end",
     },
     Spec {
         name: "length",
@@ -55,16 +81,52 @@ pub const FIELDS: &[Spec] = &[
         about: "length of a rectangular pool, along its heading",
     },
     Spec {
+        name: "vertices",
+        form: Form::Pairs(&VERTICES),
+        need: Need::Optional,
+        about: "corners of a polygon in order, each as sideways, up from its centre",
+    },
+    Spec {
+        name: "stance",
+        form: Form::Word(&["upright", "lying"]),
+        need: Need::Optional,
+        about: "how a cylinder stands: `upright` if left out, or `lying` along its heading, raised by `tilt`",
+    },
+    Spec {
         name: "wall_thickness",
         form: Form::Entry(Expect::REACH),
         need: Need::Default("0 m"),
         about: "depth of the wall around an opening",
     },
     Spec {
+        name: "wall",
+        form: Form::Word(&["reradiating", "cold"]),
+        need: Need::Optional,
+        about: "what the tunnel through the wall does: `reradiating` if left out, hot from the furnace, or `cold`",
+    },
+    Spec {
         name: "freeboard",
         form: Form::Entry(Expect::REACH),
         need: Need::Default("0 m"),
-        about: "depth of the metal below the rim of a pool",
+        about: "depth of the melt below the rim of its vessel",
+    },
+    Spec {
+        name: "vessel_tilt",
+        form: Form::Entry(VESSEL_TILT),
+        need: Need::Default("0 °"),
+        about: "how far a vessel leans towards its heading, as for pouring; the melt stays level",
+    },
+    Spec {
+        name: "wall_temperature",
+        form: Form::Entry(Expect::TEMPERATURE),
+        need: Need::Optional,
+        about: "temperature of the inner wall above the melt; the melt's own, the hottest, if left out",
+    },
+    Spec {
+        name: "wall_emissivity",
+        form: Form::Entry(Expect::EMISSIVITY),
+        need: Need::Default("0.9"),
+        about: "emissivity of the inner wall above the melt",
     },
     Spec {
         name: "temperature",
@@ -75,14 +137,20 @@ pub const FIELDS: &[Spec] = &[
     Spec {
         name: "emissivity",
         form: Form::Entry(Expect::EMISSIVITY),
-        need: Need::Required,
-        about: "total emissivity, above 0 and at most 1",
+        need: Need::Optional,
+        about: "total emissivity, above 0 and at most 1; or give `spectrum`",
     },
     Spec {
         name: "near_ir_emissivity",
         form: Form::Entry(Expect::EMISSIVITY),
         need: Need::Optional,
         about: "emissivity below 3000 nm; the total, or for a pool 1.5 times it, if left out",
+    },
+    Spec {
+        name: "spectrum",
+        form: Form::Pairs(&SPECTRUM),
+        need: Need::Optional,
+        about: "emissivity by wavelength, in growing order, in place of the two emissivities",
     },
     Spec {
         name: "x",
@@ -100,19 +168,19 @@ pub const FIELDS: &[Spec] = &[
         name: "z",
         form: Form::Entry(Expect::COORDINATE),
         need: Need::Required,
-        about: "centre of the outline above the floor; the metal's surface for a pool",
+        about: "centre of the outline above the floor; the melt's surface for a pool",
     },
     Spec {
         name: "heading",
         form: Form::Entry(Expect::HEADING),
         need: Need::Default("0 °"),
-        about: "where an opening faces, clockwise from north; how a pool is turned",
+        about: "where an opening or a plate faces or a cylinder lies along, clockwise from north; how a pool is turned",
     },
     Spec {
         name: "tilt",
         form: Form::Entry(Expect::TILT),
         need: Need::Default("0 °"),
-        about: "how far an opening's face is raised above the horizontal",
+        about: "how far the face of an opening or a plate, or the end of a lying cylinder, is raised",
     },
     Spec {
         name: "note",
