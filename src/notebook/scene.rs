@@ -96,7 +96,12 @@ impl Form {
             .iter()
             .filter_map(|shape| shape.barrier.clone())
             .collect();
-        let bodies = parts().any(|part| part.region.normal().is_none());
+        let bodies = parts().any(|part| {
+            matches!(
+                part.region,
+                Region::Sphere { .. } | Region::Cylinder { .. } | Region::Plate { .. }
+            )
+        });
         let hides = !barriers.is_empty()
             || (bodies && owners.len() > 1)
             || parts().any(|part| part.through.is_some() || part.less.is_some());
@@ -165,12 +170,12 @@ impl Form {
             }
             Looking::Through(scene) => {
                 let looked = scene.look(point);
-                if let Some(part) = looked.touching.first() {
-                    return Err(Touched(*part));
+                if let Some(part) = looked.touched() {
+                    return Err(Touched(part));
                 }
-                for glimpse in looked.glimpses {
-                    tags.push(self.tag(point, glimpse.part, glimpse.through));
-                    views.push(glimpse.view);
+                for glimpse in looked.glimpses() {
+                    tags.push(self.tag(point, glimpse.part, glimpse.through.clone()));
+                    views.push(glimpse.view.clone());
                 }
             }
         }

@@ -110,7 +110,7 @@ impl Line {
         Some(Line {
             source: source.name.clone(),
             id: engine.find(&source.name)?,
-            edge: shape.region.edge_along(ahead),
+            edge: shape.edge_along(ahead),
             height: height.unwrap_or(EYE),
             origin: shape.centre,
             ahead,

@@ -125,7 +125,7 @@ impl LineTask {
             .with_hint("give a greater `farthest` or a smaller `nearest`"));
         }
         let ahead = along(shape, inputs.maybe(self.heading));
-        let edge = shape.region.edge_along(ahead);
+        let edge = shape.edge_along(ahead);
         if nearest < edge {
             return Err(Diagnostic::of_field(
                 "nearest",

@@ -251,6 +251,8 @@ pub enum Range {
     Fraction,
     /// From a right angle down to a right angle up.
     RightAngle,
+    /// From zero to less than a right angle.
+    Lean,
 }
 
 impl Expect {
@@ -323,6 +325,10 @@ impl Expect {
                 si.abs() <= std::f64::consts::FRAC_PI_2 * (1.0 + 1e-12),
                 "an angle from -90 ° to 90 °",
             ),
+            Range::Lean => (
+                (0.0..std::f64::consts::FRAC_PI_2).contains(&si),
+                "an angle from 0 ° to less than 90 °",
+            ),
         };
         if holds {
             Ok(())
@@ -343,7 +349,11 @@ impl Expect {
         match self.range {
             Range::Emissivity => si.min(1.0),
             Range::Fraction => si.clamp(0.0, 1.0),
-            Range::Any | Range::Positive | Range::NotNegative | Range::RightAngle => si,
+            Range::Any
+            | Range::Positive
+            | Range::NotNegative
+            | Range::RightAngle
+            | Range::Lean => si,
         }
     }
 

@@ -1,20 +1,21 @@
 //! A hot emitter: an opening, a pool or a body.
 
-use std::sync::Arc;
+mod emission;
+mod shape;
 
-use glam::DVec3;
-
-use super::field::{Expect, Form, Need, Spec};
+use super::field::{Expect, Form, Need, Pairs, Range, Spec};
 use crate::graph::Node;
 use crate::notebook::Diagnostic;
 use crate::notebook::datum::{Datum, Output, Slot};
 use crate::notebook::engine::Linker;
 use crate::notebook::task::{Inputs, Task};
 use crate::physics::planck;
-use crate::physics::region::Region;
-use crate::physics::scene::{Barrier, Part};
-use crate::physics::surface::Emission;
 use crate::units::{Dimension, Quantity};
+
+pub use emission::Emitted;
+pub(in crate::notebook) use emission::EmissionTask;
+pub use shape::{Shape, direction};
+pub(in crate::notebook) use shape::ShapeTask;
 
 /// The corners of a polygon.
 const VERTICES: Pairs = Pairs {
@@ -219,211 +220,6 @@ pub enum Kind {
     Screen,
 }
 
-/// The outline of a source, with the nodes of its sizes.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub(in crate::notebook) enum Outline {
-    Disc {
-        diameter: Node,
-    },
-    /// `along` is the height of an opening, the length of a pool.
-    Rectangle {
-        width: Node,
-        along: Node,
-    },
-    Sphere {
-        diameter: Node,
-    },
-}
-
-/// The place and the outline of a source or a screen in the room.
-#[derive(Clone, Debug, PartialEq)]
-pub struct Shape {
-    /// The outline that people see first: of an opening its outer edge, of a
-    /// pool its rim.
-    pub region: Region,
-    /// Which form it is.
-    pub kind: Kind,
-    /// The centre of its outline.
-    pub centre: DVec3,
-    /// Its heading on the plan, a horizontal unit vector.
-    pub ahead: DVec3,
-    /// How far it reaches behind its outline, m: the wall around an opening,
-    /// the freeboard of a pool.
-    pub depth: f64,
-    /// What of it emits, each of one exitance.
-    pub parts: Vec<Part>,
-    /// What it hides or dims.
-    pub barrier: Option<Barrier>,
-}
-
-impl Shape {
-    /// Returns the shape of a region that emits as a whole.
-    #[must_use]
-    pub fn simple(region: Region, kind: Kind, centre: DVec3, ahead: DVec3) -> Shape {
-        let part = Part {
-            region: region.clone(),
-            through: None,
-            less: None,
-        };
-        Shape {
-            region,
-            kind,
-            centre,
-            ahead,
-            depth: 0.0,
-            parts: vec![part],
-            barrier: None,
-        }
-    }
-
-    /// Returns whether this is a source, not a screen.
-    #[must_use]
-    pub fn is_source(&self) -> bool {
-        self.kind != Kind::Screen
-    }
-
-    /// Returns whether a point lies behind the outline of an opening or a rim,
-    /// in the wall's tunnel or above the metal.
-    #[must_use]
-    pub fn swallows(&self, point: DVec3) -> bool {
-        if self.depth <= 0.0 {
-            return false;
-        }
-        let Some(normal) = self.region.normal() else {
-            return false;
-        };
-        let above = (point - self.region.centre()).dot(normal);
-        (-self.depth..=0.0).contains(&above) && self.region.touches(point - normal * above)
-    }
-
-    /// Returns whether the straight way between two points meets this source.
-    /// A screen can be reached past.
-    #[must_use]
-    pub fn is_met(&self, from: DVec3, to: DVec3) -> bool {
-        self.is_source() && self.region.crosses(from, to)
-    }
-}
-
-/// What a source or a screen emits.
-#[derive(Clone, Debug, PartialEq)]
-pub struct Emitted {
-    /// What the hot surface itself sends.
-    pub face: Emission,
-    /// What each part of the shape sends.
-    pub parts: Vec<Emission>,
-}
-
-impl Emitted {
-    /// Returns what is sent where all of it is of one exitance.
-    #[must_use]
-    pub fn simple(face: Emission) -> Emitted {
-        Emitted {
-            face,
-            parts: vec![face],
-        }
-    }
-}
-
-/// Returns the horizontal unit vector of a heading in radians, clockwise from
-/// north.
-#[must_use]
-pub fn direction(heading: f64) -> DVec3 {
-    DVec3::new(heading.sin(), heading.cos(), 0.0)
-}
-
-/// Works out where a source is.
-#[derive(Clone, Debug, PartialEq)]
-pub(in crate::notebook) struct ShapeTask {
-    pub(in crate::notebook) kind: Kind,
-    pub(in crate::notebook) outline: Outline,
-    pub(in crate::notebook) place: [Node; 3],
-    pub(in crate::notebook) heading: Node,
-    pub(in crate::notebook) tilt: Node,
-    pub(in crate::notebook) freeboard: Node,
-}
-
-impl ShapeTask {
-    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
-        match self.outline {
-            Outline::Disc { diameter } | Outline::Sphere { diameter } => nodes.push(diameter),
-            Outline::Rectangle { width, along } => nodes.extend([width, along]),
-        }
-        nodes.extend(self.place);
-        nodes.extend([self.heading, self.tilt, self.freeboard]);
-    }
-
-    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
-        if self.kind == Kind::Pool && inputs.si(self.freeboard) > 0.0 {
-            // A rim hides metal, but the hot wall above the metal shows: leaving
-            // both out could be on the unsafe side.
-            return Err(Diagnostic::of_field(
-                "freeboard",
-                "not-worked-out",
-                "expected a full pool, found a freeboard: the rim and the inner wall above the \
-                 metal are not worked out in this version",
-            )
-            .with_hint(
-                "write `0 m` and take the rim as the metal's surface, with its emissivity",
-            ));
-        }
-        let [x, y, z] = self.place.map(|node| inputs.si(node));
-        let centre = DVec3::new(x, y, z);
-        let heading = inputs.si(self.heading);
-        let ahead = direction(heading);
-        let (normal, up) = match self.kind {
-            Kind::Pool => (DVec3::Z, ahead),
-            Kind::Opening | Kind::Body | Kind::Screen => {
-                let (sin, cos) = inputs.si(self.tilt).sin_cos();
-                (ahead * cos + DVec3::Z * sin, DVec3::Z * cos - ahead * sin)
-            }
-        };
-        let region = match self.outline {
-            Outline::Disc { diameter } => Region::disc(centre, normal, inputs.si(diameter) / 2.0),
-            Outline::Rectangle { width, along } => {
-                Region::rectangle(centre, normal, up, inputs.si(width), inputs.si(along))
-            }
-            Outline::Sphere { diameter } => Region::sphere(centre, inputs.si(diameter) / 2.0),
-        };
-        let region = region.map_err(|error| {
-            Diagnostic::of_cell("no-such-shape", error.to_string())
-                .with_hint("check the sizes and the place of the source")
-        })?;
-        Ok(Datum::Shape(Arc::new(Shape::simple(
-            region, self.kind, centre, ahead,
-        ))))
-    }
-}
-
-/// Works out what a source emits.
-#[derive(Clone, Debug, PartialEq)]
-pub(in crate::notebook) struct EmissionTask {
-    pub(in crate::notebook) kind: Kind,
-    pub(in crate::notebook) temperature: Node,
-    pub(in crate::notebook) emissivity: Node,
-    pub(in crate::notebook) near_infrared: Option<Node>,
-}
-
-impl EmissionTask {
-    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
-        nodes.extend([self.temperature, self.emissivity]);
-        nodes.extend(self.near_infrared);
-    }
-
-    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
-        let emissivity = inputs.si(self.emissivity);
-        let near_infrared = inputs.maybe(self.near_infrared).unwrap_or(match self.kind {
-            Kind::Pool => (POOL_NEAR_INFRARED * emissivity).min(1.0),
-            Kind::Opening | Kind::Body | Kind::Screen => emissivity,
-        });
-        Emission::grey(inputs.si(self.temperature), emissivity, near_infrared)
-            .map(|face| Datum::Emission(Arc::new(Emitted::simple(face))))
-            .map_err(|error| {
-                Diagnostic::of_field("temperature", "no-such-emission", error.to_string())
-                    .with_hint("check the temperature and the emissivities")
-            })
-    }
-}
-
 /// What a source is asked for.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Outcome {
@@ -510,21 +306,38 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
     let outline = linker.word("outline");
     let outline = kind.and_then(|kind| {
         let outline = outline?;
-        outline_of(linker, kind, outline)
+        shape::outline_of(linker, kind, outline)
     });
     if let Some(kind) = kind {
-        let not_here: &[&str] = match kind {
-            Kind::Opening => &["freeboard"],
-            Kind::Pool => &["wall_thickness", "tilt"],
-            Kind::Body | Kind::Screen => &["wall_thickness", "freeboard", "tilt"],
+        const VESSEL: [&str; 4] = [
+            "freeboard",
+            "vessel_tilt",
+            "wall_temperature",
+            "wall_emissivity",
+        ];
+        const WALL: [&str; 2] = ["wall_thickness", "wall"];
+        const ELSE: &str = "does not belong to this form of source";
+        if kind != Kind::Pool {
+            linker.refuse(&VESSEL, ELSE);
+        } else {
+            linker.refuse(&["tilt"], "goes with openings, plates and lying cylinders only");
+        }
+        if kind != Kind::Opening {
+            linker.refuse(&WALL, ELSE);
+        }
+        let turned = match &outline {
+            Some(shape::Outline::Sphere { .. }) => false,
+            Some(shape::Outline::Cylinder { lying, .. }) => *lying,
+            _ => true,
         };
-        linker.refuse(not_here, "does not belong to this form of source");
+        if kind == Kind::Body && !turned {
+            linker.refuse(&["tilt"], "goes with openings, plates and lying cylinders only");
+        }
     }
     let place = ["x", "y", "z"].map(|field| linker.always(field));
-    let [heading, tilt, freeboard, temperature, emissivity] =
-        ["heading", "tilt", "freeboard", "temperature", "emissivity"]
-            .map(|field| linker.always(field));
-    let near_infrared = linker.entry("near_ir_emissivity");
+    let [heading, tilt, freeboard, temperature] =
+        ["heading", "tilt", "freeboard", "temperature"].map(|field| linker.always(field));
+    let surface = emission::surface_of(linker);
     let shape = kind.zip(outline).map(|(kind, outline)| {
         Task::Shape(ShapeTask {
             kind,
@@ -536,12 +349,11 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
         })
     });
     let shape = linker.group("shape", shape);
-    let emission = kind.map(|kind| {
+    let emission = kind.zip(surface).map(|(kind, surface)| {
         Task::Emission(EmissionTask {
             kind,
             temperature,
-            emissivity,
-            near_infrared,
+            surface,
         })
     });
     let emission = linker.group("emission", emission);
@@ -554,54 +366,4 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
         })),
     );
     linker.apart();
-}
-
-fn outline_of(linker: &mut Linker<'_>, kind: Kind, outline: &'static str) -> Option<Outline> {
-    const ELSE: &str = "does not belong to this outline";
-    match (kind, outline) {
-        (Kind::Opening | Kind::Pool, "disc") => {
-            linker.refuse(&["width", "height", "length"], ELSE);
-            let diameter = linker.need("diameter", "a disc")?;
-            Some(Outline::Disc { diameter })
-        }
-        (Kind::Opening, "rectangle") => {
-            linker.refuse(&["diameter", "length"], ELSE);
-            let width = linker.need("width", "a rectangle");
-            let along = linker.need("height", "a rectangular opening");
-            Some(Outline::Rectangle {
-                width: width?,
-                along: along?,
-            })
-        }
-        (Kind::Pool, "rectangle") => {
-            linker.refuse(&["diameter", "height"], ELSE);
-            let width = linker.need("width", "a rectangle");
-            let along = linker.need("length", "a rectangular pool");
-            Some(Outline::Rectangle {
-                width: width?,
-                along: along?,
-            })
-        }
-        (Kind::Body, "sphere") => {
-            linker.refuse(&["width", "height", "length"], ELSE);
-            let diameter = linker.need("diameter", "a sphere")?;
-            Some(Outline::Sphere { diameter })
-        }
-        (kind, outline) => {
-            let (form, fits) = match kind {
-                Kind::Opening => ("an opening", "disc or rectangle"),
-                Kind::Pool => ("a pool", "disc or rectangle"),
-                Kind::Body | Kind::Screen => ("a body", "sphere"),
-            };
-            linker.fault(
-                Diagnostic::of_field(
-                    "outline",
-                    "outline-out-of-place",
-                    format!("expected {fits} for {form}, found {outline}"),
-                )
-                .with_hint("change the outline or the form"),
-            );
-            None
-        }
-    }
 }

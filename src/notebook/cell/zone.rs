@@ -199,7 +199,7 @@ impl TrackTask {
         let form = Arc::clone(inputs.form(self.form));
         let shape = inputs.shape(self.shape);
         let ahead = along(shape, inputs.maybe(self.heading));
-        let edge = shape.region.edge_along(ahead);
+        let edge = shape.edge_along(ahead);
         let farthest = inputs.si(self.farthest);
         if farthest <= edge {
             return Err(Diagnostic::of_field(

@@ -138,6 +138,26 @@ impl<'e> Linker<'e> {
         node
     }
 
+    /// Returns the nodes of a field of pairs that is needed here, or says that
+    /// it is missing.
+    pub(in crate::notebook) fn need_pairs(
+        &mut self,
+        field: &'static str,
+        why: &str,
+    ) -> Option<Vec<[Node; 2]>> {
+        if !self.has(field) {
+            self.fault(
+                Diagnostic::of_field(
+                    field,
+                    "missing-field",
+                    format!("expected `{field}` for {why}, found nothing"),
+                )
+                .with_hint(format!("add `{field}`")),
+            );
+        }
+        self.pairs(field)
+    }
+
     /// Says that fields do not belong here, where they were typed.
     pub(in crate::notebook) fn refuse(&mut self, fields: &[&'static str], why: &str) {
         for field in fields {

@@ -93,7 +93,7 @@ fn outline(region: &Region) -> Vec<(DVec3, DVec3)> {
             normal,
             radius,
         } => around(*centre, *normal, *radius),
-        Region::Polygon { vertices, .. } => {
+        Region::Polygon { vertices, .. } | Region::Plate { vertices, .. } => {
             let centre = region.centre();
             let shrunk: Vec<DVec3> = vertices
                 .iter()
@@ -102,6 +102,19 @@ fn outline(region: &Region) -> Vec<(DVec3, DVec3)> {
             (0..shrunk.len())
                 .map(|at| (shrunk[at], shrunk[(at + 1) % shrunk.len()]))
                 .collect()
+        }
+        Region::Cylinder { base, axis, radius } => {
+            let way = axis.normalize_or(DVec3::Z);
+            let (right, up) = way.any_orthonormal_pair();
+            let mut edges = Vec::new();
+            for end in [*base, *base + *axis] {
+                edges.extend(around(end, way, *radius));
+            }
+            for side in [right, up, -right, -up] {
+                let from = *base + side * (radius * SHRUNK);
+                edges.push((from, from + *axis));
+            }
+            edges
         }
         Region::Sphere { centre, radius } => [DVec3::X, DVec3::Y, DVec3::Z]
             .into_iter()
