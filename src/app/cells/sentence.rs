@@ -1,6 +1,6 @@
 //! Each kind of cell as a sentence with the fields that can be changed in it.
 
-use crate::notebook::cell::{Cell, Content, Form, Kind, Need};
+use crate::notebook::cell::{Cell, Form, Kind, Need};
 
 /// One piece of a sentence.
 #[derive(Clone, Debug, PartialEq, Eq)]
