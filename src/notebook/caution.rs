@@ -111,7 +111,12 @@ pub(super) fn of_cell(engine: &Engine, id: CellId, result: &CellResult) -> Vec<C
         Kind::Position => of_position(engine, id, &mut cautions),
         Kind::Assessment => of_assessment(engine, result, &mut cautions),
         Kind::Zone => of_zone(engine, id, result, &mut cautions),
-        Kind::Value | Kind::Formula | Kind::Surroundings | Kind::Curve | Kind::Note => {}
+        Kind::Value
+        | Kind::Formula
+        | Kind::Surroundings
+        | Kind::Screen
+        | Kind::Curve
+        | Kind::Note => {}
     }
     if result.failed > 0 {
         cautions.push(called(

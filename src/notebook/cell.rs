@@ -10,6 +10,7 @@ pub mod field;
 pub mod formula;
 pub mod note;
 pub mod position;
+pub mod screen;
 pub mod source;
 pub mod surroundings;
 pub mod value;
@@ -31,6 +32,8 @@ pub enum Kind {
     Surroundings,
     /// A hot emitter: an opening, a pool or a body.
     Source,
+    /// A barrier between a source and people.
+    Screen,
     /// Where a person stands.
     Position,
     /// Irradiance along a line.
@@ -45,11 +48,12 @@ pub enum Kind {
 
 impl Kind {
     /// All kinds, in the order in which the program lists them.
-    pub const ALL: [Kind; 9] = [
+    pub const ALL: [Kind; 10] = [
         Kind::Value,
         Kind::Formula,
         Kind::Surroundings,
         Kind::Source,
+        Kind::Screen,
         Kind::Position,
         Kind::Curve,
         Kind::Assessment,
@@ -65,6 +69,7 @@ impl Kind {
             Kind::Formula => "formula",
             Kind::Surroundings => "surroundings",
             Kind::Source => "source",
+            Kind::Screen => "screen",
             Kind::Position => "position",
             Kind::Curve => "curve",
             Kind::Assessment => "assessment",
@@ -88,6 +93,7 @@ impl Kind {
             Kind::Formula => formula::FIELDS,
             Kind::Surroundings => surroundings::FIELDS,
             Kind::Source => source::FIELDS,
+            Kind::Screen => screen::FIELDS,
             Kind::Position => position::FIELDS,
             Kind::Curve => curve::FIELDS,
             Kind::Assessment => assessment::FIELDS,
@@ -103,6 +109,7 @@ impl Kind {
             Kind::Value | Kind::Formula => &["value"],
             Kind::Surroundings => surroundings::OUTPUTS,
             Kind::Source => source::OUTPUTS,
+            Kind::Screen => screen::OUTPUTS,
             Kind::Position => position::OUTPUTS,
             Kind::Curve => curve::OUTPUTS,
             Kind::Assessment => assessment::OUTPUTS,
@@ -118,10 +125,17 @@ impl Kind {
         match self {
             Kind::Value | Kind::Formula => Some("value"),
             Kind::Source => Some("exitance"),
+            Kind::Screen => Some("temperature"),
             Kind::Position => Some("irradiance"),
             Kind::Zone => Some("distance"),
             Kind::Surroundings | Kind::Curve | Kind::Assessment | Kind::Note => None,
         }
+    }
+
+    /// Returns whether cells of this kind are part of what all positions see.
+    #[must_use]
+    pub const fn is_in_scene(self) -> bool {
+        matches!(self, Kind::Source | Kind::Screen | Kind::Surroundings)
     }
 
     /// Returns the field of this name.

@@ -4,9 +4,10 @@
 use std::sync::Arc;
 
 use super::Diagnostic;
-use super::cell::{assessment, curve, position, source, surroundings, zone};
-use super::scene::{Form, Heat, Layout};
+use super::cell::{assessment, curve, position, screen, source, surroundings, zone};
+use super::scene::{Balanced, Form, Heat, Layout};
 use crate::graph::Same;
+use crate::physics::screen::Make;
 use crate::units::Quantity;
 
 /// The number of a cell while its notebook is open; renaming does not change
@@ -37,6 +38,14 @@ pub enum Datum {
     Emission(Arc<source::Emitted>),
     /// What a source is asked for.
     Source(source::Outcome),
+    /// What a screen is made of.
+    Make(Make),
+    /// What a screen is asked for.
+    Screen(screen::Outcome),
+    /// All screens in balance.
+    Balanced(Arc<Balanced>),
+    /// The balance cannot be found: the screen that stops it, and why.
+    Unbalanced(CellId, Arc<str>),
     /// Which sources and screens go through one another.
     Layout(Arc<Layout>),
     /// A source or a screen goes through no other.
@@ -101,6 +110,7 @@ impl Datum {
                 );
             }
             Datum::Source(outcome) => outcome.visit(see),
+            Datum::Screen(outcome) => outcome.visit(see),
             Datum::Room(room) => room.visit(see),
             Datum::Exposure(exposure) => exposure.visit(see),
             Datum::Rows(rows) => {
@@ -114,6 +124,9 @@ impl Datum {
             | Datum::Waiting(_)
             | Datum::Shape(_)
             | Datum::Emission(_)
+            | Datum::Make(_)
+            | Datum::Balanced(_)
+            | Datum::Unbalanced(..)
             | Datum::Layout(_)
             | Datum::Apart
             | Datum::Form(_)
@@ -228,6 +241,10 @@ impl Same for Datum {
             (Datum::Truth(a), Datum::Truth(b)) => a == b,
             (Datum::Shape(a), Datum::Shape(b)) => Arc::ptr_eq(a, b) || a == b,
             (Datum::Emission(a), Datum::Emission(b)) => Arc::ptr_eq(a, b) || a == b,
+            (Datum::Make(a), Datum::Make(b)) => a == b,
+            (Datum::Screen(a), Datum::Screen(b)) => a == b,
+            (Datum::Balanced(a), Datum::Balanced(b)) => Arc::ptr_eq(a, b) || a == b,
+            (Datum::Unbalanced(a, why), Datum::Unbalanced(b, other)) => a == b && why == other,
             (Datum::Layout(a), Datum::Layout(b)) => a == b,
             (Datum::Apart, Datum::Apart) => true,
             (Datum::Source(a), Datum::Source(b)) => a == b,

@@ -14,10 +14,11 @@ use std::collections::{BTreeMap, BTreeSet, HashMap};
 use std::sync::Arc;
 
 use super::cell::field::Item;
-use super::cell::{Cell, Kind, surroundings};
+use super::cell::surroundings::{Formula, RoomTask};
+use super::cell::{Cell, Kind};
 use super::datum::{CellId, Datum};
 use super::edit::{self, Edit};
-use super::scene::{Form, FormTask, Heat, HeatTask, LayoutTask};
+use super::scene::{BalanceTask, Balanced, Form, FormTask, Heat, HeatTask, LayoutTask, Sender};
 use super::task::Task;
 use super::{Diagnostic, Notebook, name};
 use crate::entry::Entry;
@@ -112,6 +113,7 @@ pub struct Engine {
     owners: Vec<(CellId, Slot)>,
     layout: Node,
     form: Node,
+    balance: Node,
     heat: Node,
     room: Node,
     /// Whether a source was added, removed, moved or renamed.
@@ -129,7 +131,7 @@ impl Engine {
     pub fn open(notebook: Notebook) -> Result<Engine, Vec<Error>> {
         check(&notebook)?;
         let mut graph = Graph::new();
-        let [layout, form, heat, room] = [graph.add(), graph.add(), graph.add(), graph.add()];
+        let [layout, form, balance, heat, room] = [(); 5].map(|()| graph.add());
         let hidden = |name| (CellId::SCENE, Slot::Group(name));
         let mut engine = Engine {
             notebook: Notebook::default(),
@@ -141,10 +143,13 @@ impl Engine {
             mentions: BTreeMap::new(),
             mentioned: HashMap::new(),
             graph,
-            tasks: vec![None; 4],
-            owners: ["layout", "form", "heat", "room"].map(hidden).to_vec(),
+            tasks: vec![None; 5],
+            owners: ["layout", "form", "balance", "heat", "room"]
+                .map(hidden)
+                .to_vec(),
             layout,
             form,
+            balance,
             heat,
             room,
             scene_changed: true,
@@ -259,6 +264,16 @@ impl Engine {
     pub fn form(&self) -> Option<&Arc<Form>> {
         match self.value(self.form)? {
             Datum::Form(form) => Some(form),
+            _ => None,
+        }
+    }
+
+    /// Returns all screens in balance, unless something they stand on is in
+    /// error.
+    #[must_use]
+    pub fn balanced(&self) -> Option<&Arc<Balanced>> {
+        match self.value(self.balance)? {
+            Datum::Balanced(balanced) => Some(balanced),
             _ => None,
         }
     }
@@ -437,7 +452,7 @@ impl Engine {
         let Some(cell) = self.cell(id).cloned() else {
             return false;
         };
-        if cell.kind == Kind::Source || cell.kind == Kind::Surroundings {
+        if cell.kind.is_in_scene() {
             self.scene_changed = true;
         }
         let mut linker = Linker::new(self, id, cell);
@@ -497,25 +512,37 @@ impl Engine {
             return;
         }
         let (mut names, mut ids) = (Vec::new(), Vec::new());
-        let (mut shapes, mut emissions) = (Vec::new(), Vec::new());
-        let (mut air, mut radiant) = (None, None);
+        let (mut shapes, mut senders, mut screens) = (Vec::new(), Vec::new(), Vec::new());
+        let mut room = RoomTask::default();
+        let mut formula = None;
         for (cell, id) in self.notebook.cells.iter().zip(&self.ids) {
             match cell.kind {
-                Kind::Source => {
-                    let (Some(shape), Some(emission)) = (
+                Kind::Source | Kind::Screen => {
+                    let is_screen = cell.kind == Kind::Screen;
+                    let sends = if is_screen { "make" } else { "emission" };
+                    let (Some(shape), Some(sends)) = (
                         self.slot(*id, Slot::Group("shape")),
-                        self.slot(*id, Slot::Group("emission")),
+                        self.slot(*id, Slot::Group(sends)),
                     ) else {
                         continue;
                     };
+                    senders.push(if is_screen {
+                        screens.push(*id);
+                        Sender::Screen(sends)
+                    } else {
+                        Sender::Source(sends)
+                    });
                     names.push(Arc::from(cell.name.as_str()));
                     ids.push(*id);
                     shapes.push(shape);
-                    emissions.push(emission);
                 }
                 Kind::Surroundings => {
-                    air = self.slot(*id, Slot::Field("air_temperature"));
-                    radiant = self.slot(*id, Slot::Field("radiant_temperature"));
+                    let field = |name| self.slot(*id, Slot::Field(name));
+                    room.air = field("air_temperature");
+                    room.radiant = field("radiant_temperature");
+                    room.humidity = field("humidity");
+                    room.speed = field("air_speed");
+                    formula = cell.text("absorption").and_then(Formula::from_word);
                 }
                 _ => {}
             }
@@ -530,14 +557,37 @@ impl Engine {
             names,
             shapes,
             layout: self.layout,
-            air: false,
+            air: formula.is_some(),
         };
         self.set(self.form, Task::Form(form));
-        self.set(self.heat, Task::Heat(HeatTask { emissions }));
+        // What nothing asks for must not make anything run.
+        if formula.is_none() {
+            room.humidity = None;
+        }
+        if screens.is_empty() {
+            room.speed = None;
+        }
+        self.set(self.room, Task::Room(room));
+        let balance = (!screens.is_empty()).then_some(self.balance);
         self.set(
-            self.room,
-            Task::Room(surroundings::RoomTask { air, radiant }),
+            self.heat,
+            Task::Heat(HeatTask {
+                senders: senders.clone(),
+                balance,
+                air: formula.map(|formula| (self.room, formula)),
+            }),
         );
+        // Without screens nothing asks for the balance: it gathers nothing.
+        if screens.is_empty() {
+            senders.clear();
+        }
+        let balance = BalanceTask {
+            form: self.form,
+            room: self.room,
+            senders,
+            screens,
+        };
+        self.set(self.balance, Task::Balance(balance));
     }
 
     fn run(&mut self) -> Run {
@@ -569,7 +619,7 @@ impl Engine {
 pub(in crate::notebook) const fn outputs_of(kind: Kind) -> Option<Slot> {
     match kind {
         Kind::Value | Kind::Formula => Some(Slot::Field("entry")),
-        Kind::Source => Some(Slot::Group("outcome")),
+        Kind::Source | Kind::Screen => Some(Slot::Group("outcome")),
         Kind::Position => Some(Slot::Group("exposure")),
         Kind::Curve => Some(Slot::Group("rows")),
         Kind::Assessment => Some(Slot::Group("verdicts")),

@@ -4,24 +4,28 @@
 //! Where things are and what they send live in nodes of their own, so that a
 //! new temperature never makes anything be looked at again.
 
+mod balance;
 mod clash;
+mod heat;
 
 use std::sync::Arc;
 
 use glam::DVec3;
 
 use super::Diagnostic;
-use super::cell::position::Band;
 use super::cell::source::Shape;
 use super::datum::{CellId, Datum};
 use super::task::Inputs;
 use crate::graph::{Node, Values};
 use crate::physics::region::Region;
 use crate::physics::scene::{Barrier, Part, Scene};
-use crate::physics::surface::Emission;
 use crate::physics::view::{Sight, View};
 
+pub use balance::Balanced;
+pub(super) use balance::BalanceTask;
 pub use clash::Clash;
+pub use heat::{Air, Heat, Weights, may_be_polished};
+pub(super) use heat::{HeatTask, Sender};
 
 /// Where everything that emits is, in file order: sources and screens.
 #[derive(Clone, Debug)]
@@ -315,157 +319,3 @@ impl FormTask {
     }
 }
 
-/// What lets part of the radiation through, by band: from 0 to 1.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct Clear {
-    /// Of all wavelengths.
-    pub total: f64,
-    /// Of 780–3000 nm.
-    pub near_infrared: f64,
-    /// Of what is visible.
-    pub visible: f64,
-}
-
-impl Clear {
-    /// What lets nothing through.
-    pub const NOTHING: Clear = Clear {
-        total: 0.0,
-        near_infrared: 0.0,
-        visible: 0.0,
-    };
-}
-
-/// What the parts of all sources and screens send, and what lets it through.
-#[derive(Clone, Debug, Default, PartialEq)]
-pub struct Heat {
-    /// Parallel to the parts of the form.
-    pub parts: Vec<Emission>,
-    /// Parallel to the barriers of the form.
-    pub barriers: Vec<Clear>,
-}
-
-impl Heat {
-    /// Returns what the parts send in a band.
-    #[must_use]
-    pub fn weights(&self, band: Band) -> Weights<'_> {
-        Weights::new(self, band, false)
-    }
-
-    /// Returns the heat of parts that send so much over all wavelengths, W/m²:
-    /// for tests.
-    #[cfg(test)]
-    pub(super) fn of_totals(totals: &[f64]) -> Heat {
-        Heat {
-            parts: totals
-                .iter()
-                .map(|total| Emission {
-                    total: *total,
-                    ..Emission::default()
-                })
-                .collect(),
-            ..Heat::default()
-        }
-    }
-
-    /// Returns the same for judging: where a band exceeds the whole, the whole
-    /// is taken as that band.
-    #[must_use]
-    pub fn judged(&self, band: Band) -> Weights<'_> {
-        Weights::new(self, band, true)
-    }
-}
-
-/// What every part sends in one band, and what of it arrives.
-#[derive(Clone, Debug)]
-pub struct Weights<'a> {
-    heat: &'a Heat,
-    band: Band,
-    judged: bool,
-    /// The exitance of each part, W/m².
-    sent: Vec<f64>,
-}
-
-impl<'a> Weights<'a> {
-    fn new(heat: &'a Heat, band: Band, judged: bool) -> Weights<'a> {
-        let sent = heat
-            .parts
-            .iter()
-            .map(|emission| {
-                if judged {
-                    band.judged_of(emission)
-                } else {
-                    band.of(emission)
-                }
-            })
-            .collect();
-        Weights {
-            heat,
-            band,
-            judged,
-            sent,
-        }
-    }
-
-    /// Returns the exitance of each part in the band, W/m²: more than that
-    /// never arrives.
-    #[must_use]
-    pub fn sent(&self) -> &[f64] {
-        &self.sent
-    }
-
-    /// Returns what of a piece's exitance arrives, W/m².
-    #[must_use]
-    pub fn arriving(&self, tag: &Tag) -> f64 {
-        if tag.through.is_empty() {
-            return self.sent[tag.part];
-        }
-        let emission = dimmed(&self.heat.parts[tag.part], tag, &self.heat.barriers);
-        if self.judged {
-            self.band.judged_of(&emission)
-        } else {
-            self.band.of(&emission)
-        }
-    }
-}
-
-/// Returns what arrives of an emission through the barriers of a tag. Of what
-/// is visible a filter is taken to stop nothing, unless it says so.
-fn dimmed(emission: &Emission, tag: &Tag, barriers: &[Clear]) -> Emission {
-    let mut dimmed = *emission;
-    let mut visible = emission.skin - emission.near_infrared;
-    for barrier in &tag.through {
-        let clear = barriers
-            .get(usize::from(*barrier))
-            .unwrap_or(&Clear::NOTHING);
-        dimmed.total *= clear.total;
-        dimmed.near_infrared *= clear.near_infrared;
-        visible *= clear.visible;
-    }
-    dimmed.skin = dimmed.near_infrared + visible;
-    dimmed
-}
-
-/// Gathers what all sources and screens send.
-#[derive(Clone, Debug, PartialEq)]
-pub(super) struct HeatTask {
-    pub(super) emissions: Vec<Node>,
-}
-
-impl HeatTask {
-    pub(super) fn inputs(&self, nodes: &mut Vec<Node>) {
-        nodes.extend(&self.emissions);
-    }
-
-    // Returns a result as every task does.
-    #[allow(clippy::unnecessary_wraps)]
-    pub(super) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
-        let mut heat = Heat {
-            parts: Vec::with_capacity(self.emissions.len()),
-            barriers: Vec::new(),
-        };
-        for node in &self.emissions {
-            heat.parts.extend(&inputs.emission(*node).parts);
-        }
-        Ok(Datum::Heat(Arc::new(heat)))
-    }
-}

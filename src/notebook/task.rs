@@ -5,7 +5,7 @@ use std::sync::Arc;
 use super::Diagnostic;
 use super::scene;
 use super::cell::field::{Expect, Item};
-use super::cell::{assessment, curve, position, source, surroundings, zone};
+use super::cell::{assessment, curve, position, screen, source, surroundings, zone};
 use super::datum::{CellId, Datum};
 use super::uncertainty::Draw;
 use crate::entry::{Entry, Outcome};
@@ -23,6 +23,10 @@ pub(super) enum Task {
     Shape(source::ShapeTask),
     Emission(source::EmissionTask),
     Source(source::OutcomeTask),
+    Stand(screen::StandTask),
+    Make(screen::MakeTask),
+    Screen(screen::OutcomeTask),
+    Balance(scene::BalanceTask),
     Layout(scene::LayoutTask),
     Apart(scene::ApartTask),
     Form(scene::FormTask),
@@ -70,6 +74,25 @@ impl<'a> Inputs<'a> {
     pub(super) fn emission(self, node: Node) -> &'a Arc<source::Emitted> {
         match self.datum(node) {
             Datum::Emission(emission) => emission,
+            _ => panic!("{LINKED}"),
+        }
+    }
+
+    pub(super) fn make(self, node: Node) -> &'a crate::physics::screen::Make {
+        match self.datum(node) {
+            Datum::Make(make) => make,
+            _ => panic!("{LINKED}"),
+        }
+    }
+
+    /// Returns the balance of all screens, or what stops it.
+    pub(super) fn balance(
+        self,
+        node: Node,
+    ) -> Result<&'a Arc<scene::Balanced>, (CellId, &'a str)> {
+        match self.datum(node) {
+            Datum::Balanced(balanced) => Ok(balanced),
+            Datum::Unbalanced(id, why) => Err((*id, why)),
             _ => panic!("{LINKED}"),
         }
     }
@@ -141,6 +164,10 @@ impl Task {
             Task::Shape(task) => task.inputs(&mut nodes),
             Task::Emission(task) => task.inputs(&mut nodes),
             Task::Source(task) => task.inputs(&mut nodes),
+            Task::Stand(task) => task.inputs(&mut nodes),
+            Task::Make(task) => task.inputs(&mut nodes),
+            Task::Screen(task) => task.inputs(&mut nodes),
+            Task::Balance(task) => task.inputs(&mut nodes),
             Task::Layout(task) => task.inputs(&mut nodes),
             Task::Apart(task) => task.inputs(&mut nodes),
             Task::Form(task) => task.inputs(&mut nodes),
@@ -186,6 +213,10 @@ impl Task {
             Task::Shape(task) => task.run(inputs),
             Task::Emission(task) => task.run(inputs),
             Task::Source(task) => task.run(inputs),
+            Task::Stand(task) => task.run(inputs),
+            Task::Make(task) => task.run(inputs),
+            Task::Screen(task) => task.run(inputs),
+            Task::Balance(task) => task.run(inputs),
             Task::Apart(task) => task.run(inputs),
             Task::Form(task) => task.run(inputs),
             Task::Heat(task) => task.run(inputs),

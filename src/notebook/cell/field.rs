@@ -249,6 +249,8 @@ pub enum Range {
     Emissivity,
     /// From zero to one.
     Fraction,
+    /// From zero to less than one.
+    Share,
     /// From a right angle down to a right angle up.
     RightAngle,
     /// From zero to less than a right angle.
@@ -320,6 +322,7 @@ impl Expect {
             Range::Positive => (si > 0.0, "a value above zero"),
             Range::NotNegative => (si >= 0.0, "zero or a value above it"),
             Range::Emissivity => (si > 0.0 && si <= 1.0, "a value above 0 and at most 1"),
+            Range::Share => ((0.0..1.0).contains(&si), "a value from 0 to less than 1"),
             Range::Fraction => ((0.0..=1.0).contains(&si), "a value from 0 to 1"),
             Range::RightAngle => (
                 si.abs() <= std::f64::consts::FRAC_PI_2 * (1.0 + 1e-12),
@@ -349,6 +352,8 @@ impl Expect {
         match self.range {
             Range::Emissivity => si.min(1.0),
             Range::Fraction => si.clamp(0.0, 1.0),
+            // The next below one.
+            Range::Share => si.clamp(0.0, 1.0 - f64::EPSILON),
             Range::Any
             | Range::Positive
             | Range::NotNegative
@@ -365,7 +370,7 @@ impl Expect {
             (Some(Dimension::ANGLE), _) => "90 °",
             (Some(Dimension::TIME), _) => "4 min",
             (Some(Dimension::SPEED), _) => "0.3 m/s",
-            (_, Range::Fraction) => "50 %",
+            (_, Range::Fraction | Range::Share) => "50 %",
             _ => return "see the field's meaning".to_owned(),
         };
         format!("write it as in `{example}`")

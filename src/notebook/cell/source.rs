@@ -14,7 +14,7 @@ use crate::units::{Dimension, Quantity};
 
 pub use emission::Emitted;
 pub(in crate::notebook) use emission::EmissionTask;
-pub use shape::{Shape, direction};
+pub use shape::{Frame, Shape, direction};
 pub(in crate::notebook) use shape::ShapeTask;
 
 /// The corners of a polygon.

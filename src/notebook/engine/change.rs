@@ -45,7 +45,7 @@ impl Engine {
         self.mention(id, &std::collections::BTreeSet::new());
         let _ = self.mentions.remove(&id);
         self.count_places();
-        self.scene_changed |= matches!(cell.kind, Kind::Source | Kind::Surroundings);
+        self.scene_changed |= cell.kind.is_in_scene();
         self.relink_mentions(name);
         Ok(Edit::Add { at, cell })
     }
@@ -56,7 +56,7 @@ impl Engine {
         let id = self.ids.remove(at);
         let to = to.min(self.notebook.cells.len());
         // Ties between sources go to file order.
-        self.scene_changed |= cell.kind == Kind::Source;
+        self.scene_changed |= cell.kind.is_in_scene();
         self.notebook.cells.insert(to, cell);
         self.ids.insert(to, id);
         self.count_places();
@@ -139,7 +139,7 @@ impl Engine {
         to.clone_into(&mut self.notebook.cells[at].name);
         let _ = self.index.remove(name);
         let _ = self.index.insert(to.to_owned(), id);
-        self.scene_changed |= self.notebook.cells[at].kind == Kind::Source;
+        self.scene_changed |= self.notebook.cells[at].kind.is_in_scene();
     }
 
     /// Replaces a cell's name in every field of the cell at `place`.

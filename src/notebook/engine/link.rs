@@ -10,7 +10,9 @@ use crate::guidance::Library;
 use crate::notebook::Diagnostic;
 use crate::notebook::cell::field::{Content, Expect, Form, Need, Pairs, Spec};
 use crate::notebook::cell::position::Facing;
-use crate::notebook::cell::{Cell, Kind, assessment, curve, position, source, surroundings, zone};
+use crate::notebook::cell::{
+    Cell, Kind, assessment, curve, position, screen, source, surroundings, zone,
+};
 use crate::notebook::datum::CellId;
 use crate::notebook::scene::ApartTask;
 use crate::notebook::task::{EntryTask, Pick, Task};
@@ -63,6 +65,7 @@ impl<'e> Linker<'e> {
             Kind::Value | Kind::Formula | Kind::Note => {}
             Kind::Surroundings => surroundings::link(self),
             Kind::Source => source::link(self),
+            Kind::Screen => screen::link(self),
             Kind::Position => position::link(self),
             Kind::Curve => curve::link(self),
             Kind::Assessment => assessment::link(self),
@@ -88,6 +91,16 @@ impl<'e> Linker<'e> {
     /// the room.
     pub(in crate::notebook) fn scene(&self) -> [Node; 3] {
         [self.engine.form, self.engine.heat, self.engine.room]
+    }
+
+    /// Returns the number of the cell.
+    pub(in crate::notebook) const fn id(&self) -> CellId {
+        self.id
+    }
+
+    /// Returns the hidden node of the balance of all screens.
+    pub(in crate::notebook) const fn balance(&self) -> Node {
+        self.engine.balance
     }
 
     /// Sets the node that says whether this source or screen stands clear of
@@ -596,8 +609,7 @@ impl<'e> Linker<'e> {
             };
         }
         let listed = kind.outputs().contains(&member) && member != "rows";
-        let takes_part =
-            kind == Kind::Position && matches!(member, "irradiance_from" | "view_factor");
+        let takes_part = kind == Kind::Position && position::BY_SOURCE.contains(&member);
         if !listed || takes_part != part.is_some() {
             let known: Vec<&str> =
                 kind.outputs()

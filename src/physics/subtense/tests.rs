@@ -1,5 +1,10 @@
 use super::*;
 
+fn cylinder(base: DVec3, axis: DVec3, radius: f64) -> Subtense {
+    let region = Region::cylinder(base, axis, radius).expect("a cylinder");
+    seen(&region, DVec3::ZERO)
+}
+
 fn seen(region: &Region, point: DVec3) -> Subtense {
     of(region, point).expect("a point that does not touch the source")
 }
@@ -87,6 +92,18 @@ fn what_lies_edge_on_or_behind_has_no_width() {
 }
 
 #[test]
+fn a_plate_is_seen_from_both_sides() {
+    let plate = Region::plate(DVec3::ZERO, DVec3::Y, DVec3::Z, 1.0, 2.0).expect("a plate");
+    let door = Region::rectangle(DVec3::ZERO, DVec3::Y, DVec3::Z, 1.0, 2.0).expect("a door");
+    let expected = seen(&door, DVec3::Y * 3.0);
+    for point in [DVec3::Y * 3.0, DVec3::NEG_Y * 3.0] {
+        let found = seen(&plate, point);
+        assert_near(found.greatest, expected.greatest, 1e-15, "greatest");
+        assert_near(found.smallest, expected.smallest, 1e-15, "smallest");
+    }
+}
+
+#[test]
 fn a_sphere_has_the_angle_of_its_tangents() {
     let ball = Region::sphere(DVec3::ZERO, 0.5).expect("a ball");
     let found = seen(&ball, DVec3::new(0.0, 0.6, 0.8));
@@ -98,7 +115,7 @@ fn a_sphere_has_the_angle_of_its_tangents() {
 #[test]
 fn a_cylinder_has_the_angles_of_its_end_or_of_its_side() {
     // Along its axis the near end hides the rest.
-    let found = cylinder(DVec3::Z, DVec3::Z * 3.0, 0.4, DVec3::ZERO);
+    let found = cylinder(DVec3::Z, DVec3::Z * 3.0, 0.4);
     let expected = 2.0 * 0.4_f64.atan();
     assert_near(found.greatest, expected, 6e-4 * expected, "end, greatest");
     assert_near(found.smallest, expected, 6e-4 * expected, "end, smallest");
@@ -109,7 +126,7 @@ fn a_cylinder_has_the_angles_of_its_end_or_of_its_side() {
     );
     // From aside, at half its height: tangent planes along it, and its length
     // along the nearest line and beyond.
-    let found = cylinder(DVec3::new(5.0, 0.0, -2.0), DVec3::Z * 4.0, 0.1, DVec3::ZERO);
+    let found = cylinder(DVec3::new(5.0, 0.0, -2.0), DVec3::Z * 4.0, 0.1);
     let width = 2.0 * (0.1_f64 / 5.0).asin();
     let length = 2.0 * (2.0_f64 / 4.9).atan();
     assert_near(found.smallest, width, 6e-4 * width, "side, smallest");
@@ -119,7 +136,7 @@ fn a_cylinder_has_the_angles_of_its_end_or_of_its_side() {
         "{found:?}"
     );
     // Just off its side it fills half of what there is.
-    let near = cylinder(DVec3::ZERO, DVec3::Z, 0.5, DVec3::new(0.5 + 1e-9, 0.0, 0.5));
+    let near = cylinder(DVec3::new(-0.5 - 1e-9, 0.0, -0.5), DVec3::Z, 0.5);
     assert_near(near.smallest, std::f64::consts::PI, 1e-3, "touching");
 }
 

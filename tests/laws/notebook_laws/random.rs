@@ -10,8 +10,9 @@ use farglow::units::Dimension;
 use proptest::prelude::*;
 
 /// The names that cells may have, few, so that they meet.
-const NAMES: [&str; 12] = [
+const NAMES: [&str; 13] = [
     "a", "door", "stand", "b", "pool", "bench", "judged", "fall", "edge", "room", "c", "ball",
+    "plate",
 ];
 
 const LENGTHS: &[&str] = &[
@@ -210,9 +211,10 @@ impl Dice {
             ("room", Kind::Surroundings),
             ("c", Kind::Formula),
             ("ball", Kind::Source),
+            ("plate", Kind::Screen),
             ("bench", Kind::Position),
             ("note", Kind::Note),
-        ][self.upto(13)];
+        ][self.upto(14)];
         let kind = if self.upto(8) == 7 {
             Kind::ALL[self.upto(Kind::ALL.len())]
         } else {
@@ -223,6 +225,7 @@ impl Dice {
             Kind::Value | Kind::Formula => &["entry"],
             Kind::Surroundings => &["air_temperature"],
             Kind::Source => &["form", "outline", "temperature", "emissivity", "z"],
+            Kind::Screen => &["make", "width", "height", "z", "y"],
             Kind::Position => &["from", "distance", "stay"],
             Kind::Curve => &["from", "points"],
             Kind::Assessment => &["position", "guidance"],
@@ -233,12 +236,28 @@ impl Dice {
             let content = self.fill(kind, field);
             cell.fields.push(content);
         }
+        if kind == Kind::Screen {
+            let own: &[&str] = match cell.text("make") {
+                Some("mesh") => &["open_fraction"],
+                Some("filter") => &["transmittance", "near_ir_transmittance"],
+                _ => &[],
+            };
+            for field in own {
+                let content = self.fill(kind, field);
+                cell.fields.push(content);
+            }
+        }
         if kind == Kind::Source {
             // Every form with the outline and the sizes that go with it.
             let (form, outline, sizes): (_, _, &[&str]) = match (name, self.upto(2)) {
-                ("ball", _) => ("body", "sphere", &["diameter"]),
+                ("ball", _) => [
+                    ("body", "sphere", &["diameter"][..]),
+                    ("body", "cylinder", &["diameter", "height"]),
+                    ("body", "plate", &["width", "height"]),
+                ][self.upto(3)],
                 ("pool", 0) => ("pool", "disc", &["diameter"]),
                 ("pool", _) => ("pool", "rectangle", &["width", "length"]),
+                ("a", _) => ("opening", "polygon", &["vertices"]),
                 (_, 0) => ("opening", "rectangle", &["width", "height"]),
                 _ => ("opening", "disc", &["diameter"]),
             };
@@ -294,7 +313,7 @@ impl Dice {
             }
             Form::Cell(kinds) => {
                 let mut list = match kinds {
-                    [Kind::Source, ..] => vec!["door", "pool", "ball"],
+                    [Kind::Source, ..] => vec!["door", "pool", "ball", "plate"],
                     _ => vec!["stand", "bench"],
                 };
                 list.extend(["a", "nobody"]);
@@ -420,9 +439,12 @@ pub fn reach(notebook: &Notebook, from: &str) -> BTreeSet<String> {
     while let Some(name) = front.pop() {
         let kind = notebook.find(&name).map(|at| notebook.cells[at].kind);
         for cell in &notebook.cells {
-            let in_scene = matches!(cell.kind, Kind::Position | Kind::Curve | Kind::Zone);
-            let by_scene = in_scene && kind == Some(Kind::Source)
-                || cell.kind == Kind::Position && kind == Some(Kind::Surroundings);
+            // Of two that emit each must know where the other is.
+            let in_scene = matches!(
+                cell.kind,
+                Kind::Position | Kind::Curve | Kind::Zone | Kind::Source | Kind::Screen
+            );
+            let by_scene = in_scene && kind.is_some_and(Kind::is_in_scene);
             if (by_scene || mentions(cell, &name)) && reached.insert(cell.name.clone()) {
                 front.push(cell.name.clone());
             }

@@ -330,6 +330,16 @@ impl Views {
         }
     }
 
+    /// Returns what is known of a piece seen from a point beside its view;
+    /// `None` where every part is one piece and nothing is in its way.
+    #[must_use]
+    pub fn tag(&self, point: usize, piece: usize) -> Option<&Tag> {
+        match &self.pieces {
+            Pieces::OneOfEach(_) => None,
+            Pieces::Tagged { tags, .. } => tags[self.range(point)].get(piece),
+        }
+    }
+
     /// Returns the part that each piece seen from a point belongs to, with the
     /// piece.
     pub fn parts(&self, point: usize) -> impl Iterator<Item = (usize, &View)> {

@@ -60,6 +60,21 @@ pub struct Shape {
     pub parts: Vec<Part>,
     /// What it hides or dims.
     pub barrier: Option<Barrier>,
+    /// How a screen stands.
+    pub frame: Option<Frame>,
+}
+
+/// How a flat rectangle stands: its directions, and its sizes in m.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Frame {
+    /// Where its front faces, a unit vector.
+    pub normal: DVec3,
+    /// Along its height, a unit vector.
+    pub up: DVec3,
+    /// Across.
+    pub width: f64,
+    /// Along `up`.
+    pub height: f64,
 }
 
 impl Shape {
@@ -75,6 +90,7 @@ impl Shape {
             depth: 0.0,
             parts: vec![part],
             barrier: None,
+            frame: None,
         }
     }
 
