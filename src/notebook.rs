@@ -16,6 +16,7 @@ pub mod engine;
 pub mod name;
 pub mod readiness;
 pub mod results;
+pub mod scene;
 pub mod snapshot;
 mod task;
 pub mod uncertainty;

@@ -298,6 +298,11 @@ impl Area {
                     return Action::None;
                 }
             },
+            Some(form @ Form::Pairs(_)) => {
+                // What is typed is kept as it is while it is being typed.
+                self.draft = Some(text.clone());
+                Content::typed(form, text)
+            }
             _ => Content::Text(text),
         };
         let joins = std::mem::replace(&mut self.typed, true);
@@ -537,6 +542,7 @@ fn set(cell: &Cell, field: &'static str, content: Content, joins: bool) -> Actio
         Content::Text(text) => text.is_empty(),
         Content::List(list) => list.is_empty(),
         Content::Count(_) => false,
+        Content::Pairs(pairs) => pairs.is_empty(),
     };
     let old = cell.field(field);
     let keeps = old.is_some_and(|old| old.basis.is_some() || old.note.is_some());

@@ -69,6 +69,9 @@ pub enum Reason {
         /// The exposure time in seconds up to which it speaks.
         until: f64,
     },
+    /// More falls on the person than was judged: a polished screen mirrors a
+    /// source.
+    Mirrored,
 }
 
 impl Finding {
@@ -120,6 +123,9 @@ impl Reason {
                     "this guidance says nothing about stays past {}",
                     seconds(until)
                 )
+            }
+            Self::Mirrored => {
+                "a polished screen mirrors a source here: the truth is higher".to_owned()
             }
         }
     }

@@ -111,7 +111,12 @@ pub(super) fn of_cell(engine: &Engine, id: CellId, result: &CellResult) -> Vec<C
         Kind::Position => of_position(engine, id, &mut cautions),
         Kind::Assessment => of_assessment(engine, result, &mut cautions),
         Kind::Zone => of_zone(engine, id, result, &mut cautions),
-        Kind::Value | Kind::Formula | Kind::Surroundings | Kind::Curve | Kind::Note => {}
+        Kind::Value
+        | Kind::Formula
+        | Kind::Surroundings
+        | Kind::Screen
+        | Kind::Curve
+        | Kind::Note => {}
     }
     if result.failed > 0 {
         cautions.push(called(
@@ -145,7 +150,7 @@ fn of_source(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
         match shape.kind {
             source::Kind::Pool => cautions.push(called("near-infrared-assumed", None, &[])),
             source::Kind::Body => cautions.push(called("near-infrared-as-total", None, &[])),
-            source::Kind::Opening => {}
+            source::Kind::Opening | source::Kind::Screen => {}
         }
     }
     if let Some(Datum::Shape(shape)) = engine.value_of(id, Slot::Group("shape"))
@@ -154,7 +159,7 @@ fn of_source(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
         cautions.push(called("pool-poured", None, &[]));
     }
     if let Some(Datum::Emission(emission)) = engine.value_of(id, Slot::Group("emission"))
-        && emission.skin > emission.total
+        && emission.face.skin > emission.face.total
     {
         cautions.push(called("band-above-whole", Some("emissivity"), &[]));
     }

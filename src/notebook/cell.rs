@@ -10,11 +10,13 @@ pub mod field;
 pub mod formula;
 pub mod note;
 pub mod position;
+pub mod screen;
 pub mod source;
 pub mod surroundings;
 pub mod value;
 pub mod zone;
 
+use std::borrow::Cow;
 use std::fmt;
 
 pub use field::{Basis, Content, Field, Form, Need, Spec};
@@ -30,6 +32,8 @@ pub enum Kind {
     Surroundings,
     /// A hot emitter: an opening, a pool or a body.
     Source,
+    /// A barrier between a source and people.
+    Screen,
     /// Where a person stands.
     Position,
     /// Irradiance along a line.
@@ -44,11 +48,12 @@ pub enum Kind {
 
 impl Kind {
     /// All kinds, in the order in which the program lists them.
-    pub const ALL: [Kind; 9] = [
+    pub const ALL: [Kind; 10] = [
         Kind::Value,
         Kind::Formula,
         Kind::Surroundings,
         Kind::Source,
+        Kind::Screen,
         Kind::Position,
         Kind::Curve,
         Kind::Assessment,
@@ -64,6 +69,7 @@ impl Kind {
             Kind::Formula => "formula",
             Kind::Surroundings => "surroundings",
             Kind::Source => "source",
+            Kind::Screen => "screen",
             Kind::Position => "position",
             Kind::Curve => "curve",
             Kind::Assessment => "assessment",
@@ -87,6 +93,7 @@ impl Kind {
             Kind::Formula => formula::FIELDS,
             Kind::Surroundings => surroundings::FIELDS,
             Kind::Source => source::FIELDS,
+            Kind::Screen => screen::FIELDS,
             Kind::Position => position::FIELDS,
             Kind::Curve => curve::FIELDS,
             Kind::Assessment => assessment::FIELDS,
@@ -102,6 +109,7 @@ impl Kind {
             Kind::Value | Kind::Formula => &["value"],
             Kind::Surroundings => surroundings::OUTPUTS,
             Kind::Source => source::OUTPUTS,
+            Kind::Screen => screen::OUTPUTS,
             Kind::Position => position::OUTPUTS,
             Kind::Curve => curve::OUTPUTS,
             Kind::Assessment => assessment::OUTPUTS,
@@ -117,10 +125,17 @@ impl Kind {
         match self {
             Kind::Value | Kind::Formula => Some("value"),
             Kind::Source => Some("exitance"),
+            Kind::Screen => Some("temperature"),
             Kind::Position => Some("irradiance"),
             Kind::Zone => Some("distance"),
             Kind::Surroundings | Kind::Curve | Kind::Assessment | Kind::Note => None,
         }
+    }
+
+    /// Returns whether cells of this kind are part of what all positions see.
+    #[must_use]
+    pub const fn is_in_scene(self) -> bool {
+        matches!(self, Kind::Source | Kind::Screen | Kind::Surroundings)
     }
 
     /// Returns the field of this name.
@@ -187,7 +202,33 @@ impl Cell {
     pub fn text(&self, name: &str) -> Option<&str> {
         match &self.field(name)?.content {
             Content::Text(text) => Some(text),
+            Content::List(_) | Content::Count(_) | Content::Pairs(_) => None,
+        }
+    }
+
+    /// Returns the pairs of a field, if it was typed and holds them: as such,
+    /// or as one text.
+    #[must_use]
+    pub fn pairs(&self, name: &str) -> Option<Cow<'_, [[String; 2]]>> {
+        match &self.field(name)?.content {
+            Content::Pairs(pairs) => Some(Cow::Borrowed(pairs)),
+            Content::Text(text) => field::pairs(text).map(Cow::Owned),
             Content::List(_) | Content::Count(_) => None,
+        }
+    }
+
+    /// Returns the text in which a fault is found: of a field, or of one entry
+    /// of a field of pairs.
+    #[must_use]
+    pub fn faulty(&self, fault: &super::Diagnostic) -> Option<String> {
+        let field = fault.field?;
+        match fault.item {
+            None => Some(self.field(field)?.content.to_text()),
+            Some((pair, side)) => self
+                .pairs(field)?
+                .get(usize::from(pair))?
+                .get(usize::from(side))
+                .cloned(),
         }
     }
 
@@ -197,7 +238,7 @@ impl Cell {
         match self.field(name).map(|field| &field.content) {
             Some(Content::Text(text)) => vec![text.as_str()],
             Some(Content::List(list)) => list.iter().map(String::as_str).collect(),
-            Some(Content::Count(_)) | None => Vec::new(),
+            Some(Content::Count(_) | Content::Pairs(_)) | None => Vec::new(),
         }
     }
 }

@@ -4,9 +4,10 @@
 use std::sync::Arc;
 
 use super::Diagnostic;
-use super::cell::{assessment, curve, position, source, surroundings, zone};
+use super::cell::{assessment, curve, position, screen, source, surroundings, zone};
+use super::scene::{Balanced, Form, Heat, Layout};
 use crate::graph::Same;
-use crate::physics::surface::Emission;
+use crate::physics::screen::Make;
 use crate::units::Quantity;
 
 /// The number of a cell while its notebook is open; renaming does not change
@@ -34,13 +35,25 @@ pub enum Datum {
     /// A source's place and outline.
     Shape(Arc<source::Shape>),
     /// What a source emits.
-    Emission(Emission),
+    Emission(Arc<source::Emitted>),
     /// What a source is asked for.
     Source(source::Outcome),
-    /// Where all sources are.
-    Form(Arc<position::Form>),
-    /// What all sources emit, parallel to the form.
-    Heat(Arc<Vec<Emission>>),
+    /// What a screen is made of.
+    Make(Make),
+    /// What a screen is asked for.
+    Screen(screen::Outcome),
+    /// All screens in balance.
+    Balanced(Arc<Balanced>),
+    /// The balance cannot be found: the screen that stops it, and why.
+    Unbalanced(CellId, Arc<str>),
+    /// Which sources and screens go through one another.
+    Layout(Arc<Layout>),
+    /// A source or a screen goes through no other.
+    Apart,
+    /// Where all sources and screens are.
+    Form(Arc<Form>),
+    /// What all sources and screens emit, parallel to the parts of the form.
+    Heat(Arc<Heat>),
     /// The room.
     Room(surroundings::Room),
     /// What a position sees.
@@ -97,6 +110,7 @@ impl Datum {
                 );
             }
             Datum::Source(outcome) => outcome.visit(see),
+            Datum::Screen(outcome) => outcome.visit(see),
             Datum::Room(room) => room.visit(see),
             Datum::Exposure(exposure) => exposure.visit(see),
             Datum::Rows(rows) => {
@@ -110,6 +124,11 @@ impl Datum {
             | Datum::Waiting(_)
             | Datum::Shape(_)
             | Datum::Emission(_)
+            | Datum::Make(_)
+            | Datum::Balanced(_)
+            | Datum::Unbalanced(..)
+            | Datum::Layout(_)
+            | Datum::Apart
             | Datum::Form(_)
             | Datum::Heat(_)
             | Datum::Sights(_)
@@ -221,7 +240,13 @@ impl Same for Datum {
             (Datum::Quantity(a), Datum::Quantity(b)) => a.same_bits(b),
             (Datum::Truth(a), Datum::Truth(b)) => a == b,
             (Datum::Shape(a), Datum::Shape(b)) => Arc::ptr_eq(a, b) || a == b,
-            (Datum::Emission(a), Datum::Emission(b)) => a == b,
+            (Datum::Emission(a), Datum::Emission(b)) => Arc::ptr_eq(a, b) || a == b,
+            (Datum::Make(a), Datum::Make(b)) => a == b,
+            (Datum::Screen(a), Datum::Screen(b)) => a == b,
+            (Datum::Balanced(a), Datum::Balanced(b)) => Arc::ptr_eq(a, b) || a == b,
+            (Datum::Unbalanced(a, why), Datum::Unbalanced(b, other)) => a == b && why == other,
+            (Datum::Layout(a), Datum::Layout(b)) => a == b,
+            (Datum::Apart, Datum::Apart) => true,
             (Datum::Source(a), Datum::Source(b)) => a == b,
             (Datum::Form(a), Datum::Form(b)) => Arc::ptr_eq(a, b) || a == b,
             (Datum::Heat(a), Datum::Heat(b)) => Arc::ptr_eq(a, b) || a == b,

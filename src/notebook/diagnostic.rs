@@ -3,6 +3,8 @@
 use std::fmt;
 use std::ops::Range;
 
+use super::cell::field::Item;
+
 /// One fault of one cell. The cell is known by where the diagnostic is found.
 #[derive(Clone, Debug, PartialEq, Eq)]
 pub struct Diagnostic {
@@ -10,6 +12,8 @@ pub struct Diagnostic {
     pub code: &'static str,
     /// The field it is in; `None` for the cell as a whole.
     pub field: Option<&'static str>,
+    /// Which entry of a field of pairs it is in; `None` in any other.
+    pub item: Option<Item>,
     /// Where in the field's text, in characters from 0.
     pub span: Option<Range<usize>>,
     /// What was expected and what was found.
@@ -28,6 +32,7 @@ impl Diagnostic {
         Diagnostic {
             code,
             field: None,
+            item: None,
             span: None,
             message: message.into(),
             hint: None,
@@ -58,12 +63,20 @@ impl Diagnostic {
         self
     }
 
+    /// Returns the fault in one entry of its field of pairs.
+    #[must_use]
+    pub fn in_item(mut self, item: Option<Item>) -> Self {
+        self.item = item.or(self.item);
+        self
+    }
+
     /// Returns the fault of an entry, now in its field.
     #[must_use]
     pub fn from_entry(field: &'static str, fault: crate::entry::Diagnostic) -> Self {
         Diagnostic {
             code: fault.code,
             field: Some(field),
+            item: None,
             span: fault.span,
             message: fault.message,
             hint: fault.hint,
@@ -74,11 +87,17 @@ impl Diagnostic {
     /// Returns the place in words, such as `field width, character 5`.
     #[must_use]
     pub fn place(&self) -> String {
-        match (self.field, &self.span) {
-            (Some(field), Some(span)) => format!("field {field}, character {}", span.start + 1),
-            (Some(field), None) => format!("field {field}"),
-            (None, _) => String::new(),
+        let Some(field) = self.field else {
+            return String::new();
+        };
+        let mut place = format!("field {field}");
+        if let Some((pair, side)) = self.item {
+            place.push_str(&format!("[{pair}][{side}]"));
         }
+        if let Some(span) = &self.span {
+            place.push_str(&format!(", character {}", span.start + 1));
+        }
+        place
     }
 }
 

@@ -9,12 +9,16 @@ mod change;
 mod link;
 mod ring;
 
+use std::borrow::Cow;
 use std::collections::{BTreeMap, BTreeSet, HashMap};
 use std::sync::Arc;
 
-use super::cell::{Cell, Kind, position, surroundings};
+use super::cell::field::Item;
+use super::cell::surroundings::{Formula, RoomTask};
+use super::cell::{Cell, Kind};
 use super::datum::{CellId, Datum};
 use super::edit::{self, Edit};
+use super::scene::{BalanceTask, Balanced, Form, FormTask, Heat, HeatTask, LayoutTask, Sender};
 use super::task::Task;
 use super::{Diagnostic, Notebook, name};
 use crate::entry::Entry;
@@ -27,10 +31,32 @@ pub(in crate::notebook) use link::Linker;
 pub enum Slot {
     /// One input field.
     Field(&'static str),
+    /// One entry of a field of pairs: the pair and the side, from 0.
+    Item(&'static str, Item),
     /// One group of outputs, or a step towards it.
     Group(&'static str),
     /// The faults of the cell that are found while linking.
     Check,
+}
+
+impl Slot {
+    /// Returns the field that it belongs to.
+    #[must_use]
+    pub const fn field(self) -> Option<&'static str> {
+        match self {
+            Slot::Field(field) | Slot::Item(field, _) => Some(field),
+            Slot::Group(_) | Slot::Check => None,
+        }
+    }
+
+    /// Returns the name by which draws of its literals are keyed.
+    pub(in crate::notebook) fn key(self) -> Cow<'static, str> {
+        match self {
+            Slot::Field(field) | Slot::Group(field) => Cow::Borrowed(field),
+            Slot::Item(field, (pair, side)) => Cow::Owned(format!("{field}[{pair}][{side}]")),
+            Slot::Check => Cow::Borrowed(""),
+        }
+    }
 }
 
 /// Why a notebook cannot be opened at all.
@@ -85,7 +111,9 @@ pub struct Engine {
     tasks: Vec<Option<Task>>,
     /// Whose each node is, by the node's number.
     owners: Vec<(CellId, Slot)>,
+    layout: Node,
     form: Node,
+    balance: Node,
     heat: Node,
     room: Node,
     /// Whether a source was added, removed, moved or renamed.
@@ -103,7 +131,7 @@ impl Engine {
     pub fn open(notebook: Notebook) -> Result<Engine, Vec<Error>> {
         check(&notebook)?;
         let mut graph = Graph::new();
-        let [form, heat, room] = [graph.add(), graph.add(), graph.add()];
+        let [layout, form, balance, heat, room] = [(); 5].map(|()| graph.add());
         let hidden = |name| (CellId::SCENE, Slot::Group(name));
         let mut engine = Engine {
             notebook: Notebook::default(),
@@ -115,9 +143,13 @@ impl Engine {
             mentions: BTreeMap::new(),
             mentioned: HashMap::new(),
             graph,
-            tasks: vec![None; 3],
-            owners: vec![hidden("form"), hidden("heat"), hidden("room")],
+            tasks: vec![None; 5],
+            owners: ["layout", "form", "balance", "heat", "room"]
+                .map(hidden)
+                .to_vec(),
+            layout,
             form,
+            balance,
             heat,
             room,
             scene_changed: true,
@@ -226,11 +258,32 @@ impl Engine {
         self.value(self.slot(id, slot)?)
     }
 
-    /// Returns where all sources are, unless one of them is in error.
+    /// Returns where all sources and screens are, unless one of them is in
+    /// error.
     #[must_use]
-    pub fn form(&self) -> Option<&Arc<position::Form>> {
+    pub fn form(&self) -> Option<&Arc<Form>> {
         match self.value(self.form)? {
             Datum::Form(form) => Some(form),
+            _ => None,
+        }
+    }
+
+    /// Returns all screens in balance, unless something they stand on is in
+    /// error.
+    #[must_use]
+    pub fn balanced(&self) -> Option<&Arc<Balanced>> {
+        match self.value(self.balance)? {
+            Datum::Balanced(balanced) => Some(balanced),
+            _ => None,
+        }
+    }
+
+    /// Returns what all sources and screens send, unless one of them is in
+    /// error.
+    #[must_use]
+    pub fn heat(&self) -> Option<&Arc<Heat>> {
+        match self.value(self.heat)? {
+            Datum::Heat(heat) => Some(heat),
             _ => None,
         }
     }
@@ -298,13 +351,13 @@ impl Engine {
     /// Returns all nodes with an entry, in file order.
     pub(in crate::notebook) fn entries(
         &self,
-    ) -> impl Iterator<Item = (CellId, &'static str, Node, &Entry)> {
+    ) -> impl Iterator<Item = (CellId, Slot, Node, &Entry)> {
         self.ids.iter().flat_map(move |id| {
             self.nodes(*id)
                 .iter()
                 .filter_map(move |(slot, node)| match (slot, self.task(*node)) {
-                    (Slot::Field(field), Some(Task::Entry(task))) => {
-                        Some((*id, *field, *node, &*task.entry))
+                    (Slot::Field(_) | Slot::Item(..), Some(Task::Entry(task))) => {
+                        Some((*id, *slot, *node, &*task.entry))
                     }
                     _ => None,
                 })
@@ -370,7 +423,7 @@ impl Engine {
         // then the check.
         let kind = self.cell(id).map(|cell| cell.kind);
         let rank = |slot: &Slot| match slot {
-            Slot::Field(name) => kind
+            Slot::Field(name) | Slot::Item(name, _) => kind
                 .and_then(|kind| kind.fields().iter().position(|spec| spec.name == *name))
                 .unwrap_or(usize::MAX - 2),
             Slot::Group(_) => usize::MAX - 1,
@@ -399,7 +452,7 @@ impl Engine {
         let Some(cell) = self.cell(id).cloned() else {
             return false;
         };
-        if cell.kind == Kind::Source || cell.kind == Kind::Surroundings {
+        if cell.kind.is_in_scene() {
             self.scene_changed = true;
         }
         let mut linker = Linker::new(self, id, cell);
@@ -458,34 +511,83 @@ impl Engine {
         if !std::mem::take(&mut self.scene_changed) {
             return;
         }
-        let (mut names, mut shapes, mut emissions) = (Vec::new(), Vec::new(), Vec::new());
-        let (mut air, mut radiant) = (None, None);
+        let (mut names, mut ids) = (Vec::new(), Vec::new());
+        let (mut shapes, mut senders, mut screens) = (Vec::new(), Vec::new(), Vec::new());
+        let mut room = RoomTask::default();
+        let mut formula = None;
         for (cell, id) in self.notebook.cells.iter().zip(&self.ids) {
             match cell.kind {
-                Kind::Source => {
-                    let (Some(shape), Some(emission)) = (
+                Kind::Source | Kind::Screen => {
+                    let is_screen = cell.kind == Kind::Screen;
+                    let sends = if is_screen { "make" } else { "emission" };
+                    let (Some(shape), Some(sends)) = (
                         self.slot(*id, Slot::Group("shape")),
-                        self.slot(*id, Slot::Group("emission")),
+                        self.slot(*id, Slot::Group(sends)),
                     ) else {
                         continue;
                     };
+                    senders.push(if is_screen {
+                        screens.push(*id);
+                        Sender::Screen(sends)
+                    } else {
+                        Sender::Source(sends)
+                    });
                     names.push(Arc::from(cell.name.as_str()));
+                    ids.push(*id);
                     shapes.push(shape);
-                    emissions.push(emission);
                 }
                 Kind::Surroundings => {
-                    air = self.slot(*id, Slot::Field("air_temperature"));
-                    radiant = self.slot(*id, Slot::Field("radiant_temperature"));
+                    let field = |name| self.slot(*id, Slot::Field(name));
+                    room.air = field("air_temperature");
+                    room.radiant = field("radiant_temperature");
+                    room.humidity = field("humidity");
+                    room.speed = field("air_speed");
+                    formula = cell.text("absorption").and_then(Formula::from_word);
                 }
                 _ => {}
             }
         }
-        self.set(self.form, Task::Form(position::FormTask { names, shapes }));
-        self.set(self.heat, Task::Heat(position::HeatTask { emissions }));
+        let layout = LayoutTask {
+            names: names.clone(),
+            ids,
+            shapes: shapes.clone(),
+        };
+        self.set(self.layout, Task::Layout(layout));
+        let form = FormTask {
+            names,
+            shapes,
+            layout: self.layout,
+            air: formula.is_some(),
+        };
+        self.set(self.form, Task::Form(form));
+        // What nothing asks for must not make anything run.
+        if formula.is_none() {
+            room.humidity = None;
+        }
+        if screens.is_empty() {
+            room.speed = None;
+        }
+        self.set(self.room, Task::Room(room));
+        let balance = (!screens.is_empty()).then_some(self.balance);
         self.set(
-            self.room,
-            Task::Room(surroundings::RoomTask { air, radiant }),
+            self.heat,
+            Task::Heat(HeatTask {
+                senders: senders.clone(),
+                balance,
+                air: formula.map(|formula| (self.room, formula)),
+            }),
         );
+        // Without screens nothing asks for the balance: it gathers nothing.
+        if screens.is_empty() {
+            senders.clear();
+        }
+        let balance = BalanceTask {
+            form: self.form,
+            room: self.room,
+            senders,
+            screens,
+        };
+        self.set(self.balance, Task::Balance(balance));
     }
 
     fn run(&mut self) -> Run {
@@ -502,8 +604,10 @@ impl Engine {
             &mut |node, _| {
                 // Who is in it is told when the fault is, by the names of then.
                 let mut fault = Diagnostic::of_cell("ring", "waits for itself");
-                if let (_, Slot::Field(field)) = owners[node.index()] {
-                    fault.field = Some(field);
+                let (_, slot) = owners[node.index()];
+                fault.field = slot.field();
+                if let Slot::Item(_, item) = slot {
+                    fault.item = Some(item);
                 }
                 Datum::Fault(Arc::new(vec![fault]))
             },
@@ -515,7 +619,7 @@ impl Engine {
 pub(in crate::notebook) const fn outputs_of(kind: Kind) -> Option<Slot> {
     match kind {
         Kind::Value | Kind::Formula => Some(Slot::Field("entry")),
-        Kind::Source => Some(Slot::Group("outcome")),
+        Kind::Source | Kind::Screen => Some(Slot::Group("outcome")),
         Kind::Position => Some(Slot::Group("exposure")),
         Kind::Curve => Some(Slot::Group("rows")),
         Kind::Assessment => Some(Slot::Group("verdicts")),

@@ -434,7 +434,7 @@ fn judge(
         if let Some(exposure) = exposure
             && let Ok(judgement) = library.judge(&verdict.guidance, exposure, stay)
         {
-            verdict.judgement = judgement;
+            verdict = verdict.judged(judgement);
         }
         verdicts.push(verdict);
     }

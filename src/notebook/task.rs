@@ -3,8 +3,9 @@
 use std::sync::Arc;
 
 use super::Diagnostic;
-use super::cell::field::Expect;
-use super::cell::{assessment, curve, position, source, surroundings, zone};
+use super::scene;
+use super::cell::field::{Expect, Item};
+use super::cell::{assessment, curve, position, screen, source, surroundings, zone};
 use super::datum::{CellId, Datum};
 use super::uncertainty::Draw;
 use crate::entry::{Entry, Outcome};
@@ -22,8 +23,14 @@ pub(super) enum Task {
     Shape(source::ShapeTask),
     Emission(source::EmissionTask),
     Source(source::OutcomeTask),
-    Form(position::FormTask),
-    Heat(position::HeatTask),
+    Stand(screen::StandTask),
+    Make(screen::MakeTask),
+    Screen(screen::OutcomeTask),
+    Balance(scene::BalanceTask),
+    Layout(scene::LayoutTask),
+    Apart(scene::ApartTask),
+    Form(scene::FormTask),
+    Heat(scene::HeatTask),
     Room(surroundings::RoomTask),
     Sights(position::SightsTask),
     Exposure(position::ExposureTask),
@@ -64,21 +71,47 @@ impl<'a> Inputs<'a> {
         }
     }
 
-    pub(super) fn emission(self, node: Node) -> &'a crate::physics::surface::Emission {
+    pub(super) fn emission(self, node: Node) -> &'a Arc<source::Emitted> {
         match self.datum(node) {
             Datum::Emission(emission) => emission,
             _ => panic!("{LINKED}"),
         }
     }
 
-    pub(super) fn form(self, node: Node) -> &'a Arc<position::Form> {
+    pub(super) fn make(self, node: Node) -> &'a crate::physics::screen::Make {
+        match self.datum(node) {
+            Datum::Make(make) => make,
+            _ => panic!("{LINKED}"),
+        }
+    }
+
+    /// Returns the balance of all screens, or what stops it.
+    pub(super) fn balance(
+        self,
+        node: Node,
+    ) -> Result<&'a Arc<scene::Balanced>, (CellId, &'a str)> {
+        match self.datum(node) {
+            Datum::Balanced(balanced) => Ok(balanced),
+            Datum::Unbalanced(id, why) => Err((*id, why)),
+            _ => panic!("{LINKED}"),
+        }
+    }
+
+    pub(super) fn layout(self, node: Node) -> &'a scene::Layout {
+        match self.datum(node) {
+            Datum::Layout(layout) => layout,
+            _ => panic!("{LINKED}"),
+        }
+    }
+
+    pub(super) fn form(self, node: Node) -> &'a Arc<scene::Form> {
         match self.datum(node) {
             Datum::Form(form) => form,
             _ => panic!("{LINKED}"),
         }
     }
 
-    pub(super) fn heat(self, node: Node) -> &'a [crate::physics::surface::Emission] {
+    pub(super) fn heat(self, node: Node) -> &'a Arc<scene::Heat> {
         match self.datum(node) {
             Datum::Heat(heat) => heat,
             _ => panic!("{LINKED}"),
@@ -131,6 +164,12 @@ impl Task {
             Task::Shape(task) => task.inputs(&mut nodes),
             Task::Emission(task) => task.inputs(&mut nodes),
             Task::Source(task) => task.inputs(&mut nodes),
+            Task::Stand(task) => task.inputs(&mut nodes),
+            Task::Make(task) => task.inputs(&mut nodes),
+            Task::Screen(task) => task.inputs(&mut nodes),
+            Task::Balance(task) => task.inputs(&mut nodes),
+            Task::Layout(task) => task.inputs(&mut nodes),
+            Task::Apart(task) => task.inputs(&mut nodes),
             Task::Form(task) => task.inputs(&mut nodes),
             Task::Heat(task) => task.inputs(&mut nodes),
             Task::Room(task) => task.inputs(&mut nodes),
@@ -159,6 +198,7 @@ impl Task {
         match self {
             Task::Fault(faults) => return Datum::Fault(Arc::clone(faults)),
             Task::Stuck(cell) => return Datum::Waiting(Arc::new(vec![*cell])),
+            Task::Layout(task) => return task.run(values),
             _ => {}
         }
         if let Some(waiting) = waiting(values, owner) {
@@ -166,11 +206,18 @@ impl Task {
         }
         let inputs = Inputs { values };
         let result = match self {
-            Task::Fault(_) | Task::Stuck(_) => unreachable!("answered above"),
-            Task::Entry(task) => task.run(node, inputs, draw),
+            Task::Fault(_) | Task::Stuck(_) | Task::Layout(_) => unreachable!("answered above"),
+            Task::Entry(task) => task
+                .run(node, inputs, draw)
+                .map_err(|fault| fault.in_item(task.item)),
             Task::Shape(task) => task.run(inputs),
             Task::Emission(task) => task.run(inputs),
             Task::Source(task) => task.run(inputs),
+            Task::Stand(task) => task.run(inputs),
+            Task::Make(task) => task.run(inputs),
+            Task::Screen(task) => task.run(inputs),
+            Task::Balance(task) => task.run(inputs),
+            Task::Apart(task) => task.run(inputs),
             Task::Form(task) => task.run(inputs),
             Task::Heat(task) => task.run(inputs),
             Task::Room(task) => task.run(inputs),
@@ -216,6 +263,8 @@ fn waiting(values: &Values<'_, Datum>, owner: &dyn Fn(Node) -> CellId) -> Option
 #[derive(Clone, Debug, PartialEq)]
 pub(super) struct EntryTask {
     pub(super) field: &'static str,
+    /// Which entry of a field of pairs it is.
+    pub(super) item: Option<Item>,
     pub(super) entry: Arc<Entry>,
     pub(super) expect: Expect,
     /// The unit that the result is to be shown in, where that was said.

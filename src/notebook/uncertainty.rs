@@ -172,7 +172,7 @@ impl Engine {
 
     fn draw(&self, seed: u64, count: usize) -> BTreeMap<Node, Drawn> {
         let mut drawn = BTreeMap::new();
-        for (id, field, node, entry) in self.entries() {
+        for (id, slot, node, entry) in self.entries() {
             let spread = |at: usize| {
                 entry.literals()[at]
                     .literal
@@ -184,13 +184,14 @@ impl Engine {
                 continue;
             }
             let name = self.cell(id).map_or("", |cell| cell.name.as_str());
+            let field = slot.key();
             let nominal = entry.nominal_literals();
             let mut values: Vec<f64> = nominal.repeat(count);
             for at in 0..literals {
                 let Some(spread) = spread(at) else { continue };
                 // Expanded uncertainty with coverage factor 2.
                 let deviation = spread / 2.0;
-                let scores = scores(seed, name, field, at, count);
+                let scores = scores(seed, name, &field, at, count);
                 for (number, score) in scores.into_iter().enumerate() {
                     values[number * literals + at] = nominal[at] + deviation * score;
                 }

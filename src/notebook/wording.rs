@@ -35,6 +35,16 @@ pub fn label(name: &str) -> &str {
         "retinal_radiance_2006" => "retinal radiance, 2006",
         "retinal_radiance_2013" => "retinal radiance, 2013",
         "ir_a_radiance" => "IR-A radiance, 780–1400 nm",
+        "temperature" => "mean temperature",
+        "hottest_temperature" => "hottest place",
+        "absorbed" => "absorbed from hot sources",
+        "absorbed_power" => "absorbed in all",
+        "front_exitance" => "front sends out",
+        "back_exitance" => "back sends out",
+        "convected" => "given to the air",
+        "mean_radiant_temperature" => "mean radiant temperature",
+        "net_radiant_heat" => "net radiant heat taken up",
+        "angular_subtense" => "angular subtense of",
         "irradiance_from" => "irradiance from",
         "view_factor" => "configuration factor of",
         "clear_distance" => "clear distance",
@@ -75,6 +85,14 @@ fn rounding(name: &str) -> Rounding {
         | "retinal_radiance_2006"
         | "retinal_radiance_2013"
         | "ir_a_radiance"
+        | "temperature"
+        | "hottest_temperature"
+        | "absorbed"
+        | "absorbed_power"
+        | "front_exitance"
+        | "back_exitance"
+        | "mean_radiant_temperature"
+        | "net_radiant_heat"
         | "irradiance_from" => Rounding::Up,
         _ => Rounding::Nearest,
     }
@@ -103,6 +121,7 @@ pub fn quantity(name: &str, quantity: Quantity, unit: Option<&Unit>) -> String {
 pub fn span(span: Span) -> String {
     match span {
         Span::Seconds(seconds) => format::safe_time(seconds),
+        Span::Capped(seconds) if seconds <= 0.0 => "not assessed".to_owned(),
         Span::Capped(seconds) => format!("not assessed past {}", plain_time(seconds)),
         Span::Unlimited => "sets no end".to_owned(),
     }

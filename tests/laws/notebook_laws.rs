@@ -265,6 +265,9 @@ fn ran(engine: &Engine, run: &Run) -> BTreeSet<String> {
         .iter()
         .map(|node| match owners.get(node) {
             Some((cell, Slot::Field(slot) | Slot::Group(slot))) => format!("{cell}.{slot}"),
+            Some((cell, Slot::Item(field, (pair, side)))) => {
+                format!("{cell}.{field}[{pair}][{side}]")
+            }
             Some((cell, Slot::Check)) => format!("{cell}.check"),
             None => "scene".to_owned(),
         })
@@ -312,6 +315,7 @@ fn each_edit_of_the_demo_runs_exactly_what_hangs_on_it() {
                     "door.width",
                     "door.shape",
                     "door.outcome",
+                    "door.apart",
                     "door_area.entry",
                 ][..],
                 &views,

@@ -102,7 +102,7 @@ pub fn strip<'a>(
     }
     if matches!(
         cell.kind.field(field).map(|spec| spec.form),
-        Some(Form::Entry(_) | Form::Facing)
+        Some(Form::Entry(_) | Form::Pairs(_) | Form::Facing)
     ) {
         strip = strip.push(origin(cell, field, note, look));
     }
@@ -150,7 +150,7 @@ fn pill<'a>(text: String, chosen: bool, message: Message, look: Look) -> Element
 /// what is wrong with them, and the remedy.
 pub fn fault<'a>(cell: &Cell, fault: &Diagnostic, look: Look) -> Element<'a, Message> {
     let mut lines = column![].spacing(1);
-    let typed = fault.field.and_then(|field| sentence::typed(cell, field));
+    let typed = cell.faulty(fault);
     if let (Some(span), Some(text)) = (&fault.span, &typed) {
         let letters: Vec<char> = text.chars().collect();
         let part = |range: std::ops::Range<usize>| -> String {

@@ -1,6 +1,6 @@
 //! Each kind of cell as a sentence with the fields that can be changed in it.
 
-use crate::notebook::cell::{Cell, Content, Form, Kind, Need};
+use crate::notebook::cell::{Cell, Form, Kind, Need};
 
 /// One piece of a sentence.
 #[derive(Clone, Debug, PartialEq, Eq)]
@@ -205,11 +205,7 @@ pub fn label(field: &str) -> String {
 /// Returns the text of a field as it is shown; `None` where it was left out.
 #[must_use]
 pub fn typed(cell: &Cell, field: &str) -> Option<String> {
-    Some(match &cell.field(field)?.content {
-        Content::Text(text) => text.clone(),
-        Content::List(list) => list.join(", "),
-        Content::Count(number) => number.to_string(),
-    })
+    Some(cell.field(field)?.content.to_text())
 }
 
 /// Returns the words that a field is chosen from, where it is a choice.
@@ -230,7 +226,10 @@ pub fn choices(cell: &Cell, field: &str, names: &dyn Fn(&[Kind]) -> Vec<String>)
             .collect(),
         Some(Form::Guidance | Form::GuidanceList) => guidance(),
         Some(Form::Basis) => Basis::ALL.map(|basis| basis.words().to_owned()).to_vec(),
-        Some(Form::Entry(_) | Form::Count(..) | Form::Unit | Form::Text) | None => Vec::new(),
+        Some(
+            Form::Entry(_) | Form::Pairs(_) | Form::Count(..) | Form::Unit | Form::Text,
+        )
+        | None => Vec::new(),
     }
 }
 

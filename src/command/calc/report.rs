@@ -129,8 +129,7 @@ fn print_typed(engine: &Engine, cell: &CellResult, out: &mut dyn Write) -> io::R
         .map(|field| {
             let content = match &field.content {
                 Content::Text(text) => shortened(text),
-                Content::List(list) => list.join(", "),
-                Content::Count(number) => number.to_string(),
+                content => content.to_text(),
             };
             let basis = field
                 .basis

@@ -6,12 +6,13 @@ use std::sync::Arc;
 use glam::DVec3;
 
 use crate::notebook::cell::curve::along;
-use crate::notebook::cell::position::{Band, Form, Orientation, Views};
+use crate::notebook::cell::position::{Band, Orientation, Views};
 use crate::notebook::cell::source::{self, Shape};
 use crate::notebook::cell::{Cell, Kind};
 use crate::notebook::datum::{CellId, Datum};
 use crate::notebook::engine::{Engine, Slot};
 use crate::notebook::results::sights;
+use crate::notebook::scene::{Form, Heat};
 use crate::units::format::{self, Rounding};
 use crate::units::{Dimension, Unit};
 
@@ -110,7 +111,7 @@ impl Line {
         Some(Line {
             source: source.name.clone(),
             id: engine.find(&source.name)?,
-            edge: shape.region.edge_along(ahead),
+            edge: shape.edge_along(ahead),
             height: height.unwrap_or(EYE),
             origin: shape.centre,
             ahead,
@@ -215,7 +216,7 @@ impl Reading {
 #[derive(Clone, Debug)]
 pub struct Probe {
     form: Arc<Form>,
-    weights: [Vec<f64>; 3],
+    heat: Arc<Heat>,
     orientation: Orientation,
     origin: DVec3,
     ahead: DVec3,
@@ -227,17 +228,9 @@ impl Probe {
     /// `None` where a source is in error.
     #[must_use]
     pub fn new(engine: &Engine, line: &Line, orientation: Orientation) -> Option<Probe> {
-        let form = Arc::clone(engine.form()?);
-        let mut heat = Vec::with_capacity(form.names.len());
-        for name in &form.names {
-            match engine.value_of(engine.find(name)?, Slot::Group("emission"))? {
-                Datum::Emission(emission) => heat.push(*emission),
-                _ => return None,
-            }
-        }
         Some(Probe {
-            form,
-            weights: Band::ALL.map(|band| band.judged_weights(&heat)),
+            form: Arc::clone(engine.form()?),
+            heat: Arc::clone(engine.heat()?),
             orientation,
             origin: line.origin,
             ahead: line.ahead,
@@ -249,7 +242,7 @@ impl Probe {
     #[must_use]
     pub fn same(&self, other: &Probe) -> bool {
         (Arc::ptr_eq(&self.form, &other.form) || self.form == other.form)
-            && self.weights == other.weights
+            && (Arc::ptr_eq(&self.heat, &other.heat) || self.heat == other.heat)
             && self.orientation == other.orientation
             && self.origin == other.origin
             && self.ahead == other.ahead
@@ -262,9 +255,9 @@ impl Probe {
     pub fn read(&self, distance: f64) -> Option<Reading> {
         let point = (self.origin + self.ahead * distance).with_z(self.height);
         let views = Views::standing(&self.form, vec![point]).ok()?;
-        let [total, near_infrared, skin] = [0, 1, 2].map(|band: usize| {
-            self.orientation
-                .irradiance(point, views.at(0), &self.weights[band])
+        let [total, near_infrared, skin] = Band::ALL.map(|band| {
+            views
+                .irradiance(0, self.orientation, &self.heat.judged(band))
                 .0
         });
         Some(Reading {

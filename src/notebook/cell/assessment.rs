@@ -6,7 +6,7 @@ use super::Kind;
 use super::field::{Form, Need, Spec};
 use super::position::Band;
 use crate::graph::Node;
-use crate::guidance::{self, Allowed, Judgement, Library, Limit, Overall};
+use crate::guidance::{self, Allowed, Finding, Judgement, Library, Limit, Overall, Reason};
 use crate::notebook::Diagnostic;
 use crate::notebook::datum::{Datum, Output, Slot, Span};
 use crate::notebook::engine::{Linker, Slot as Own};
@@ -47,9 +47,23 @@ pub struct Verdict {
     pub judgement: Judgement,
     /// The stay in seconds, where one is stated.
     pub stay: Option<f64>,
+    /// Whether a polished screen mirrors a source at people here, so that
+    /// nothing is known but what is over.
+    pub mirrored: bool,
 }
 
 impl Verdict {
+    /// Returns the judgement of another exposure in place of this one's.
+    #[must_use]
+    pub fn judged(mut self, judgement: Judgement) -> Verdict {
+        self.judgement = judgement;
+        if self.mirrored && matches!(judgement.finding, Finding::Within | Finding::BelowOnset) {
+            self.judgement.finding = Finding::NotAssessed(Reason::Mirrored);
+            self.judgement.allowed = Allowed::CappedAt(0.0);
+        }
+        self
+    }
+
     fn limit(&self) -> &'static Limit {
         limit(&self.guidance)
     }
@@ -88,11 +102,13 @@ impl VerdictsTask {
                 .map_err(|error| {
                     Diagnostic::of_field("guidance", "not-judged", error.to_string())
                 })?;
-            verdicts.push(Verdict {
+            let verdict = Verdict {
                 guidance: id.clone(),
                 judgement,
                 stay,
-            });
+                mirrored: !exposure.mirrored.is_empty(),
+            };
+            verdicts.push(verdict.judged(judgement));
         }
         Ok(Datum::Verdicts(Arc::new(verdicts)))
     }

@@ -13,6 +13,7 @@ use crate::graph::Node;
 use crate::notebook::Diagnostic;
 use crate::notebook::datum::{Datum, Output, Slot};
 use crate::notebook::engine::{Linker, Slot as Own};
+use crate::notebook::scene::Weights;
 use crate::notebook::task::{Inputs, Task};
 use crate::units::{Dimension, Quantity};
 
@@ -78,7 +79,7 @@ pub fn along(shape: &Shape, heading: Option<f64>) -> DVec3 {
     match (heading, shape.kind) {
         (Some(heading), _) => direction(heading),
         (None, source::Kind::Opening) => shape.ahead,
-        (None, source::Kind::Pool | source::Kind::Body) => direction(0.0),
+        (None, source::Kind::Pool | source::Kind::Body | source::Kind::Screen) => direction(0.0),
     }
 }
 
@@ -124,7 +125,7 @@ impl LineTask {
             .with_hint("give a greater `farthest` or a smaller `nearest`"));
         }
         let ahead = along(shape, inputs.maybe(self.heading));
-        let edge = shape.region.edge_along(ahead);
+        let edge = shape.edge_along(ahead);
         if nearest < edge {
             return Err(Diagnostic::of_field(
                 "nearest",
@@ -235,15 +236,15 @@ impl RowsTask {
         let line = inputs.line(self.line);
         let heat = inputs.heat(self.heat);
         let orientation = self.facing.orientation(inputs);
-        let total = Band::Total.weights(heat);
-        let near_infrared = Band::NearInfrared.weights(heat);
+        let total = heat.weights(Band::Total);
+        let near_infrared = heat.weights(Band::NearInfrared);
         let rows = line
             .distances
             .iter()
             .enumerate()
             .map(|(index, distance)| {
                 let irradiance =
-                    |weights: &[f64]| line.views.irradiance(index, orientation, weights).0;
+                    |weights: &Weights<'_>| line.views.irradiance(index, orientation, weights).0;
                 Row {
                     distance: *distance,
                     clear_distance: distance - line.edge,

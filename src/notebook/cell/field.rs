@@ -68,6 +68,68 @@ pub enum Content {
     List(Vec<String>),
     /// A whole number.
     Count(f64),
+    /// Pairs of entries, such as the vertices of an outline.
+    Pairs(Vec<[String; 2]>),
+}
+
+/// Which entry of a field of pairs: the pair and the side of it, from 0.
+pub type Item = (u16, u8);
+
+impl Content {
+    /// Returns what a text stands for in a field of this form: pairs where it
+    /// reads as such, else the text itself.
+    #[must_use]
+    pub fn typed(form: Form, text: String) -> Content {
+        match form {
+            Form::Pairs(_) => pairs(&text).map_or(Content::Text(text), Content::Pairs),
+            _ => Content::Text(text),
+        }
+    }
+
+    /// Returns the content as one text.
+    #[must_use]
+    pub fn to_text(&self) -> String {
+        match self {
+            Content::Text(text) => text.clone(),
+            Content::List(list) => list.join(", "),
+            Content::Count(number) => number.to_string(),
+            Content::Pairs(pairs) => pairs
+                .iter()
+                .map(|[one, other]| format!("{one}, {other}"))
+                .collect::<Vec<_>>()
+                .join("; "),
+        }
+    }
+}
+
+/// Reads pairs from one text, such as `0 m, 0 m; 1 m, 0 m; 1 m, 2 m`; `None`
+/// where a piece between semicolons is no pair. Commas in brackets part
+/// nothing.
+#[must_use]
+pub fn pairs(text: &str) -> Option<Vec<[String; 2]>> {
+    let parted = |text: &str, mark: char| -> Vec<String> {
+        let (mut pieces, mut depth) = (vec![String::new()], 0_u32);
+        for sign in text.chars() {
+            match sign {
+                '(' => depth += 1,
+                ')' => depth = depth.saturating_sub(1),
+                _ => {}
+            }
+            if sign == mark && depth == 0 {
+                pieces.push(String::new());
+            } else if let Some(last) = pieces.last_mut() {
+                last.push(sign);
+            }
+        }
+        pieces
+    };
+    let mut list = Vec::new();
+    for piece in parted(text, ';') {
+        let sides = parted(&piece, ',');
+        let [one, other] = <[String; 2]>::try_from(sides).ok()?;
+        list.push([one.trim().to_owned(), other.trim().to_owned()]);
+    }
+    Some(list)
 }
 
 /// One field of a cell, as typed.
@@ -118,6 +180,9 @@ pub struct Spec {
 pub enum Form {
     /// An entry that is worked out to a quantity.
     Entry(Expect),
+    /// Pairs of entries: what is expected of each side, and how many pairs
+    /// there may be.
+    Pairs(&'static Pairs),
     /// One of these words.
     Word(&'static [&'static str]),
     /// The name of a cell of one of these kinds.
@@ -136,6 +201,19 @@ pub enum Form {
     Basis,
     /// Prose.
     Text,
+}
+
+/// What a field of pairs may hold.
+#[derive(Clone, Copy, Debug)]
+pub struct Pairs {
+    /// What is expected of either side.
+    pub sides: [Expect; 2],
+    /// How few pairs there may be.
+    pub least: usize,
+    /// How many.
+    pub most: usize,
+    /// How one is written, for messages.
+    pub example: &'static str,
 }
 
 /// Whether a field must be there.
@@ -171,8 +249,12 @@ pub enum Range {
     Emissivity,
     /// From zero to one.
     Fraction,
+    /// From zero to less than one.
+    Share,
     /// From a right angle down to a right angle up.
     RightAngle,
+    /// From zero to less than a right angle.
+    Lean,
 }
 
 impl Expect {
@@ -240,10 +322,15 @@ impl Expect {
             Range::Positive => (si > 0.0, "a value above zero"),
             Range::NotNegative => (si >= 0.0, "zero or a value above it"),
             Range::Emissivity => (si > 0.0 && si <= 1.0, "a value above 0 and at most 1"),
+            Range::Share => ((0.0..1.0).contains(&si), "a value from 0 to less than 1"),
             Range::Fraction => ((0.0..=1.0).contains(&si), "a value from 0 to 1"),
             Range::RightAngle => (
                 si.abs() <= std::f64::consts::FRAC_PI_2 * (1.0 + 1e-12),
                 "an angle from -90 ° to 90 °",
+            ),
+            Range::Lean => (
+                (0.0..std::f64::consts::FRAC_PI_2).contains(&si),
+                "an angle from 0 ° to less than 90 °",
             ),
         };
         if holds {
@@ -265,7 +352,13 @@ impl Expect {
         match self.range {
             Range::Emissivity => si.min(1.0),
             Range::Fraction => si.clamp(0.0, 1.0),
-            Range::Any | Range::Positive | Range::NotNegative | Range::RightAngle => si,
+            // The next below one.
+            Range::Share => si.clamp(0.0, 1.0 - f64::EPSILON),
+            Range::Any
+            | Range::Positive
+            | Range::NotNegative
+            | Range::RightAngle
+            | Range::Lean => si,
         }
     }
 
@@ -277,7 +370,7 @@ impl Expect {
             (Some(Dimension::ANGLE), _) => "90 °",
             (Some(Dimension::TIME), _) => "4 min",
             (Some(Dimension::SPEED), _) => "0.3 m/s",
-            (_, Range::Fraction) => "50 %",
+            (_, Range::Fraction | Range::Share) => "50 %",
             _ => return "see the field's meaning".to_owned(),
         };
         format!("write it as in `{example}`")
@@ -291,4 +384,26 @@ pub fn typed_unit(entry: &crate::entry::Entry) -> Option<&Unit> {
     entry
         .is_single_literal()
         .and_then(|literal| literal.unit.as_ref())
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn pairs_are_read_from_one_text_and_written_back() {
+        for (text, expected) in [
+            ("0 m, 0 m; 1 m, 0 m", Some("0 m, 0 m; 1 m, 0 m")),
+            ("0 m,0 m;max(a, b),2 m", Some("0 m, 0 m; max(a, b), 2 m")),
+            ("a, b", Some("a, b")),
+            ("a, b;", None),
+            ("a; b", None),
+            ("a, b, c", None),
+            ("", None),
+            (") , (; (,", None),
+        ] {
+            let found = pairs(text).map(|pairs| Content::Pairs(pairs).to_text());
+            assert_eq!(found.as_deref(), expected, "{text}");
+        }
+    }
 }

@@ -10,18 +10,23 @@ use glam::DVec3;
 
 use super::Kind;
 use super::field::{self, Expect, Need, Spec};
-use super::source::direction;
+use super::source::{Shape, direction};
+use super::surroundings::Room;
 use crate::graph::Node;
 use crate::guidance::Envelope;
 use crate::notebook::Diagnostic;
 use crate::notebook::datum::{Datum, Output, Slot};
 use crate::notebook::engine::{Linker, Slot as Own};
+use crate::notebook::scene::{Heat, Weights};
 use crate::notebook::task::{Inputs, Task};
+use crate::physics::view::View;
+use crate::physics::{radiant, subtense};
 use crate::units::{Dimension, Quantity};
 
-pub use sights::{Band, Form, Orientation, Views};
-pub(in crate::notebook) use sights::{Facing, FormTask, HeatTask};
-use sights::{Hit, behind, envelope};
+pub use crate::notebook::scene::Form;
+pub(in crate::notebook) use sights::Facing;
+pub use sights::{Band, Orientation, Views};
+use sights::{Hit, envelope};
 
 /// The fields of a position.
 pub const FIELDS: &[Spec] = &[
@@ -92,6 +97,18 @@ pub const FIELDS: &[Spec] = &[
         about: "how far eyes, face and hands may stray from the stated point",
     },
     Spec {
+        name: "surface_temperature",
+        form: field::Form::Entry(Expect::TEMPERATURE),
+        need: Need::Optional,
+        about: "temperature of skin or clothing, where the net radiant heat into it is asked for",
+    },
+    Spec {
+        name: "surface_emissivity",
+        form: field::Form::Entry(Expect::EMISSIVITY),
+        need: Need::Default("0.97"),
+        about: "emissivity and absorptance of that surface",
+    },
+    Spec {
         name: "note",
         form: field::Form::Text,
         need: Need::Optional,
@@ -99,8 +116,8 @@ pub const FIELDS: &[Spec] = &[
     },
 ];
 
-/// The outputs of a position. `irradiance_from` and `view_factor` carry the
-/// name of a source behind a further point.
+/// The outputs of a position. Those of [`BY_SOURCE`] carry the name of a source
+/// or a screen behind a further point.
 pub const OUTPUTS: &[&str] = &[
     "irradiance",
     "near_ir_irradiance",
@@ -113,9 +130,15 @@ pub const OUTPUTS: &[&str] = &[
     "retinal_radiance_2006",
     "retinal_radiance_2013",
     "ir_a_radiance",
+    "mean_radiant_temperature",
+    "net_radiant_heat",
     "irradiance_from",
     "view_factor",
+    "angular_subtense",
 ];
+
+/// The outputs that a position has for each source and screen.
+pub const BY_SOURCE: [&str; 3] = ["irradiance_from", "view_factor", "angular_subtense"];
 
 /// Where a position stands, as linked.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -142,12 +165,17 @@ pub struct Sights {
     pub reach: f64,
     /// The names of the sources that it lies behind.
     pub behind: Vec<String>,
-    /// The names of all sources.
-    pub names: Vec<Arc<str>>,
+    /// Where everything is.
+    pub form: Arc<Form>,
     /// The eye's envelope; the first point is the stated one.
     pub around_eye: Views,
     /// The skin's envelope.
     pub around_skin: Views,
+    /// Of each source and screen the angular subtense from the stated point, in
+    /// rad: the mean of its greatest and its smallest angle.
+    pub subtenses: Vec<f64>,
+    /// Of each piece that is seen from the stated point its solid angle, sr.
+    pub solid_angles: Vec<f64>,
 }
 
 /// Works out what a position sees.
@@ -193,16 +221,23 @@ impl SightsTask {
             Views::look(form, eye, envelope(eye, ground, reach, kind))
                 .map_err(|hit| self.touching(hit, form, reach))
         };
+        let around_eye = look(Envelope::Eye)?;
+        let subtense = |shape: &Arc<Shape>| {
+            subtense::of(&shape.region, eye).map_or(0.0, subtense::Subtense::mean)
+        };
         Ok(Datum::Sights(Arc::new(Sights {
+            subtenses: form.shapes.iter().map(subtense).collect(),
+            solid_angles: around_eye.at(0).iter().map(View::solid_angle).collect(),
             eye,
             ground,
             reach,
-            behind: behind(form, eye)
+            behind: form
+                .behind(eye)
                 .into_iter()
                 .map(|index| form.names[index].to_string())
                 .collect(),
-            names: form.names.clone(),
-            around_eye: look(Envelope::Eye)?,
+            form: Arc::clone(form),
+            around_eye,
             around_skin: look(Envelope::Skin)?,
         })))
     }
@@ -250,9 +285,19 @@ pub struct Exposure {
     /// The greatest weighted radiances of what is seen: blue light, retinal of
     /// 2006, retinal of 2013, IR-A.
     pub radiances: [f64; 4],
-    /// For each source its name, its part of the total irradiance and its
-    /// configuration factor, on that same receiver.
+    /// For each source and screen its name, its part of the total irradiance
+    /// and its configuration factor, on that same receiver.
     pub parts: Vec<(Arc<str>, f64, f64)>,
+    /// Parallel to the parts, their angular subtenses, rad.
+    pub subtenses: Vec<f64>,
+    /// The mean radiant temperature at the stated point, K: that of a small
+    /// black sphere, as a globe thermometer in still air would tell it.
+    pub radiant_temperature: f64,
+    /// The net radiant heat into skin or clothing, where it is asked for.
+    pub net: Option<f64>,
+    /// The polished screens in which a source is mirrored within reach: the
+    /// truth is higher there than these figures.
+    pub mirrored: Vec<Arc<str>>,
     /// Which way the receiver faces for the total, a unit vector.
     pub normal: DVec3,
 }
@@ -308,7 +353,20 @@ impl Exposure {
                 Output::Quantity(Quantity::new(si, dimension)),
             );
         }
-        for (name, part, factor) in &self.parts {
+        see(
+            Slot::named("mean_radiant_temperature"),
+            Output::Quantity(Quantity::new(
+                self.radiant_temperature,
+                Dimension::TEMPERATURE,
+            )),
+        );
+        if let Some(net) = self.net {
+            see(
+                Slot::named("net_radiant_heat"),
+                Output::Quantity(Quantity::new(net, irradiance)),
+            );
+        }
+        for ((name, part, factor), subtense) in self.parts.iter().zip(&self.subtenses) {
             let slot = |output| Slot {
                 name: output,
                 part: Some(name),
@@ -322,6 +380,10 @@ impl Exposure {
                 slot("view_factor"),
                 Output::Quantity(Quantity::number(*factor)),
             );
+            see(
+                slot("angular_subtense"),
+                Output::Quantity(Quantity::new(*subtense, Dimension::ANGLE)),
+            );
         }
     }
 }
@@ -333,11 +395,14 @@ pub(in crate::notebook) struct ExposureTask {
     pub(in crate::notebook) heat: Node,
     pub(in crate::notebook) room: Node,
     pub(in crate::notebook) facing: Facing,
+    /// Temperature and emissivity of skin or clothing.
+    pub(in crate::notebook) surface: Option<[Node; 2]>,
 }
 
 impl ExposureTask {
     pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
         nodes.extend([self.sights, self.heat, self.room]);
+        nodes.extend(self.surface.iter().flatten());
         self.facing.inputs(nodes);
     }
 
@@ -347,28 +412,25 @@ impl ExposureTask {
         let sights = inputs.sights(self.sights);
         let heat = inputs.heat(self.heat);
         let orientation = self.facing.orientation(inputs);
-        let weights = Band::ALL.map(|band| band.weights(heat));
-        let views = sights.around_eye.at(0);
-        let at_eye = |weights: &Vec<f64>| sights.around_eye.irradiance(0, orientation, weights);
+        let weights = Band::ALL.map(|band| heat.weights(band));
+        let at_eye =
+            |weights: &Weights<'_>| sights.around_eye.irradiance(0, orientation, weights);
         let [total, near_infrared, skin] = weights.each_ref().map(at_eye);
         let worst = |around: &Views| weights.each_ref().map(|w| around.worst(orientation, w));
         let normal = total.1;
-        let parts: Vec<(Arc<str>, f64, f64)> = sights
-            .names
-            .iter()
-            .zip(views)
-            .zip(heat)
-            .map(|((name, view), emission)| {
-                let factor = view.factor(normal);
-                (Arc::clone(name), emission.total * factor, factor)
-            })
-            .collect();
+        let parts = self::parts(sights, &weights[Band::Total as usize], normal);
         let seen: f64 = parts.iter().map(|(_, _, factor)| factor).sum();
+        let room = inputs.room(self.room);
+        let background = room.background * (1.0 - seen).max(0.0);
         let mut radiances = [0.0_f64; 4];
-        for (view, emission) in views.iter().zip(heat) {
+        for (piece, (part, view)) in sights.around_eye.parts(0).enumerate() {
             if view.flux() == DVec3::ZERO {
                 continue;
             }
+            let emission = sights
+                .around_eye
+                .tag(0, piece)
+                .map_or_else(|| heat.parts[part], |tag| heat.passing(tag));
             for (greatest, exitance) in radiances.iter_mut().zip([
                 emission.blue_light,
                 emission.retinal_2006,
@@ -382,12 +444,99 @@ impl ExposureTask {
             stated: [total.0, near_infrared.0, skin.0],
             worst_eye: worst(&sights.around_eye),
             worst_skin: worst(&sights.around_skin),
-            background: inputs.room(self.room).background * (1.0 - seen).max(0.0),
+            background,
             radiances,
+            subtenses: sights.subtenses.clone(),
+            radiant_temperature: self.radiant_temperature(sights, &weights, room)?,
+            net: self.net(inputs, total.0, background)?,
+            mirrored: mirrored(sights, heat),
             parts,
             normal,
         })))
     }
+}
+
+impl ExposureTask {
+    fn radiant_temperature(
+        &self,
+        sights: &Sights,
+        weights: &[Weights<'_>; 3],
+        room: &Room,
+    ) -> Result<f64, Diagnostic> {
+        let arriving = sights
+            .around_eye
+            .arriving(0, &weights[Band::Total as usize]);
+        radiant::mean_temperature_of_sphere(
+            &sights.solid_angles,
+            &arriving,
+            room.radiant_temperature,
+        )
+        .map_err(|error| {
+            Diagnostic::of_cell("no-radiant-temperature", error.to_string())
+                .with_hint("check the temperatures of the sources and of the room")
+        })
+    }
+
+    fn net(
+        &self,
+        inputs: Inputs<'_>,
+        irradiance: f64,
+        background: f64,
+    ) -> Result<Option<f64>, Diagnostic> {
+        let Some([temperature, emissivity]) = self.surface else {
+            return Ok(None);
+        };
+        let emissivity = inputs.si(emissivity);
+        let surface = inputs.si(temperature);
+        radiant::net_heat(irradiance, background, emissivity, emissivity, surface)
+            .map(Some)
+            .map_err(|error| {
+                Diagnostic::of_field("surface_temperature", "no-net-heat", error.to_string())
+                    .with_hint("check the temperature of the surface")
+            })
+    }
+}
+
+/// Returns the polished screens in which a source is mirrored anywhere within
+/// reach.
+fn mirrored(sights: &Sights, heat: &Heat) -> Vec<Arc<str>> {
+    let Some(balanced) = &heat.polished else {
+        return Vec::new();
+    };
+    balanced
+        .screens
+        .iter()
+        .filter(|state| {
+            sights.around_skin.points.iter().any(|point| {
+                // Where nothing can be said, it may well be so.
+                state
+                    .screen
+                    .images(&balanced.sources, *point)
+                    .map_or(true, |images| !images.is_empty())
+            })
+        })
+        .map(|state| Arc::clone(&state.name))
+        .collect()
+}
+
+/// Returns for each emitter its name, what it sends to a receiver of this
+/// normal at the stated point in W/m², and its configuration factor there:
+/// that of all of it that is seen, behind a mesh or a filter too.
+fn parts(sights: &Sights, weights: &Weights<'_>, normal: DVec3) -> Vec<(Arc<str>, f64, f64)> {
+    let form = &sights.form;
+    let mut parts: Vec<(Arc<str>, f64, f64)> = form
+        .names
+        .iter()
+        .map(|name| (Arc::clone(name), 0.0, 0.0))
+        .collect();
+    let arriving = sights.around_eye.arriving(0, weights);
+    for ((part, view), exitance) in sights.around_eye.parts(0).zip(arriving.iter()) {
+        let factor = view.factor(normal);
+        let (_, sent, seen) = &mut parts[form.owner(part)];
+        *sent += exitance * factor;
+        *seen += factor;
+    }
+    parts
 }
 
 pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
@@ -408,12 +557,19 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
         })
     });
     let sights = linker.group("sights", sights);
+    let temperature = linker.entry("surface_temperature");
+    let emissivity = linker.always("surface_emissivity");
+    if temperature.is_none() {
+        linker.refuse(&["surface_emissivity"], "goes with `surface_temperature` only");
+    }
+    let surface = temperature.map(|temperature| [temperature, emissivity]);
     let exposure = facing.map(|facing| {
         Task::Exposure(ExposureTask {
             sights,
             heat,
             room,
             facing,
+            surface,
         })
     });
     let _ = linker.group("exposure", exposure);

@@ -37,9 +37,9 @@ pub const FIELDS: &[Spec] = &[
     },
     Spec {
         name: "absorption",
-        form: Form::Word(&["off"]),
+        form: Form::Word(&["off", "power_law", "wayne"]),
         need: Need::Optional,
-        about: "absorption by shop air; only `off` so far, which is the safe side",
+        about: "absorption by shop air: `off` if left out, which is the safe side, or the formula by its name",
     },
     Spec {
         name: "note",
@@ -55,12 +55,62 @@ pub const OUTPUTS: &[&str] = &["background"];
 /// What a room is taken to be where the notebook says nothing: kelvin.
 pub const AIR_TEMPERATURE: f64 = 298.15;
 
+/// The relative humidity where the notebook says nothing.
+pub const HUMIDITY: f64 = 0.5;
+
+/// The speed of the air where the notebook says nothing, m/s.
+pub const AIR_SPEED: f64 = 0.3;
+
+/// By which formula the air of a shop absorbs.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Formula {
+    /// The power law in vapour pressure times path.
+    PowerLaw,
+    /// Wayne (1991).
+    Wayne,
+}
+
+impl Formula {
+    /// Returns the formula of this word; `None` where nothing is absorbed.
+    #[must_use]
+    pub fn from_word(word: &str) -> Option<Formula> {
+        match word {
+            "power_law" => Some(Formula::PowerLaw),
+            "wayne" => Some(Formula::Wayne),
+            _ => None,
+        }
+    }
+
+    /// Returns the formula as it is cited.
+    #[must_use]
+    pub const fn citation(self) -> &'static str {
+        match self {
+            Formula::PowerLaw => {
+                "τ = 2.02 (p_w x)^−0.09 for 10⁴ < p_w x < 10⁵ Pa·m (literature on fire hazards, \
+                 from memory)"
+            }
+            Formula::Wayne => {
+                "Wayne (1991), J. Loss Prev. Process Ind. 4, 86, water vapour and carbon dioxide \
+                 (from memory)"
+            }
+        }
+    }
+}
+
 /// The room as the physics needs it.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Room {
     /// What the walls and the roof send to a small surface that sees nothing
     /// else, W/m²: they count as black.
     pub background: f64,
+    /// The temperature of the air, K.
+    pub air_temperature: f64,
+    /// The mean radiant temperature of walls and roof, K.
+    pub radiant_temperature: f64,
+    /// The relative humidity, from 0 to 1, where the air absorbs.
+    pub humidity: f64,
+    /// The speed of the air, m/s, where there are screens.
+    pub air_speed: f64,
 }
 
 impl Room {
@@ -73,16 +123,19 @@ impl Room {
 }
 
 /// Works out the room, from the surroundings' fields where there are any.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Debug, Default, PartialEq)]
 pub(in crate::notebook) struct RoomTask {
     pub(in crate::notebook) air: Option<Node>,
     pub(in crate::notebook) radiant: Option<Node>,
+    pub(in crate::notebook) humidity: Option<Node>,
+    pub(in crate::notebook) speed: Option<Node>,
 }
 
 impl RoomTask {
     pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
-        nodes.extend(self.air);
-        nodes.extend(self.radiant);
+        for node in [self.air, self.radiant, self.humidity, self.speed] {
+            nodes.extend(node);
+        }
     }
 
     // Returns a result as every task does.
@@ -92,6 +145,10 @@ impl RoomTask {
         let radiant = inputs.maybe(self.radiant).unwrap_or(air);
         Ok(Datum::Room(Room {
             background: planck::exitance(radiant),
+            air_temperature: air,
+            radiant_temperature: radiant,
+            humidity: inputs.maybe(self.humidity).unwrap_or(HUMIDITY),
+            air_speed: inputs.maybe(self.speed).unwrap_or(AIR_SPEED),
         }))
     }
 }

@@ -199,7 +199,7 @@ impl TrackTask {
         let form = Arc::clone(inputs.form(self.form));
         let shape = inputs.shape(self.shape);
         let ahead = along(shape, inputs.maybe(self.heading));
-        let edge = shape.region.edge_along(ahead);
+        let edge = shape.edge_along(ahead);
         let farthest = inputs.si(self.farthest);
         if farthest <= edge {
             return Err(Diagnostic::of_field(
@@ -249,7 +249,8 @@ impl EdgeTask {
         let limit = library
             .get(&self.guidance)
             .expect("ids are checked while linking");
-        let weights = Band::judged(limit.metric.exposure()).judged_weights(inputs.heat(self.heat));
+        let heat = inputs.heat(self.heat);
+        let weights = heat.judged(Band::judged(limit.metric.exposure()));
         let stay = inputs.si(self.stay);
         let permitted = permitted(&self.guidance, stay);
         let extent = permitted.map_or(Extent::NotAssessed, |permitted| {

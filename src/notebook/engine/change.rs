@@ -45,7 +45,7 @@ impl Engine {
         self.mention(id, &std::collections::BTreeSet::new());
         let _ = self.mentions.remove(&id);
         self.count_places();
-        self.scene_changed |= matches!(cell.kind, Kind::Source | Kind::Surroundings);
+        self.scene_changed |= cell.kind.is_in_scene();
         self.relink_mentions(name);
         Ok(Edit::Add { at, cell })
     }
@@ -56,7 +56,7 @@ impl Engine {
         let id = self.ids.remove(at);
         let to = to.min(self.notebook.cells.len());
         // Ties between sources go to file order.
-        self.scene_changed |= cell.kind == Kind::Source;
+        self.scene_changed |= cell.kind.is_in_scene();
         self.notebook.cells.insert(to, cell);
         self.ids.insert(to, id);
         self.count_places();
@@ -139,16 +139,37 @@ impl Engine {
         to.clone_into(&mut self.notebook.cells[at].name);
         let _ = self.index.remove(name);
         let _ = self.index.insert(to.to_owned(), id);
-        self.scene_changed |= self.notebook.cells[at].kind == Kind::Source;
+        self.scene_changed |= self.notebook.cells[at].kind.is_in_scene();
     }
 
     /// Replaces a cell's name in every field of the cell at `place`.
     fn follow(&mut self, place: usize, from: &str, to: &str) {
         let kind = self.notebook.cells[place].kind;
         for field in &mut self.notebook.cells[place].fields {
+            if let Content::Pairs(pairs) = &mut field.content {
+                for text in pairs.iter_mut().flatten() {
+                    if let Ok(entry) = crate::entry::Entry::parse(text) {
+                        *text = entry.renamed(from, to);
+                    }
+                }
+                continue;
+            }
+            let form = kind.field(field.name).map(|spec| spec.form);
             let Content::Text(text) = &mut field.content else {
                 continue;
             };
+            if matches!(form, Some(Form::Pairs(_))) {
+                // Pairs as one text: entry by entry, and one text again.
+                if let Some(mut pairs) = crate::notebook::cell::field::pairs(text) {
+                    for text in pairs.iter_mut().flatten() {
+                        if let Ok(entry) = crate::entry::Entry::parse(text) {
+                            *text = entry.renamed(from, to);
+                        }
+                    }
+                    *text = Content::Pairs(pairs).to_text();
+                }
+                continue;
+            }
             match kind.field(field.name).map(|spec| spec.form) {
                 Some(Form::Cell(_)) if text == from => to.clone_into(text),
                 Some(Form::Facing) if text.trim() == from => to.clone_into(text),

@@ -8,10 +8,13 @@ use crate::entry::{self, Entry, NameUse};
 use crate::graph::Node;
 use crate::guidance::Library;
 use crate::notebook::Diagnostic;
-use crate::notebook::cell::field::{Content, Expect, Form, Need, Spec};
+use crate::notebook::cell::field::{Content, Expect, Form, Need, Pairs, Spec};
 use crate::notebook::cell::position::Facing;
-use crate::notebook::cell::{Cell, Kind, assessment, curve, position, source, surroundings, zone};
+use crate::notebook::cell::{
+    Cell, Kind, assessment, curve, position, screen, source, surroundings, zone,
+};
 use crate::notebook::datum::CellId;
+use crate::notebook::scene::ApartTask;
 use crate::notebook::task::{EntryTask, Pick, Task};
 use crate::spelling::nearest;
 use crate::units::Unit;
@@ -52,6 +55,8 @@ impl<'e> Linker<'e> {
                     expect.dimension = Some(unit.dimension());
                 }
                 self.entry_field(spec, expect);
+            } else if let Form::Pairs(pairs) = spec.form {
+                self.pair_field(spec, pairs);
             } else if matches!(spec.need, Need::Required) && cell.field(spec.name).is_none() {
                 self.fault(missing(spec));
             }
@@ -60,6 +65,7 @@ impl<'e> Linker<'e> {
             Kind::Value | Kind::Formula | Kind::Note => {}
             Kind::Surroundings => surroundings::link(self),
             Kind::Source => source::link(self),
+            Kind::Screen => screen::link(self),
             Kind::Position => position::link(self),
             Kind::Curve => curve::link(self),
             Kind::Assessment => assessment::link(self),
@@ -85,6 +91,27 @@ impl<'e> Linker<'e> {
     /// the room.
     pub(in crate::notebook) fn scene(&self) -> [Node; 3] {
         [self.engine.form, self.engine.heat, self.engine.room]
+    }
+
+    /// Returns the number of the cell.
+    pub(in crate::notebook) const fn id(&self) -> CellId {
+        self.id
+    }
+
+    /// Returns the hidden node of the balance of all screens.
+    pub(in crate::notebook) const fn balance(&self) -> Node {
+        self.engine.balance
+    }
+
+    /// Sets the node that says whether this source or screen stands clear of
+    /// all others.
+    pub(in crate::notebook) fn apart(&mut self) {
+        let task = ApartTask {
+            layout: self.engine.layout,
+            id: self.id,
+            screen: self.cell.kind != Kind::Source,
+        };
+        let _ = self.group("apart", Some(Task::Apart(task)));
     }
 
     /// Returns whether a field was typed.
@@ -122,6 +149,26 @@ impl<'e> Linker<'e> {
             );
         }
         node
+    }
+
+    /// Returns the nodes of a field of pairs that is needed here, or says that
+    /// it is missing.
+    pub(in crate::notebook) fn need_pairs(
+        &mut self,
+        field: &'static str,
+        why: &str,
+    ) -> Option<Vec<[Node; 2]>> {
+        if !self.has(field) {
+            self.fault(
+                Diagnostic::of_field(
+                    field,
+                    "missing-field",
+                    format!("expected `{field}` for {why}, found nothing"),
+                )
+                .with_hint(format!("add `{field}`")),
+            );
+        }
+        self.pairs(field)
     }
 
     /// Says that fields do not belong here, where they were typed.
@@ -280,7 +327,7 @@ impl<'e> Linker<'e> {
         };
         let number = match self.cell.field(field).map(|field| &field.content) {
             Some(Content::Count(number)) => *number,
-            Some(Content::Text(_) | Content::List(_)) => f64::NAN,
+            Some(Content::Text(_) | Content::List(_) | Content::Pairs(_)) => f64::NAN,
             None => match spec.need {
                 Need::Default(text) => text.parse().unwrap_or(f64::NAN),
                 Need::Required | Need::Optional => return None,
@@ -307,7 +354,7 @@ impl<'e> Linker<'e> {
         let text = match self.cell.field("faces").map(|field| &field.content) {
             None => return Some(Facing::Strongest),
             Some(Content::Text(text)) => text.trim().to_owned(),
-            Some(Content::List(_) | Content::Count(_)) => String::new(),
+            Some(Content::List(_) | Content::Count(_) | Content::Pairs(_)) => String::new(),
         };
         if text == "strongest" {
             return Some(Facing::Strongest);
@@ -334,7 +381,7 @@ impl<'e> Linker<'e> {
                 Some(_) => {}
             }
         }
-        let heading = self.set_entry("faces", &text, Expect::HEADING, None);
+        let heading = self.set_entry(Slot::Field("faces"), &text, Expect::HEADING, None);
         Some(Facing::Heading {
             heading,
             tilt: self.entry("tilt"),
@@ -373,7 +420,7 @@ impl<'e> Linker<'e> {
         let cell = Arc::clone(&self.cell);
         let text = match (cell.field(spec.name).map(|f| &f.content), spec.need) {
             (Some(Content::Text(text)), _) => text.as_str(),
-            (Some(Content::List(_) | Content::Count(_)), _) => "",
+            (Some(Content::List(_) | Content::Count(_) | Content::Pairs(_)), _) => "",
             (None, Need::Default(text)) => text,
             (None, Need::Optional) => return,
             (None, Need::Required) => {
@@ -385,23 +432,88 @@ impl<'e> Linker<'e> {
             }
         };
         let unit = self.unit.clone();
-        let _ = self.set_entry(spec.name, text, expect, unit);
+        let _ = self.set_entry(Slot::Field(spec.name), text, expect, unit);
+    }
+
+    fn pair_field(&mut self, spec: &'static Spec, form: &'static Pairs) {
+        let cell = Arc::clone(&self.cell);
+        if cell.field(spec.name).is_none() {
+            return;
+        }
+        let Some(pairs) = cell.pairs(spec.name) else {
+            let found = cell.field(spec.name).map(|field| field.content.to_text());
+            self.fault(
+                Diagnostic::of_field(
+                    spec.name,
+                    "not-pairs",
+                    format!(
+                        "expected pairs such as `{}`, found `{}`",
+                        form.example,
+                        found.unwrap_or_default()
+                    ),
+                )
+                .with_hint("part the two of a pair by a comma, and pairs by a semicolon"),
+            );
+            return;
+        };
+        if !(form.least..=form.most).contains(&pairs.len()) {
+            self.fault(
+                Diagnostic::of_field(
+                    spec.name,
+                    "pair-count",
+                    format!(
+                        "expected from {} to {} pairs, found {}",
+                        form.least,
+                        form.most,
+                        pairs.len()
+                    ),
+                )
+                .with_hint(format!("write them as in `{}`", form.example)),
+            );
+            return;
+        }
+        for (number, pair) in (0_u16..).zip(pairs.iter()) {
+            for (side, (text, expect)) in (0_u8..).zip(pair.iter().zip(form.sides)) {
+                let slot = Slot::Item(spec.name, (number, side));
+                let _ = self.set_entry(slot, text, expect, None);
+            }
+        }
+    }
+
+    /// Returns the nodes of a field of pairs, if it was typed and has as many
+    /// as it may.
+    pub(in crate::notebook) fn pairs(&self, field: &'static str) -> Option<Vec<[Node; 2]>> {
+        let node = |number, side| {
+            let slot = Slot::Item(field, (number, side));
+            self.used
+                .contains(&slot)
+                .then(|| self.engine.slot(self.id, slot))
+                .flatten()
+        };
+        let pairs: Vec<[Node; 2]> = (0_u16..)
+            .map_while(|number| Some([node(number, 0)?, node(number, 1)?]))
+            .collect();
+        (!pairs.is_empty()).then_some(pairs)
     }
 
     fn set_entry(
         &mut self,
-        field: &'static str,
+        slot: Slot,
         text: &str,
         expect: Expect,
         unit: Option<Unit>,
     ) -> Node {
-        let slot = Slot::Field(field);
+        let field = slot.field().expect("an entry stands in a field");
+        let item = match slot {
+            Slot::Item(_, item) => Some(item),
+            _ => None,
+        };
         let entry = match self.parsed(slot, text) {
             Ok(entry) => entry,
             Err(faults) => {
                 let faults = faults
                     .into_iter()
-                    .map(|fault| Diagnostic::from_entry(field, fault))
+                    .map(|fault| Diagnostic::from_entry(field, fault).in_item(item))
                     .collect();
                 return self.set(slot, Task::Fault(Arc::new(faults)));
             }
@@ -411,7 +523,7 @@ impl<'e> Linker<'e> {
         for name in entry.names() {
             match self.pick(field, name) {
                 Ok(pick) => picks.push(pick),
-                Err(fault) => faults.push(fault),
+                Err(fault) => faults.push(fault.in_item(item)),
             }
         }
         if faults.is_empty() {
@@ -419,6 +531,7 @@ impl<'e> Linker<'e> {
                 slot,
                 Task::Entry(EntryTask {
                     field,
+                    item,
                     entry,
                     expect,
                     unit,
@@ -496,8 +609,7 @@ impl<'e> Linker<'e> {
             };
         }
         let listed = kind.outputs().contains(&member) && member != "rows";
-        let takes_part =
-            kind == Kind::Position && matches!(member, "irradiance_from" | "view_factor");
+        let takes_part = kind == Kind::Position && position::BY_SOURCE.contains(&member);
         if !listed || takes_part != part.is_some() {
             let known: Vec<&str> =
                 kind.outputs()

@@ -291,7 +291,10 @@ fn field(spec: &'static Spec, node: &Node, path: &str, faults: &mut Faults) -> O
         let content = content(spec, node, path, faults)?;
         return Some(Field::new(spec.name, content));
     };
-    if !matches!(spec.form, Form::Entry(_) | Form::Facing) {
+    if !matches!(
+        spec.form,
+        Form::Entry(_) | Form::Facing | Form::Pairs(_)
+    ) {
         faults.wrong(node, path, expected(spec.form));
         return None;
     }
@@ -343,6 +346,20 @@ fn content(spec: &Spec, node: &Node, path: &str, faults: &mut Faults) -> Option<
             }
             Content::List(list)
         }
+        (Form::Pairs(_), Value::List(nodes)) => {
+            let mut pairs = Vec::with_capacity(nodes.len());
+            for (number, node) in nodes.iter().enumerate() {
+                let path = format!("{path}[{number}]");
+                let Some([one, other]) = node.as_list() else {
+                    faults.wrong(node, &path, "a pair such as [\"0 m\", \"1 m\"]");
+                    return None;
+                };
+                let one = text(one, &format!("{path}[0]"), faults);
+                let other = text(other, &format!("{path}[1]"), faults);
+                pairs.push([one?, other?]);
+            }
+            Content::Pairs(pairs)
+        }
         (Form::Count(..), _) => {
             faults.wrong(node, path, expected(spec.form));
             return None;
@@ -360,6 +377,9 @@ const fn expected(form: Form) -> &'static str {
     match form {
         Form::Entry(_) | Form::Facing => {
             "a text such as \"2.5 m\", or an object with entry, basis and note"
+        }
+        Form::Pairs(_) => {
+            "a list of pairs such as [[\"0 m\", \"1 m\"]], or an object with entry, basis and note"
         }
         Form::GuidanceList => "the id of a limit, or a list of them",
         Form::Count(..) => "a whole number",

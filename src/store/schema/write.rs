@@ -64,6 +64,10 @@ fn field(field: &Field) -> Value {
         Content::Text(text) => Value::from(text.as_str()),
         Content::List(list) => Value::from(list.as_slice()),
         Content::Count(number) => count(*number),
+        Content::Pairs(pairs) => pairs
+            .iter()
+            .map(|pair| Value::from(pair.as_slice()))
+            .collect(),
     };
     if !field.wrapped && field.basis.is_none() && field.note.is_none() {
         return content;

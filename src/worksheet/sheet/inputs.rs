@@ -2,7 +2,7 @@
 //! its substituted numbers.
 
 use super::Sheet;
-use crate::notebook::cell::{Content, Field, Form, Kind, Need, Spec};
+use crate::notebook::cell::{Field, Form, Kind, Need, Spec};
 use crate::notebook::datum::Datum;
 use crate::notebook::engine::Slot;
 use crate::notebook::results::CellResult;
@@ -142,11 +142,7 @@ fn input(sheet: &Sheet<'_>, cell: &CellResult, spec: &Spec, first: bool) -> Opti
 }
 
 fn text(field: &Field) -> String {
-    match &field.content {
-        Content::Text(text) => text.clone(),
-        Content::List(list) => list.join(", "),
-        Content::Count(number) => number.to_string(),
-    }
+    field.content.to_text()
 }
 
 /// Returns the rows of a field that is worked out from others.

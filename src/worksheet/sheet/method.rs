@@ -101,8 +101,8 @@ fn of_source(sheet: &Sheet<'_>, cell: &CellResult) -> Option<Block> {
             "M = ε σ T⁴ = {} · 5.670×10⁻⁸ W/(m²·K⁴) · ({})⁴ = {}; in 780–3000 nm {}{near}.",
             plain(emissivity),
             format::quantity(temperature, &kelvin, 6, Rounding::Nearest),
-            three(emission.total, Dimension::IRRADIANCE),
-            three(emission.near_infrared, Dimension::IRRADIANCE),
+            three(emission.face.total, Dimension::IRRADIANCE),
+            three(emission.face.near_infrared, Dimension::IRRADIANCE),
         )),
     ]))
 }

@@ -10,8 +10,9 @@ use farglow::units::Dimension;
 use proptest::prelude::*;
 
 /// The names that cells may have, few, so that they meet.
-const NAMES: [&str; 12] = [
+const NAMES: [&str; 13] = [
     "a", "door", "stand", "b", "pool", "bench", "judged", "fall", "edge", "room", "c", "ball",
+    "plate",
 ];
 
 const LENGTHS: &[&str] = &[
@@ -210,9 +211,10 @@ impl Dice {
             ("room", Kind::Surroundings),
             ("c", Kind::Formula),
             ("ball", Kind::Source),
+            ("plate", Kind::Screen),
             ("bench", Kind::Position),
             ("note", Kind::Note),
-        ][self.upto(13)];
+        ][self.upto(14)];
         let kind = if self.upto(8) == 7 {
             Kind::ALL[self.upto(Kind::ALL.len())]
         } else {
@@ -223,6 +225,7 @@ impl Dice {
             Kind::Value | Kind::Formula => &["entry"],
             Kind::Surroundings => &["air_temperature"],
             Kind::Source => &["form", "outline", "temperature", "emissivity", "z"],
+            Kind::Screen => &["make", "width", "height", "z", "y"],
             Kind::Position => &["from", "distance", "stay"],
             Kind::Curve => &["from", "points"],
             Kind::Assessment => &["position", "guidance"],
@@ -233,12 +236,28 @@ impl Dice {
             let content = self.fill(kind, field);
             cell.fields.push(content);
         }
+        if kind == Kind::Screen {
+            let own: &[&str] = match cell.text("make") {
+                Some("mesh") => &["open_fraction"],
+                Some("filter") => &["transmittance", "near_ir_transmittance"],
+                _ => &[],
+            };
+            for field in own {
+                let content = self.fill(kind, field);
+                cell.fields.push(content);
+            }
+        }
         if kind == Kind::Source {
             // Every form with the outline and the sizes that go with it.
             let (form, outline, sizes): (_, _, &[&str]) = match (name, self.upto(2)) {
-                ("ball", _) => ("body", "sphere", &["diameter"]),
+                ("ball", _) => [
+                    ("body", "sphere", &["diameter"][..]),
+                    ("body", "cylinder", &["diameter", "height"]),
+                    ("body", "plate", &["width", "height"]),
+                ][self.upto(3)],
                 ("pool", 0) => ("pool", "disc", &["diameter"]),
                 ("pool", _) => ("pool", "rectangle", &["width", "length"]),
+                ("a", _) => ("opening", "polygon", &["vertices"]),
                 (_, 0) => ("opening", "rectangle", &["width", "height"]),
                 _ => ("opening", "disc", &["diameter"]),
             };
@@ -264,17 +283,29 @@ impl Dice {
         self.fill(notebook.cells[at].kind, field)
     }
 
+    fn entry(&mut self, dimension: Option<Dimension>) -> &'static str {
+        self.pick(match dimension {
+            Some(Dimension::LENGTH) => LENGTHS,
+            Some(Dimension::TEMPERATURE) => TEMPERATURES,
+            Some(Dimension::ANGLE) => ANGLES,
+            Some(Dimension::TIME) => TIMES,
+            Some(Dimension::NONE) => NUMBERS,
+            _ => ANYTHING,
+        })
+    }
+
     fn fill(&mut self, kind: Kind, field: &str) -> Field {
         let spec = kind.field(field).expect("a field of the kind");
         let content = match spec.form {
-            Form::Entry(expect) => match expect.dimension {
-                Some(Dimension::LENGTH) => self.text(LENGTHS),
-                Some(Dimension::TEMPERATURE) => self.text(TEMPERATURES),
-                Some(Dimension::ANGLE) => self.text(ANGLES),
-                Some(Dimension::TIME) => self.text(TIMES),
-                Some(Dimension::NONE) => self.text(NUMBERS),
-                _ => self.text(ANYTHING),
-            },
+            Form::Entry(expect) => Content::Text(self.entry(expect.dimension).to_owned()),
+            Form::Pairs(pairs) => {
+                let count = pairs.least + self.upto(3);
+                Content::Pairs(
+                    (0..count)
+                        .map(|_| pairs.sides.map(|side| self.entry(side.dimension).to_owned()))
+                        .collect(),
+                )
+            }
             Form::Word(words) => {
                 let mut list = words.to_vec();
                 list.push("other");
@@ -282,7 +313,7 @@ impl Dice {
             }
             Form::Cell(kinds) => {
                 let mut list = match kinds {
-                    [Kind::Source, ..] => vec!["door", "pool", "ball"],
+                    [Kind::Source, ..] => vec!["door", "pool", "ball", "plate"],
                     _ => vec!["stand", "bench"],
                 };
                 list.extend(["a", "nobody"]);
@@ -304,7 +335,7 @@ impl Dice {
             Form::Text => self.text(WORDS),
         };
         let mut filled = Field::new(spec.name, content);
-        if matches!(spec.form, Form::Entry(_) | Form::Facing) && self.upto(4) == 1 {
+        if matches!(spec.form, Form::Entry(_) | Form::Facing | Form::Pairs(_)) && self.upto(4) == 1 {
             filled.wrapped = true;
             if self.upto(2) == 1 {
                 filled.basis = Some(Basis::ALL[self.upto(6)]);
@@ -395,6 +426,7 @@ pub fn reach(notebook: &Notebook, from: &str) -> BTreeSet<String> {
                 Content::Text(text) => vec![text.as_str()],
                 Content::List(list) => list.iter().map(String::as_str).collect(),
                 Content::Count(_) => Vec::new(),
+                Content::Pairs(pairs) => pairs.iter().flatten().map(String::as_str).collect(),
             };
             texts.iter().any(|text| {
                 text.split(|sign: char| !(sign.is_alphanumeric() || sign == '_'))
@@ -407,9 +439,12 @@ pub fn reach(notebook: &Notebook, from: &str) -> BTreeSet<String> {
     while let Some(name) = front.pop() {
         let kind = notebook.find(&name).map(|at| notebook.cells[at].kind);
         for cell in &notebook.cells {
-            let in_scene = matches!(cell.kind, Kind::Position | Kind::Curve | Kind::Zone);
-            let by_scene = in_scene && kind == Some(Kind::Source)
-                || cell.kind == Kind::Position && kind == Some(Kind::Surroundings);
+            // Of two that emit each must know where the other is.
+            let in_scene = matches!(
+                cell.kind,
+                Kind::Position | Kind::Curve | Kind::Zone | Kind::Source | Kind::Screen
+            );
+            let by_scene = in_scene && kind.is_some_and(Kind::is_in_scene);
             if (by_scene || mentions(cell, &name)) && reached.insert(cell.name.clone()) {
                 front.push(cell.name.clone());
             }

@@ -1,77 +1,19 @@
-//! What is seen from a point: the scene's regions, the envelope around a
-//! position, and the way a receiver faces.
+//! What is seen from a point: the pieces of the scene's parts, the envelope
+//! around a position, and the way a receiver faces.
 
-use std::sync::{Arc, OnceLock};
+use std::borrow::Cow;
+use std::sync::OnceLock;
 
 use glam::DVec3;
 
 use crate::graph::Node;
 use crate::guidance::Envelope;
-use crate::notebook::Diagnostic;
-use crate::notebook::cell::source::{Shape, direction};
-use crate::notebook::datum::Datum;
+use crate::notebook::cell::source::direction;
+use crate::notebook::scene::{Form, Tag, Touched, Weights};
 use crate::notebook::task::Inputs;
 use crate::physics::exposure;
 use crate::physics::surface::Emission;
-use crate::physics::view::{Sight, View};
-
-/// Where all sources are, in file order.
-#[derive(Clone, Debug, PartialEq)]
-pub struct Form {
-    /// Their names.
-    pub names: Vec<Arc<str>>,
-    /// Their shapes, parallel to the names.
-    pub shapes: Vec<Arc<Shape>>,
-}
-
-/// Gathers the shapes of all sources.
-#[derive(Clone, Debug, PartialEq)]
-pub(in crate::notebook) struct FormTask {
-    pub(in crate::notebook) names: Vec<Arc<str>>,
-    pub(in crate::notebook) shapes: Vec<Node>,
-}
-
-impl FormTask {
-    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
-        nodes.extend(&self.shapes);
-    }
-
-    // Returns a result as every task does.
-    #[allow(clippy::unnecessary_wraps)]
-    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
-        Ok(Datum::Form(Arc::new(Form {
-            names: self.names.clone(),
-            shapes: self
-                .shapes
-                .iter()
-                .map(|node| Arc::clone(inputs.shape(*node)))
-                .collect(),
-        })))
-    }
-}
-
-/// Gathers what all sources emit.
-#[derive(Clone, Debug, PartialEq)]
-pub(in crate::notebook) struct HeatTask {
-    pub(in crate::notebook) emissions: Vec<Node>,
-}
-
-impl HeatTask {
-    pub(in crate::notebook) fn inputs(&self, nodes: &mut Vec<Node>) {
-        nodes.extend(&self.emissions);
-    }
-
-    // Returns a result as every task does.
-    #[allow(clippy::unnecessary_wraps)]
-    pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
-        Ok(Datum::Heat(Arc::new(
-            self.emissions
-                .iter()
-                .map(|node| *inputs.emission(*node))
-                .collect(),
-        )))
-    }
-}
+use crate::physics::view::View;
 
 /// One of the quantities that guidance judges.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -115,25 +57,17 @@ impl Band {
         Some(Band::judged(limit.metric.exposure()))
     }
 
-    /// Returns the exitances of all sources in this band, for judging: where a
-    /// band exceeds the whole, the whole is taken as that band.
+    /// Returns the exitance of a source in this band, for judging: where a band
+    /// exceeds the whole, the whole is taken as that band.
     #[must_use]
-    pub fn judged_weights(self, heat: &[Emission]) -> Vec<f64> {
-        heat.iter()
-            .map(|emission| match self {
-                Band::Total => emission
-                    .total
-                    .max(emission.skin)
-                    .max(emission.near_infrared),
-                Band::NearInfrared | Band::Skin => self.of(emission),
-            })
-            .collect()
-    }
-
-    /// Returns the exitances of all sources in this band.
-    #[must_use]
-    pub fn weights(self, heat: &[Emission]) -> Vec<f64> {
-        heat.iter().map(|emission| self.of(emission)).collect()
+    pub fn judged_of(self, emission: &Emission) -> f64 {
+        match self {
+            Band::Total => emission
+                .total
+                .max(emission.skin)
+                .max(emission.near_infrared),
+            Band::NearInfrared | Band::Skin => self.of(emission),
+        }
     }
 }
 
@@ -259,15 +193,25 @@ pub enum Hit {
 pub struct Views {
     /// The points.
     pub points: Vec<DVec3>,
-    /// For each point the views of all sources.
+    /// The pieces that are seen, point by point.
     views: Vec<View>,
-    sources: usize,
+    pieces: Pieces,
     alone: OnceLock<Alone>,
     /// Parallel to the views, a bound on each one's factor in any orientation.
     ceilings: OnceLock<Vec<f64>>,
 }
 
-/// What a single source sends the strongest way: its exitance times these.
+/// Which piece belongs to what.
+#[derive(Clone, Debug)]
+enum Pieces {
+    /// From every point one of each part, in order: so many.
+    OneOfEach(usize),
+    /// As they come: parallel to the views, and where those of each point
+    /// begin, with the end of the last.
+    Tagged { tags: Vec<Tag>, starts: Vec<usize> },
+}
+
+/// What a single part sends the strongest way: its exitance times these.
 #[derive(Clone, Debug)]
 struct Alone {
     /// The factor at each point, and the normal of the receiver.
@@ -281,7 +225,7 @@ struct Alone {
 const ROUNDING: (f64, f64) = (1e-9, 1e-12);
 
 impl Views {
-    /// Looks at every source of the scene from each of the points, all of them
+    /// Looks at every part of the scene from each of the points, all of them
     /// within reach of `stated`.
     ///
     /// # Errors
@@ -289,87 +233,158 @@ impl Views {
     /// [`Hit`] where a point lies in a source, or where the way to it from
     /// `stated` meets one.
     pub fn look(form: &Form, stated: DVec3, points: Vec<DVec3>) -> Result<Views, Hit> {
-        let mut views = Vec::with_capacity(points.len() * form.shapes.len());
+        let mut pieces = Vec::with_capacity(points.len() * form.parts());
+        let (mut tags, mut starts) = (Vec::new(), vec![0]);
         for point in &points {
             for (index, shape) in form.shapes.iter().enumerate() {
-                if *point != stated && shape.region.crosses(stated, *point) {
-                    return Err(Hit::Reached(index));
-                }
-                match shape.region.view(*point).into_view() {
-                    Some(view) => views.push(view),
-                    None if *point == stated => return Err(Hit::Inside(index)),
-                    None => return Err(Hit::Reached(index)),
+                let reached = *point != stated && shape.is_met(stated, *point);
+                if reached || shape.swallows(*point) {
+                    return Err(if reached || *point != stated {
+                        Hit::Reached(index)
+                    } else {
+                        Hit::Inside(index)
+                    });
                 }
             }
+            form.look(*point, &mut pieces, &mut tags)
+                .map_err(|Touched(part)| {
+                    let index = form.owner(part);
+                    if *point == stated {
+                        Hit::Inside(index)
+                    } else {
+                        Hit::Reached(index)
+                    }
+                })?;
+            starts.push(pieces.len());
         }
-        Ok(Views::new(points, views, form.shapes.len()))
+        Ok(Views::new(form, points, pieces, tags, starts))
     }
 
-    /// Looks at every source of the scene from each of the points, which have
+    /// Looks at every part of the scene from each of the points, which have
     /// nothing to do with one another.
     ///
     /// # Errors
     ///
     /// [`Hit::Inside`] where a point lies in a source.
     pub fn standing(form: &Form, points: Vec<DVec3>) -> Result<Views, Hit> {
-        let mut views = Vec::with_capacity(points.len() * form.shapes.len());
+        let mut pieces = Vec::with_capacity(points.len() * form.parts());
+        let (mut tags, mut starts) = (Vec::new(), vec![0]);
         for point in &points {
-            for (index, shape) in form.shapes.iter().enumerate() {
-                views.push(
-                    shape
-                        .region
-                        .view(*point)
-                        .into_view()
-                        .ok_or(Hit::Inside(index))?,
-                );
+            let swallowed = form.shapes.iter().position(|shape| shape.swallows(*point));
+            if let Some(index) = swallowed {
+                return Err(Hit::Inside(index));
             }
+            form.look(*point, &mut pieces, &mut tags)
+                .map_err(|Touched(part)| Hit::Inside(form.owner(part)))?;
+            starts.push(pieces.len());
         }
-        Ok(Views::new(points, views, form.shapes.len()))
+        Ok(Views::new(form, points, pieces, tags, starts))
     }
 
-    fn new(points: Vec<DVec3>, views: Vec<View>, sources: usize) -> Views {
+    fn new(
+        form: &Form,
+        points: Vec<DVec3>,
+        views: Vec<View>,
+        tags: Vec<Tag>,
+        starts: Vec<usize>,
+    ) -> Views {
         Views {
             points,
             views,
-            sources,
+            pieces: if form.is_plain() {
+                Pieces::OneOfEach(form.parts())
+            } else {
+                Pieces::Tagged { tags, starts }
+            },
             alone: OnceLock::new(),
             ceilings: OnceLock::new(),
         }
     }
 
-    /// Returns the views of all sources from the point of this number.
-    #[must_use]
-    pub fn at(&self, point: usize) -> &[View] {
-        &self.views[point * self.sources..(point + 1) * self.sources]
+    /// Returns where the pieces of a point lie among the views.
+    fn range(&self, point: usize) -> std::ops::Range<usize> {
+        match &self.pieces {
+            Pieces::OneOfEach(parts) => point * parts..(point + 1) * parts,
+            Pieces::Tagged { starts, .. } => starts[point]..starts[point + 1],
+        }
     }
 
-    /// Returns the irradiance at the point of this number in W/m² for the
-    /// exitances `weights`, and the normal of the receiver.
+    /// Returns the pieces that are seen from the point of this number.
+    #[must_use]
+    pub fn at(&self, point: usize) -> &[View] {
+        &self.views[self.range(point)]
+    }
+
+    /// Returns the exitances that arrive of the pieces seen from a point,
+    /// parallel to them, W/m².
+    #[must_use]
+    pub fn arriving<'a>(&self, point: usize, weights: &'a Weights<'_>) -> Cow<'a, [f64]> {
+        match &self.pieces {
+            Pieces::OneOfEach(_) => Cow::Borrowed(weights.sent()),
+            Pieces::Tagged { tags, .. } => Cow::Owned(
+                tags[self.range(point)]
+                    .iter()
+                    .map(|tag| weights.arriving(tag))
+                    .collect(),
+            ),
+        }
+    }
+
+    /// Returns what is known of a piece seen from a point beside its view;
+    /// `None` where every part is one piece and nothing is in its way.
+    #[must_use]
+    pub fn tag(&self, point: usize, piece: usize) -> Option<&Tag> {
+        match &self.pieces {
+            Pieces::OneOfEach(_) => None,
+            Pieces::Tagged { tags, .. } => tags[self.range(point)].get(piece),
+        }
+    }
+
+    /// Returns the part that each piece seen from a point belongs to, with the
+    /// piece.
+    pub fn parts(&self, point: usize) -> impl Iterator<Item = (usize, &View)> {
+        let range = self.range(point);
+        let start = range.start;
+        range.map(move |at| {
+            let part = match &self.pieces {
+                Pieces::OneOfEach(_) => at - start,
+                Pieces::Tagged { tags, .. } => tags[at].part,
+            };
+            (part, &self.views[at])
+        })
+    }
+
+    /// Returns the irradiance at the point of this number in W/m² for what the
+    /// parts send, and the normal of the receiver.
     #[must_use]
     pub fn irradiance(
         &self,
         point: usize,
         orientation: Orientation,
-        weights: &[f64],
+        weights: &Weights<'_>,
     ) -> (f64, DVec3) {
-        match (self.alone(orientation), weights) {
+        match (self.alone(orientation), weights.sent()) {
             // The answer of the long way, to the bit: there the only weight is
             // taken out before anything is worked out.
             (Some(alone), [weight]) if counts(*weight) => {
                 let (factor, normal) = alone.points[point];
                 (weight * factor, normal)
             }
-            _ => orientation.irradiance(self.points[point], self.at(point), weights),
+            _ => orientation.irradiance(
+                self.points[point],
+                self.at(point),
+                &self.arriving(point, weights),
+            ),
         }
     }
 
     /// Returns the greatest irradiance over all points, W/m².
     ///
     /// Points that cannot be the worst, because even the sum of what each
-    /// source could send there at most is less, are passed over.
+    /// part could send there at most is less, are passed over.
     #[must_use]
-    pub fn worst(&self, orientation: Orientation, weights: &[f64]) -> f64 {
-        if let (Some(alone), [weight]) = (self.alone(orientation), weights)
+    pub fn worst(&self, orientation: Orientation, weights: &Weights<'_>) -> f64 {
+        if let (Some(alone), [weight]) = (self.alone(orientation), weights.sent())
             && counts(*weight)
         {
             return weight * alone.worst;
@@ -387,9 +402,10 @@ impl Views {
         worst
     }
 
-    /// Returns what a single source sends the strongest way, if that is asked.
+    /// Returns what a single part sends the strongest way, if that is asked.
     fn alone(&self, orientation: Orientation) -> Option<&Alone> {
-        (self.sources == 1 && orientation == Orientation::Strongest).then(|| {
+        let is_alone = matches!(self.pieces, Pieces::OneOfEach(1));
+        (is_alone && orientation == Orientation::Strongest).then(|| {
             self.alone.get_or_init(|| {
                 let factor = |view| exposure::strongest(std::slice::from_ref(view), &[1.0]);
                 let points: Vec<(f64, DVec3)> = self.views.iter().map(factor).collect();
@@ -400,14 +416,14 @@ impl Views {
     }
 
     /// Returns what the irradiance at a point stays below in any orientation.
-    fn bound(&self, point: usize, weights: &[f64]) -> f64 {
+    fn bound(&self, point: usize, weights: &Weights<'_>) -> f64 {
         let (share, besides) = ROUNDING;
         let ceilings = self
             .ceilings
             .get_or_init(|| self.views.iter().map(View::ceiling).collect());
-        ceilings[point * self.sources..(point + 1) * self.sources]
+        ceilings[self.range(point)]
             .iter()
-            .zip(weights)
+            .zip(self.arriving(point, weights).iter())
             .filter(|(_, weight)| counts(**weight))
             .map(|(ceiling, weight)| weight * (ceiling * (1.0 + share) + besides))
             .sum()
@@ -419,37 +435,31 @@ fn counts(weight: f64) -> bool {
     weight.is_finite() && weight > 0.0
 }
 
-/// Returns the sources that a point lies behind, and so does not see.
-#[must_use]
-pub fn behind(form: &Form, point: DVec3) -> Vec<usize> {
-    form.shapes
-        .iter()
-        .enumerate()
-        .filter(|(_, shape)| matches!(shape.region.view(point), Sight::Behind))
-        .map(|(index, _)| index)
-        .collect()
-}
-
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::notebook::cell::source::Kind;
+    use std::sync::Arc;
+
+    use crate::notebook::cell::source::{Kind, Shape};
+    use crate::notebook::scene::Heat;
     use crate::physics::region::Region;
 
     fn form(centres: &[DVec3]) -> Form {
         let shape = |centre: &DVec3| {
             let region = Region::rectangle(*centre, DVec3::Y, DVec3::Z, 0.9, 0.7);
-            Arc::new(Shape {
-                region: region.expect("a door"),
-                kind: Kind::Opening,
-                centre: *centre,
-                ahead: DVec3::Y,
-            })
+            Arc::new(Shape::simple(
+                region.expect("a door"),
+                Kind::Opening,
+                *centre,
+                DVec3::Y,
+            ))
         };
-        Form {
-            names: centres.iter().map(|_| Arc::from("door")).collect(),
-            shapes: centres.iter().map(shape).collect(),
-        }
+        Form::new(
+            centres.iter().map(|_| Arc::from("door")).collect(),
+            centres.iter().map(shape).collect(),
+            false,
+        )
+        .expect("a small scene")
     }
 
     #[test]
@@ -477,10 +487,12 @@ mod tests {
                         .expect("it touches nothing");
                     for weights in [[3e5, 2e5, 1e5], [0.0, 1e5, f64::NAN], [1e-300, 1e5, 9e5]] {
                         for way in ways {
-                            let weights = &weights[..sources];
+                            let heat = Heat::of_totals(&weights[..sources]);
+                            let weights = &heat.weights(Band::Total);
                             let found = views.worst(way, weights);
                             let each = (0..views.points.len()).map(|point| {
-                                way.irradiance(views.points[point], views.at(point), weights)
+                                let sent = weights.sent();
+                                way.irradiance(views.points[point], views.at(point), sent)
                                     .0
                             });
                             let expected = each.fold(0.0, f64::max);

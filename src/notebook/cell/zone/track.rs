@@ -8,7 +8,8 @@ use super::Extent;
 use crate::guidance::Envelope;
 use crate::notebook::cell::curve::steps;
 use crate::notebook::cell::position::sights::envelope;
-use crate::notebook::cell::position::{Form, Orientation, Views};
+use crate::notebook::cell::position::{Orientation, Views};
+use crate::notebook::scene::{Form, Weights};
 
 /// Where a zone's line runs, and who walks along it.
 #[derive(Clone, Debug)]
@@ -26,7 +27,7 @@ pub(super) struct Line {
 /// exitances `weights` of the sources.
 pub(super) struct Rule<'a> {
     pub(super) orientation: Orientation,
-    pub(super) weights: &'a [f64],
+    pub(super) weights: &'a Weights<'a>,
     pub(super) limit: f64,
 }
 
@@ -37,7 +38,7 @@ pub struct Track {
     line: Line,
     /// How far the outline reaches along the line, m.
     pub edge: f64,
-    /// For each source its centre on the plan and its bounding radius, m.
+    /// For each part its centre on the plan and its bounding radius, m.
     balls: Vec<(glam::DVec2, f64)>,
     /// By distance, growing.
     stops: Vec<Stop>,
@@ -99,7 +100,7 @@ impl Rule<'_> {
     /// judged here, and a cool surface that is touched is no zone.
     fn exposure(&self, views: Option<&Views>) -> f64 {
         views.map_or_else(
-            || self.weights.iter().sum(),
+            || self.weights.sent().iter().sum(),
             |views| views.worst(self.orientation, self.weights),
         )
     }
@@ -118,10 +119,9 @@ impl Rule<'_> {
 impl Track {
     pub(super) fn new(line: Line, edge: f64, farthest: f64) -> Track {
         let (mut balls, mut foot) = (Vec::new(), f64::NEG_INFINITY);
-        for shape in &line.form.shapes {
-            let centre = shape.region.centre();
-            balls.push((centre.xy(), shape.region.bounding_radius()));
-            foot = foot.max((centre - line.origin).dot(line.ahead));
+        for (centre, radius) in line.form.balls() {
+            balls.push((centre.xy(), *radius));
+            foot = foot.max((*centre - line.origin).dot(line.ahead));
         }
         let stops: Vec<Stop> = line
             .distances(edge, farthest)
@@ -180,11 +180,11 @@ impl Track {
     /// Returns what the irradiance around a distance stays below, in any
     /// orientation: a region in a ball of radius R at a distance r sends at
     /// most what the whole ball would, of which (R/r)² is seen.
-    fn bound(&self, distance: f64, weights: &[f64]) -> f64 {
+    fn bound(&self, distance: f64, weights: &Weights<'_>) -> f64 {
         let stand = (self.line.origin + self.line.ahead * distance).xy();
         self.balls
             .iter()
-            .zip(weights)
+            .zip(weights.sent())
             .map(|((centre, radius), weight)| {
                 let nearest = stand.distance(*centre) - self.line.reach;
                 if nearest > *radius {
@@ -243,7 +243,9 @@ impl Track {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::notebook::cell::position::Band;
     use crate::notebook::cell::source::{Kind, Shape};
+    use crate::notebook::scene::Heat;
     use crate::physics::region::Region;
 
     fn track(envelope: Envelope, heading: f64) -> Track {
@@ -254,18 +256,18 @@ mod tests {
         ];
         let shapes = regions.map(|region| {
             let region = region.expect("a source");
-            Arc::new(Shape {
-                centre: region.centre(),
-                region,
-                kind: Kind::Body,
-                ahead: DVec3::Y,
-            })
+            let centre = region.centre();
+            Arc::new(Shape::simple(region, Kind::Body, centre, DVec3::Y))
         });
         let line = Line {
-            form: Arc::new(Form {
-                names: ["door", "pool", "ball"].map(Arc::from).to_vec(),
-                shapes: shapes.to_vec(),
-            }),
+            form: Arc::new(
+                Form::new(
+                    ["door", "pool", "ball"].map(Arc::from).to_vec(),
+                    shapes.to_vec(),
+                    false,
+                )
+                .expect("a small scene"),
+            ),
             origin: DVec3::Z,
             ahead: DVec3::new(heading.sin(), heading.cos(), 0.0),
             z: 1.6,
@@ -303,9 +305,10 @@ mod tests {
                 let track = track(envelope, heading);
                 for weights in [[3e5, 1e5, 2e5], [3e5, 0.0, 0.0], [1e2, 9e5, 1e4]] {
                     for limit in [0.01, 10.0, 100.0, 1000.0, 8000.0, 1e7] {
+                        let heat = Heat::of_totals(&weights);
                         let rule = Rule {
                             orientation: Orientation::Strongest,
-                            weights: &weights,
+                            weights: &heat.weights(Band::Total),
                             limit,
                         };
                         let extent = track.outermost(&rule);
