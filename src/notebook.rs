@@ -13,6 +13,7 @@ pub mod datum;
 pub mod diagnostic;
 pub mod edit;
 pub mod engine;
+pub mod listed;
 pub mod name;
 pub mod readiness;
 pub mod results;
