@@ -8,6 +8,7 @@ pub mod constant;
 mod error;
 pub mod exposure;
 mod hazard;
+pub mod opening;
 pub mod planck;
 pub mod region;
 pub mod surface;

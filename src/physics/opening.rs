@@ -1,0 +1,3 @@
+//! Openings through thick walls.
+pub mod section;
+pub mod tunnel;
