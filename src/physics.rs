@@ -11,6 +11,7 @@ mod hazard;
 pub mod opening;
 pub mod planck;
 pub mod region;
+pub mod scene;
 pub mod surface;
 pub mod view;
 pub mod view_factor;
