@@ -4,14 +4,19 @@
 //! [`glam::DVec3`] with x east, y north, z up. Surfaces are diffuse emitters.
 //! What is finite at the door gives finite numbers; faults are an [`Error`].
 
+pub mod atmosphere;
 pub mod constant;
 mod error;
 pub mod exposure;
 mod hazard;
 pub mod opening;
 pub mod planck;
+pub mod radiant;
 pub mod region;
 pub mod scene;
+pub mod screen;
+pub mod spectrum;
+pub mod subtense;
 pub mod surface;
 pub mod view;
 pub mod view_factor;

@@ -76,6 +76,39 @@ pub enum Error {
         /// The shapes that are possible, in words.
         wanted: &'static str,
     },
+    /// A table has too few rows, or too many.
+    #[error(
+        "a table must have from 2 to {} rows, found {found}",
+        crate::physics::spectrum::MOST_ROWS
+    )]
+    TableLength {
+        /// How many rows were given.
+        found: usize,
+    },
+    /// The rows of a table are not in order.
+    #[error(
+        "row {row} of the table must stand at a longer wavelength than the row before it, found {wavelength} m after {before} m; sort the rows by wavelength"
+    )]
+    TableOrder {
+        /// Which row, counted from 1.
+        row: usize,
+        /// Its wavelength, in metres.
+        wavelength: f64,
+        /// That of the row before it, in metres.
+        before: f64,
+    },
+    /// A number in a table lies outside the range in which it means something.
+    #[error("{parameter} in row {row} of the table must be {range}, found {value}")]
+    TableValue {
+        /// Which row, counted from 1.
+        row: usize,
+        /// The column as a person would call it.
+        parameter: &'static str,
+        /// The range, in words.
+        range: &'static str,
+        /// The value that was found.
+        value: f64,
+    },
 }
 
 /// Returns `value` if it is finite and above zero, at most `most`.
