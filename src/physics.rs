@@ -5,6 +5,7 @@
 //! What is finite at the door gives finite numbers; faults are an [`Error`].
 
 pub mod atmosphere;
+pub mod cavity;
 pub mod constant;
 mod error;
 pub mod exposure;

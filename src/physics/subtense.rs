@@ -98,6 +98,8 @@ pub fn of(region: &Region, point: DVec3) -> Option<Subtense> {
         } => disc(*centre - point, *normal, *radius),
         Region::Polygon { vertices, normal } => polygon(vertices, *normal, point),
         Region::Sphere { centre, radius } => sphere(centre.distance(point), *radius),
+        Region::Cylinder { base, axis, radius } => cylinder(*base, *axis, *radius, point),
+        Region::Plate { vertices, normal } => plate(vertices, *normal, point),
     })
 }
 

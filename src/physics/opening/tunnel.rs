@@ -5,6 +5,7 @@
 //! metres below the outer edge.
 
 use crate::numeric::gauss::Rule;
+use crate::numeric::legendre::Legendre;
 use crate::numeric::linear;
 use crate::physics::Error;
 use crate::physics::error::length;
@@ -82,7 +83,7 @@ impl Tunnel {
                 for (t, weight) in inner.on(from, to) {
                     let factor = sign * weight * section.from_wall((t - x).abs());
                     let z = 2.0 * t / depth - 1.0;
-                    for (entry, (_, slope)) in row.iter_mut().zip(Odd::at(z)).take(count.into()) {
+                    for (entry, (_, slope)) in row.iter_mut().zip(odd(z)).take(count.into()) {
                         *entry += factor * slope * 2.0 / depth;
                     }
                 }
@@ -142,7 +143,7 @@ impl Tunnel {
     #[must_use]
     pub fn exitance(&self, depth: f64) -> f64 {
         let z = (2.0 * depth / self.depth - 1.0).clamp(-1.0, 1.0);
-        let above: f64 = Odd::at(z)
+        let above: f64 = odd(z)
             .zip(&self.terms)
             .map(|((value, _), term)| value * term)
             .sum();
@@ -153,7 +154,7 @@ impl Tunnel {
     #[must_use]
     pub fn slope(&self, depth: f64) -> f64 {
         let z = (2.0 * depth / self.depth - 1.0).clamp(-1.0, 1.0);
-        let sum: f64 = Odd::at(z)
+        let sum: f64 = odd(z)
             .zip(&self.terms)
             .map(|((_, slope), term)| slope * term)
             .sum();
@@ -161,49 +162,9 @@ impl Tunnel {
     }
 }
 
-/// The Legendre polynomials of odd order and their slopes, without end.
-struct Odd {
-    z: f64,
-    order: f64,
-    value: f64,
-    slope: f64,
-    before: f64,
-    slope_before: f64,
-}
-
-impl Odd {
-    fn at(z: f64) -> Self {
-        Self {
-            z,
-            order: 0.0,
-            value: 1.0,
-            slope: 0.0,
-            before: 0.0,
-            slope_before: 0.0,
-        }
-    }
-
-    fn rise(&mut self) {
-        let n = self.order;
-        let value = ((2.0 * n + 1.0) * self.z * self.value - n * self.before) / (n + 1.0);
-        // P′ of one order up is P′ of one order down plus (2n + 1) P.
-        let slope = self.slope_before + (2.0 * n + 1.0) * self.value;
-        (self.before, self.value) = (self.value, value);
-        (self.slope_before, self.slope) = (self.slope, slope);
-        self.order += 1.0;
-    }
-}
-
-impl Iterator for Odd {
-    type Item = (f64, f64);
-
-    fn next(&mut self) -> Option<(f64, f64)> {
-        if self.order > 0.0 {
-            self.rise();
-        }
-        self.rise();
-        Some((self.value, self.slope))
-    }
+/// The Legendre polynomials of odd order, with their slopes.
+fn odd(z: f64) -> impl Iterator<Item = (f64, f64)> {
+    Legendre::at(z).skip(1).step_by(2)
 }
 
 #[cfg(test)]

@@ -165,7 +165,7 @@ pub(in crate::physics) fn flux(centre: DVec3, normal: DVec3, radius: f64) -> DVe
 /// The flux vector's component along the disc's axis, and that towards the axis
 /// divided by the offset.
 #[inline]
-fn components(radius: f64, height: f64, offset: f64) -> (f64, f64) {
+pub(in crate::physics) fn components(radius: f64, height: f64, offset: f64) -> (f64, f64) {
     let (near, far) = (offset - radius, offset + radius);
     let (square, tall) = (radius * radius, height * height);
     // The product of the nearest and the farthest distance to the rim.
