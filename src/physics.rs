@@ -14,5 +14,6 @@ pub mod scene;
 pub mod surface;
 pub mod view;
 pub mod view_factor;
+mod visibility;
 
 pub use error::Error;
