@@ -5,11 +5,14 @@
 //! What is finite at the door gives finite numbers; faults are an [`Error`].
 
 pub mod atmosphere;
+pub mod cavity;
 pub mod constant;
 mod error;
 pub mod exposure;
 mod hazard;
+pub mod opening;
 pub mod planck;
+pub mod pool;
 pub mod radiant;
 pub mod region;
 pub mod scene;
@@ -19,5 +22,6 @@ pub mod subtense;
 pub mod surface;
 pub mod view;
 pub mod view_factor;
+mod visibility;
 
 pub use error::Error;

@@ -76,6 +76,22 @@ pub enum Error {
         /// The second edge.
         second: usize,
     },
+    /// An outline has a dent where it must not have one.
+    #[error(
+        "the outline must have no dent, found one at vertex {vertex}; what a wall hides of itself is not worked out"
+    )]
+    NotConvex {
+        /// Which vertex, counted from 1.
+        vertex: usize,
+    },
+    /// A region is of a shape for which the relation does not hold.
+    #[error("{parameter} must be {wanted}, found another shape")]
+    WrongShape {
+        /// The parameter as a person would call it.
+        parameter: &'static str,
+        /// The shapes that are possible, in words.
+        wanted: &'static str,
+    },
     /// A table has too few rows, or too many.
     #[error(
         "a table must have from 2 to {} rows, found {found}",
@@ -108,6 +124,37 @@ pub enum Error {
         range: &'static str,
         /// The value that was found.
         value: f64,
+    },
+    /// Two bodies that emit overlap: which hides the other cannot be said.
+    #[error(
+        "bodies that emit must lie apart, found parts {} and {} overlapping; move them apart",
+        first + 1, second + 1
+    )]
+    PartsOverlap {
+        /// The first, by its place in the scene.
+        first: usize,
+        /// The second.
+        second: usize,
+    },
+    /// A barrier runs through a part, or lies upon another barrier's hot face.
+    #[error(
+        "a barrier must lie clear of what emits, found barrier {} overlapping part {}; move one of them",
+        barrier + 1, part + 1
+    )]
+    BarrierOverlaps {
+        /// The barrier, by its place in the scene.
+        barrier: usize,
+        /// The part, by its place in the scene.
+        part: usize,
+    },
+    /// The outline that a part is seen through, or past, is not flat.
+    #[error(
+        "a part must be seen through a disc or a polygon, found a body for part {}",
+        part + 1
+    )]
+    NotAnOutline {
+        /// The part, by its place in the scene.
+        part: usize,
     },
 }
 

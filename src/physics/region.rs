@@ -225,6 +225,24 @@ impl Region {
         }
     }
 
+    /// Returns the same region elsewhere.
+    ///
+    /// `by` in metres.
+    #[must_use]
+    pub fn moved(&self, by: DVec3) -> Self {
+        let mut region = self.clone();
+        match &mut region {
+            Self::Disc { centre, .. } | Self::Sphere { centre, .. } => *centre += by,
+            Self::Cylinder { base, .. } => *base += by,
+            Self::Polygon { vertices, .. } | Self::Plate { vertices, .. } => {
+                for vertex in vertices {
+                    *vertex += by;
+                }
+            }
+        }
+        region
+    }
+
     /// Returns the emitting area in m²: of a flat region one face, of a plate
     /// both, of a body all of it.
     #[must_use]
@@ -274,6 +292,31 @@ impl Region {
                     .iter()
                     .map(|vertex| vertex.distance(centre))
                     .fold(0.0, f64::max)
+            }
+        }
+    }
+
+    /// Checks what the constructors do, but for the outline of a polygon.
+    pub(super) fn checked(&self) -> Result<(), Error> {
+        match self {
+            Self::Disc {
+                centre,
+                normal,
+                radius,
+            } => Self::disc(*centre, *normal, *radius).map(drop),
+            Self::Sphere { centre, radius } => Self::sphere(*centre, *radius).map(drop),
+            Self::Cylinder { base, axis, radius } => {
+                Self::cylinder(*base, *axis, *radius).map(drop)
+            }
+            Self::Polygon { vertices, normal } | Self::Plate { vertices, normal } => {
+                let found = vertices.len();
+                if !(3..=MOST_VERTICES).contains(&found) {
+                    return Err(Error::VertexCount { found });
+                }
+                for vertex in vertices {
+                    let _ = place("vertex", *vertex)?;
+                }
+                direction("normal", *normal).map(drop)
             }
         }
     }
