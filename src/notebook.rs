@@ -16,6 +16,7 @@ pub mod engine;
 pub mod listed;
 pub mod name;
 pub mod readiness;
+pub mod reference;
 pub mod results;
 pub mod scene;
 pub mod snapshot;
