@@ -315,7 +315,6 @@ fn each_edit_of_the_demo_runs_exactly_what_hangs_on_it() {
                     "door.width",
                     "door.shape",
                     "door.outcome",
-                    "door.apart",
                     "door_area.entry",
                 ][..],
                 &views,
