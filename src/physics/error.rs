@@ -109,6 +109,37 @@ pub enum Error {
         /// The value that was found.
         value: f64,
     },
+    /// Two bodies that emit overlap: which hides the other cannot be said.
+    #[error(
+        "bodies that emit must lie apart, found parts {} and {} overlapping; move them apart",
+        first + 1, second + 1
+    )]
+    PartsOverlap {
+        /// The first, by its place in the scene.
+        first: usize,
+        /// The second.
+        second: usize,
+    },
+    /// A barrier runs through a part, or lies upon another barrier's hot face.
+    #[error(
+        "a barrier must lie clear of what emits, found barrier {} overlapping part {}; move one of them",
+        barrier + 1, part + 1
+    )]
+    BarrierOverlaps {
+        /// The barrier, by its place in the scene.
+        barrier: usize,
+        /// The part, by its place in the scene.
+        part: usize,
+    },
+    /// The outline that a part is seen through, or past, is not flat.
+    #[error(
+        "a part must be seen through a disc or a polygon, found a body for part {}",
+        part + 1
+    )]
+    NotAnOutline {
+        /// The part, by its place in the scene.
+        part: usize,
+    },
 }
 
 /// Returns `value` if it is finite and above zero, at most `most`.

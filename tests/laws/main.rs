@@ -8,3 +8,4 @@ mod json_laws;
 mod notebook_laws;
 mod printing_and_parsing_agree;
 mod view_factor_laws;
+mod visibility_laws;
