@@ -34,6 +34,22 @@ pub enum Error {
         /// How many vertices were given.
         found: usize,
     },
+    /// A screen touches a hot source.
+    #[error("a screen must stand clear of hot sources, found screen {screen} touching part {part}; move one of them")]
+    TouchesSource {
+        /// Which screen, counted from 1.
+        screen: usize,
+        /// Which emitting part, counted from 1.
+        part: usize,
+    },
+    /// The middle of a piece of a screen lies on another screen.
+    #[error("screens must not lie in one another, found screen {screen} in screen {other}; move one of them")]
+    TouchesScreen {
+        /// Which screen, counted from 1.
+        screen: usize,
+        /// Which other one, counted from 1.
+        other: usize,
+    },
     /// The vertices of a polygon enclose no area.
     #[error(
         "a polygon must enclose an area, found {area} m²; give its vertices in order around it"
