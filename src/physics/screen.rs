@@ -27,6 +27,7 @@ use super::Error;
 use super::error::positive;
 use super::region::Region;
 use super::scene::Barrier;
+use super::surface::Emission;
 
 /// A flat rectangular screen in space.
 #[derive(Clone, Debug, PartialEq)]
@@ -165,6 +166,18 @@ impl Screen {
             air: room.air,
         }
     }
+}
+
+/// Returns what of an emission goes through several clear screens.
+///
+/// `through` holds the places of the screens in `screens`, as a glimpse of a
+/// scene tells them whose first barriers are those of the screens, in their
+/// order; a place that is not among them dims nothing.
+#[must_use]
+pub fn passed(screens: &[Screen], through: &[u16], emission: &Emission) -> Emission {
+    (through.iter())
+        .filter_map(|place| screens.get(usize::from(*place)))
+        .fold(*emission, |emission, screen| screen.make.passed(&emission))
 }
 
 /// The faces of a screen, as indices.

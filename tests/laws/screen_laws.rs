@@ -3,9 +3,9 @@
 
 use farglow::physics::planck;
 use farglow::physics::region::Region;
-use farglow::physics::scene::Part;
+use farglow::physics::scene::{Part, Scene};
 use farglow::physics::screen::{
-    Balance, Convection, Heated, Make, Room, Screen, Walls, balance,
+    Balance, Convection, Heated, Make, Room, Screen, Walls, balance, passed,
 };
 use farglow::physics::surface::Emission;
 use glam::DVec3;
@@ -389,6 +389,75 @@ fn meshes_absorb_what_they_do_not_let_through() {
         let share = heated.exitances[1] / whole.screens[0].exitances[1];
         assert!((share - (1.0 - open_fraction)).abs() < 1e-9, "{share}");
     }
+}
+
+/// A screen does not hide its own patches, and people on each side see those of
+/// that side alone: together they are the face.
+#[test]
+fn patches_are_seen_from_their_own_side() {
+    let hot = door(1500.0);
+    let make = Make::soiled(0.3, 0.9).expect("a make");
+    let screen = upright([0.0, 1.5, 1.0], 1.2, make);
+    let found = solved(&hot, std::slice::from_ref(&screen), &room());
+    let patches = &found.screens[0].patches;
+    let parts = patches.iter().map(|patch| patch.part.clone()).collect();
+    let scene = Scene::new(parts, vec![screen.barrier()]).expect("a scene");
+    for (point, is_front) in [
+        (DVec3::new(0.3, 0.9, 1.6), true),
+        (DVec3::new(0.3, 2.1, 1.6), false),
+        (DVec3::new(0.3, 6.0, 0.4), false),
+    ] {
+        let normal = if is_front { DVec3::Y } else { DVec3::NEG_Y };
+        let mut sum = 0.0;
+        for glimpse in scene.look(point).glimpses() {
+            assert_eq!(patches[glimpse.part].is_front, is_front, "{point}");
+            assert!(glimpse.through.is_empty(), "{point}: {glimpse:?}");
+            sum += glimpse.view.factor(normal);
+        }
+        let whole = Region::rectangle(DVec3::new(0.0, 1.5, 1.0), -normal, DVec3::Z, 1.2, 1.2)
+            .expect("a face")
+            .view(point)
+            .into_view()
+            .expect("ahead")
+            .factor(normal);
+        assert!((sum - whole).abs() < 1e-6 * whole, "{point}: {sum} of {whole}");
+    }
+}
+
+/// Behind a row of plates it is the cooler the more there are, down to the room.
+#[test]
+fn more_screens_never_let_more_through() {
+    let hot = door(1600.0);
+    let make = Make::soiled(0.3, 0.9).expect("a make");
+    let point = DVec3::new(0.2, 4.0, 1.5);
+    let mut before = f64::INFINITY;
+    for count in 0..5_u8 {
+        let screens: Vec<Screen> = (0..count)
+            .map(|place| upright([0.0, 1.0 + 0.15 * f64::from(place), 1.0], 2.0, make))
+            .collect();
+        let found = solved(&hot, &screens, &room());
+        let mut parts = hot.0.clone();
+        let mut emissions = hot.1.clone();
+        for patch in found.screens.iter().flat_map(|heated| &heated.patches) {
+            parts.push(patch.part.clone());
+            emissions.push(patch.emission);
+        }
+        let barriers = screens.iter().map(Screen::barrier).collect();
+        let scene = Scene::new(parts, barriers).expect("a scene");
+        let irradiance: f64 = (scene.look(point).glimpses().iter())
+            .map(|glimpse| {
+                let emission = passed(&screens, &glimpse.through, &emissions[glimpse.part]);
+                emission.total * glimpse.view.factor(DVec3::NEG_Y)
+            })
+            .sum();
+        assert!(
+            irradiance < before && irradiance > 0.0,
+            "{count} plates: {irradiance} W/m² after {before} W/m²"
+        );
+        before = irradiance;
+    }
+    let room = planck::exitance(298.15);
+    assert!(before < 0.5 * room, "{before} W/m² behind four plates");
 }
 
 /// What cannot be is refused by name.

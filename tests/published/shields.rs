@@ -82,7 +82,10 @@ fn plates_send_on_what_the_notes_say() {
         ("plate_balance-05", 1285.66),
     ] {
         let rows = rows::all();
-        let row = rows.iter().find(|row| row.id == id).expect("the row is there");
+        let row = rows
+            .iter()
+            .find(|row| row.id == id)
+            .expect("the row is there");
         let temperature = plate_balance(row).expect("the row runs");
         let found = row.number("e_back") * farglow::physics::planck::exitance(temperature);
         assert!(

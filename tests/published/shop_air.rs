@@ -24,9 +24,8 @@ pub fn wayne(row: &Row) -> Option<f64> {
 
 /// The most that either formula takes off over the conditions of the bound.
 pub fn most_absorbed(row: &Row) -> Option<f64> {
-    let ends = |name: &str| -> Option<[f64; 2]> {
-        serde_json::from_value(row.inputs[name].clone()).ok()
-    };
+    let ends =
+        |name: &str| -> Option<[f64; 2]> { serde_json::from_value(row.inputs[name].clone()).ok() };
     let ([near, far], [cold, warm], [dry, moist]) =
         (ends("path_m")?, ends("ambient_C")?, ends("RH")?);
     let mut most = 0.0_f64;
@@ -87,7 +86,13 @@ fn no_formula_takes_off_more_than_the_narrow_band_model() {
 /// Source: the two formulas, both from memory: they stand for each other within 5 % over ordinary air.
 #[test]
 fn the_two_formulas_agree() {
-    for (t, humidity) in [(15.0, 0.5), (20.0, 0.5), (25.0, 0.5), (30.0, 0.6), (35.0, 0.3)] {
+    for (t, humidity) in [
+        (15.0, 0.5),
+        (20.0, 0.5),
+        (25.0, 0.5),
+        (30.0, 0.6),
+        (35.0, 0.3),
+    ] {
         for path in [10.0, 15.0, 20.0, 30.0, 50.0, 80.0] {
             let temperature = t + 273.15;
             let pressure = atmosphere::vapour_pressure(humidity, temperature).expect("air");
