@@ -199,7 +199,11 @@ fn large_plates_are_the_published_shields() {
         let screens: Vec<Screen> = (1_u8..)
             .zip(&plates)
             .map(|(place, [front, back])| {
-                upright([0.0, 0.01 * f64::from(place), 0.0], large, grey(*front, *back))
+                upright(
+                    [0.0, 0.01 * f64::from(place), 0.0],
+                    large,
+                    grey(*front, *back),
+                )
             })
             .collect();
         let found = solved(&hot, &screens, &still);
@@ -304,13 +308,19 @@ fn two_facing_plates_are_solved_by_hand_alike() {
     let (x, y) = (1.0_f64, 1.0_f64);
     let (root_x, root_y) = ((1.0 + x * x).sqrt(), (1.0 + y * y).sqrt());
     let between = 2.0 / (std::f64::consts::PI * x * y)
-        * (((root_x * root_x * root_y * root_y) / (1.0 + x * x + y * y)).sqrt().ln()
+        * (((root_x * root_x * root_y * root_y) / (1.0 + x * x + y * y))
+            .sqrt()
+            .ln()
             + x * root_y * (x / root_y).atan()
             + y * root_x * (y / root_x).atan()
             - x * x.atan()
             - y * y.atan());
     assert!((between - 0.1998).abs() < 5e-5, "{between}");
-    let view = hot.0[0].region.view(DVec3::ZERO).into_view().expect("ahead");
+    let view = hot.0[0]
+        .region
+        .view(DVec3::ZERO)
+        .into_view()
+        .expect("ahead");
     let factor = view.factor(DVec3::NEG_Y);
     let fell = factor * hot.1[0].total;
     let sky = planck::exitance(298.15);
@@ -420,7 +430,10 @@ fn patches_are_seen_from_their_own_side() {
             .into_view()
             .expect("ahead")
             .factor(normal);
-        assert!((sum - whole).abs() < 1e-6 * whole, "{point}: {sum} of {whole}");
+        assert!(
+            (sum - whole).abs() < 1e-6 * whole,
+            "{point}: {sum} of {whole}"
+        );
     }
 }
 
@@ -465,9 +478,8 @@ fn more_screens_never_let_more_through() {
 fn impossible_scenes_are_refused() {
     let hot = door(1500.0);
     let make = Make::soiled(0.3, 0.9).expect("a make");
-    let text = |found: Result<Balance, farglow::physics::Error>| {
-        found.expect_err("refused").to_string()
-    };
+    let text =
+        |found: Result<Balance, farglow::physics::Error>| found.expect_err("refused").to_string();
     let plate = upright([0.0, 1.5, 1.0], 1.0, make);
     let against_the_door = upright([0.0, 0.0, 1.0], 1.0, make);
     let windy = Room {
@@ -477,7 +489,12 @@ fn impossible_scenes_are_refused() {
     let frozen = Room { air: 0.0, ..room() };
     for (found, expected) in [
         (
-            text(balance(&hot.0, &hot.1, &[plate.clone(), plate.clone()], &room())),
+            text(balance(
+                &hot.0,
+                &hot.1,
+                &[plate.clone(), plate.clone()],
+                &room(),
+            )),
             "screens must not lie in one another, found screen 1 in screen 2; move one of them",
         ),
         (
@@ -489,7 +506,12 @@ fn impossible_scenes_are_refused() {
             "number of emissions must be that of the emitting parts, found 0",
         ),
         (
-            text(balance(&hot.0, &hot.1, std::slice::from_ref(&plate), &windy)),
+            text(balance(
+                &hot.0,
+                &hot.1,
+                std::slice::from_ref(&plate),
+                &windy,
+            )),
             "speed of the air must be from 0 m/s to 100 m/s, found NaN",
         ),
         (

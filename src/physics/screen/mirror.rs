@@ -71,7 +71,7 @@ impl Screen {
             if reflectance <= REFLECTING || (point - self.centre).dot(normal) <= 0.0 {
                 continue;
             }
-            let outline = self.piece(face, [-1.0; 2], [1.0; 2]);
+            let outline = self.outline(face);
             let pictures = parts
                 .iter()
                 .map(|part| Part {
