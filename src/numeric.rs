@@ -1,5 +1,7 @@
 //! Numerical pieces that no well-kept crate gives.
 
+pub mod gauss;
+pub mod legendre;
 pub mod linear;
 
 /// The largest square of a tangent that [`arc_over_tangent`] takes: angles up to

@@ -5,10 +5,12 @@
 //! What is finite at the door gives finite numbers; faults are an [`Error`].
 
 pub mod atmosphere;
+pub mod cavity;
 pub mod constant;
 mod error;
 pub mod exposure;
 mod hazard;
+pub mod opening;
 pub mod planck;
 pub mod radiant;
 pub mod region;

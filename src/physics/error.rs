@@ -80,6 +80,22 @@ pub enum Error {
         /// The second edge.
         second: usize,
     },
+    /// An outline has a dent where it must not have one.
+    #[error(
+        "the outline must have no dent, found one at vertex {vertex}; what a wall hides of itself is not worked out"
+    )]
+    NotConvex {
+        /// Which vertex, counted from 1.
+        vertex: usize,
+    },
+    /// A region is of a shape for which the relation does not hold.
+    #[error("{parameter} must be {wanted}, found another shape")]
+    WrongShape {
+        /// The parameter as a person would call it.
+        parameter: &'static str,
+        /// The shapes that are possible, in words.
+        wanted: &'static str,
+    },
     /// A table has too few rows, or too many.
     #[error(
         "a table must have from 2 to {} rows, found {found}",

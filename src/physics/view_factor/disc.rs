@@ -106,6 +106,50 @@ pub fn from_perpendicular_element(radius: f64, distance: f64, offset: f64) -> Re
     Ok(circle.above(DVec3::X).x.clamp(0.0, 1.0))
 }
 
+/// Returns the configuration factor from a disc to another one, both on one
+/// axis and facing each other.
+///
+/// `radius` r₁ of the disc that sends, `other` r₂ of the one that receives and
+/// `distance` h between their planes, in metres.
+///
+/// # Accuracy
+///
+/// Exact relation, written with positive terms; relative error below `1e-15`.
+///
+/// # Errors
+///
+/// [`Error::OutOfRange`] if a length is not from 10⁻⁹ m to 10⁹ m.
+///
+/// # Source
+///
+/// ½ [S − √(S² − 4(r₂/r₁)²)] with S = 1 + (h² + r₂²)/r₁², Howell's catalogue
+/// (C-41, number from memory). Checked in
+/// `tests/published/view_factor_catalogue.rs`, family `disc_disc`.
+///
+/// # Examples
+///
+/// ```
+/// use farglow::physics::view_factor::disc;
+///
+/// let factor = disc::to_coaxial_disc(1.0, 1.0, 1.0)?;
+/// assert!((factor - 0.381_966_011_250_105).abs() < 1e-15);
+/// # Ok::<(), farglow::physics::Error>(())
+/// ```
+pub fn to_coaxial_disc(radius: f64, other: f64, distance: f64) -> Result<f64, Error> {
+    let radius = length("radius", radius)?;
+    let other = length("other radius", other)?;
+    let distance = length("distance", distance)?;
+    Ok(between(radius, other, distance))
+}
+
+/// As [`to_coaxial_disc`], of lengths that are known to be in range; the
+/// distance may be zero.
+pub(in crate::physics) fn between(radius: f64, other: f64, distance: f64) -> f64 {
+    let (near, far) = (distance.hypot(other - radius), distance.hypot(other + radius));
+    let sum = radius * radius + other * other + distance * distance;
+    (2.0 * other * other / (sum + near * far)).min(1.0)
+}
+
 /// Returns the flux vector of a disc, the receiver at the origin and in front.
 ///
 /// `centre` from the receiver; `normal` of length one, towards it.
@@ -121,7 +165,7 @@ pub(in crate::physics) fn flux(centre: DVec3, normal: DVec3, radius: f64) -> DVe
 /// The flux vector's component along the disc's axis, and that towards the axis
 /// divided by the offset.
 #[inline]
-fn components(radius: f64, height: f64, offset: f64) -> (f64, f64) {
+pub(in crate::physics) fn components(radius: f64, height: f64, offset: f64) -> (f64, f64) {
     let (near, far) = (offset - radius, offset + radius);
     let (square, tall) = (radius * radius, height * height);
     // The product of the nearest and the farthest distance to the rim.
