@@ -8,6 +8,7 @@ mod function;
 mod name;
 mod parse;
 mod program;
+mod row;
 mod token;
 
 #[cfg(test)]
@@ -15,6 +16,7 @@ mod tests;
 
 pub use diagnostic::Diagnostic;
 pub use name::{RESERVED, is_name, is_reserved};
+pub use row::RowUse;
 pub use token::{LiteralUse, NameUse};
 
 use crate::units::{Literal, Quantity};

@@ -7,7 +7,7 @@
 //! | layer | modules |
 //! | --- | --- |
 //! | ground | [`units`], [`json`], [`graph`], [`physics`], [`spelling`], [`numeric`] |
-//! | what a person types, and published limits | [`entry`], [`guidance`] |
+//! | what a person types, published limits, materials of the trade | [`entry`], [`guidance`], [`material`] |
 //! | the linked cells | [`notebook`] |
 //! | files | [`store`] |
 //! | pictures and paper | [`drawing`], [`worksheet`] |
@@ -22,6 +22,7 @@ pub mod entry;
 pub mod graph;
 pub mod guidance;
 pub mod json;
+pub mod material;
 pub mod notebook;
 pub mod numeric;
 pub mod physics;

@@ -1,15 +1,21 @@
-//! Constants and functions of entries, and the bridge to the physics. Each
-//! function checks its arguments before any formula sees them.
+//! Constants and functions of entries. Each function checks its arguments
+//! before any formula sees them, and says which of them is at fault.
+
+mod argument;
+mod mathematics;
+mod radiation;
 
 use super::Diagnostic;
-use crate::physics::{constant, planck};
-use crate::units::{Dimension, Error, Quantity, Sense};
-use std::cmp::Ordering;
+use crate::units::{Dimension, Error, Quantity};
+use argument::Parameter;
+use std::sync::LazyLock;
 
 /// A named constant.
 #[derive(Debug)]
 pub(super) struct Constant {
     pub(super) name: &'static str,
+    /// What it is.
+    pub(super) about: &'static str,
     value: f64,
     /// The coherent unit, as dimensions above and below the stroke.
     kind: Kind,
@@ -38,102 +44,123 @@ impl Constant {
 pub(super) static CONSTANTS: &[Constant] = &[
     Constant {
         name: "pi",
+        about: "π",
         value: std::f64::consts::PI,
         kind: Kind::Number,
     },
     Constant {
         name: "stefan_boltzmann",
-        value: constant::STEFAN_BOLTZMANN,
+        about: "σ, W/(m²·K⁴)",
+        value: radiation::STEFAN_BOLTZMANN,
         kind: Kind::ExitancePerFourthPower,
     },
 ];
 
-type Answer = Result<Quantity, Box<Diagnostic>>;
+/// What is wrong, and with which argument, counted from 0; `None` where the
+/// result is at fault.
+#[derive(Debug)]
+pub(super) struct Refusal {
+    pub(super) argument: Option<usize>,
+    pub(super) fault: Box<Diagnostic>,
+}
+
+impl Refusal {
+    fn at(argument: usize, fault: Diagnostic) -> Self {
+        Self {
+            argument: Some(argument),
+            fault: Box::new(fault),
+        }
+    }
+
+    fn of_result(fault: Diagnostic) -> Self {
+        Self {
+            argument: None,
+            fault: Box::new(fault),
+        }
+    }
+}
+
+type Answer = Result<Quantity, Refusal>;
 
 /// A function of one or more quantities.
 #[derive(Debug)]
 pub(super) struct Function {
     pub(super) name: &'static str,
-    /// How it is written.
-    pub(super) usage: &'static str,
+    /// What it returns, in a few words.
+    pub(super) about: &'static str,
+    /// Its arguments, those that may be left out last.
+    parameters: &'static [Parameter],
     pub(super) least: usize,
     pub(super) most: usize,
-    /// Gets between `least` and `most` arguments, none of them a point.
-    pub(super) apply: fn(&[Quantity]) -> Answer,
+    work: Work,
 }
 
-const fn one(
-    name: &'static str,
-    usage: &'static str,
-    apply: fn(&[Quantity]) -> Answer,
-) -> Function {
-    Function {
-        name,
-        usage,
-        least: 1,
-        most: 1,
-        apply,
+#[derive(Debug)]
+enum Work {
+    /// Any quantities; the function looks at them itself.
+    Quantities(fn(&[Quantity]) -> Answer),
+    /// Numbers in SI units, checked one by one; arguments left out are not
+    /// there. The result has this dimension.
+    Numbers(Dimension, fn(&[f64]) -> Result<f64, radiation::Error>),
+}
+
+impl Function {
+    /// Returns how it is written, such as `exitance(temperature, emissivity)`.
+    pub(super) fn usage(&self) -> String {
+        let mut names: Vec<&str> = self.parameters.iter().map(|known| known.name).collect();
+        if self.most == MANY {
+            names.push("…");
+        }
+        format!("{}({})", self.name, names.join(", "))
+    }
+
+    /// Works it out from between `least` and `most` arguments, none of them a
+    /// point.
+    pub(super) fn apply(&self, arguments: &[Quantity]) -> Answer {
+        match self.work {
+            Work::Quantities(work) => work(arguments),
+            Work::Numbers(dimension, work) => {
+                let mut numbers = [0.0; MOST_PARAMETERS];
+                for (index, (argument, parameter)) in
+                    arguments.iter().zip(self.parameters).enumerate()
+                {
+                    numbers[index] = parameter
+                        .kind
+                        .check(*argument)
+                        .map_err(|fault| Refusal::at(index, fault))?;
+                }
+                let result = work(&numbers[..arguments.len()]);
+                finite(result.map_err(|error| self.refusal(error))?, dimension)
+            }
+        }
+    }
+
+    /// What the physics says of a number, at the argument it came from.
+    fn refusal(&self, error: radiation::Error) -> Refusal {
+        let (parameter, message) = argument::told(error);
+        let argument = self
+            .parameters
+            .iter()
+            .position(|known| known.inner == parameter);
+        Refusal {
+            argument,
+            fault: Box::new(Diagnostic::new("out-of-range", message)),
+        }
     }
 }
 
+/// The most parameters that a function of numbers has.
+const MOST_PARAMETERS: usize = 4;
+
 /// The functions, sorted by name.
-pub(super) static FUNCTIONS: &[Function] = &[
-    one("abs", "abs(x)", |x| {
-        Ok(Quantity {
-            si: x[0].si.abs(),
-            ..x[0]
-        })
-    }),
-    one("acos", "acos(x)", |x| angle(unit_interval(x[0])?.acos())),
-    one("asin", "asin(x)", |x| angle(unit_interval(x[0])?.asin())),
-    one("atan", "atan(x)", |x| angle(plain(x[0])?.atan())),
-    Function {
-        name: "band_fraction",
-        usage: "band_fraction(temperature, from, to)",
-        least: 3,
-        most: 3,
-        apply: band_fraction,
-    },
-    one(
-        "blackbody_exitance",
-        "blackbody_exitance(temperature)",
-        |x| finite(planck::exitance(temperature(x[0])?), Dimension::IRRADIANCE),
-    ),
-    one("ceil", "ceil(x)", |x| whole(x[0], f64::ceil)),
-    one("cos", "cos(angle)", |x| number(radians(x[0])?.cos())),
-    one("exp", "exp(x)", |x| number(plain(x[0])?.exp())),
-    one("floor", "floor(x)", |x| whole(x[0], f64::floor)),
-    one("ln", "ln(x)", |x| number(positive(x[0])?.ln())),
-    one("log10", "log10(x)", |x| number(positive(x[0])?.log10())),
-    Function {
-        name: "max",
-        usage: "max(x, y, …)",
-        least: 2,
-        most: MANY,
-        apply: |x| extreme(x, Ordering::Greater),
-    },
-    Function {
-        name: "min",
-        usage: "min(x, y, …)",
-        least: 2,
-        most: MANY,
-        apply: |x| extreme(x, Ordering::Less),
-    },
-    one("peak_wavelength", "peak_wavelength(temperature)", |x| {
-        finite(
-            planck::peak_wavelength(temperature(x[0])?),
-            Dimension::LENGTH,
-        )
-    }),
-    one("round", "round(x)", |x| whole(x[0], f64::round)),
-    one("sin", "sin(angle)", |x| number(radians(x[0])?.sin())),
-    one("sqrt", "sqrt(x)", |x| {
-        Ok(x[0]
-            .power(Quantity::number(0.5))
-            .map_err(Diagnostic::from)?)
-    }),
-    one("tan", "tan(angle)", tangent),
-];
+pub(super) static FUNCTIONS: LazyLock<Vec<&'static Function>> = LazyLock::new(|| {
+    let mut all: Vec<&Function> = mathematics::FUNCTIONS
+        .iter()
+        .chain(radiation::FUNCTIONS)
+        .collect();
+    all.sort_by_key(|function| function.name);
+    all
+});
 
 /// More arguments than an entry has room for.
 pub(super) const MANY: usize = usize::MAX;
@@ -142,137 +169,32 @@ fn finite(si: f64, dimension: Dimension) -> Answer {
     if si.is_finite() {
         Ok(Quantity::new(si, dimension))
     } else {
-        Err(Box::new(Error::NotFinite.into()))
+        Err(Refusal::of_result(Error::NotFinite.into()))
     }
 }
 
-fn number(value: f64) -> Answer {
-    finite(value, Dimension::NONE)
-}
+#[cfg(test)]
+mod tests {
+    use super::*;
 
-fn angle(radians: f64) -> Answer {
-    finite(radians, Dimension::ANGLE)
-}
-
-fn of_kind(x: Quantity, needed: Dimension) -> Result<f64, Box<Diagnostic>> {
-    if x.dimension == needed {
-        return Ok(x.si);
-    }
-    let found = x.dimension;
-    Err(Box::new(Error::Dimension { needed, found }.into()))
-}
-
-fn plain(x: Quantity) -> Result<f64, Box<Diagnostic>> {
-    of_kind(x, Dimension::NONE)
-}
-
-fn radians(x: Quantity) -> Result<f64, Box<Diagnostic>> {
-    of_kind(x, Dimension::ANGLE).map_err(|mut fault| {
-        fault.hint = Some("give the angle its unit: `30 °` or `0.5 rad`".to_owned());
-        fault
-    })
-}
-
-/// An argument of the right kind whose value has no answer.
-fn domain(expected: &str, found: f64, hint: &str) -> Box<Diagnostic> {
-    let message = format!("expected {expected}, found {found}");
-    Box::new(Diagnostic::new("out-of-range", message).with_hint(hint))
-}
-
-fn positive(x: Quantity) -> Result<f64, Box<Diagnostic>> {
-    let value = plain(x)?;
-    if value > 0.0 {
-        return Ok(value);
-    }
-    let hint = "a logarithm has a value only above zero: check the argument";
-    Err(domain("a number above zero", value, hint))
-}
-
-fn unit_interval(x: Quantity) -> Result<f64, Box<Diagnostic>> {
-    // A hair beyond one is the noise of the division that made it.
-    const HAIR: f64 = 1e-12;
-    let value = plain(x)?;
-    if value.abs() <= 1.0 + HAIR {
-        return Ok(value.clamp(-1.0, 1.0));
-    }
-    let hint = "no angle has such a sine or cosine: check the lengths";
-    Err(domain("a number from -1 to 1", value, hint))
-}
-
-fn temperature(x: Quantity) -> Result<f64, Box<Diagnostic>> {
-    let kelvin = of_kind(x, Dimension::TEMPERATURE)?;
-    if x.sense == Sense::Difference {
-        let message = "expected a temperature, found a difference of two temperatures";
-        let hint = "use one temperature, in °C or counted in K from absolute zero";
-        return Err(Box::new(
-            Diagnostic::new("difference", message).with_hint(hint),
-        ));
-    }
-    if kelvin > 0.0 {
-        return Ok(kelvin);
-    }
-    let hint = "check the sign and the unit";
-    Err(domain("a temperature above 0 K", kelvin, hint))
-}
-
-fn wavelength(x: Quantity) -> Result<f64, Box<Diagnostic>> {
-    let metres = of_kind(x, Dimension::LENGTH)?;
-    if metres >= 0.0 {
-        return Ok(metres);
-    }
-    let hint = "write both wavelengths as lengths, the shorter one first";
-    Err(domain("a wavelength of zero or more", metres, hint))
-}
-
-/// The part of a black body's exitance between two wavelengths.
-fn band_fraction(x: &[Quantity]) -> Answer {
-    let kelvin = temperature(x[0])?;
-    let (from, to) = (wavelength(x[1])?, wavelength(x[2])?);
-    if from > to {
-        let message = "expected the shorter wavelength first, found the longer one";
-        let hint = "write band_fraction(temperature, from, to)";
-        return Err(Box::new(
-            Diagnostic::new("out-of-range", message).with_hint(hint),
-        ));
-    }
-    number(planck::band_fraction(from, to, kelvin))
-}
-
-/// Rounding has a meaning only for plain numbers: the step of a quantity would
-/// be hidden in its unit.
-fn whole(x: Quantity, round: fn(f64) -> f64) -> Answer {
-    let value = plain(x).map_err(|mut fault| {
-        fault.hint = Some(
-            "divide by the step and multiply by it again: `ceil(x / (0.1 m)) * 0.1 m`".to_owned(),
-        );
-        fault
-    })?;
-    number(round(value))
-}
-
-fn tangent(x: &[Quantity]) -> Answer {
-    let value = radians(x[0])?;
-    // The `f64` nearest to a right angle misses it by 6e-17.
-    if value.cos().abs() < 1e-15 {
-        let hint = "the tangent of a right angle is infinite: check the angle";
-        return Err(domain("an angle other than a right one", value, hint));
-    }
-    number(value.tan())
-}
-
-fn extreme(x: &[Quantity], wanted: Ordering) -> Answer {
-    let mut best = x[0];
-    let mut is_difference = best.sense == Sense::Difference;
-    for &next in &x[1..] {
-        if next.compare(best).map_err(Diagnostic::from)? == wanted {
-            best = next;
+    #[test]
+    fn tables_are_sorted_and_say_what_they_hold() {
+        let names: Vec<&str> = FUNCTIONS.iter().map(|function| function.name).collect();
+        assert!(names.is_sorted(), "{names:?}");
+        let mut unique = names.clone();
+        unique.dedup();
+        assert_eq!(unique, names, "a function stands there twice");
+        for function in FUNCTIONS.iter() {
+            let count = function.parameters.len();
+            assert!(!function.about.is_empty(), "{}", function.name);
+            assert!(function.least <= function.most, "{}", function.name);
+            if function.most == MANY {
+                continue;
+            }
+            assert_eq!(function.most, count, "{}", function.usage());
+            if matches!(function.work, Work::Numbers(..)) {
+                assert!(count <= MOST_PARAMETERS, "{}", function.usage());
+            }
         }
-        is_difference &= next.sense == Sense::Difference;
     }
-    let sense = if is_difference {
-        Sense::Difference
-    } else {
-        Sense::Plain
-    };
-    Ok(Quantity { sense, ..best })
 }

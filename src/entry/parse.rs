@@ -23,7 +23,7 @@ pub(super) fn compile(tokens: &Tokens) -> Result<Program, Diagnostic> {
         // The most frequent entry of all needs no parser.
         let mut walk = Walk::new(tokens);
         walk.operand().map_err(|fault| *fault)?;
-        return Ok(Program::new(walk.steps));
+        return Ok(Program::new(walk.steps, walk.arguments));
     }
     let tree = evalexpr::build_operator_tree(&sanitised(tokens)).map_err(|error| {
         let mut fault = *mismatch();
@@ -39,7 +39,7 @@ pub(super) fn compile(tokens: &Tokens) -> Result<Program, Diagnostic> {
     if walk.next != tokens.list.len() {
         return Err(*mismatch());
     }
-    Ok(Program::new(walk.steps))
+    Ok(Program::new(walk.steps, walk.arguments))
 }
 
 /// The text that the parser sees: placeholders for values and functions, and
@@ -71,6 +71,8 @@ struct Walk<'a> {
     /// The token that the next node must be.
     next: usize,
     steps: Vec<Step>,
+    /// Where the arguments of all calls stand.
+    arguments: Vec<Span>,
 }
 
 /// The parser and the tokens disagree, which the token pass should not allow.
@@ -85,6 +87,7 @@ impl<'a> Walk<'a> {
             tokens,
             next: 0,
             steps: Vec::with_capacity(tokens.list.len()),
+            arguments: Vec::new(),
         }
     }
 
@@ -197,39 +200,62 @@ impl<'a> Walk<'a> {
             return Err(mismatch());
         };
         let _ = self.expect(Sign::Open)?;
-        let count = if inside.operator() == &Operator::Tuple {
+        let mut arguments = Vec::new();
+        if inside.operator() == &Operator::Tuple {
             for (position, element) in inside.children().iter().enumerate() {
                 if position > 0 {
                     let _ = self.expect(Sign::Comma)?;
                 }
                 // Each element stands under a root of its own, without brackets.
+                let first = self.next;
                 self.only_child(element)?;
+                arguments.push(self.passed(first));
             }
-            inside.children().len()
         } else {
+            let first = self.next;
             self.node(inside)?;
-            1
-        };
+            arguments.push(self.passed(first));
+        }
+        let count = arguments.len();
         let close = self.expect(Sign::Close)?;
-        let function = &function::FUNCTIONS[usize::from(index)];
+        let function = function::FUNCTIONS[usize::from(index)];
         if !(function.least..=function.most).contains(&count) {
             let needed = match (function.least, function.most) {
                 (1, 1) => "1 argument".to_owned(),
                 (least, function::MANY) => format!("at least {least} arguments"),
-                (least, _) => format!("{least} arguments"),
+                (least, most) if least == most => format!("{least} arguments"),
+                (least, most) => format!("{least} or {most} arguments"),
             };
             let name = function.name;
             let message = format!("expected {needed} for `{name}`, found {count}");
             let start = usize::from(token.span.start);
             return Err(Box::new(
                 Diagnostic::new("argument-count", message)
-                    .with_hint(format!("write `{}`", function.usage))
+                    .with_hint(format!("write `{}`", function.usage()))
                     .at(start..usize::from(close.end)),
             ));
         }
         // At most as many arguments as an entry has characters.
         let count = count as u16;
-        self.push(Work::Call { index, count }, token.span);
+        let first = self.arguments.len() as u16;
+        self.arguments.append(&mut arguments);
+        self.push(
+            Work::Call {
+                index,
+                count,
+                first,
+            },
+            token.span,
+        );
         Ok(())
+    }
+
+    /// Where the tokens from `first` on stand, of which there is at least one.
+    fn passed(&self, first: usize) -> Span {
+        let passed = self.tokens.list.get(first..self.next).unwrap_or_default();
+        Span {
+            start: passed.first().map_or(0, |token| token.span.start),
+            end: passed.last().map_or(0, |token| token.span.end),
+        }
     }
 }

@@ -1,7 +1,7 @@
 //! A compiled entry: a flat list of steps over a stack of values, so that
 //! working it out touches no text and, for common depths, no heap.
 
-use super::function::{CONSTANTS, FUNCTIONS};
+use super::function::{CONSTANTS, FUNCTIONS, Refusal};
 use super::token::{Binary, Span};
 use super::{Diagnostic, Outcome};
 use crate::units::{Dimension, Error, Quantity, Sense};
@@ -25,6 +25,8 @@ pub(super) enum Work {
     Call {
         index: u16,
         count: u16,
+        /// Where the places of its arguments begin.
+        first: u16,
     },
 }
 
@@ -52,6 +54,8 @@ impl Step {
 #[derive(Clone, Debug)]
 pub(super) struct Program {
     steps: Vec<Step>,
+    /// Where the arguments of all calls stand.
+    arguments: Vec<Span>,
     /// The most values on the stack at once.
     depth: usize,
 }
@@ -62,7 +66,9 @@ const SHALLOW: usize = 12;
 type Fault = Box<Diagnostic>;
 
 impl Program {
-    pub(super) fn new(steps: Vec<Step>) -> Self {
+    /// Returns the program of these steps; each call knows where the places of
+    /// its arguments begin.
+    pub(super) fn new(steps: Vec<Step>, arguments: Vec<Span>) -> Self {
         let (mut now, mut depth) = (0_usize, 0_usize);
         for step in &steps {
             match step.work {
@@ -73,7 +79,11 @@ impl Program {
             }
             depth = depth.max(now);
         }
-        Self { steps, depth }
+        Self {
+            steps,
+            arguments,
+            depth,
+        }
     }
 
     pub(super) fn is_one_literal(&self) -> bool {
@@ -105,7 +115,8 @@ impl Program {
         let mut top = 0;
         for step in &self.steps {
             let placed = |mut fault: Fault| {
-                fault.span = Some(step.span.into());
+                // An argument's own place comes first.
+                let _ = fault.span.get_or_insert_with(|| step.span.into());
                 fault
             };
             let value = match step.work {
@@ -139,9 +150,15 @@ impl Program {
                     top -= 2;
                     pair(stack[top], stack[top + 1]).and_then(|(x, y)| answer(x.lowered(y)))
                 }
-                Work::Call { index, count } => {
-                    top -= usize::from(count);
-                    call(index, &stack[top..top + usize::from(count)])
+                Work::Call {
+                    index,
+                    count,
+                    first,
+                } => {
+                    let (count, first) = (usize::from(count), usize::from(first));
+                    top -= count;
+                    let places = &self.arguments[first..first + count];
+                    call(index, &stack[top..top + count], places)
                 }
             };
             stack[top] = value.map_err(placed)?;
@@ -225,26 +242,37 @@ fn binary(operator: Binary, left: Outcome, right: Outcome) -> Result<Outcome, Fa
     }
 }
 
-fn call(index: u16, values: &[Outcome]) -> Result<Outcome, Fault> {
-    let function = &FUNCTIONS[usize::from(index)];
-    // A point on a scale is welcome as an argument, and counts in kelvin.
-    let result = match values {
-        [one] => (function.apply)(&[amount(*one)?.absolute()]),
-        many => {
-            let mut arguments = Vec::with_capacity(many.len());
-            for value in many {
-                arguments.push(amount(*value)?.absolute());
-            }
-            (function.apply)(&arguments)
-        }
+fn call(index: u16, values: &[Outcome], places: &[Span]) -> Result<Outcome, Fault> {
+    let function = FUNCTIONS[usize::from(index)];
+    let argument = |at: usize| {
+        // A point on a scale is welcome as an argument, and counts in kelvin.
+        amount(values[at])
+            .map(Quantity::absolute)
+            .map_err(|fault| Refusal {
+                argument: Some(at),
+                fault,
+            })
     };
-    let mut fault = match result {
+    let result = match values {
+        [_] => argument(0).and_then(|one| function.apply(&[one])),
+        many => (0..many.len())
+            .map(argument)
+            .collect::<Result<Vec<Quantity>, Refusal>>()
+            .and_then(|arguments| function.apply(&arguments)),
+    };
+    let Refusal {
+        argument,
+        mut fault,
+    } = match result {
         Ok(quantity) => return Ok(Outcome::Quantity(quantity)),
-        Err(fault) => fault,
+        Err(refusal) => refusal,
     };
     fault.message = format!("in `{}`: {}", function.name, fault.message);
+    fault.span = argument
+        .and_then(|at| places.get(at))
+        .map(|place| (*place).into());
     if fault.hint.is_none() {
-        fault.hint = Some(format!("write `{}`", function.usage));
+        fault.hint = Some(format!("write `{}`", function.usage()));
     }
     Err(fault)
 }

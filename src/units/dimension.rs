@@ -50,6 +50,12 @@ const NAMED: &[(Dimension, &str, &str, &str)] = &[
     (Dimension::POWER, "power", "a", "W"),
     (Dimension::IRRADIANCE, "irradiance", "an", "W/m²"),
     (Dimension::RADIANT_EXPOSURE, "radiant exposure", "a", "J/m²"),
+    (
+        Dimension::SPECTRAL_EXITANCE,
+        "spectral exitance",
+        "a",
+        "W/m³",
+    ),
     (Dimension::RADIANCE, "radiance", "a", "W/(m²·sr)"),
     (Dimension::PRESSURE, "pressure", "a", "Pa"),
 ];
@@ -83,6 +89,8 @@ impl Dimension {
     pub const POWER: Self = Self::of(2, 1, -3, 0, 0);
     /// An irradiance or exitance, W/m².
     pub const IRRADIANCE: Self = Self::of(0, 1, -3, 0, 0);
+    /// An exitance or irradiance per wavelength, W/m³.
+    pub const SPECTRAL_EXITANCE: Self = Self::of(-1, 1, -3, 0, 0);
     /// A radiant exposure (dose), J/m².
     pub const RADIANT_EXPOSURE: Self = Self::of(0, 1, -2, 0, 0);
     /// A radiance, W/(m²·sr).

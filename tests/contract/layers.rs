@@ -12,6 +12,7 @@ const ALL: &[&str] = &[
     "graph",
     "guidance",
     "json",
+    "material",
     "notebook",
     "numeric",
     "physics",
@@ -32,9 +33,12 @@ const MAY_NAME: &[(&str, &[&str])] = &[
     ("physics", &["numeric", "spelling"]),
     ("entry", &["units", "spelling"]),
     ("guidance", &["entry", "json", "units", "spelling"]),
+    ("material", &["entry", "json", "units", "spelling"]),
     (
         "notebook",
-        &["entry", "guidance", "graph", "physics", "units", "spelling"],
+        &[
+            "entry", "guidance", "material", "graph", "physics", "units", "spelling",
+        ],
     ),
     (
         "store",
@@ -71,7 +75,7 @@ const MAY_NAME: &[(&str, &[&str])] = &[
 
 /// Files that may name more than their module.
 const MORE: &[(&str, &[&str])] = &[
-    ("entry/function.rs", &["physics"]),
+    ("entry/function/radiation.rs", &["physics"]),
     // Tests of the rail read a template.
     ("drawing/rail/tests.rs", &["store"]),
 ];
