@@ -12,6 +12,7 @@ pub mod exposure;
 mod hazard;
 pub mod opening;
 pub mod planck;
+pub mod pool;
 pub mod radiant;
 pub mod region;
 pub mod scene;

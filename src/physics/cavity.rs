@@ -108,7 +108,6 @@ fn checked(radius: f64, depth: f64, emissivity: f64) -> Result<(f64, f64), Error
 /// What leaves wall and bottom of a cylinder of radius one, over σT⁴.
 struct Cylinder {
     depth: f64,
-    emissivity: f64,
     section: Section,
     /// Legendre terms of the wall, from −1 at the bottom to 1 at the mouth.
     wall: Vec<f64>,
@@ -117,11 +116,11 @@ struct Cylinder {
 }
 
 /// Terms of the exitance across the bottom.
-const ACROSS: u16 = 14;
+const ACROSS: u16 = 26;
 
 impl Cylinder {
     fn new(depth: f64, emissivity: f64) -> Result<Self, Error> {
-        let along = 18 + (0.4 * depth).ceil() as u16;
+        let along = 26 + (0.4 * depth).ceil() as u16;
         Self::with_terms(depth, emissivity, along, ACROSS)
     }
 
@@ -198,7 +197,6 @@ impl Cylinder {
         let bottom = wall.split_off(on_wall);
         Ok(Self {
             depth,
-            emissivity,
             section,
             wall,
             bottom,
@@ -229,11 +227,11 @@ impl Cylinder {
 
     /// What wall and bottom emit less what they take back, over the mouth.
     #[cfg(test)]
-    fn given_off(&self) -> f64 {
+    fn given_off(&self, emissivity: f64) -> f64 {
         let fine = Rule::new(64);
         let wall = fine.integral(0.0, self.depth, |height| 2.0 * (1.0 - self.of_wall(height)));
         let bottom = fine.integral(0.0, 1.0, |square| 1.0 - self.of_bottom(square));
-        (wall + bottom) * self.emissivity / (1.0 - self.emissivity)
+        (wall + bottom) * emissivity / (1.0 - emissivity)
     }
 }
 

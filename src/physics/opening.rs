@@ -11,16 +11,16 @@ pub mod tunnel;
 #[cfg(test)]
 mod tests;
 
-use glam::{DVec2, DVec3};
+use glam::DVec3;
 
 use self::section::Section;
 use self::tunnel::Tunnel;
+use super::Error;
 use super::constant::STEFAN_BOLTZMANN;
 use super::error::{SHORTEST, offset};
 use super::region::Region;
 use super::scene::Part;
 use super::surface::Emission;
-use super::Error;
 use crate::numeric::gauss::Rule;
 
 /// What the walls of a tunnel do with what falls on them.
@@ -98,7 +98,7 @@ impl Opening {
             });
         }
         let tunnel = Tunnel::new(section(&outer, normal)?, depth)?;
-        let edge = |depth: f64| moved(&outer, normal * -depth);
+        let edge = |depth: f64| outer.moved(normal * -depth);
         match walls {
             Walls::Cold => Ok(Self {
                 parts: vec![Part {
@@ -273,22 +273,7 @@ fn zones(tunnel: &Tunnel, ratio: f64) -> (Vec<f64>, Vec<f64>) {
 /// How many edges lie between the outer and the inner one, of a tunnel so many
 /// openings deep.
 fn zone_count(ratio: f64) -> u16 {
-    4 + (12.0 * ratio).ceil().min(20.0) as u16
-}
-
-/// The same flat region elsewhere.
-fn moved(region: &Region, by: DVec3) -> Region {
-    let mut region = region.clone();
-    match &mut region {
-        Region::Disc { centre, .. } | Region::Sphere { centre, .. } => *centre += by,
-        Region::Cylinder { base, .. } => *base += by,
-        Region::Polygon { vertices, .. } | Region::Plate { vertices, .. } => {
-            for vertex in vertices {
-                *vertex += by;
-            }
-        }
-    }
-    region
+    4 + (16.0 * ratio).ceil().min(20.0) as u16
 }
 
 /// The section of the tunnel behind an outline.
@@ -299,13 +284,7 @@ fn section(outer: &Region, normal: DVec3) -> Result<Section, Error> {
             if let Some((width, height)) = sides(vertices) {
                 return Section::rectangle(width, height);
             }
-            let right = normal.any_orthonormal_vector();
-            let up = normal.cross(right);
-            let flat = |vertex: &DVec3| {
-                let place = *vertex - vertices[0];
-                DVec2::new(place.dot(right), place.dot(up))
-            };
-            Section::polygon(vertices.iter().map(flat).collect())
+            Section::turning(vertices, normal)
         }
         Region::Sphere { .. } | Region::Cylinder { .. } | Region::Plate { .. } => {
             Err(Error::WrongShape {

@@ -225,6 +225,24 @@ impl Region {
         }
     }
 
+    /// Returns the same region elsewhere.
+    ///
+    /// `by` in metres.
+    #[must_use]
+    pub fn moved(&self, by: DVec3) -> Self {
+        let mut region = self.clone();
+        match &mut region {
+            Self::Disc { centre, .. } | Self::Sphere { centre, .. } => *centre += by,
+            Self::Cylinder { base, .. } => *base += by,
+            Self::Polygon { vertices, .. } | Self::Plate { vertices, .. } => {
+                for vertex in vertices {
+                    *vertex += by;
+                }
+            }
+        }
+        region
+    }
+
     /// Returns the emitting area in m²: of a flat region one face, of a plate
     /// both, of a body all of it.
     #[must_use]

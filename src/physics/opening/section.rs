@@ -67,7 +67,7 @@ impl Section {
         })
     }
 
-    /// Returns a convex polygon, its corners in order, anticlockwise.
+    /// Returns a polygon without dents, its corners in order, anticlockwise.
     ///
     /// # Errors
     ///
@@ -82,23 +82,15 @@ impl Section {
                 value: count as f64,
             });
         }
-        // One turn about and no more: each edge turns left of the one before.
-        let mut turned = 0.0;
-        for (index, corner) in corners.iter().enumerate() {
-            let came = *corner - corners[(index + count - 1) % count];
-            let goes = corners[(index + 1) % count] - *corner;
-            let turn = came.perp_dot(goes).atan2(came.dot(goes));
-            if turn.is_nan() || turn < -1e-9 || came.length() < SHORTEST {
-                return Err(Error::NotConvex { vertex: index + 1 });
-            }
-            turned += turn;
-        }
-        if count < 3 || (turned - 2.0 * PI).abs() > 1e-6 {
-            return Err(Error::NotConvex { vertex: 1 });
-        }
+        without_dents(&corners)?;
         Ok(Self {
             kind: Kind::Polygon { corners },
         })
+    }
+
+    /// Returns the same of a polygon in space, anticlockwise about its normal.
+    pub(in crate::physics) fn turning(vertices: &[DVec3], normal: DVec3) -> Result<Self, Error> {
+        Self::polygon(flattened(vertices, normal))
     }
 
     /// Returns the least distance between two parallel lines that hold the
@@ -204,6 +196,43 @@ impl Section {
             Kind::Polygon { corners } => of_polygon(corners, distance),
         }
     }
+}
+
+/// A polygon in space, in two coordinates of its plane.
+fn flattened(vertices: &[DVec3], normal: DVec3) -> Vec<DVec2> {
+    let right = normal.any_orthonormal_vector();
+    let up = normal.cross(right);
+    vertices
+        .iter()
+        .map(|vertex| {
+            let place = *vertex - vertices[0];
+            DVec2::new(place.dot(right), place.dot(up))
+        })
+        .collect()
+}
+
+/// Says that a polygon in space has no dent, whatever its number of corners.
+pub(in crate::physics) fn convex(vertices: &[DVec3], normal: DVec3) -> Result<(), Error> {
+    without_dents(&flattened(vertices, normal))
+}
+
+/// One turn about and no more: each edge turns left of the one before.
+fn without_dents(corners: &[DVec2]) -> Result<(), Error> {
+    let count = corners.len();
+    let mut turned = 0.0;
+    for (index, corner) in corners.iter().enumerate() {
+        let came = *corner - corners[(index + count - 1) % count];
+        let goes = corners[(index + 1) % count] - *corner;
+        let turn = came.perp_dot(goes).atan2(came.dot(goes));
+        if turn.is_nan() || turn < -1e-9 || came.length() < SHORTEST {
+            return Err(Error::NotConvex { vertex: index + 1 });
+        }
+        turned += turn;
+    }
+    if count < 3 || (turned - 2.0 * PI).abs() > 1e-6 {
+        return Err(Error::NotConvex { vertex: 1 });
+    }
+    Ok(())
 }
 
 /// The edges of a polygon.
