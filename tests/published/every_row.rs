@@ -2,12 +2,12 @@
 
 use crate::rows::{self, Row, Work};
 use crate::{
-    blackbody_tables, defining_constants, fixed_points, quadrature_of_planck, shields, shop_air,
-    textbook_examples, view_factor_catalogue,
+    blackbody_tables, cavities, defining_constants, fixed_points, quadrature_of_planck, shields,
+    shop_air, textbook_examples, thick_openings, view_factor_catalogue,
 };
 
 /// The families that run, with what works their rows out.
-const RUNNING: [(&str, Work); 26] = [
+const RUNNING: [(&str, Work); 41] = [
     ("constant", defining_constants::constant),
     ("its90", fixed_points::celsius),
     ("bb_table_modest", blackbody_tables::below),
@@ -46,15 +46,42 @@ const RUNNING: [(&str, Work); 26] = [
     ("atmosphere_pw", shop_air::power_law),
     ("atmosphere_wayne", shop_air::wayne),
     ("atmosphere_bound", shop_air::most_absorbed),
+    ("disc_disc", view_factor_catalogue::disc_disc),
+    (
+        "rect_rect_parallel",
+        view_factor_catalogue::rect_rect_parallel,
+    ),
+    (
+        "rect_rect_perpendicular",
+        view_factor_catalogue::rect_rect_perpendicular,
+    ),
+    ("thick_round_black", thick_openings::round_black),
+    (
+        "thick_round_reradiating",
+        thick_openings::round_reradiating,
+    ),
+    ("thick_square_black", thick_openings::square_black),
+    (
+        "thick_square_reradiating",
+        thick_openings::square_reradiating,
+    ),
+    ("thick_slot_black", thick_openings::slot_black),
+    ("thick_slot_reradiating", thick_openings::slot_reradiating),
+    ("thick_on_axis", thick_openings::on_axis),
+    ("thick_beam", thick_openings::beam),
+    ("thick_published", thick_openings::chart),
+    ("cavity_exact", cavities::exact),
+    ("cavity_enclosure", cavities::enclosure),
+    ("cavity_gouffe", cavities::gouffe),
 ];
 
 /// Worked examples of textbooks, whichever relation they are of.
 fn textbook(row: &Row) -> Option<f64> {
-    textbook_examples::on_axis(row).or_else(|| shields::textbook(row))
+    textbook_examples::factor(row).or_else(|| shields::textbook(row))
 }
 
 /// Rows, or whole families, that the program cannot work out yet.
-const PENDING: [(&str, &str); 26] = [
+const PENDING: [(&str, &str); 9] = [
     (
         "its90-01",
         "a defining point, nothing to work out: for the list of process temperatures",
@@ -79,66 +106,7 @@ const PENDING: [(&str, &str); 26] = [
         "textbook-03",
         "exchange between cylinder and slotted shell: no such source",
     ),
-    (
-        "textbook-04",
-        "factor between two finite discs: with thick openings",
-    ),
-    (
-        "textbook-07",
-        "factor between two finite rectangles: with thick openings",
-    ),
     ("cylinder", "cylinders as sources come later"),
-    (
-        "disc_disc",
-        "factor between two finite discs: with thick openings",
-    ),
-    (
-        "rect_rect_parallel",
-        "factor between two finite rectangles: with thick openings",
-    ),
-    (
-        "rect_rect_perpendicular",
-        "factor between two finite rectangles: with thick openings",
-    ),
-    (
-        "thick_round_black",
-        "openings through thick walls come later",
-    ),
-    (
-        "thick_round_reradiating",
-        "openings through thick walls come later",
-    ),
-    (
-        "thick_square_black",
-        "openings through thick walls come later",
-    ),
-    (
-        "thick_square_reradiating",
-        "openings through thick walls come later",
-    ),
-    (
-        "thick_slot_black",
-        "openings through thick walls come later",
-    ),
-    (
-        "thick_slot_reradiating",
-        "openings through thick walls come later",
-    ),
-    ("thick_on_axis", "openings through thick walls come later"),
-    ("thick_beam", "openings through thick walls come later"),
-    ("thick_published", "openings through thick walls come later"),
-    (
-        "cavity_exact",
-        "apparent emissivity of cavities: with thick openings",
-    ),
-    (
-        "cavity_enclosure",
-        "apparent emissivity of cavities: with thick openings",
-    ),
-    (
-        "cavity_gouffe",
-        "apparent emissivity of cavities: with thick openings",
-    ),
     (
         "uncertainty",
         "spread of results is the notebook's: checked with it",

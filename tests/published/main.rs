@@ -5,6 +5,7 @@ mod guidance_rows;
 mod rows;
 
 mod blackbody_tables;
+mod cavities;
 mod common_practice;
 mod defining_constants;
 mod directive_2006_25;
@@ -18,5 +19,6 @@ mod quadrature_of_planck;
 mod shields;
 mod shop_air;
 mod textbook_examples;
+mod thick_openings;
 mod time_to_pain;
 mod view_factor_catalogue;

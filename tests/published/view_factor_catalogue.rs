@@ -133,6 +133,49 @@ pub fn strip(row: &Row) -> Option<f64> {
     ))
 }
 
+pub fn disc_disc(row: &Row) -> Option<f64> {
+    disc::to_coaxial_disc(row.number("R1_m"), row.number("R2_m"), row.number("h_m")).ok()
+}
+
+pub fn rect_rect_parallel(row: &Row) -> Option<f64> {
+    rectangle::to_parallel_rectangle(
+        row.number("a_m"),
+        row.number("b_m"),
+        row.number("distance_m"),
+    )
+    .ok()
+}
+
+pub fn rect_rect_perpendicular(row: &Row) -> Option<f64> {
+    rectangle::to_perpendicular_rectangle(
+        row.number("common_edge_m"),
+        row.number("w1_m"),
+        row.number("w2_m"),
+    )
+    .ok()
+}
+
+/// Source: double boundary integral; catalogue C-41 (number from memory); family `disc_disc`.
+#[test]
+fn disc_to_coaxial_disc() {
+    assert_eq!(rows::check("disc_disc", disc_disc), 4);
+}
+
+/// Source: adaptive quadrature, agreeing with the closed form to 1e-12; family `rect_rect_parallel`.
+#[test]
+fn rectangle_to_parallel_rectangle() {
+    assert_eq!(rows::check("rect_rect_parallel", rect_rect_parallel), 4);
+}
+
+/// Source: Gauss quadrature after Duffy's transformation; family `rect_rect_perpendicular`.
+#[test]
+fn rectangle_to_perpendicular_rectangle() {
+    assert_eq!(
+        rows::check("rect_rect_perpendicular", rect_rect_perpendicular),
+        3
+    );
+}
+
 /// Source: catalogue, element to coaxial parallel disc (B-12, number from memory); family `disc_axis`.
 #[test]
 fn coaxial_disc() {
@@ -167,6 +210,13 @@ fn disc_in_any_pose() {
 #[test]
 fn ring_is_the_difference_of_two_discs() {
     assert_eq!(rows::check("ring", ring), 3);
+    let closed = |row: &Row| {
+        let on_axis = row.vector("center_m") == DVec3::Z && row.vector("receiver_normal") == DVec3::Z;
+        let (inner, outer) = (row.number("r_in_m"), row.number("r_out_m"));
+        let factor = view_factor::ring::from_coaxial_element(inner, outer, 1.0);
+        on_axis.then(|| factor.expect("a possible ring"))
+    };
+    assert_eq!(rows::check("ring", closed), 1);
 }
 
 /// Source: catalogue, tilted element to sphere, quadrature where the horizon cuts; family `sphere_tilt`.
@@ -208,10 +258,15 @@ fn polygon_in_any_pose() {
     assert_eq!(rows::check("polygon", polygon), 3);
 }
 
-/// Source: infinitely long strip, exact, (sin b − sin a)/2; family `strip`.
+/// Source: infinitely long strip, exact, (sin b − sin a)/2; family `strip`, by the closed form and as a long rectangle.
 #[test]
 fn long_strip() {
     assert_eq!(rows::check("strip", strip), 3);
+    let closed = |row: &Row| {
+        let at = |name| row.number(name).to_radians();
+        view_factor::strip::from_element(at("angle1_deg"), at("angle2_deg")).ok()
+    };
+    assert_eq!(rows::check("strip", closed), 3);
 }
 
 /// Source: the same closed rows by the other way: discs, spheres and rectangles of the closed forms as regions in space, to 1e-12.

@@ -94,8 +94,8 @@ pub fn from_perpendicular_element_at_corner(
 ///
 /// # Source
 ///
-/// With X = a/c, Y = b/c: 2/(πXY) [ln √((1+X²)(1+Y²)/(1+X²+Y²))
-/// + X√(1+Y²) atan(X/√(1+Y²)) + Y√(1+X²) atan(Y/√(1+X²)) − X atan X − Y atan Y],
+/// With X = a/c, Y = b/c: 2/(πXY) [ln √((1+X²)(1+Y²)/(1+X²+Y²)) +
+/// X√(1+Y²) atan(X/√(1+Y²)) + Y√(1+X²) atan(Y/√(1+X²)) − X atan X − Y atan Y],
 /// Howell's catalogue (C-11 from memory). Checked in
 /// `tests/published/view_factor_catalogue.rs`, family `rect_rect_parallel`.
 ///
@@ -159,8 +159,8 @@ pub(in crate::physics) fn between(width: f64, height: f64, distance: f64) -> f64
 ///
 /// # Source
 ///
-/// With W = width/l, H = height/l: 1/(πW) {W atan(1/W) + H atan(1/H)
-/// − √(H²+W²) atan(1/√(H²+W²)) + ¼ ln[…]}, Howell's catalogue (C-14 from
+/// With W = width/l, H = height/l: 1/(πW) {W atan(1/W) + H atan(1/H) −
+/// √(H²+W²) atan(1/√(H²+W²)) + ¼ ln[…]}, Howell's catalogue (C-14 from
 /// memory), its logarithms of products taken apart here. Checked in
 /// `tests/published/view_factor_catalogue.rs`, family `rect_rect_perpendicular`.
 pub fn to_perpendicular_rectangle(edge: f64, width: f64, height: f64) -> Result<f64, Error> {
