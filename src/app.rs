@@ -10,8 +10,11 @@ mod cells;
 pub mod curve;
 mod dashes;
 mod desk;
+pub mod dialog;
+mod drawer;
 mod files;
 mod follow;
+mod guard;
 mod job;
 mod listen;
 mod open;
@@ -21,28 +24,29 @@ pub mod rail;
 pub mod readiness;
 pub mod shared;
 mod shortcut;
+mod split;
 pub mod theme;
+mod wrap;
 
 use std::path::PathBuf;
 
-use iced::widget::{button, column, container, row, rule, scrollable};
-use iced::{Alignment, Element, Length, Size, Subscription, Theme, window};
+use iced::widget::{column, container, row, rule};
+use iced::{Element, Event, Length, Size, Subscription, Theme, event, window};
 
 use crate::drawing::role::{self, Role};
 use crate::notebook::datum::CellId;
 use crate::notebook::results::Results;
 use crate::store::settings::Settings;
 use desk::Desk;
+use dialog::Dialog;
+use drawer::Drawer;
 use shared::{Look, Measure, Shared};
-use theme::{BODY, SMALL};
+use theme::BODY;
 
-pub use cells::TYPING;
+pub use cells::{REMARK, TYPING};
 pub use desk::Error;
 pub use files::PATH;
 pub use open::{Unopened, start};
-
-/// How wide the column of cells is.
-const CELLS: f32 = 428.0;
 
 /// The window with everything in it.
 #[derive(Debug)]
@@ -51,6 +55,8 @@ pub struct Window {
     selected: Option<CellId>,
     look: Look,
     size: Size,
+    /// How wide the column of cells is wished to be.
+    wide: f32,
     drawer: Drawer,
     cells: cells::Area,
     files: files::Area,
@@ -60,24 +66,18 @@ pub struct Window {
     rail: rail::Area,
     cautions: cautions::Area,
     readiness: readiness::Area,
-    /// What the guard asks about.
-    pending: Option<files::Wish>,
+    /// What is asked before anything could be lost.
+    pending: Option<guard::Question>,
     /// What was said last: whether it is bad, and the words.
     said: Option<(bool, String)>,
     /// Where the window's settings live; nowhere in tests.
     settings: Option<PathBuf>,
-}
-
-/// What is open under the bar.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
-enum Drawer {
-    #[default]
-    Shut,
-    Files,
-    Job,
-    Left,
-    Print,
-    Keys,
+    /// Who is asked for files.
+    dialog: Dialog,
+    /// Whether that one has not answered yet.
+    asking: bool,
+    /// Who brings bytes to files.
+    writer: desk::Writer,
 }
 
 /// Everything that happens in the window.
@@ -102,7 +102,13 @@ pub enum Message {
     /// In the list of what is left.
     Readiness(readiness::Message),
     /// An answer to the guard.
-    Guard(files::Answer),
+    Guard(guard::Answer),
+    /// On the line between the cells and the drawing.
+    Split(split::Message),
+    /// The system's dialog answered.
+    DialogAnswered(dialog::Purpose, dialog::Answer),
+    /// The window came to the front again.
+    Focused,
     /// A key was pressed.
     Key(shortcut::Wish),
     /// Shut what is open under the bar.
@@ -154,6 +160,7 @@ impl Window {
                 measure,
             },
             size: Size::new(settings.size.0, settings.size.1),
+            wide: settings.cells,
             drawer: Drawer::Shut,
             cells: cells::Area::new(),
             files: files::Area::new(desk.file()),
@@ -166,6 +173,9 @@ impl Window {
             pending: None,
             said: None,
             settings: place,
+            dialog: Dialog::system(),
+            asking: false,
+            writer: crate::store::file::write,
             desk,
         }
     }
@@ -185,6 +195,14 @@ impl Window {
     #[must_use]
     pub fn notebook(&self) -> &crate::notebook::Notebook {
         self.desk.engine().notebook()
+    }
+
+    /// Returns the nominal value of an output in coherent SI units, for whoever
+    /// tests the window.
+    #[must_use]
+    pub fn result(&self, cell: &str, output: &str) -> Option<f64> {
+        let shown = self.desk.results().cell(cell)?.shown(output)?;
+        shown.quantity().map(|quantity| quantity.si)
     }
 
     /// Draws the bounds here and now, for whoever tests the window.
@@ -217,18 +235,19 @@ impl Window {
         let look = self.look;
         let mut page = column![bar::view(&self.desk, shared).map(Message::Bar), line(look)];
         if let Some((bad, said)) = &self.said {
-            page = page.push(notice(*bad, said, look)).push(line(look));
+            page = page.push(drawer::notice(*bad, said, look)).push(line(look));
         }
-        if let Some(wish) = &self.pending {
+        if let Some(question) = &self.pending {
             page = page
-                .push(files::guard(wish, look).map(Message::Guard))
+                .push(guard::view(question, look).map(Message::Guard))
                 .push(line(look));
         }
         if let Some(drawer) = self.drawer(shared) {
             page = page.push(drawer).push(line(look));
         }
-        let cells = container(self.cells.view(shared).map(Message::Cells))
-            .width(Length::Fixed(CELLS))
+        let wide = self.width_of_cells();
+        let cells = container(self.cells.view(shared, wide).map(Message::Cells))
+            .width(Length::Fixed(wide))
             .height(Length::Fill)
             .style(theme::ground(Role::Ground, look));
         let right = column![
@@ -236,17 +255,11 @@ impl Window {
             self.rail.view(shared).map(Message::Rail),
         ]
         .spacing(12)
-        .padding([14, 18])
+        .padding([14, 14])
         .width(Length::Fill)
         .height(Length::Fill);
-        page = page.push(
-            row![
-                cells,
-                rule::vertical(1).style(move |_| rule_style(look)),
-                right
-            ]
-            .height(Length::Fill),
-        );
+        page = page
+            .push(row![cells, split::line(look).map(Message::Split), right].height(Length::Fill));
         page = page.push(self.cautions.view(shared).map(Message::Cautions));
         let typing = self.cells.is_typing() || self.drawer != Drawer::Shut;
         listen::listen(
@@ -258,31 +271,21 @@ impl Window {
         )
     }
 
+    /// Returns how wide the column of cells is.
+    fn width_of_cells(&self) -> f32 {
+        split::fitting(self.wide, self.size.width)
+    }
+
     fn drawer<'a>(&'a self, shared: Shared<'a>) -> Option<Element<'a, Message>> {
-        let look = self.look;
         let content = match self.drawer {
             Drawer::Shut => return None,
             Drawer::Files => self.files.view(shared).map(Message::Files),
             Drawer::Job => job::view(shared).map(Message::Job),
             Drawer::Print => self.print.view(shared).map(Message::Print),
             Drawer::Left => self.readiness.view(shared).map(Message::Readiness),
-            Drawer::Keys => keys(look),
+            Drawer::Keys => drawer::keys(shared.look),
         };
-        let shut = button(iced::widget::text("close").size(SMALL).font(theme::REGULAR))
-            .padding([2, 6])
-            .style(theme::plain(look))
-            .on_press(Message::ShutDrawer);
-        Some(
-            container(
-                // A long drawer scrolls, so that the desk stays in sight.
-                scrollable(row![content, shut].spacing(16).padding([12, 20]))
-                    .style(move |theme, status| theme::scroll(look, theme, status)),
-            )
-            .max_height(320)
-            .width(Length::Fill)
-            .style(theme::ground(Role::Panel, look))
-            .into(),
-        )
+        Some(drawer::view(content, shared.look))
     }
 
     /// Returns what the window listens to. Nothing ticks while nothing is
@@ -291,6 +294,10 @@ impl Window {
         let mut all = vec![
             window::resize_events().map(|(_, size)| Message::Resized(size)),
             window::close_requests().map(|_| Message::CloseRequested),
+            event::listen_with(|event, _, _| match event {
+                Event::Window(window::Event::Focused) => Some(Message::Focused),
+                _ => None,
+            }),
         ];
         if self.desk.progress().is_some() {
             let often = std::time::Duration::from_millis(150);
@@ -311,53 +318,6 @@ fn rule_style(look: Look) -> rule::Style {
 
 fn line<'a>(look: Look) -> Element<'a, Message> {
     rule::horizontal(1).style(move |_| rule_style(look)).into()
-}
-
-/// What was said last.
-fn notice<'a>(bad: bool, said: &'a str, look: Look) -> Element<'a, Message> {
-    let role = if bad { Role::Over } else { Role::Ink };
-    container(
-        row![
-            theme::words(said, BODY, role, look).width(Length::Fill),
-            button(
-                iced::widget::text("all right")
-                    .size(SMALL)
-                    .font(theme::REGULAR)
-            )
-            .padding([2, 6])
-            .style(theme::plain(look))
-            .on_press(Message::Unsay),
-        ]
-        .spacing(10)
-        .align_y(Alignment::Center),
-    )
-    .padding([8, 20])
-    .width(Length::Fill)
-    .style(theme::ground(Role::Panel, look))
-    .into()
-}
-
-/// The list of keys.
-fn keys<'a>(look: Look) -> Element<'a, Message> {
-    let third = shortcut::ALL.len().div_ceil(3);
-    let columns = shortcut::ALL.chunks(third).map(|some| {
-        let lines = some.iter().map(|shortcut| {
-            row![
-                container(theme::bold(shortcut.keys, SMALL, Role::Ink, look))
-                    .width(Length::Fixed(110.0)),
-                theme::words(shortcut.about, SMALL, Role::Muted, look),
-            ]
-            .into()
-        });
-        column(lines).spacing(3).width(Length::Fill).into()
-    });
-    column![
-        row(columns).spacing(20),
-        bar::manners(look).map(Message::Bar)
-    ]
-    .spacing(10)
-    .width(Length::Fill)
-    .into()
 }
 
 /// Returns the settings of fonts for the window, and for whoever tests it.

@@ -46,7 +46,7 @@ pub fn view<'a>(desk: &'a Desk, shared: Shared<'a>) -> Element<'a, Message> {
     } else {
         "Print draft"
     };
-    container(
+    theme::band(
         row![
             about(desk, shared),
             framed("Files".to_owned(), Some(Message::Files), look),
@@ -60,10 +60,9 @@ pub fn view<'a>(desk: &'a Desk, shared: Shared<'a>) -> Element<'a, Message> {
         ]
         .spacing(10)
         .align_y(Alignment::Center),
+        Role::Panel,
+        look,
     )
-    .padding([8, 20])
-    .width(Length::Fill)
-    .style(theme::ground(Role::Panel, look))
     .into()
 }
 

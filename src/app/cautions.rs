@@ -1,7 +1,7 @@
 //! The band of cautions along the bottom: always there, all of them one click
 //! away, and never shut to nothing.
 
-use iced::widget::{Space, button, column, container, row, scrollable};
+use iced::widget::{Space, button, column, container, row};
 use iced::{Alignment, Element, Length};
 
 use super::dashes::dashes;
@@ -114,7 +114,7 @@ impl Area {
             (more(total - told), Message::Open)
         };
         let label = words(label, BODY, Role::CautionInk, look);
-        let more = button(dashes(label, theme::colour(Role::CautionInk, look)))
+        let more = button(dashes(label, BODY, theme::colour(Role::CautionInk, look)))
             .padding([2, 4])
             .style(theme::link(Role::CautionInk, Role::CautionGround, look))
             .on_press(message);
@@ -198,7 +198,7 @@ fn all<'a>(called: &[Called], look: Look) -> Element<'a, Message> {
         list = list.push(words(caution.text, SMALL, Role::CautionInk, look).width(Length::Fill));
     }
     let list = container(list).padding(iced::padding::right(16));
-    container(scrollable(list).style(move |theme, status| theme::scroll(look, theme, status)))
+    container(theme::scrolling(list, look))
         .max_height(TALLEST)
         .into()
 }

@@ -2,32 +2,26 @@
 //! the window changes the notebook.
 
 mod card;
+mod change;
+mod column;
 mod field;
 mod figure;
+mod found;
 mod height;
 mod new;
+mod prose;
 mod sentence;
 
-use iced::widget::{button, column, container, keyed_column, row, scrollable, space};
-use iced::{Element, Length};
+use iced::widget::text_editor;
 
-use super::shared::Shared;
-use super::theme::{self, SMALL, Stand};
-use crate::drawing::role::Role;
-use crate::notebook::cell::{Basis, Cell, Content, Field, Form, Kind};
+use crate::notebook::cell::{Basis, Cell, Content, Form, Kind};
 use crate::notebook::datum::CellId;
 use crate::notebook::edit::Edit;
 use crate::notebook::engine::Engine;
 use crate::notebook::name;
-use crate::notebook::results::Results;
 
-pub use field::TYPING;
-
-/// The column's scrolling part.
-pub const COLUMN: &str = "cells";
-
-/// The space between two cards.
-const GAP: f32 = 8.0;
+pub use column::COLUMN;
+pub use field::{REMARK, TYPING};
 
 /// A place in a cell that can be open for typing.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -55,6 +49,11 @@ pub struct Area {
     typed: bool,
     /// What is typed but cannot be stored as it stands.
     draft: Option<String>,
+    /// The prose that is open, line by line.
+    prose: Option<text_editor::Content>,
+    /// The remark on the open input, and whether it was typed into.
+    remark: Option<text_editor::Content>,
+    remarked: bool,
     refused: Option<String>,
     adding: bool,
     offset: f32,
@@ -76,12 +75,16 @@ pub enum Message {
     Chosen(String),
     /// The basis of the open field's input.
     Based(Basis),
-    /// The remark on the open field's input.
-    Remarked(String),
+    /// In the open prose.
+    Edited(text_editor::Action),
+    /// In the remark on the open field's input.
+    Remarked(text_editor::Action),
     /// Show or hide the kinds of cell that can be added.
     ToggleAdding,
     /// Add a cell of a kind after the selected one.
     Add(Kind),
+    /// Add an assessment of this position.
+    Assess(CellId),
     /// Copy a cell.
     Duplicate(CellId),
     /// Remove it.
@@ -150,6 +153,14 @@ impl Area {
         self.refused.as_deref()
     }
 
+    fn prose(&self) -> Option<&text_editor::Content> {
+        self.prose.as_ref()
+    }
+
+    fn remark_held(&self) -> Option<&text_editor::Content> {
+        self.remark.as_ref()
+    }
+
     /// The text in the open field: the draft, or what is stored.
     fn text(&self, cell: &Cell, field: &str) -> String {
         self.draft
@@ -163,14 +174,34 @@ impl Area {
         let was = self.open.take().is_some() || self.adding;
         self.adding = false;
         self.break_run();
+        self.prose = None;
+        self.remark = None;
         was
     }
 
     /// Lets the next letter begin a change of its own.
     pub fn break_run(&mut self) {
         self.typed = false;
+        self.remarked = false;
         self.draft = None;
         self.refused = None;
+    }
+
+    /// Lets the next letter begin a change of its own, and shows prose as it is
+    /// stored now.
+    pub fn reload(&mut self, engine: &Engine) {
+        self.break_run();
+        let (mut text, mut remark) = (None, None);
+        if let Some((cell, field)) = self.open_field(engine) {
+            if sentence::is_prose(cell, field) {
+                text = Some(sentence::typed(cell, field).unwrap_or_default());
+            }
+            if sentence::is_input(cell, field) {
+                remark = Some(change::note_of(cell, field));
+            }
+        }
+        prose::follow(&mut self.prose, text);
+        prose::follow(&mut self.remark, remark);
     }
 
     /// Says why a change of the open place could not be made.
@@ -222,20 +253,19 @@ impl Area {
             }
             Message::Open(place) => {
                 if self.open != Some(place) {
-                    self.break_run();
                     self.open = Some(place);
+                    self.prose = None;
+                    self.remark = None;
+                    self.reload(engine);
                 }
                 Action::Focus(place.cell)
             }
             Message::Typed(text) => self.type_in(text, engine),
             Message::Keep => self.keep(engine),
             Message::Chosen(word) => self.choose(&word, engine),
-            Message::Based(basis) => self.describe(engine, |field| {
-                field.basis = (field.basis != Some(basis)).then_some(basis);
-            }),
-            Message::Remarked(note) => self.describe(engine, |field| {
-                field.note = (!note.is_empty()).then_some(note);
-            }),
+            Message::Based(basis) => self.base(basis, engine),
+            Message::Edited(action) => self.edit(action, engine),
+            Message::Remarked(action) => self.remark(action, engine),
             Message::ToggleAdding => {
                 self.adding = !self.adding;
                 Action::None
@@ -243,25 +273,76 @@ impl Area {
             Message::Add(kind) => {
                 self.adding = false;
                 let (cell, at) = new::cell(engine, kind, selected);
-                added(format!("add {}", cell.name), cell, at)
+                change::added(format!("add {}", cell.name), cell, at)
             }
-            Message::Duplicate(id) => duplicate(engine, id),
+            Message::Assess(id) => {
+                let (mut cell, at) = new::cell(engine, Kind::Assessment, Some(id));
+                let Some(position) = engine.cell(id) else {
+                    return Action::None;
+                };
+                cell.fields.retain(|field| field.name != "position");
+                let cell = cell.with("position", &position.name);
+                change::added(format!("add {}", cell.name), cell, at)
+            }
+            Message::Duplicate(id) => change::duplicate(engine, id),
             Message::Remove(id) => {
                 if self.open.is_some_and(|open| open.cell == id) {
                     let _ = self.close();
                 }
-                with_name(engine, id, |name| {
-                    change(format!("remove {name}"), Edit::Remove { name })
+                change::with_name(engine, id, |name| {
+                    change::one(format!("remove {name}"), Edit::Remove { name })
                 })
             }
-            Message::Raise(id) => shift(engine, id, false),
-            Message::Lower(id) => shift(engine, id, true),
+            Message::Raise(id) => change::shift(engine, id, false),
+            Message::Lower(id) => change::shift(engine, id, true),
             Message::Scrolled(offset, seen) => {
                 self.offset = offset;
                 self.seen = seen;
                 Action::None
             }
         }
+    }
+
+    /// Follows what happens in the open prose.
+    fn edit(&mut self, action: text_editor::Action, engine: &Engine) -> Action {
+        let Some(text) = self
+            .prose
+            .as_mut()
+            .and_then(|it| prose::perform(it, action))
+        else {
+            return Action::None;
+        };
+        let Some((cell, field)) = self.open_field(engine) else {
+            return Action::None;
+        };
+        let joins = std::mem::replace(&mut self.typed, true);
+        change::set(cell, field, Content::Text(text), joins)
+    }
+
+    /// Follows what happens in the remark on the open input.
+    fn remark(&mut self, action: text_editor::Action, engine: &Engine) -> Action {
+        let Some(text) = self
+            .remark
+            .as_mut()
+            .and_then(|it| prose::perform(it, action))
+        else {
+            return Action::None;
+        };
+        let Some((cell, field)) = self.open_field(engine) else {
+            return Action::None;
+        };
+        self.typed = false;
+        let joins = std::mem::replace(&mut self.remarked, true);
+        match change::remark(cell, field, text, joins) {
+            Some(action) => action,
+            None => self.needs_an_input(),
+        }
+    }
+
+    fn needs_an_input(&mut self) -> Action {
+        self.remarked = false;
+        self.refused = Some("type the input first, then say where it came from".to_owned());
+        Action::None
     }
 
     fn type_in(&mut self, text: String, engine: &Engine) -> Action {
@@ -283,7 +364,16 @@ impl Area {
             }
             Part::Field(field) => field,
         };
+        if sentence::is_chosen(cell, field) {
+            // Only its words fit it, and those are clicked on.
+            return Action::None;
+        }
         let content = match cell.kind.field(field).map(|spec| spec.form) {
+            // Without a number it is left out.
+            Some(Form::Count(..)) if text.trim().is_empty() => {
+                self.draft = Some(text);
+                return change::leave_out(cell, field);
+            }
             Some(Form::Count(least, most)) => match text.trim().parse::<u32>() {
                 Ok(number) => {
                     self.draft = None;
@@ -303,10 +393,14 @@ impl Area {
                 self.draft = Some(text.clone());
                 Content::typed(form, text)
             }
+            Some(Form::Text) => {
+                prose::follow(&mut self.prose, Some(text.clone()));
+                Content::Text(text)
+            }
             _ => Content::Text(text),
         };
         let joins = std::mem::replace(&mut self.typed, true);
-        set(cell, field, content, joins)
+        change::set(cell, field, content, joins)
     }
 
     fn keep(&mut self, engine: &Engine) -> Action {
@@ -342,6 +436,13 @@ impl Area {
             return Action::None;
         };
         let content = match cell.kind.field(field).map(|spec| spec.form) {
+            // What is typed is never a choice, but for a facing, which is both.
+            Some(
+                Form::Entry(_) | Form::Pairs(_) | Form::Count(..) | Form::Unit | Form::Text,
+            )
+            | None => {
+                return Action::None;
+            }
             Some(Form::GuidanceList) => {
                 let mut list: Vec<String> =
                     cell.texts(field).into_iter().map(str::to_owned).collect();
@@ -355,30 +456,19 @@ impl Area {
             _ => Content::Text(word.to_owned()),
         };
         self.typed = false;
-        set(cell, field, content, false)
+        change::set(cell, field, content, false)
     }
 
-    fn describe(&mut self, engine: &Engine, describe: impl FnOnce(&mut Field)) -> Action {
+    /// Sets or takes back the basis of the open input.
+    fn base(&mut self, basis: Basis, engine: &Engine) -> Action {
         let Some((cell, field)) = self.open_field(engine) else {
             return Action::None;
         };
         self.typed = false;
-        if cell.kind == Kind::Value {
-            return describe_value(cell, describe);
+        match change::base(cell, field, basis) {
+            Some(action) => action,
+            None => self.needs_an_input(),
         }
-        let Some(mut content) = cell.field(field).cloned() else {
-            self.refused = Some("type the input first, then say where it came from".to_owned());
-            return Action::None;
-        };
-        describe(&mut content);
-        change(
-            format!("say where {} came from", what(cell, field)),
-            Edit::SetField {
-                name: cell.name.clone(),
-                field,
-                content: Some(content),
-            },
-        )
     }
 
     fn open_field<'e>(&self, engine: &'e Engine) -> Option<(&'e Cell, &'static str)> {
@@ -388,233 +478,4 @@ impl Area {
         };
         Some((engine.cell(place.cell)?, field))
     }
-
-    /// Brings a cell into view, and returns how far the column must be scrolled
-    /// for it; `None` where it is seen already.
-    pub fn reveal(&mut self, engine: &Engine, results: &Results, id: CellId) -> Option<f32> {
-        let mut y = 14.0;
-        for result in &results.cells {
-            let high = height::estimate(engine, result, result.id == id);
-            if result.id == id {
-                let seen = y >= self.offset && y + high.min(self.seen) <= self.offset + self.seen;
-                if seen {
-                    return None;
-                }
-                // Built at once, so that a field in it can take the typing.
-                self.offset = (y - 60.0_f32).max(0.0);
-                return Some(self.offset);
-            }
-            y += high + GAP;
-        }
-        None
-    }
-
-    /// Returns the cells as they are seen.
-    pub fn view<'a>(&'a self, shared: Shared<'a>) -> Element<'a, Message> {
-        let look = shared.look;
-        let cells = &shared.results.cells;
-        let mut linked = Vec::new();
-        if let Some(selected) = shared.selected {
-            linked = shared.engine.feeds(selected);
-            linked.extend(shared.engine.fed_by(selected));
-        }
-        let stand = |id: CellId| {
-            if shared.selected == Some(id) {
-                Stand::Selected
-            } else if linked.contains(&id) {
-                Stand::Linked
-            } else {
-                Stand::Apart
-            }
-        };
-        // Only what is seen, and a little around it, is built.
-        let (from, to) = (self.offset - 400.0, self.offset + self.seen + 400.0);
-        let (mut above, mut below, mut y) = (0.0, 0.0, 0.0);
-        let mut cards = keyed_column::<CellId, Message, _, _>([])
-            .spacing(GAP)
-            .width(Length::Fill);
-        for result in cells {
-            let high = height::estimate(shared.engine, result, stand(result.id) == Stand::Selected);
-            if y + high < from {
-                above += high + GAP;
-            } else if y > to {
-                below += high + GAP;
-            } else {
-                let card = card::view(self, shared, result.id, result, stand(result.id));
-                cards = cards.push(result.id, card);
-            }
-            y += high + GAP;
-        }
-        let mut body = column![space().height(above), cards].width(Length::Fill);
-        if below > 0.0 {
-            body = body.push(space().height(below));
-        } else {
-            body = body.push(space().height(GAP)).push(self.bottom(shared));
-        }
-        scrollable(container(body).padding(iced::Padding {
-            top: 14.0,
-            right: 18.0,
-            bottom: 14.0,
-            left: 18.0,
-        }))
-        .id(COLUMN)
-        .on_scroll(|viewport| {
-            Message::Scrolled(viewport.absolute_offset().y, viewport.bounds().height)
-        })
-        .height(Length::Fill)
-        .width(Length::Fill)
-        .style(move |theme, status| theme::scroll(look, theme, status))
-        .into()
-    }
-
-    /// What can be added.
-    fn bottom<'a>(&'a self, shared: Shared<'a>) -> Element<'a, Message> {
-        let look = shared.look;
-        let plain = |text: String, message: Message| {
-            button(iced::widget::text(text).size(SMALL).font(theme::REGULAR))
-                .padding([4, 10])
-                .style(theme::framed(look))
-                .on_press(message)
-        };
-        let empty = shared.engine.notebook().cells.is_empty();
-        if !self.adding && !empty {
-            return plain("add a cell".to_owned(), Message::ToggleAdding).into();
-        }
-        let said = if empty {
-            "This notebook is empty. Begin with what is hot: add a source, then a position."
-        } else {
-            "Add after the selected cell:"
-        };
-        let kinds = Kind::ALL.into_iter().map(|kind| {
-            row![
-                container(plain(kind.name().to_owned(), Message::Add(kind)))
-                    .width(Length::Fixed(116.0)),
-                theme::words(new::about(kind), SMALL, Role::Muted, look),
-            ]
-            .spacing(8)
-            .align_y(iced::Alignment::Center)
-            .into()
-        });
-        column![
-            theme::words(said, SMALL, Role::Ink, look),
-            column(kinds).spacing(4)
-        ]
-        .spacing(6)
-        .into()
-    }
-}
-
-fn what(cell: &Cell, field: &str) -> String {
-    match (cell.kind, field) {
-        (Kind::Value | Kind::Formula, "entry") | (Kind::Note, _) => cell.name.clone(),
-        _ => format!("{} of {}", sentence::label(field), cell.name),
-    }
-}
-
-fn change(title: String, edit: Edit) -> Action {
-    Action::Change {
-        title,
-        edit,
-        joins: false,
-        select: None,
-    }
-}
-
-fn added(title: String, cell: Cell, at: usize) -> Action {
-    Action::Change {
-        title,
-        select: Some(cell.name.clone()),
-        edit: Edit::Add { at, cell },
-        joins: false,
-    }
-}
-
-fn with_name(engine: &Engine, id: CellId, then: impl FnOnce(String) -> Action) -> Action {
-    engine
-        .cell(id)
-        .map_or(Action::None, |cell| then(cell.name.clone()))
-}
-
-/// Sets a field, keeping its basis and remark. An emptied field that may be
-/// left out is left out.
-fn set(cell: &Cell, field: &'static str, content: Content, joins: bool) -> Action {
-    let empty = match &content {
-        Content::Text(text) => text.is_empty(),
-        Content::List(list) => list.is_empty(),
-        Content::Count(_) => false,
-        Content::Pairs(pairs) => pairs.is_empty(),
-    };
-    let old = cell.field(field);
-    let keeps = old.is_some_and(|old| old.basis.is_some() || old.note.is_some());
-    let content = (!empty || keeps).then(|| match old {
-        Some(old) => Field {
-            content,
-            ..old.clone()
-        },
-        None => Field::new(field, content),
-    });
-    Action::Change {
-        title: format!("change {}", what(cell, field)),
-        edit: Edit::SetField {
-            name: cell.name.clone(),
-            field,
-            content,
-        },
-        joins,
-        select: None,
-    }
-}
-
-/// Basis and note of a value are fields of their own.
-fn describe_value(cell: &Cell, describe: impl FnOnce(&mut Field)) -> Action {
-    let mut described = Field::new("entry", Content::Text(String::new()));
-    described.basis = cell.text("basis").and_then(Basis::from_words);
-    described.note = cell.text("note").map(str::to_owned);
-    describe(&mut described);
-    let content = |field: &'static str, text: Option<String>| Edit::SetField {
-        name: cell.name.clone(),
-        field,
-        content: text.map(|text| Field::new(field, Content::Text(text))),
-    };
-    change(
-        format!("say where {} came from", cell.name),
-        Edit::Several(vec![
-            content(
-                "basis",
-                described.basis.map(|basis| basis.words().to_owned()),
-            ),
-            content("note", described.note),
-        ]),
-    )
-}
-
-/// Returns the remark on a field's input.
-fn note_of(cell: &Cell, field: &str) -> String {
-    match cell.kind {
-        Kind::Value => cell.text("note").map(str::to_owned),
-        _ => cell.field(field).and_then(|field| field.note.clone()),
-    }
-    .unwrap_or_default()
-}
-
-fn duplicate(engine: &Engine, id: CellId) -> Action {
-    let Some(cell) = engine.cell(id) else {
-        return Action::None;
-    };
-    let at = engine.notebook().find(&cell.name).map_or(0, |at| at + 1);
-    let mut copy = cell.clone();
-    copy.name = new::free(engine, &cell.name);
-    added(format!("copy {}", cell.name), copy, at)
-}
-
-fn shift(engine: &Engine, id: CellId, down: bool) -> Action {
-    with_name(engine, id, |name| {
-        let cells = engine.notebook().cells.len();
-        let at = engine.notebook().find(&name).unwrap_or(0);
-        let to = if down { at + 1 } else { at.saturating_sub(1) };
-        if to == at || to >= cells {
-            return Action::None;
-        }
-        change(format!("move {name}"), Edit::Move { name, to })
-    })
 }

@@ -1,112 +1,59 @@
-//! A row of dashes under what can be changed inside a sentence.
+//! A row of dashes under each line of what can be changed inside a sentence.
 
-use iced::advanced::widget::{Operation, Tree};
-use iced::advanced::{Layout, Renderer as _, Widget, layout, mouse, renderer};
-use iced::{Color, Element, Length, Rectangle, Renderer, Size, Theme};
+use iced::advanced::{Renderer as _, renderer};
+use iced::widget::text;
+use iced::{Color, Element, Pixels, Rectangle, Renderer};
 
-/// How far the dashes stand below the text.
-const BELOW: f32 = 2.0;
+use super::wrap::{Around, wrap};
 
-/// Something with dashes under it.
-pub struct Dashes<'a, Message> {
-    content: Element<'a, Message>,
+/// How far the dashes stand above the foot of a line.
+const ABOVE: f32 = 2.0;
+
+/// How long a dash is, and the gap after it.
+const DASH: f32 = 4.0;
+const GAP: f32 = 2.5;
+
+/// Dashes of a colour under every line of this height.
+struct Dashes {
     colour: Color,
+    line: f32,
 }
 
-/// Returns `content` with dashes of a colour under it.
+impl<Message> Around<Message> for Dashes {
+    fn over(&self, renderer: &mut Renderer, bounds: Rectangle) {
+        let lines = (bounds.height / self.line).round().max(1.0);
+        let high = bounds.height / lines;
+        let mut foot = high;
+        while foot < bounds.height + 0.5 {
+            let y = bounds.y + foot - ABOVE;
+            let mut x = bounds.x;
+            while x < bounds.x + bounds.width {
+                let width = DASH.min(bounds.x + bounds.width - x);
+                renderer.fill_quad(
+                    renderer::Quad {
+                        bounds: Rectangle {
+                            x,
+                            y,
+                            width,
+                            height: 1.0,
+                        },
+                        ..renderer::Quad::default()
+                    },
+                    self.colour,
+                );
+                x += DASH + GAP;
+            }
+            foot += high;
+        }
+    }
+}
+
+/// Returns a text of this size with dashes of a colour under each of its lines.
 pub fn dashes<'a, Message: 'a>(
     content: impl Into<Element<'a, Message>>,
+    size: f32,
     colour: Color,
 ) -> Element<'a, Message> {
-    Element::new(Dashes {
-        content: content.into(),
-        colour,
-    })
-}
-
-impl<Message> Widget<Message, Theme, Renderer> for Dashes<'_, Message> {
-    fn children(&self) -> Vec<Tree> {
-        vec![Tree::new(&self.content)]
-    }
-
-    fn diff(&self, tree: &mut Tree) {
-        tree.diff_children(std::slice::from_ref(&self.content));
-    }
-
-    fn size(&self) -> Size<Length> {
-        self.content.as_widget().size()
-    }
-
-    fn layout(
-        &mut self,
-        tree: &mut Tree,
-        renderer: &Renderer,
-        limits: &layout::Limits,
-    ) -> layout::Node {
-        let node = self
-            .content
-            .as_widget_mut()
-            .layout(&mut tree.children[0], renderer, limits);
-        layout::Node::with_children(node.size(), vec![node])
-    }
-
-    fn operate(
-        &mut self,
-        tree: &mut Tree,
-        layout: Layout<'_>,
-        renderer: &Renderer,
-        operation: &mut dyn Operation,
-    ) {
-        for layout in layout.children() {
-            self.content.as_widget_mut().operate(
-                &mut tree.children[0],
-                layout,
-                renderer,
-                operation,
-            );
-        }
-    }
-
-    fn draw(
-        &self,
-        tree: &Tree,
-        renderer: &mut Renderer,
-        theme: &Theme,
-        style: &renderer::Style,
-        layout: Layout<'_>,
-        cursor: mouse::Cursor,
-        viewport: &Rectangle,
-    ) {
-        for layout in layout.children() {
-            self.content.as_widget().draw(
-                &tree.children[0],
-                renderer,
-                theme,
-                style,
-                layout,
-                cursor,
-                viewport,
-            );
-        }
-        let bounds = layout.bounds();
-        let y = bounds.y + bounds.height - BELOW;
-        let (dash, gap) = (4.0_f32, 2.5_f32);
-        let mut x = bounds.x;
-        while x < bounds.x + bounds.width {
-            let width = dash.min(bounds.x + bounds.width - x);
-            renderer.fill_quad(
-                renderer::Quad {
-                    bounds: Rectangle {
-                        x,
-                        y,
-                        width,
-                        height: 1.0,
-                    },
-                    ..renderer::Quad::default()
-                },
-                self.colour,
-            );
-            x += dash + gap;
-        }
-    }
+    let line = text::LineHeight::default().to_absolute(Pixels(size)).0;
+    wrap(content, Dashes { colour, line })
 }

@@ -5,6 +5,8 @@
 use std::path::{Path, PathBuf};
 use std::time::SystemTime;
 
+use sha2::{Digest, Sha256};
+
 use crate::notebook::Notebook;
 use crate::notebook::edit::{self, Edit, History};
 use crate::notebook::engine::{self, Engine};
@@ -26,27 +28,51 @@ pub struct Desk {
     round: u64,
     job: Option<Job>,
     file: Option<PathBuf>,
-    /// What the file held when it was read or written last.
+    /// What the file held when it was read, written or looked at last; `None`
+    /// where it was not there.
     stamp: Option<Stamp>,
-    /// The notebook as it is stored; `None` for one that never was.
-    stored: Option<Notebook>,
+    /// The notebook as it is stored.
+    stored: Stored,
     dirty: bool,
 }
+
+/// What the file holds of the notebook.
+#[derive(Debug)]
+enum Stored {
+    /// There never was one.
+    Never,
+    /// This.
+    Holds(Notebook),
+    /// Nothing: it is gone, or somebody else's.
+    Lost,
+}
+
+/// Who brings bytes to a file: the disk, or a test.
+pub type Writer = fn(&Path, &[u8]) -> Result<(), file::Error>;
 
 /// By what a file that somebody else changed is known.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 struct Stamp {
     length: u64,
     written: Option<SystemTime>,
+    /// The digest of what is in it.
+    digest: [u8; 32],
 }
 
 impl Stamp {
-    fn of(path: &Path) -> Option<Stamp> {
+    fn of(path: &Path, bytes: &[u8]) -> Option<Stamp> {
         let found = std::fs::metadata(path).ok()?;
         Some(Stamp {
             length: found.len(),
             written: found.modified().ok(),
+            digest: Sha256::digest(bytes).into(),
         })
+    }
+
+    /// Returns whether a file was not touched since.
+    fn holds(&self, path: &Path) -> bool {
+        std::fs::metadata(path)
+            .is_ok_and(|found| found.len() == self.length && found.modified().ok() == self.written)
     }
 }
 
@@ -98,7 +124,7 @@ impl Desk {
             job: None,
             file: None,
             stamp: None,
-            stored: None,
+            stored: Stored::Never,
             dirty: false,
         };
         desk.work_out();
@@ -111,14 +137,14 @@ impl Desk {
     ///
     /// [`Error`] where it cannot be read or is no notebook.
     pub fn open(path: &Path) -> Result<Desk, Error> {
-        let stamp = Stamp::of(path);
         let bytes = file::read(path)?;
+        let stamp = Stamp::of(path, &bytes);
         let stored = schema::read(&bytes).map_err(|source| Error::Schema {
             path: path.to_owned(),
             source,
         })?;
         let mut desk = Desk::new(stored.notebook)?;
-        desk.stored = Some(desk.engine.notebook().clone());
+        desk.stored = Stored::Holds(desk.engine.notebook().clone());
         desk.file = Some(path.to_owned());
         desk.stamp = stamp;
         Ok(desk)
@@ -143,12 +169,12 @@ impl Desk {
     ///
     /// [`Error::File`]; the notebook on the desk and the old file are then as
     /// they were.
-    pub fn save(&mut self, path: &Path) -> Result<(), Error> {
+    pub fn save(&mut self, path: &Path, writer: Writer) -> Result<(), Error> {
         let text = schema::write(self.engine.notebook());
-        file::write(path, text.as_bytes())?;
-        self.stored = Some(self.engine.notebook().clone());
+        writer(path, text.as_bytes())?;
+        self.stored = Stored::Holds(self.engine.notebook().clone());
         self.file = Some(path.to_owned());
-        self.stamp = Stamp::of(path);
+        self.stamp = Stamp::of(path, text.as_bytes());
         self.dirty = false;
         Ok(())
     }
@@ -189,17 +215,44 @@ impl Desk {
         self.dirty
     }
 
-    /// Returns how the file on the disk stands to what was read from it.
-    #[must_use]
-    pub fn standing(&self) -> Standing {
+    /// Returns how the file on the disk stands to what was last seen of it. A
+    /// file that was only touched is as it was.
+    pub fn standing(&mut self) -> Standing {
         let Some(path) = &self.file else {
             return Standing::Same;
         };
-        match Stamp::of(path) {
-            None => Standing::Gone,
-            found if found == self.stamp => Standing::Same,
-            Some(_) => Standing::Changed,
+        if !path.exists() {
+            return match self.stamp {
+                Some(_) => Standing::Gone,
+                None => Standing::Same,
+            };
         }
+        if self.stamp.is_some_and(|stamp| stamp.holds(path)) {
+            return Standing::Same;
+        }
+        let found = file::read(path)
+            .ok()
+            .and_then(|bytes| Stamp::of(path, &bytes));
+        match (found, self.stamp) {
+            (Some(found), Some(known)) if found.digest == known.digest => {
+                self.stamp = Some(found);
+                Standing::Same
+            }
+            _ => Standing::Changed,
+        }
+    }
+
+    /// Takes the file on the disk as seen: what is on the desk is kept, and no
+    /// file holds it.
+    pub fn keep(&mut self) {
+        let Some(path) = &self.file else {
+            return;
+        };
+        self.stamp = file::read(path)
+            .ok()
+            .and_then(|bytes| Stamp::of(path, &bytes));
+        self.stored = Stored::Lost;
+        self.dirty = true;
     }
 
     /// Returns the title of the change that would be taken back.
@@ -220,36 +273,51 @@ impl Desk {
     ///
     /// [`edit::Error`] where it cannot be made; nothing is changed then.
     pub fn change(&mut self, title: String, edit: Edit, joins: bool) -> Result<(), edit::Error> {
+        // What stands at the head of the sheet changes no figure.
+        let heads = matches!(edit, Edit::SetTitle(_) | Edit::SetJob { .. });
         if joins {
             self.history.extend(&mut self.engine, title, edit)?;
         } else {
             self.history.apply(&mut self.engine, title, edit)?;
         }
-        self.changed();
+        self.changed(heads);
         Ok(())
     }
 
     /// Takes the last change back.
     pub fn undo(&mut self) -> Option<String> {
-        let title = self.history.undo(&mut self.engine)?;
-        self.changed();
-        Some(title)
+        self.step(History::undo)
     }
 
     /// Makes the last change that was taken back again.
     pub fn redo(&mut self) -> Option<String> {
-        let title = self.history.redo(&mut self.engine)?;
-        self.changed();
+        self.step(History::redo)
+    }
+
+    fn step(&mut self, step: fn(&mut History, &mut Engine) -> Option<String>) -> Option<String> {
+        let before = self.engine.notebook();
+        let (cells, confirmed) = (before.cells.clone(), before.confirmed.clone());
+        let title = step(&mut self.history, &mut self.engine)?;
+        let after = self.engine.notebook();
+        let heads = after.cells == cells && after.confirmed == confirmed;
+        self.changed(heads);
         Some(title)
     }
 
-    fn changed(&mut self) {
+    /// Follows a change; one of the sheet's head alone leaves every figure, and
+    /// whatever draws bounds for it, as they are.
+    fn changed(&mut self, heads: bool) {
         let notebook = self.engine.notebook();
         self.dirty = match &self.stored {
-            Some(stored) => stored != notebook,
-            None => self.history.next_undo().is_some(),
+            Stored::Holds(stored) => stored != notebook,
+            Stored::Never => self.history.next_undo().is_some(),
+            Stored::Lost => true,
         };
-        self.work_out();
+        if heads {
+            self.results.gather_left(&self.engine);
+        } else {
+            self.work_out();
+        }
     }
 
     /// Puts the nominal results in place of the old ones at once. Whatever is
@@ -287,6 +355,8 @@ impl Desk {
     pub fn take_bounds(&mut self, round: u64, results: Results) {
         if round == self.round {
             self.results = results;
+            // The sheet's head may have changed meanwhile.
+            self.results.gather_left(&self.engine);
             self.fresh = true;
             self.job = None;
         }

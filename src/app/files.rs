@@ -1,12 +1,13 @@
 //! Where notebooks come from and go to: a path that is always there to type
-//! into, templates, and the guard before anything would be lost.
+//! into, the system's own dialog beside it, and templates.
 
 use std::path::{Path, PathBuf};
 
-use iced::widget::{button, column, container, row, text_input};
+use iced::widget::{button, column, row, text_input};
 use iced::{Alignment, Element, Length};
 
-use super::shared::{Look, Shared};
+use super::dialog::{Ask, Purpose};
+use super::shared::Shared;
 use super::theme::{self, BODY, SMALL};
 use crate::drawing::role::Role;
 use crate::store::template::{self, Template};
@@ -25,6 +26,10 @@ pub struct Area {
 pub enum Message {
     /// The path's text.
     PathTyped(String),
+    /// Ask the system's dialog for a file to open.
+    LookToOpen,
+    /// Ask it where to store the notebook.
+    LookToSave,
     /// Open what the path names.
     Open,
     /// Store the notebook there.
@@ -40,6 +45,8 @@ pub enum Message {
 pub enum Action {
     /// Nothing.
     None,
+    /// Ask the system's dialog.
+    Look(Ask),
     /// Open a file.
     Open(PathBuf),
     /// Store the notebook.
@@ -56,42 +63,46 @@ impl Area {
     /// Returns the files, beginning with the one that is open.
     #[must_use]
     pub fn new(path: Option<&Path>) -> Self {
-        Area {
-            path: path
-                .map(|path| path.display().to_string())
-                .unwrap_or_default(),
+        let mut area = Area::default();
+        if let Some(path) = path {
+            area.take(path);
         }
+        area
+    }
+
+    /// Puts a path into the field.
+    pub fn take(&mut self, path: &Path) {
+        self.path = path.display().to_string();
+    }
+
+    /// Returns the path that is typed.
+    fn typed(&self) -> Option<PathBuf> {
+        let typed = self.path.trim();
+        (!typed.is_empty()).then(|| PathBuf::from(typed))
     }
 
     /// Follows a message.
     pub fn update(&mut self, message: Message) -> Action {
-        let path = || -> Result<PathBuf, Action> {
-            let typed = self.path.trim();
-            if typed.is_empty() {
-                return Err(Action::Say(
-                    "type the path of a file first, such as /home/you/door.farglow".to_owned(),
-                ));
-            }
-            Ok(PathBuf::from(typed))
+        let look = |purpose| {
+            Action::Look(Ask {
+                purpose,
+                near: self.typed(),
+            })
+        };
+        let nothing = || {
+            Action::Say("type the path of a file first, such as /home/you/door.farglow".to_owned())
         };
         match message {
             Message::PathTyped(typed) => {
                 self.path = typed;
                 Action::None
             }
-            Message::Open => path().map_or_else(|said| said, Action::Open),
-            Message::Save => path().map_or_else(
-                |said| said,
-                |path| {
-                    // A name without an ending gets the notebook's own.
-                    let path = if path.extension().is_none() {
-                        path.with_extension("farglow")
-                    } else {
-                        path
-                    };
-                    Action::Save(path)
-                },
-            ),
+            Message::LookToOpen => look(Purpose::Open),
+            Message::LookToSave => look(Purpose::Save),
+            Message::Open => self.typed().map_or_else(nothing, Action::Open),
+            Message::Save => self
+                .typed()
+                .map_or_else(nothing, |path| Action::Save(named(path))),
             Message::Begin(template) => Action::Begin(template),
             Message::BeginEmpty => Action::BeginEmpty,
         }
@@ -106,15 +117,25 @@ impl Area {
                 .style(theme::framed(look))
                 .on_press(message)
         };
-        let templates = template::ALL.iter().map(|template| {
-            row![
-                act(template.name, Message::Begin(template)),
-                theme::words(template.about, SMALL, Role::Muted, look),
-            ]
-            .spacing(10)
-            .align_y(Alignment::Center)
-            .into()
-        });
+        let templates = template::ALL
+            .iter()
+            .map(|template| (template.name, template.about, Message::Begin(template)));
+        let nothing = (
+            "empty",
+            "a notebook with nothing in it",
+            Message::BeginEmpty,
+        );
+        let begin = templates
+            .chain(std::iter::once(nothing))
+            .map(|(name, about, message)| {
+                row![
+                    act(name, message).width(Length::Fixed(WIDE)),
+                    theme::words(about, SMALL, Role::Muted, look).width(Length::Fill),
+                ]
+                .spacing(12)
+                .align_y(Alignment::Center)
+                .into()
+            });
         column![
             row![
                 theme::words("File", BODY, Role::Ink, look),
@@ -135,88 +156,30 @@ impl Area {
             ]
             .spacing(10)
             .align_y(Alignment::Center),
-            theme::words("Or begin with a template:", SMALL, Role::Muted, look),
-            column(templates).spacing(4),
             row![
-                act("empty", Message::BeginEmpty),
-                theme::words("a notebook with nothing in it", SMALL, Role::Muted, look),
+                theme::words("or in the system's dialog:", SMALL, Role::Muted, look),
+                act("look for a file to open", Message::LookToOpen),
+                act("look for a place to save", Message::LookToSave),
             ]
             .spacing(10)
             .align_y(Alignment::Center),
+            theme::words("Or begin with a template:", SMALL, Role::Muted, look),
+            column(begin).spacing(4),
         ]
         .spacing(8)
         .into()
     }
 }
 
-/// What would be lost, and what was wished for.
-#[derive(Clone, Debug, PartialEq)]
-pub enum Wish {
-    /// Open another file.
-    Open(PathBuf),
-    /// Begin with a template.
-    Begin(&'static Template),
-    /// Begin with nothing.
-    BeginEmpty,
-    /// Close the window.
-    Close,
-    /// Store over a file that somebody else changed, or that is another's.
-    Replace(PathBuf, &'static str),
-}
+/// How wide the names of templates are.
+const WIDE: f32 = 132.0;
 
-/// An answer to the guard.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub enum Answer {
-    /// Store first, then go on.
-    SaveFirst,
-    /// Go on, and lose it.
-    GoOn,
-    /// Do nothing.
-    Stay,
-}
-
-/// Returns the guard's question with its answers.
-pub fn guard<'a>(wish: &Wish, look: Look) -> Element<'a, Answer> {
-    let (question, go_on, save) = match wish {
-        Wish::Replace(path, why) => (
-            format!(
-                "{} {why}. Saving replaces what is in it now.",
-                path.display()
-            ),
-            "replace it",
-            false,
-        ),
-        Wish::Close => (
-            "There are changes that no file holds. Close all the same?".to_owned(),
-            "close and lose them",
-            true,
-        ),
-        Wish::Open(_) | Wish::Begin(_) | Wish::BeginEmpty => (
-            "There are changes that no file holds. Go on all the same?".to_owned(),
-            "go on and lose them",
-            true,
-        ),
-    };
-    let act = |text: &'static str, answer: Answer| {
-        button(iced::widget::text(text).size(BODY).font(theme::REGULAR))
-            .padding([4, 12])
-            .style(theme::framed(look))
-            .on_press(answer)
-    };
-    let mut answers =
-        row![theme::words(question, BODY, Role::CautionInk, look).width(Length::Fill)]
-            .spacing(10)
-            .align_y(Alignment::Center);
-    if save {
-        answers = answers.push(act("save first", Answer::SaveFirst));
+/// Returns a path with the notebook's own ending where it has none.
+#[must_use]
+pub fn named(path: PathBuf) -> PathBuf {
+    if path.extension().is_none() {
+        path.with_extension("farglow")
+    } else {
+        path
     }
-    container(
-        answers
-            .push(act(go_on, Answer::GoOn))
-            .push(act("stay", Answer::Stay)),
-    )
-    .padding([8, 20])
-    .width(Length::Fill)
-    .style(theme::ground(Role::CautionGround, look))
-    .into()
 }

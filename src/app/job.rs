@@ -27,6 +27,8 @@ pub enum Message {
     Typed(Line, String),
     /// Somebody compared a limit with the edition in force.
     Compared(&'static Limit),
+    /// Take the word on this limit back.
+    TakenBack(String),
 }
 
 /// What the window is to do.
@@ -64,6 +66,10 @@ impl Area {
             Message::Compared(limit) => {
                 self.typed = None;
                 return compared(engine.notebook(), limit);
+            }
+            Message::TakenBack(id) => {
+                self.typed = None;
+                return taken_back(engine.notebook(), &id);
             }
         };
         let joins = self.typed.replace(line) == Some(line);
@@ -107,6 +113,16 @@ fn compared(notebook: &Notebook, limit: &'static Limit) -> Action {
     });
     Action::Change {
         title: format!("confirm {}", limit.id),
+        edit: Edit::SetConfirmed(confirmed),
+        joins: false,
+    }
+}
+
+fn taken_back(notebook: &Notebook, id: &str) -> Action {
+    let mut confirmed = notebook.confirmed.clone();
+    confirmed.retain(|word| word.guidance != id);
+    Action::Change {
+        title: format!("take the word on {id} back"),
         edit: Edit::SetConfirmed(confirmed),
         joins: false,
     }
@@ -168,6 +184,36 @@ fn confirming(shared: Shared<'_>) -> Element<'_, Message> {
     .into()
 }
 
+/// The limits that somebody gave a word on.
+fn confirmed(shared: Shared<'_>) -> Element<'_, Message> {
+    let look = shared.look;
+    let words = &shared.engine.notebook().confirmed;
+    if words.is_empty() {
+        return space().into();
+    }
+    let lines = words.iter().map(|word| {
+        row![
+            theme::words(
+                format!(
+                    "{}, edition {}, compared by {} on {}",
+                    word.guidance, word.edition, word.by, word.date
+                ),
+                SMALL,
+                Role::Muted,
+                look
+            ),
+            button(text("take back").size(SMALL).font(theme::REGULAR))
+                .padding([0, 6])
+                .style(theme::plain(look))
+                .on_press(Message::TakenBack(word.guidance.clone())),
+        ]
+        .spacing(10)
+        .align_y(Alignment::Center)
+        .into()
+    });
+    column(lines).spacing(2).into()
+}
+
 /// Returns the drawer with title and job.
 pub fn view(shared: Shared<'_>) -> Element<'_, Message> {
     let look = shared.look;
@@ -217,6 +263,7 @@ pub fn view(shared: Shared<'_>) -> Element<'_, Message> {
         ]
         .spacing(24),
         confirming(shared),
+        confirmed(shared),
     ]
     .spacing(12)
     .into()

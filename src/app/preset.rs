@@ -4,8 +4,10 @@
 use std::path::Path;
 
 use super::desk::Desk;
+use super::dialog::{Answer, Ask, Dialog};
 use super::{Error, Window};
 use crate::notebook::{Cell, Kind, Notebook};
+use crate::store::file;
 use crate::store::template::{self, Template};
 
 /// Returns the window on the demo, with its bounds drawn.
@@ -68,6 +70,36 @@ pub fn chain(count: usize) -> Window {
 /// [`Error`] where it cannot be read or is no notebook.
 pub fn on_file(path: &Path) -> Result<Window, Error> {
     Desk::open(path).map(settled)
+}
+
+/// Returns a window whose dialog for files answers by itself.
+#[must_use]
+pub fn answering(
+    mut window: Window,
+    answer: impl Fn(&Ask) -> Answer + Send + Sync + 'static,
+) -> Window {
+    window.dialog = Dialog::answering(answer);
+    window
+}
+
+/// Returns a window on whose disk there is no room for one byte more.
+#[must_use]
+pub fn on_a_full_disk(mut window: Window) -> Window {
+    window.writer = |path, _| {
+        Err(file::Error::Io {
+            doing: file::Doing::Write,
+            path: path.to_owned(),
+            source: std::io::ErrorKind::StorageFull.into(),
+        })
+    };
+    window
+}
+
+/// Returns a window that keeps its settings in a file.
+#[must_use]
+pub fn remembering(mut window: Window, place: &Path) -> Window {
+    window.settings = Some(place.to_owned());
+    window
 }
 
 fn settled(mut desk: Desk) -> Window {

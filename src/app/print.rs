@@ -6,11 +6,12 @@ use std::path::{Path, PathBuf};
 use iced::widget::{button, column, row, text_input};
 use iced::{Alignment, Element, Length};
 
-use super::desk::Desk;
+use super::desk::{Desk, Writer};
+use super::dialog::{Ask, Purpose};
 use super::shared::Shared;
 use super::theme::{self, BODY, SMALL};
 use crate::drawing::role::Role;
-use crate::store::{file, schema};
+use crate::store::schema;
 use crate::worksheet::layout::Paper;
 use crate::worksheet::sheet::Sheet;
 
@@ -22,6 +23,8 @@ pub const PATH: &str = "worksheet";
 pub struct Area {
     path: String,
     paper: Paper,
+    /// The sheet that was written last: it may be replaced unasked.
+    written: Option<PathBuf>,
 }
 
 /// What happens with the worksheet.
@@ -29,6 +32,8 @@ pub struct Area {
 pub enum Message {
     /// The path's text.
     PathTyped(String),
+    /// Ask the system's dialog for a place.
+    Look,
     /// The paper.
     Chosen(Paper),
     /// Write it.
@@ -40,8 +45,14 @@ pub enum Message {
 pub enum Action {
     /// Nothing.
     None,
-    /// Write the worksheet.
+    /// Ask the system's dialog.
+    Look(Ask),
+    /// Write the worksheet, over whatever is there.
     Write(PathBuf, Paper),
+    /// Ask before something that is there is replaced.
+    AskFirst(PathBuf),
+    /// Say this.
+    Say(String),
 }
 
 impl Area {
@@ -55,7 +66,28 @@ impl Area {
         Area {
             path: path.display().to_string(),
             paper: Paper::A4,
+            written: None,
         }
+    }
+
+    /// Puts a path into the field.
+    pub fn take(&mut self, path: &Path) {
+        let path = match path.extension() {
+            Some(_) => path.to_owned(),
+            None => path.with_extension("pdf"),
+        };
+        self.path = path.display().to_string();
+    }
+
+    /// Returns the paper that is chosen.
+    #[must_use]
+    pub const fn paper(&self) -> Paper {
+        self.paper
+    }
+
+    /// Says that a sheet was written.
+    pub fn wrote(&mut self, path: PathBuf) {
+        self.written = Some(path);
     }
 
     /// Follows a message.
@@ -63,11 +95,25 @@ impl Area {
         match message {
             Message::PathTyped(path) => self.path = path,
             Message::Chosen(paper) => self.paper = paper,
+            Message::Look => {
+                let typed = self.path.trim();
+                return Action::Look(Ask {
+                    purpose: Purpose::Worksheet,
+                    near: (!typed.is_empty()).then(|| PathBuf::from(typed)),
+                });
+            }
             Message::Write => {
-                let path = self.path.trim();
-                if !path.is_empty() {
-                    return Action::Write(PathBuf::from(path), self.paper);
+                let typed = self.path.trim();
+                if typed.is_empty() {
+                    return Action::Say(
+                        "type the path of the PDF first, such as /home/you/door.pdf".to_owned(),
+                    );
                 }
+                let path = PathBuf::from(typed);
+                if path.exists() && self.written.as_ref() != Some(&path) {
+                    return Action::AskFirst(path);
+                }
+                return Action::Write(path, self.paper);
             }
         }
         Action::None
@@ -114,6 +160,14 @@ impl Area {
                     .padding([5, 8])
                     .width(Length::Fill)
                     .style(theme::typing(look)),
+                button(
+                    iced::widget::text("look for a place")
+                        .size(BODY)
+                        .font(theme::REGULAR)
+                )
+                .padding([5, 12])
+                .style(theme::framed(look))
+                .on_press(Message::Look),
                 paper("A4", Paper::A4),
                 paper("letter", Paper::Letter),
                 button(iced::widget::text(words).size(BODY).font(theme::REGULAR))
@@ -135,7 +189,7 @@ impl Area {
 /// # Errors
 ///
 /// What was refused, in words.
-pub fn write(desk: &Desk, path: &Path, paper: Paper) -> Result<String, String> {
+pub fn write(desk: &Desk, path: &Path, paper: Paper, writer: Writer) -> Result<String, String> {
     let same = |a: &Path, b: &Path| {
         a == b || matches!((a.canonicalize(), b.canonicalize()), (Ok(a), Ok(b)) if a == b)
     };
@@ -160,7 +214,7 @@ pub fn write(desk: &Desk, path: &Path, paper: Paper) -> Result<String, String> {
         contents: contents.as_bytes(),
     };
     let pdf = sheet.pdf(paper).map_err(|error| error.to_string())?;
-    file::write(path, &pdf.bytes).map_err(|error| error.to_string())?;
+    writer(path, &pdf.bytes).map_err(|error| error.to_string())?;
     let standing = if desk.results().readiness.is_empty() {
         "final"
     } else {

@@ -1,14 +1,13 @@
 //! What is left before a worksheet can be issued as final, each leading to
 //! where it is done.
 
-use iced::widget::{button, column, container, row, scrollable};
+use iced::widget::{button, column, container, row};
 use iced::{Alignment, Element, Length};
 
 use super::shared::Shared;
 use super::theme::{self, BODY, SMALL, bold, words};
 use crate::drawing::mark::Shape;
 use crate::drawing::role::Role;
-use crate::notebook::cell::Kind;
 use crate::notebook::datum::CellId;
 use crate::notebook::readiness::Item;
 
@@ -28,6 +27,8 @@ pub enum Target {
     Job,
     /// By a new position.
     NewPosition,
+    /// By a new assessment of this position.
+    NewAssessment(CellId),
 }
 
 /// What happens in the area.
@@ -48,6 +49,8 @@ pub enum Action {
     OpenJob,
     /// Add a cell of kind position.
     AddPosition,
+    /// Add a cell of kind assessment that judges this position.
+    AddAssessment(CellId),
 }
 
 impl Area {
@@ -63,6 +66,7 @@ impl Area {
             Message::Go(Target::Cell(id)) => Action::SelectCell(id),
             Message::Go(Target::Job) => Action::OpenJob,
             Message::Go(Target::NewPosition) => Action::AddPosition,
+            Message::Go(Target::NewAssessment(id)) => Action::AddAssessment(id),
         }
     }
 
@@ -83,7 +87,7 @@ impl Area {
                 .align_y(Alignment::Center);
             list = list.push(match target(shared, item) {
                 Some(target) => line.push(
-                    button(theme::words("go there", SMALL, Role::Action, look))
+                    button(theme::words(verb(target), SMALL, Role::Action, look))
                         .padding([2, 8])
                         .style(theme::framed(look))
                         .on_press(Message::Go(target)),
@@ -100,10 +104,7 @@ impl Area {
             ));
         }
         let list = container(list).padding(iced::padding::right(16));
-        let list = container(
-            scrollable(list).style(move |theme, status| theme::scroll(look, theme, status)),
-        )
-        .max_height(TALLEST);
+        let list = container(theme::scrolling(list, look)).max_height(TALLEST);
         column![bold(heading, BODY, Role::Ink, look), list]
             .spacing(8)
             .width(Length::Fill)
@@ -111,23 +112,23 @@ impl Area {
     }
 }
 
-/// Returns where an item is done: at its own cell, else at the first cell that
-/// cites one of the limits that it is about.
-fn target(shared: Shared<'_>, item: &Item) -> Option<Target> {
-    if let Some(name) = &item.cell {
-        return shared.engine.find(name).map(Target::Cell);
+/// Returns what the button of an item says.
+const fn verb(target: Target) -> &'static str {
+    match target {
+        Target::Cell(_) | Target::Job => "go there",
+        Target::NewPosition | Target::NewAssessment(_) => "add it",
     }
-    match item.code {
-        "job-line" => Some(Target::Job),
-        "no-position" => Some(Target::NewPosition),
-        "recalled" => shared
-            .engine
-            .notebook()
-            .cells
-            .iter()
-            .find(|cell| matches!(cell.kind, Kind::Assessment | Kind::Zone))
-            .and_then(|cell| shared.engine.find(&cell.name))
-            .map(Target::Cell),
+}
+
+/// Returns where an item is done: at its own cell, in the job block, where
+/// limits are confirmed too, or by a new cell.
+fn target(shared: Shared<'_>, item: &Item) -> Option<Target> {
+    let cell = item.cell.as_ref().and_then(|name| shared.engine.find(name));
+    match (item.code, cell) {
+        ("not-judged", Some(id)) => Some(Target::NewAssessment(id)),
+        (_, Some(id)) => Some(Target::Cell(id)),
+        ("no-position", None) => Some(Target::NewPosition),
+        ("job-line" | "recalled" | "confirmation", None) => Some(Target::Job),
         _ => None,
     }
 }

@@ -52,6 +52,10 @@ pub enum Wish {
     Smaller,
     /// Everything at 100 %.
     Plain,
+    /// The cells narrower, the drawing wider.
+    Narrower,
+    /// The cells wider, the drawing narrower.
+    Wider,
     /// The next theme.
     Theme,
     /// The other system of units.
@@ -124,6 +128,8 @@ pub const ALL: &[Shortcut] = &[
     shortcut(Wish::Larger, "Ctrl +", "everything larger", true),
     shortcut(Wish::Smaller, "Ctrl −", "everything smaller", true),
     shortcut(Wish::Plain, "Ctrl 0", "everything at 100 %", true),
+    shortcut(Wish::Narrower, "Alt Left", "cells narrower", true),
+    shortcut(Wish::Wider, "Alt Right", "cells wider", true),
     shortcut(Wish::Theme, "F8", "light, dark, high contrast", true),
     shortcut(Wish::Measure, "F9", "metric or US units", true),
     shortcut(Wish::Keys, "F1", "this list", true),
@@ -149,6 +155,8 @@ fn pressed(key: &Key, modifiers: Modifiers) -> Option<Wish> {
             (Named::Delete, false, false, false) => Wish::Remove,
             (Named::ArrowUp, false, false, true) => Wish::Raise,
             (Named::ArrowDown, false, false, true) => Wish::Lower,
+            (Named::ArrowLeft, false, false, true) => Wish::Narrower,
+            (Named::ArrowRight, false, false, true) => Wish::Wider,
             (Named::ArrowUp, false, false, false) => Wish::Above,
             (Named::ArrowDown, false, false, false) => Wish::Below,
             (Named::Enter, false, false, false) => Wish::Enter,
@@ -205,6 +213,8 @@ mod tests {
                     "Shift" => modifiers |= Modifiers::SHIFT,
                     "Alt" => modifiers |= Modifiers::ALT,
                     "Up" => key = Some(Key::Named(Named::ArrowUp)),
+                    "Left" => key = Some(Key::Named(Named::ArrowLeft)),
+                    "Right" => key = Some(Key::Named(Named::ArrowRight)),
                     "Down" => key = Some(Key::Named(Named::ArrowDown)),
                     "Tab" => key = Some(Key::Named(Named::Tab)),
                     "Enter" => key = Some(Key::Named(Named::Enter)),

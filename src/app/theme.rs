@@ -6,8 +6,11 @@
 
 use std::borrow::Cow;
 
-use iced::widget::{button, container, overlay, pick_list, scrollable, text, text_input};
-use iced::{Background, Border, Color, Font, Theme, font};
+use iced::widget::{
+    Container, Scrollable, button, container, overlay, pick_list, scrollable, text, text_editor,
+    text_input,
+};
+use iced::{Background, Border, Color, Element, Font, Length, Theme, font};
 
 use super::shared::Look;
 use crate::drawing::font::{FAMILY, Weight};
@@ -106,6 +109,18 @@ pub fn ground(role: Role, look: Look) -> impl Fn(&Theme) -> container::Style {
         text_color: Some(colour(Role::Ink, look)),
         ..container::Style::default()
     }
+}
+
+/// Returns a band across the desk, on one ground.
+pub fn band<'a, Message: 'a>(
+    content: impl Into<Element<'a, Message>>,
+    role: Role,
+    look: Look,
+) -> Container<'a, Message> {
+    container(content)
+        .padding([STEP, 20.0])
+        .width(Length::Fill)
+        .style(ground(role, look))
 }
 
 /// Returns the style of a panel that holds a drawing: a hair line around it.
@@ -326,16 +341,57 @@ pub fn typing(look: Look) -> impl Fn(&Theme, text_input::Status) -> text_input::
     }
 }
 
-/// Returns the style of what scrolls: a thin bar, seen when it is needed.
+/// Returns the style of prose that is open for typing.
+pub fn prose(look: Look) -> impl Fn(&Theme, text_editor::Status) -> text_editor::Style {
+    let line = typing(look);
+    move |theme, _| {
+        let line = line(theme, text_input::Status::Active);
+        text_editor::Style {
+            background: line.background,
+            border: line.border,
+            placeholder: line.placeholder,
+            value: line.value,
+            selection: line.selection,
+        }
+    }
+}
+
+/// How wide the bar of what scrolls is, and the space around it.
+const BAR: f32 = 5.0;
+const BESIDE: f32 = 3.0;
+
+/// Returns what scrolls when it is too long, with a narrow bar at its edge.
+pub fn scrolling<'a, Message: 'a>(
+    content: impl Into<Element<'a, Message>>,
+    look: Look,
+) -> Scrollable<'a, Message> {
+    let bar = scrollable::Scrollbar::new()
+        .width(BAR)
+        .scroller_width(BAR)
+        .margin(BESIDE);
+    scrollable(content)
+        .direction(scrollable::Direction::Vertical(bar))
+        .style(move |theme, status| scroll(look, theme, status))
+}
+
+/// Returns the style of what scrolls: a bar that darkens under the pointer.
 pub fn scroll(look: Look, theme: &Theme, status: scrollable::Status) -> scrollable::Style {
     let usual = scrollable::default(theme, status);
+    let role = match status {
+        scrollable::Status::Hovered {
+            is_vertical_scrollbar_hovered: true,
+            ..
+        }
+        | scrollable::Status::Dragged { .. } => Role::Action,
+        _ => Role::Line,
+    };
     let rail = scrollable::Rail {
         background: None,
         border: Border::default(),
         scroller: scrollable::Scroller {
-            background: Background::Color(colour(Role::Line, look)),
+            background: Background::Color(colour(role, look)),
             border: Border {
-                radius: 4.0.into(),
+                radius: (BAR / 2.0).into(),
                 ..Border::default()
             },
         },

@@ -214,6 +214,12 @@ impl Results {
         }
     }
 
+    /// Gathers anew what is left before issue, after a change of the title or
+    /// the job block: no figure depends on those.
+    pub fn gather_left(&mut self, engine: &Engine) {
+        self.readiness = readiness::items(engine, &self.cells);
+    }
+
     /// Returns the result of the cell of this name.
     #[must_use]
     pub fn cell(&self, name: &str) -> Option<&CellResult> {

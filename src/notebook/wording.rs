@@ -108,8 +108,10 @@ pub fn quantity(name: &str, quantity: Quantity, unit: Option<&Unit>) -> String {
         let micrometre = Unit::parse("µm").expect("the unit of wavelengths is known");
         return format::quantity(quantity.si, &micrometre, 3, Rounding::Nearest);
     }
+    if name == "value" {
+        return format::at_most(quantity, unit, 4);
+    }
     let figures = match name {
-        "value" => 4,
         "distance" | "clear_distance" | "view_factor" => 4,
         _ => 3,
     };

@@ -35,7 +35,9 @@ pub enum Error {
         found: usize,
     },
     /// A screen touches a hot source.
-    #[error("a screen must stand clear of hot sources, found screen {screen} touching part {part}; move one of them")]
+    #[error(
+        "a screen must stand clear of hot sources, found screen {screen} touching part {part}; move one of them"
+    )]
     TouchesSource {
         /// Which screen, counted from 1.
         screen: usize,
@@ -43,7 +45,9 @@ pub enum Error {
         part: usize,
     },
     /// The middle of a piece of a screen lies on another screen.
-    #[error("screens must not lie in one another, found screen {screen} in screen {other}; move one of them")]
+    #[error(
+        "screens must not lie in one another, found screen {screen} in screen {other}; move one of them"
+    )]
     TouchesScreen {
         /// Which screen, counted from 1.
         screen: usize,

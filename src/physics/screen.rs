@@ -27,6 +27,7 @@ use super::Error;
 use super::error::positive;
 use super::region::Region;
 use super::scene::Barrier;
+use super::surface::Emission;
 
 /// A flat rectangular screen in space.
 #[derive(Clone, Debug, PartialEq)]
@@ -106,10 +107,24 @@ impl Screen {
         }
     }
 
-    /// Returns the rectangle from `low` to `high`, both in −1..=1 along side and
-    /// up, with the normal of its front or its back.
+    /// Returns the outline of a face, with its normal.
+    fn outline(&self, face: usize) -> Region {
+        self.rectangle(face, [-1.0; 2], [1.0; 2], DVec3::ZERO)
+    }
+
+    /// Returns the rectangle of a face from `low` to `high`, both in −1..=1 along
+    /// side and up, a hair in front of the screen, which hides what lies in its
+    /// plane.
     fn piece(&self, face: usize, low: [f64; 2], high: [f64; 2]) -> Region {
-        let at = |x: f64, y: f64| self.centre + self.side * x + self.up * y;
+        self.rectangle(face, low, high, self.outward(face) * self.lift())
+    }
+
+    fn lift(&self) -> f64 {
+        LIFT * self.side.length().min(self.up.length())
+    }
+
+    fn rectangle(&self, face: usize, low: [f64; 2], high: [f64; 2], lift: DVec3) -> Region {
+        let at = |x: f64, y: f64| self.centre + self.side * x + self.up * y + lift;
         let mut vertices = vec![
             at(low[0], low[1]),
             at(high[0], low[1]),
@@ -130,6 +145,11 @@ impl Screen {
         let from = place - self.centre;
         let within = |edge: DVec3| from.dot(edge).abs() <= edge.length_squared() * (1.0 + 1e-12);
         within(self.side) && within(self.up)
+    }
+
+    /// Says whether a place lies in it, between its faces.
+    fn has(&self, place: DVec3) -> bool {
+        (place - self.centre).dot(self.normal).abs() <= self.lift() && self.holds(place)
     }
 
     /// The normal of a face.
@@ -166,6 +186,22 @@ impl Screen {
         }
     }
 }
+
+/// Returns what of an emission goes through several clear screens.
+///
+/// `through` holds the places of the screens in `screens`, as a glimpse of a
+/// scene tells them whose first barriers are those of the screens, in their
+/// order; a place that is not among them dims nothing.
+#[must_use]
+pub fn passed(screens: &[Screen], through: &[u16], emission: &Emission) -> Emission {
+    (through.iter())
+        .filter_map(|place| screens.get(usize::from(*place)))
+        .fold(*emission, |emission, screen| screen.make.passed(&emission))
+}
+
+/// How far a face is taken to lie in front of its screen, relative to half of its
+/// shorter side: far above rounding, a micrometre on a screen of 2 m.
+const LIFT: f64 = 1e-6;
 
 /// The faces of a screen, as indices.
 const FRONT: usize = 0;

@@ -15,6 +15,8 @@ use crate::json;
 pub struct Settings {
     /// The window's width and height, in logical points.
     pub size: (f32, f32),
+    /// How wide the column of cells is, in logical points.
+    pub cells: f32,
     /// The theme, by its word.
     pub theme: String,
     /// How much larger than 100 % everything is, `0.75..=3`.
@@ -29,6 +31,7 @@ impl Default for Settings {
     fn default() -> Self {
         Settings {
             size: (1440.0, 900.0),
+            cells: 428.0,
             theme: "light".to_owned(),
             zoom: 1.0,
             measure: "metric".to_owned(),
@@ -88,6 +91,7 @@ fn write(settings: &Settings) -> String {
     };
     put("width", json!(settings.size.0));
     put("height", json!(settings.size.1));
+    put("cells", json!(settings.cells));
     put("theme", settings.theme.as_str().into());
     put("zoom", json!(settings.zoom));
     put("measure", settings.measure.as_str().into());
@@ -129,6 +133,7 @@ fn read(bytes: &[u8]) -> Result<Settings, String> {
         number("width", settings.size.0, 320.0, 20_000.0)?,
         number("height", settings.size.1, 240.0, 20_000.0)?,
     );
+    settings.cells = number("cells", settings.cells, 320.0, 20_000.0)?;
     settings.zoom = number("zoom", settings.zoom, ZOOM.0, ZOOM.1)?;
     settings.theme = word("theme", &settings.theme)?;
     settings.measure = word("measure", &settings.measure)?;
@@ -150,6 +155,7 @@ mod tests {
         let path = folder.path().join("deep").join("window.json");
         let settings = Settings {
             size: (1280.0, 720.0),
+            cells: 512.0,
             theme: "dark".to_owned(),
             zoom: 1.25,
             measure: "us".to_owned(),
@@ -170,6 +176,7 @@ mod tests {
             "{\"zoom\": 50}",
             "{\"zoom\": \"big\"}",
             "{\"width\": 1e999}",
+            "{\"cells\": 1}",
             "{\"last\": 4}",
         ] {
             std::fs::write(&path, text).expect("the folder is writable");

@@ -179,6 +179,35 @@ pub fn of(value: Quantity, hint: Option<&Unit>, figures: u32, rounding: Rounding
     quantity(value.si, &unit, figures, rounding)
 }
 
+/// Returns a quantity as [`of`] does, to the nearest, with at most this many
+/// figures: zeros at the end that its value does not need are left out.
+///
+/// # Examples
+///
+/// ```
+/// use farglow::units::Literal;
+/// use farglow::units::format::at_most;
+///
+/// let area = Literal::read("0.63 m²").expect("this is a literal").quantity();
+/// assert_eq!(at_most(area, None, 4), "0.63 m²");
+/// ```
+pub fn at_most(value: Quantity, hint: Option<&Unit>, figures: u32) -> String {
+    let unit = natural_unit(value.dimension, value.si, hint);
+    let difference = value.sense == Sense::Difference && unit.is_scale();
+    let number = if difference {
+        value.si
+    } else {
+        unit.from_si(value.si)
+    };
+    let needed = (1..figures).find(|&few| {
+        let shown = format!("{:.*e}", few as usize - 1, number);
+        shown
+            .parse::<f64>()
+            .is_ok_and(|shown| (shown - number).abs() <= HAIR * number.abs())
+    });
+    of(value, hint, needed.unwrap_or(figures), Rounding::Nearest)
+}
+
 /// Returns the unit in which a value reads best: `hint` if it measures the same
 /// kind of quantity, else the one of the trade for its size.
 ///
@@ -230,6 +259,30 @@ pub fn safe_distance(si: f64) -> String {
         grouped(&(tenths / 10).to_string()),
         tenths % 10
     )
+}
+
+/// Returns a stand-off distance in feet, up to the next half foot.
+pub fn safe_feet(si: f64) -> String {
+    if !si.is_finite() {
+        return NOT_FINITE.to_owned();
+    }
+    let foot = Unit::parse("ft").expect("the foot is a known unit");
+    let halves = up(foot.from_si(si) * 2.0) / 2.0;
+    at_most(
+        Quantity::new(foot.to_si(halves), Dimension::LENGTH),
+        Some(&foot),
+        15,
+    )
+}
+
+/// Returns a time after which a limit is reached, down to the whole second:
+/// what happens, not what is permitted.
+pub fn reached(si: f64) -> String {
+    if si.is_nan() || si >= 10.0 {
+        return safe_time(si);
+    }
+    let second = Unit::coherent(Dimension::TIME);
+    quantity(down(si).max(0.0), &second, 1, Rounding::Down)
 }
 
 /// Returns a permitted time, down to the whole second below 10 min and to the

@@ -1,15 +1,19 @@
 //! A window under the hand: what is clicked, typed and pressed is followed as
 //! the real program does, but for what a display is needed for.
 
+use std::pin::Pin;
 use std::sync::{Arc, Mutex};
+use std::task::{Context, Poll, Wake, Waker};
+use std::thread::{self, Thread};
 
 use farglow::app::{self, Message, Window};
 use farglow::notebook::Notebook;
+use iced::futures::Stream;
 use iced::keyboard::key::{Code, Named, NativeCode, Physical};
 use iced::keyboard::{Event as Keys, Key, Location, Modifiers};
-use iced::{Event, Size};
-use iced_test::Simulator;
-use iced_test::selector;
+use iced::{Event, Point, Size, mouse};
+use iced_test::runtime::{Action, task};
+use iced_test::{Simulator, selector};
 
 /// The size of the window, in logical points.
 pub const SIZE: Size = Size::new(1440.0, 900.0);
@@ -61,6 +65,87 @@ impl Desk {
         }
         let messages: Vec<Message> = ui.into_messages().collect();
         self.take(messages);
+    }
+
+    /// Clicks on the last text that reads so.
+    pub fn click_last(&mut self, text: &str) {
+        let count = self.shown().iter().filter(|shown| *shown == text).count();
+        let mut left = count;
+        let mut ui = self.ui();
+        let found = ui.click(move |candidate: selector::Candidate<'_>| match &candidate {
+            selector::Candidate::Text { content, .. } if *content == text => {
+                left -= 1;
+                (left == 0).then(|| selector::Target::from(candidate))
+            }
+            _ => None,
+        });
+        if let Err(error) = found {
+            panic!("`{text}` cannot be clicked: {error}");
+        }
+        let messages: Vec<Message> = ui.into_messages().collect();
+        self.take(messages);
+    }
+
+    /// Clicks on the first text that reads so, and follows what comes of it on
+    /// other threads until nothing is left.
+    pub fn click_and_wait(&mut self, text: &str) {
+        let mut ui = self.ui();
+        if let Err(error) = ui.click(text) {
+            panic!(
+                "`{text}` cannot be clicked: {error}; shown: {:#?}",
+                self.shown()
+            );
+        }
+        let mut left: Vec<Message> = ui.into_messages().collect();
+        while !left.is_empty() {
+            let message = left.remove(0);
+            let task = self.window.update(message);
+            left.extend(outputs(task));
+        }
+    }
+
+    /// Presses the left button at one place of the window, moves the pointer to
+    /// another and lets go.
+    pub fn drag(&mut self, from: Point, to: Point) {
+        let mut ui = self.ui();
+        let at = |position: Point| Event::Mouse(mouse::Event::CursorMoved { position });
+        ui.point_at(from);
+        let _ = ui.simulate([
+            at(from),
+            Event::Mouse(mouse::Event::ButtonPressed(mouse::Button::Left)),
+        ]);
+        ui.point_at(to);
+        let _ = ui.simulate([
+            at(to),
+            Event::Mouse(mouse::Event::ButtonReleased(mouse::Button::Left)),
+        ]);
+        let messages: Vec<Message> = ui.into_messages().collect();
+        self.take(messages);
+    }
+
+    /// Puts the cursor at the end of the prose of this id, and types: a line
+    /// break is the Enter key.
+    pub fn write_prose(&mut self, id: &'static str, text: &str) {
+        let mut ui = self.ui();
+        if let Err(error) = ui.click(selector::id(id)) {
+            panic!(
+                "the prose {id} is not open: {error}; shown: {:#?}",
+                self.shown()
+            );
+        }
+        let end = pressed(Key::Named(Named::End), Modifiers::CTRL, None);
+        let keys = text.chars().map(|letter| match letter {
+            '\n' => named(Named::Enter),
+            letter => lettered(letter),
+        });
+        let _ = ui.simulate(std::iter::once(end).chain(keys));
+        let messages: Vec<Message> = ui.into_messages().collect();
+        self.take(messages);
+    }
+
+    /// Brings the window to the front again, as after working elsewhere.
+    pub fn comes_back(&mut self) {
+        let _ = self.window.update(Message::Focused);
     }
 
     /// Clicks into the field of this id and types letters, one by one, each
@@ -157,6 +242,34 @@ impl Desk {
         self.ui()
             .snapshot(&self.window.theme())
             .expect("the window can be drawn without a display")
+    }
+}
+
+/// Wakes the thread that waits.
+struct Waking(Thread);
+
+impl Wake for Waking {
+    fn wake(self: Arc<Self>) {
+        self.0.unpark();
+    }
+}
+
+/// Waits for everything that a task brings about.
+fn outputs(task: iced::Task<Message>) -> Vec<Message> {
+    let Some(mut stream) = task::into_stream(task) else {
+        return Vec::new();
+    };
+    let waker = Waker::from(Arc::new(Waking(thread::current())));
+    let mut context = Context::from_waker(&waker);
+    let mut messages = Vec::new();
+    loop {
+        match Pin::new(&mut stream).poll_next(&mut context) {
+            Poll::Ready(Some(Action::Output(message))) => messages.push(message),
+            // What only a display can do.
+            Poll::Ready(Some(_)) => {}
+            Poll::Ready(None) => return messages,
+            Poll::Pending => thread::park(),
+        }
     }
 }
 

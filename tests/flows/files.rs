@@ -89,7 +89,7 @@ fn a_file_that_somebody_else_changed_is_not_replaced_without_a_question() {
     desk.command('s');
     desk.expect("was changed by somebody else since it was opened");
     assert!(fs::read_to_string(&file).is_ok_and(|text| text.contains("[]")));
-    desk.click("replace it");
+    desk.click("replace it with mine");
     assert!(fs::read_to_string(&file).is_ok_and(|text| text.contains("\"entry\": \"3 m\"")));
 }
 
@@ -223,4 +223,53 @@ fn a_limit_is_confirmed_by_a_person_on_a_day() {
             .iter()
             .all(|word| word.by == "A. Smith" && word.date == "2026-12-01")
     );
+}
+
+#[test]
+fn the_head_of_the_sheet_is_typed_without_drawing_bounds_anew() {
+    let mut desk = Desk::tall(preset::demo());
+    desk.command('j');
+    desk.type_into("title", "", "!");
+    desk.type_into("prepared_by", "", "A. Smith");
+    // The bounds of before still stand, and so do the findings.
+    desk.expect("312 kW/m²");
+    desk.expect("nominal 290 kW/m²");
+    desk.expect_not("being worked out");
+    desk.expect("5 left before issue");
+    desk.command('z');
+    desk.expect_not("being worked out");
+    desk.expect("6 left before issue");
+}
+
+#[test]
+fn everything_that_is_left_leads_to_its_place() {
+    let mut desk = Desk::tall(preset::empty());
+    desk.command('l');
+    desk.click("add it");
+    assert_eq!(desk.notebook().cells.len(), 1, "a position was added");
+    desk.expect("assess position person");
+    desk.click("add it");
+    assert_eq!(desk.text("limits", "position"), Some("person"));
+    // What is left of the job leads to the job block.
+    let mut desk = Desk::tall(preset::demo());
+    desk.command('l');
+    for _ in 0..desk.notebook().cells.len() {
+        if desk.shows("what is done there") || !desk.shows("go there") {
+            break;
+        }
+        desk.click_last("go there");
+    }
+    desk.expect("prepared by");
+}
+
+#[test]
+fn a_word_on_a_limit_can_be_taken_back() {
+    let mut desk = Desk::tall(preset::demo());
+    desk.command('j');
+    desk.type_into("prepared_by", "", "A. Smith");
+    desk.type_into("date", "", "2026-12-01");
+    desk.click("I compared eu-2006-25-m");
+    desk.expect("compared by A. Smith on 2026-12-01");
+    desk.click("take back");
+    assert!(desk.notebook().confirmed.is_empty());
 }

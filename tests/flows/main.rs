@@ -3,7 +3,10 @@
 
 mod areas;
 mod desk;
+mod disk;
 mod editing;
 mod files;
 mod pictures;
+mod prose;
 mod reading;
+mod width;

@@ -8,5 +8,6 @@ mod json_laws;
 mod notebook_laws;
 mod opening_laws;
 mod printing_and_parsing_agree;
+mod screen_laws;
 mod view_factor_laws;
 mod visibility_laws;

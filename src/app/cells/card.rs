@@ -3,342 +3,310 @@
 use iced::widget::{button, column, container, mouse_area, row, space};
 use iced::{Alignment, Element, Length};
 
-use super::figure::{self, Found};
+use super::figure::{self, Told};
 use super::sentence::{self, Piece};
-use super::{Area, Message, Part, Place, field};
-use crate::app::canvas;
+use super::{Area, Message, Part, Place, field, found, prose};
 use crate::app::shared::{Look, Shared};
 use crate::app::theme::{self, BODY, RESULT, SMALL, Stand};
-use crate::drawing::mark::Shape;
 use crate::drawing::role::Role;
 use crate::notebook::cell::{Cell, Kind};
-use crate::notebook::datum::CellId;
-use crate::notebook::results::{CellResult, State};
+use crate::notebook::results::CellResult;
 
-/// The widest that a field open for typing gets, beside a result and alone.
-const WIDEST: f32 = 250.0;
-const WIDE: f32 = 370.0;
+/// The space around what is in a card.
+const AROUND: f32 = 14.0;
 
-/// Returns the card of a cell.
+/// The widest that a result gets, and the space beside it.
+const FIGURE: f32 = 170.0;
+const BESIDE: f32 = 12.0;
+
+/// Below this width the result stands under the sentence.
+const NARROW: f32 = 320.0;
+
+/// How wide the labels of listed fields are.
+const LABEL: f32 = 140.0;
+
+/// A card that is being built.
+struct Card<'a, 's> {
+    area: &'a Area,
+    shared: Shared<'a>,
+    cell: &'a Cell,
+    result: &'s CellResult,
+    selected: bool,
+    /// How wide what is in it is.
+    inner: f32,
+}
+
+/// Returns the card of a cell, `wide` points wide.
 pub fn view<'a>(
     area: &'a Area,
     shared: Shared<'a>,
-    id: CellId,
     result: &'a CellResult,
     stand: Stand,
+    wide: f32,
 ) -> Element<'a, Message> {
     let look = shared.look;
-    let Some(cell) = shared.engine.cell(id) else {
+    let Some(cell) = shared.engine.cell(result.id) else {
         return space().into();
     };
     let selected = stand == Stand::Selected;
-    let mut body = column![head(shared, cell, id, selected)].spacing(2);
+    let card = Card {
+        area,
+        shared,
+        cell,
+        result,
+        selected,
+        inner: wide - 2.0 * AROUND,
+    };
     let told = figure::told(&shared, cell, result);
-    let ink = if shared.fresh { Role::Ink } else { Role::Muted };
-    let mut first = row![sentence_of(area, shared, cell, id, result)]
-        .spacing(12)
-        .align_y(Alignment::Start);
-    if let Some(large) = told.large {
-        let mut right = column![theme::bold(large, RESULT, ink, look)].align_x(Alignment::End);
-        if let Some(under) = told.under {
-            right = right.push(theme::words(under, SMALL, Role::Muted, look));
-        }
-        first = first.push(container(right).max_width(170));
-    }
-    body = body.push(first);
-    if let Some(origin) = origin(cell) {
+    let mut body = column![card.head(), card.first(&told)].spacing(2);
+    if let Some(origin) = card.origin() {
         body = body.push(theme::words(origin, SMALL, Role::Muted, look));
     }
     for line in told.lines {
         body = body.push(theme::words(line, SMALL, Role::Muted, look));
     }
-    for found in told.findings {
-        body = body.push(finding(found, look));
+    for finding in told.findings {
+        body = body.push(found::finding(finding, look));
     }
     if cell.kind == Kind::Assessment && selected && shared.fresh {
         for limit in figure::limits(&shared, result) {
-            body = body.push(limit_line(limit, look));
+            body = body.push(found::limit(limit, look));
         }
     }
-    body = body.push(state(cell, result, look));
-    if let Some(strip) = editing(area, shared, cell, id) {
+    body = body.push(found::state(cell, result, look));
+    if let Some(strip) = card.editing() {
         body = body.push(strip);
     }
     if selected {
-        body = body.push(others(area, shared, cell, id, result));
+        body = body.push(card.others());
     }
     if !result.cautions.is_empty() {
-        body = body.push(cautions(result, selected, look));
+        body = body.push(found::cautions(result, selected, look));
     }
     mouse_area(
         container(body)
-            .padding([9, 14])
+            .padding([9.0, AROUND])
             .width(Length::Fill)
             .style(theme::card(stand, look)),
     )
-    .on_press(Message::Select(id))
+    .on_press(Message::Select(result.id))
     .into()
 }
 
-/// The kind, and what can be done with the whole cell.
-fn head<'a>(shared: Shared<'a>, cell: &Cell, id: CellId, selected: bool) -> Element<'a, Message> {
-    let look = shared.look;
-    let kind = theme::words(cell.kind.name(), SMALL, Role::Muted, look);
-    if !selected {
-        return kind.into();
-    }
-    let tool = |text: &'static str, message: Message| {
-        button(iced::widget::text(text).size(SMALL).font(theme::REGULAR))
-            .padding([0, 5])
-            .style(theme::plain(look))
-            .on_press(message)
-    };
-    row![
-        kind,
-        space().width(Length::Fill),
-        tool(
-            "rename",
-            Message::Open(Place {
-                cell: id,
-                part: Part::Name
-            })
-        ),
-        tool("up", Message::Raise(id)),
-        tool("down", Message::Lower(id)),
-        tool("copy", Message::Duplicate(id)),
-        tool("remove", Message::Remove(id)),
-    ]
-    .align_y(Alignment::Center)
-    .into()
-}
-
-fn sentence_of<'a>(
-    area: &'a Area,
-    shared: Shared<'a>,
-    cell: &'a Cell,
-    id: CellId,
-    result: &CellResult,
-) -> Element<'a, Message> {
-    let look = shared.look;
-    let mut pieces: Vec<Element<'a, Message>> = Vec::new();
-    for piece in sentence::sentence(cell) {
-        match piece {
-            Piece::Name => pieces.push(name(area, cell, id, look)),
-            Piece::Words(words) => {
-                pieces.extend(
-                    words
-                        .split(' ')
-                        .map(|word| theme::words(word, BODY, Role::Ink, look).into()),
-                );
-            }
-            Piece::Field(field, after) => {
-                pieces.push(piece_of(area, shared, cell, id, field, after, result));
-            }
+impl<'a> Card<'a, '_> {
+    fn place(&self, part: Part) -> Place {
+        Place {
+            cell: self.result.id,
+            part,
         }
     }
-    container(
-        row(pieces)
-            .spacing(4)
-            .align_y(Alignment::Center)
-            .wrap()
-            .vertical_spacing(2),
-    )
-    .width(Length::Fill)
-    .into()
-}
 
-fn piece_of<'a>(
-    area: &'a Area,
-    shared: Shared<'a>,
-    cell: &'a Cell,
-    id: CellId,
-    name: &'static str,
-    after: &'static str,
-    result: &CellResult,
-) -> Element<'a, Message> {
-    let place = Place {
-        cell: id,
-        part: Part::Field(name),
-    };
-    if area.is_open(place) && !sentence::is_chosen(cell, name) {
-        let widest = if cell.kind == Kind::Note {
-            WIDE
-        } else {
-            WIDEST
+    /// The kind, and what can be done with the whole cell.
+    fn head(&self) -> Element<'a, Message> {
+        let (look, id) = (self.shared.look, self.result.id);
+        let kind = theme::words(self.cell.kind.name(), SMALL, Role::Muted, look);
+        if !self.selected {
+            return kind.into();
+        }
+        let tool = |text: &'static str, message: Message| {
+            button(iced::widget::text(text).size(SMALL).font(theme::REGULAR))
+                .padding([0, 5])
+                .style(theme::plain(look))
+                .on_press(message)
         };
-        return field::open(shared.look, &area.text(cell, name), widest);
-    }
-    let faulty = result.errors.iter().any(|error| error.field == Some(name));
-    field::shown(shared, cell, place, after, faulty)
-}
-
-fn name<'a>(area: &'a Area, cell: &'a Cell, id: CellId, look: Look) -> Element<'a, Message> {
-    let place = Place {
-        cell: id,
-        part: Part::Name,
-    };
-    if area.is_open(place) {
-        let draft = area.draft().unwrap_or(&cell.name);
-        return field::open(look, draft, WIDEST);
-    }
-    theme::bold(cell.name.as_str(), BODY, Role::Ink, look).into()
-}
-
-/// Where a cell's main input came from.
-fn origin(cell: &Cell) -> Option<String> {
-    let mut parts: Vec<&str> = Vec::new();
-    if cell.kind == Kind::Value {
-        parts.extend(cell.text("basis"));
-    }
-    parts.extend(cell.text("note").filter(|note| !note.is_empty()));
-    (!parts.is_empty()).then(|| parts.join(" · "))
-}
-
-fn finding<'a>(found: Found, look: Look) -> Element<'a, Message> {
-    let role = found.shape.role();
-    let word = theme::bold(format!("{}:", found.word), BODY, role, look);
-    let short = found.text.chars().count() < 60;
-    let mut words = if short {
-        let text = theme::words(found.text, BODY, role, look).width(Length::Fill);
-        column![row![word, text].spacing(5)]
-    } else {
-        column![word, theme::words(found.text, SMALL, Role::Ink, look)]
-    }
-    .width(Length::Fill);
-    if let Some(by) = found.by {
-        words = words.push(theme::words(by, SMALL, Role::Muted, look));
-    }
-    row![
-        container(canvas::shape(found.shape, 13.0, look)).padding([3, 0]),
-        words
-    ]
-    .spacing(7)
-    .into()
-}
-
-fn limit_line<'a>(found: Found, look: Look) -> Element<'a, Message> {
-    let role = found.shape.role();
-    row![
-        container(canvas::shape(found.shape, 11.0, look)).padding([3, 0]),
-        theme::words(found.word, SMALL, role, look),
-        theme::words(found.text, SMALL, Role::Muted, look).width(Length::Fill),
-    ]
-    .spacing(7)
-    .into()
-}
-
-/// The cell's own faults, or whom it waits for.
-fn state<'a>(cell: &Cell, result: &CellResult, look: Look) -> Element<'a, Message> {
-    match &result.state {
-        State::Ok => space().into(),
-        State::Waiting(names) => row![
-            canvas::shape(Shape::NotAssessed, 12.0, look),
-            theme::words(
-                format!("waiting for {}", names.join(", ")),
-                SMALL,
-                Role::Muted,
-                look
-            ),
-        ]
-        .spacing(7)
-        .align_y(Alignment::Center)
-        .into(),
-        State::Error => {
-            let faults = result
-                .errors
-                .iter()
-                .take(4)
-                .map(|fault| field::fault(cell, fault, look));
-            let mut all = column(faults).spacing(4);
-            if result.errors.len() > 4 {
-                let more = format!("and {} more", result.errors.len() - 4);
-                all = all.push(theme::words(more, SMALL, Role::Over, look));
-            }
-            all.into()
-        }
-    }
-}
-
-/// What stands under the sentence while something of the cell is open.
-fn editing<'a>(
-    area: &'a Area,
-    shared: Shared<'a>,
-    cell: &'a Cell,
-    id: CellId,
-) -> Option<Element<'a, Message>> {
-    let look = shared.look;
-    let place = area.open_place().filter(|place| place.cell == id)?;
-    let mut lines = column![].spacing(4);
-    match place.part {
-        Part::Name => {
-            lines = lines.push(theme::words(
-                "letters a to z, digits and underscores; every mention follows",
-                SMALL,
-                Role::Muted,
-                look,
-            ));
-        }
-        Part::Field(name) => {
-            lines = lines.push(field::strip(
-                shared,
-                cell,
-                name,
-                &super::note_of(cell, name),
-            ));
-        }
-    }
-    if let Some(refused) = area.refused() {
-        lines = lines.push(theme::words(refused, SMALL, Role::Over, look));
-    }
-    Some(lines.into())
-}
-
-/// The fields that the sentence leaves out.
-fn others<'a>(
-    area: &'a Area,
-    shared: Shared<'a>,
-    cell: &'a Cell,
-    id: CellId,
-    result: &CellResult,
-) -> Element<'a, Message> {
-    let look = shared.look;
-    let lines = sentence::others(cell).into_iter().map(|name| {
         row![
-            container(theme::words(
-                sentence::label(name),
-                SMALL,
-                Role::Muted,
-                look
-            ))
-            .width(Length::Fixed(140.0)),
-            piece_of(area, shared, cell, id, name, "", result),
+            kind,
+            space().width(Length::Fill),
+            tool("rename", Message::Open(self.place(Part::Name))),
+            tool("up", Message::Raise(id)),
+            tool("down", Message::Lower(id)),
+            tool("copy", Message::Duplicate(id)),
+            tool("remove", Message::Remove(id)),
         ]
-        .spacing(8)
         .align_y(Alignment::Center)
         .into()
-    });
-    column(lines).spacing(2).padding([4, 0]).into()
-}
-
-fn cautions<'a>(result: &CellResult, selected: bool, look: Look) -> Element<'a, Message> {
-    let count = result.cautions.len();
-    let text = if count == 1 {
-        "1 caution".to_owned()
-    } else {
-        format!("{count} cautions")
-    };
-    let head = row![
-        canvas::shape(Shape::Caution, 12.0, look),
-        theme::words(text, SMALL, Role::Muted, look),
-    ]
-    .spacing(7)
-    .align_y(Alignment::Center);
-    if !selected {
-        return head.into();
     }
-    let texts = result
-        .cautions
-        .iter()
-        .map(|caution| theme::words(caution.text.clone(), SMALL, Role::Muted, look).into());
-    column![head, column(texts).spacing(2)].spacing(2).into()
+
+    /// The sentence, with the governing quantity at the right edge.
+    fn first(&self, told: &Told) -> Element<'a, Message> {
+        let look = self.shared.look;
+        let Some(large) = told.large.clone() else {
+            return self.sentence(self.inner);
+        };
+        let ink = if self.shared.fresh {
+            Role::Ink
+        } else {
+            Role::Muted
+        };
+        let mut right = column![theme::bold(large, RESULT, ink, look)].align_x(Alignment::End);
+        if let Some(under) = told.under.clone() {
+            right = right.push(theme::words(under, SMALL, Role::Muted, look));
+        }
+        if self.inner < NARROW {
+            let right = container(right).align_right(Length::Fill);
+            return column![self.sentence(self.inner), right].into();
+        }
+        row![
+            self.sentence(self.inner - FIGURE - BESIDE),
+            container(right).max_width(FIGURE),
+        ]
+        .spacing(BESIDE)
+        .align_y(Alignment::Start)
+        .into()
+    }
+
+    fn sentence(&self, wide: f32) -> Element<'a, Message> {
+        let look = self.shared.look;
+        let mut pieces: Vec<Element<'a, Message>> = Vec::new();
+        for piece in sentence::sentence(self.cell) {
+            match piece {
+                Piece::Name => pieces.push(self.name(wide)),
+                Piece::Words(words) => {
+                    pieces.extend(
+                        words
+                            .split(' ')
+                            .map(|word| theme::words(word, BODY, Role::Ink, look).into()),
+                    );
+                }
+                Piece::Field(field, after) => {
+                    pieces.extend(self.field(field, after, wide));
+                }
+            }
+        }
+        container(
+            row(pieces)
+                .spacing(4)
+                .align_y(Alignment::Center)
+                .wrap()
+                .vertical_spacing(2),
+        )
+        .width(Length::Fill)
+        .into()
+    }
+
+    /// A field as it stands in the sentence, or open for typing.
+    fn field(
+        &self,
+        name: &'static str,
+        after: &'static str,
+        wide: f32,
+    ) -> Vec<Element<'a, Message>> {
+        let look = self.shared.look;
+        let place = self.place(Part::Field(name));
+        if self.area.is_open(place) {
+            if sentence::is_prose(self.cell, name)
+                && let Some(content) = self.area.prose()
+            {
+                return vec![prose::open(
+                    content,
+                    field::TYPING,
+                    "",
+                    BODY,
+                    wide,
+                    Message::Edited,
+                    look,
+                )];
+            }
+            if !sentence::is_chosen(self.cell, name) {
+                let text = self.area.text(self.cell, name);
+                return vec![field::open(look, &text, wide)];
+            }
+        }
+        let faulty = self
+            .result
+            .errors
+            .iter()
+            .any(|error| error.field == Some(name));
+        field::Resting {
+            cell: self.cell,
+            place,
+            after,
+            faulty,
+            whole: self.selected,
+            wide,
+        }
+        .view(look)
+    }
+
+    fn name(&self, wide: f32) -> Element<'a, Message> {
+        let look = self.shared.look;
+        if self.area.is_open(self.place(Part::Name)) {
+            let draft = self.area.draft().unwrap_or(&self.cell.name);
+            return field::open(look, draft, wide);
+        }
+        theme::bold(self.cell.name.as_str(), BODY, Role::Ink, look).into()
+    }
+
+    /// Where a cell's main input came from; listed where the cell is selected.
+    fn origin(&self) -> Option<String> {
+        if self.selected {
+            return None;
+        }
+        let mut parts: Vec<&str> = Vec::new();
+        if self.cell.kind == Kind::Value {
+            parts.extend(self.cell.text("basis"));
+        }
+        parts.extend(self.cell.text("note").filter(|note| !note.is_empty()));
+        (!parts.is_empty()).then(|| field::one_line(&parts.join(" · "), SMALL, self.inner))
+    }
+
+    /// What stands under the sentence while something of the cell is open.
+    fn editing(&self) -> Option<Element<'a, Message>> {
+        let look = self.shared.look;
+        let place = self
+            .area
+            .open_place()
+            .filter(|place| place.cell == self.result.id)?;
+        let mut lines = column![].spacing(4);
+        match place.part {
+            Part::Name => {
+                lines = lines.push(theme::words(
+                    "letters a to z, digits and underscores; every mention follows",
+                    SMALL,
+                    Role::Muted,
+                    look,
+                ));
+            }
+            Part::Field(name) => {
+                let remark = self.area.remark_held();
+                lines = lines.push(field::strip(
+                    self.shared,
+                    self.cell,
+                    name,
+                    remark,
+                    self.inner,
+                ));
+            }
+        }
+        if let Some(refused) = self.area.refused() {
+            lines = lines.push(theme::words(refused, SMALL, Role::Over, look));
+        }
+        Some(lines.into())
+    }
+
+    /// The fields that the sentence leaves out.
+    fn others(&self) -> Element<'a, Message> {
+        let look: Look = self.shared.look;
+        let label = LABEL.min(self.inner * 0.4);
+        let wide = self.inner - label - theme::STEP;
+        let lines = sentence::others(self.cell).into_iter().map(|name| {
+            let pieces = row(self.field(name, "", wide))
+                .spacing(4)
+                .wrap()
+                .vertical_spacing(2);
+            row![
+                container(theme::words(
+                    sentence::label(name),
+                    SMALL,
+                    Role::Muted,
+                    look
+                ))
+                .width(Length::Fixed(label)),
+                container(pieces).width(Length::Fill),
+            ]
+            .spacing(theme::STEP)
+            .into()
+        });
+        column(lines).spacing(2).padding([4, 0]).into()
+    }
 }

@@ -1,53 +1,130 @@
 //! A field inside a sentence: shown with dashes under it, or open for typing.
 
-use iced::widget::{button, column, container, row, text_input};
-use iced::{Element, Length, widget};
+use iced::widget::{button, column, container, row, text_editor, text_input};
+use iced::{Element, Length};
 
-use super::{Message, Part, Place, sentence};
+use super::{Message, Part, Place, prose, sentence};
 use crate::app::dashes::dashes;
 use crate::app::shared::{Look, Shared};
 use crate::app::theme::{self, BODY, SMALL};
 use crate::drawing::font::{self, Weight};
 use crate::drawing::role::Role;
-use crate::notebook::Diagnostic;
-use crate::notebook::cell::{Basis, Cell, Form};
+use crate::notebook::cell::{Basis, Cell};
 
 /// The field that is open for typing.
 pub const TYPING: &str = "typing";
 
-/// Returns a field as it stands in a sentence, with the words that cling to it.
-pub fn shown<'a>(
-    shared: Shared<'a>,
-    cell: &Cell,
-    place: Place,
-    after: &'static str,
-    faulty: bool,
-) -> Element<'a, Message> {
-    let look = shared.look;
-    let Part::Field(field) = place.part else {
-        return widget::space().into();
-    };
-    let typed = sentence::typed(cell, field).filter(|text| !text.is_empty());
-    let (text, role) = match typed {
-        Some(text) => (text, if faulty { Role::Over } else { Role::Ink }),
-        None => (sentence::absent(cell.kind, field).to_owned(), Role::Muted),
-    };
-    let dashes_role = if faulty { Role::Over } else { Role::Action };
-    let words = theme::words(text, BODY, role, look);
-    // Prose has no dashes: its lines are no fields of a sentence.
-    let words = if cell.kind == crate::notebook::Kind::Note {
-        words.into()
-    } else {
-        dashes(words, theme::colour(dashes_role, look))
-    };
-    let opened = button(words)
-        .padding(0)
-        .style(theme::plain(look))
-        .on_press(Message::Open(place));
-    if after.is_empty() {
-        return opened.into();
+/// The remark on the open input.
+pub const REMARK: &str = "remark";
+
+/// The longest entry that stands whole on a card at rest, in characters.
+const LONG: usize = 160;
+
+/// The longest text that is never broken between its words.
+const UNBROKEN: usize = 24;
+
+/// A field as it stands in a sentence.
+pub struct Resting<'a> {
+    /// Its cell.
+    pub cell: &'a Cell,
+    /// Where it is.
+    pub place: Place,
+    /// The words that cling to it.
+    pub after: &'static str,
+    /// Whether something is wrong with it.
+    pub faulty: bool,
+    /// Whether it is shown whole, however long it is.
+    pub whole: bool,
+    /// How wide a line is.
+    pub wide: f32,
+}
+
+impl<'a> Resting<'a> {
+    /// Returns its pieces: one, or the words of a long text.
+    pub fn view(&self, look: Look) -> Vec<Element<'a, Message>> {
+        let Part::Field(field) = self.place.part else {
+            return Vec::new();
+        };
+        let typed = sentence::typed(self.cell, field).filter(|text| !text.is_empty());
+        let (text, role) = match typed {
+            Some(text) if self.faulty => (text, Role::Over),
+            Some(text) => (text, Role::Ink),
+            None => (
+                sentence::absent(self.cell.kind, field).to_owned(),
+                Role::Muted,
+            ),
+        };
+        if sentence::is_prose(self.cell, field) {
+            let text = if self.whole {
+                text
+            } else {
+                one_line(&text, BODY, self.wide)
+            };
+            // Prose has no dashes: its lines are no fields of a sentence.
+            return vec![self.link(theme::words(text, BODY, role, look).into(), look)];
+        }
+        let text = match text.char_indices().nth(LONG) {
+            Some((at, _)) if !self.whole => format!("{}…", &text[..at]),
+            _ => text,
+        };
+        let words: Vec<String> = if text.chars().count() > UNBROKEN {
+            text.split(' ').map(str::to_owned).collect()
+        } else {
+            vec![text]
+        };
+        let last = words.len() - 1;
+        let line = theme::colour(
+            if self.faulty {
+                Role::Over
+            } else {
+                Role::Action
+            },
+            look,
+        );
+        words
+            .into_iter()
+            .enumerate()
+            .map(|(at, word)| {
+                let word = theme::words(word, BODY, role, look)
+                    .wrapping(iced::widget::text::Wrapping::WordOrGlyph);
+                let opened = self.link(dashes(word, BODY, line), look);
+                if at < last || self.after.is_empty() {
+                    return opened;
+                }
+                row![opened, theme::words(self.after, BODY, Role::Ink, look)].into()
+            })
+            .collect()
     }
-    row![opened, theme::words(after, BODY, Role::Ink, look)].into()
+
+    fn link(&self, content: Element<'a, Message>, look: Look) -> Element<'a, Message> {
+        button(content)
+            .padding(0)
+            .style(theme::plain(look))
+            .on_press(Message::Open(self.place))
+            .into()
+    }
+}
+
+/// Returns the first line of a text, cut to a width; what is left out shows as
+/// an ellipsis.
+pub fn one_line(text: &str, size: f32, wide: f32) -> String {
+    let first = text.lines().next().unwrap_or_default();
+    let measure = |text: &str| font::width(text, f64::from(size), Weight::Regular);
+    let wide = f64::from(wide);
+    let whole = text.trim_end().len() <= first.len();
+    if whole && measure(first) <= wide {
+        return first.to_owned();
+    }
+    let room = wide - measure(" …");
+    let (mut end, mut used) = (0, 0.0);
+    for (at, letter) in first.char_indices() {
+        used += measure(letter.encode_utf8(&mut [0; 4]));
+        if used > room {
+            break;
+        }
+        end = at + letter.len_utf8();
+    }
+    format!("{} …", first[..end].trim_end())
 }
 
 /// Returns a field that is open for typing, as wide as what is typed.
@@ -62,7 +139,7 @@ pub fn open<'a>(look: Look, text: &str, widest: f32) -> Element<'a, Message> {
         .size(BODY)
         .font(theme::REGULAR)
         .padding([0, 4])
-        .width(Length::Fixed(wide.clamp(70.0, widest)))
+        .width(Length::Fixed(wide.min(widest).max(70.0)))
         .style(theme::typing(look))
         .into()
 }
@@ -73,7 +150,8 @@ pub fn strip<'a>(
     shared: Shared<'a>,
     cell: &'a Cell,
     field: &'static str,
-    note: &str,
+    remark: Option<&'a text_editor::Content>,
+    wide: f32,
 ) -> Element<'a, Message> {
     let look = shared.look;
     let mut strip = column![].spacing(6);
@@ -100,17 +178,20 @@ pub fn strip<'a>(
         });
         strip = strip.push(row(choices).spacing(4).wrap().vertical_spacing(4));
     }
-    if matches!(
-        cell.kind.field(field).map(|spec| spec.form),
-        Some(Form::Entry(_) | Form::Pairs(_) | Form::Facing)
-    ) {
-        strip = strip.push(origin(cell, field, note, look));
+    if let Some(remark) = remark {
+        strip = strip.push(origin(cell, field, remark, wide, look));
     }
     container(strip).padding([6, 0]).into()
 }
 
 /// Where an input came from: its basis and a remark.
-fn origin<'a>(cell: &Cell, field: &'static str, note: &str, look: Look) -> Element<'a, Message> {
+fn origin<'a>(
+    cell: &Cell,
+    field: &'static str,
+    remark: &'a text_editor::Content,
+    wide: f32,
+    look: Look,
+) -> Element<'a, Message> {
     let own = match (cell.kind, field) {
         // A value's basis and note are fields of their own.
         (crate::notebook::Kind::Value, _) => cell.text("basis").and_then(Basis::from_words),
@@ -124,14 +205,15 @@ fn origin<'a>(cell: &Cell, field: &'static str, note: &str, look: Look) -> Eleme
             look,
         )
     });
-    let remark = text_input("a remark on where it came from", note)
-        .id("remark")
-        .on_input(Message::Remarked)
-        .on_submit(Message::Keep)
-        .size(SMALL)
-        .font(theme::REGULAR)
-        .padding([2, 6])
-        .style(theme::typing(look));
+    let remark = prose::open(
+        remark,
+        REMARK,
+        "a remark on where it came from",
+        SMALL,
+        wide,
+        Message::Remarked,
+        look,
+    );
     column![row(bases).spacing(4).wrap().vertical_spacing(4), remark]
         .spacing(6)
         .into()
@@ -144,59 +226,4 @@ fn pill<'a>(text: String, chosen: bool, message: Message, look: Look) -> Element
         .style(theme::choice(chosen, look))
         .on_press(message)
         .into()
-}
-
-/// Returns a fault where it is: the text with the faulty characters marked,
-/// what is wrong with them, and the remedy.
-pub fn fault<'a>(cell: &Cell, fault: &Diagnostic, look: Look) -> Element<'a, Message> {
-    let mut lines = column![].spacing(1);
-    let typed = cell.faulty(fault);
-    if let (Some(span), Some(text)) = (&fault.span, &typed) {
-        let letters: Vec<char> = text.chars().collect();
-        let part = |range: std::ops::Range<usize>| -> String {
-            let end = range.end.min(letters.len());
-            letters[range.start.min(end)..end].iter().collect()
-        };
-        // A fault at the end of the text has nothing to mark: it is pointed at.
-        let marked = match part(span.start..span.end.max(span.start + 1)) {
-            marked if marked.trim().is_empty() => "▯".to_owned(),
-            marked => marked,
-        };
-        // What is far from the fault is left out.
-        let before = part(span.start.saturating_sub(24)..span.start);
-        let after = part(span.end.max(span.start + 1)..span.end + 24);
-        lines = lines.push(
-            row![
-                theme::words(before, SMALL, Role::Muted, look),
-                dashes(
-                    theme::bold(marked, SMALL, Role::Over, look),
-                    theme::colour(Role::Over, look)
-                ),
-                theme::words(after, SMALL, Role::Muted, look),
-                theme::words(
-                    format!("   character {}", span.start + 1),
-                    SMALL,
-                    Role::Muted,
-                    look
-                ),
-            ]
-            .wrap(),
-        );
-    }
-    let place = match fault.field {
-        Some(field) if typed.is_some() || fault.span.is_none() => {
-            format!("{}: ", sentence::label(field))
-        }
-        _ => String::new(),
-    };
-    lines = lines.push(theme::words(
-        format!("{place}{}", fault.message),
-        SMALL,
-        Role::Over,
-        look,
-    ));
-    if let Some(hint) = &fault.hint {
-        lines = lines.push(theme::words(hint.clone(), SMALL, Role::Ink, look));
-    }
-    lines.into()
 }

@@ -45,7 +45,6 @@ pub fn told(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
         return Told::default();
     }
     match cell.kind {
-        Kind::Value | Kind::Formula => quantity(shared, result),
         Kind::Surroundings => Told {
             lines: one(shared, result, "background")
                 .map(|text| format!("sends {text} to whoever stands in it, counted apart"))
@@ -58,7 +57,7 @@ pub fn told(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
         Kind::Curve => curve(shared, result),
         Kind::Assessment => assessed(shared, result),
         Kind::Zone => zone(shared, cell, result),
-        Kind::Note => Told::default(),
+        _ => quantity(shared, cell, result),
     }
 }
 
@@ -103,14 +102,16 @@ fn beside(shared: &Shared<'_>, result: &CellResult, name: &str) -> Option<String
     (bound != nominal).then(|| format!("nominal {nominal}"))
 }
 
-fn quantity(shared: &Shared<'_>, result: &CellResult) -> Told {
-    let Some(shown) = result.shown("value") else {
+/// The main quantity of a cell that has nothing more to say.
+fn quantity(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
+    let main = cell.kind.main_output();
+    let Some((name, shown)) = main.and_then(|name| Some((name, result.shown(name)?))) else {
         return Told::default();
     };
     let unit = hint(shared, shown, wording::unit_of(shared.engine, result));
     Told {
-        large: Some(wording::nominal("value", shown, unit.as_ref())),
-        under: wording::interval("value", shown, unit.as_ref()),
+        large: Some(wording::nominal(name, shown, unit.as_ref())),
+        under: wording::interval(name, shown, unit.as_ref()),
         ..Told::default()
     }
 }
@@ -311,11 +312,10 @@ fn found(shared: &Shared<'_>, result: &CellResult) -> Option<Found> {
             || "no stay is stated".to_owned(),
             |stay| format!("planned {}", wording::plain_time(stay)),
         );
-        let reached = if seconds < 10.0 {
-            format!("limit reached after {} s: no planned stay", seconds.floor())
-        } else {
-            format!("limit reached after {}", format::safe_time(seconds))
-        };
+        let mut reached = format!("limit reached after {}", format::reached(seconds));
+        if seconds < 10.0 {
+            reached.push_str(": no planned stay");
+        }
         let by = Library::shipped()
             .get(&verdict.guidance)
             .map(|limit| format!("{} · {}", limit.id, limit.title));
@@ -379,15 +379,11 @@ fn zone(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
 
 /// Returns where a zone ends, rounded outwards.
 fn distance(shared: &Shared<'_>, extent: Extent) -> String {
-    let feet = |si: f64| {
-        let foot = Unit::parse("ft").expect("the foot is a known unit");
-        // Outwards to the next half foot, but for a hair of noise.
-        let halves = (2.0 * foot.from_si(si) * (1.0 - 1e-9)).ceil();
-        format!("{} ft", format::significant(halves / 2.0, 6, Rounding::Up))
-    };
     match (shared.look.measure, extent) {
-        (Measure::Us, Extent::At(si)) => feet(si),
-        (Measure::Us, Extent::NotMetWithin(si)) => format!("farther than {}", feet(si)),
+        (Measure::Us, Extent::At(si)) => format::safe_feet(si),
+        (Measure::Us, Extent::NotMetWithin(si)) => {
+            format!("farther than {}", format::safe_feet(si))
+        }
         _ => wording::extent(extent),
     }
 }

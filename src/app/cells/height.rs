@@ -10,7 +10,7 @@ use crate::notebook::results::{CellResult, State};
 const LINE: f64 = 20.2;
 const SMALL: f64 = 18.9;
 
-/// Returns the estimated height of a card in a column of the usual width.
+/// Returns the estimated height of a card that is `card` wide.
 ///
 /// # Accuracy
 ///
@@ -18,21 +18,27 @@ const SMALL: f64 = 18.9;
 /// long the bar is and where cards out of sight begin, never what is drawn.
 // Heights of cards are far below the limits of single precision.
 #[allow(clippy::cast_possible_truncation)]
-pub fn estimate(engine: &Engine, result: &CellResult, selected: bool) -> f32 {
+pub fn estimate(engine: &Engine, result: &CellResult, selected: bool, card: f32) -> f32 {
     let Some(cell) = engine.cell(result.id) else {
         return 60.0;
     };
+    let inner = f64::from(card) - 30.0;
     let wide = match cell.kind {
-        Kind::Note | Kind::Surroundings | Kind::Curve => 360.0,
-        _ => 240.0,
+        Kind::Note | Kind::Surroundings | Kind::Curve => inner,
+        _ => (inner - 130.0).max(100.0),
     };
-    let mut height = 20.0 + SMALL + lines(width(cell), wide) * (LINE + 2.0);
+    let text = match cell.kind {
+        // Prose at rest is one line.
+        Kind::Note if !selected => 1.0,
+        _ => lines(width(cell), wide),
+    };
+    let mut height = 20.0 + SMALL + text * (LINE + 2.0);
     height += match cell.kind {
-        Kind::Note | Kind::Value | Kind::Formula => 0.0,
         Kind::Position => 3.0 * SMALL + 3.0 * LINE,
         Kind::Assessment => 3.0 * SMALL,
         Kind::Zone => 2.0 * SMALL,
         Kind::Surroundings | Kind::Source | Kind::Curve => SMALL,
+        _ => 0.0,
     };
     match &result.state {
         State::Ok => {}

@@ -5,20 +5,52 @@ use crate::notebook::datum::CellId;
 use crate::notebook::engine::Engine;
 use crate::notebook::name;
 
+/// What each kind is for, and what a new cell of it is called. A kind that is
+/// not here is known by its own name.
+const KINDS: &[(Kind, &str, &str)] = &[
+    (Kind::Value, "a quantity that you give", "input"),
+    (Kind::Formula, "a quantity worked out from others", "result"),
+    (
+        Kind::Surroundings,
+        "the air and the walls of the room",
+        "room",
+    ),
+    (
+        Kind::Source,
+        "what is hot: an opening, a pool, a body",
+        "hot",
+    ),
+    (
+        Kind::Screen,
+        "a plate, a mesh or a filter between what is hot and people",
+        "screen",
+    ),
+    (
+        Kind::Position,
+        "where a person stands, and for how long",
+        "person",
+    ),
+    (Kind::Curve, "irradiance against distance", "falloff"),
+    (Kind::Assessment, "a position judged by guidance", "limits"),
+    (Kind::Zone, "how far one rule reaches", "line"),
+    (Kind::Note, "words", "note"),
+];
+
 /// Returns what a kind of cell is for, in a few words.
 #[must_use]
-pub const fn about(kind: Kind) -> &'static str {
-    match kind {
-        Kind::Value => "a quantity that you give",
-        Kind::Formula => "a quantity worked out from others",
-        Kind::Surroundings => "the air and the walls of the room",
-        Kind::Source => "what is hot: an opening, a pool, a body",
-        Kind::Position => "where a person stands, and for how long",
-        Kind::Curve => "irradiance against distance",
-        Kind::Assessment => "a position judged by guidance",
-        Kind::Zone => "how far one rule reaches",
-        Kind::Note => "words",
-    }
+pub fn about(kind: Kind) -> &'static str {
+    KINDS
+        .iter()
+        .find(|(known, ..)| *known == kind)
+        .map_or("", |(_, about, _)| about)
+}
+
+/// Returns what a new cell of a kind is called.
+fn called(kind: Kind) -> &'static str {
+    KINDS
+        .iter()
+        .find(|(known, ..)| *known == kind)
+        .map_or_else(|| kind.name(), |(.., name)| name)
 }
 
 /// Returns a new cell and its place: after the selected one, else at the end.
@@ -35,18 +67,7 @@ pub fn cell(engine: &Engine, kind: Kind, selected: Option<CellId>) -> (Cell, usi
             .find(|cell| cell.kind == kind)
             .map(|cell| cell.name.clone())
     };
-    let base = match kind {
-        Kind::Value => "input",
-        Kind::Formula => "result",
-        Kind::Surroundings => "room",
-        Kind::Source => "hot",
-        Kind::Position => "person",
-        Kind::Curve => "falloff",
-        Kind::Assessment => "limits",
-        Kind::Zone => "line",
-        Kind::Note => "note",
-    };
-    let mut cell = Cell::new(kind, free(engine, base));
+    let mut cell = Cell::new(kind, free(engine, called(kind)));
     let mut fill = |field: &str, text: Option<String>| {
         if let Some(text) = text {
             cell = std::mem::replace(&mut cell, Cell::new(kind, "")).with(field, text);
@@ -55,12 +76,17 @@ pub fn cell(engine: &Engine, kind: Kind, selected: Option<CellId>) -> (Cell, usi
     let own = |text: &str| Some(text.to_owned());
     match kind {
         Kind::Value => fill("basis", own(Basis::Unconfirmed.words())),
-        Kind::Formula | Kind::Note => {}
         Kind::Surroundings => fill("air_temperature", own("25 °C")),
         Kind::Source => {
             fill("form", own("opening"));
             fill("outline", own("rectangle"));
             fill("z", own("1.2 m"));
+        }
+        Kind::Screen => {
+            fill("make", own("solid"));
+            fill("width", own("2 m"));
+            fill("height", own("2 m"));
+            fill("z", own("1 m"));
         }
         Kind::Position => {
             // Without a source it is placed by x and y.
@@ -85,6 +111,7 @@ pub fn cell(engine: &Engine, kind: Kind, selected: Option<CellId>) -> (Cell, usi
             fill("from", first(Kind::Source));
             fill("stay", own("8 h"));
         }
+        _ => {}
     }
     if kind == Kind::Assessment {
         let ids = crate::guidance::Library::shipped()

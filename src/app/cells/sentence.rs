@@ -1,9 +1,10 @@
-//! Each kind of cell as a sentence with the fields that can be changed in it.
+//! Each kind of cell as a sentence with the fields that can be changed in it:
+//! one table for the sentences, one for the fields that mean nothing yet.
 
 use crate::notebook::cell::{Cell, Form, Kind, Need};
 
 /// One piece of a sentence.
-#[derive(Clone, Debug, PartialEq, Eq)]
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Piece {
     /// The cell's name.
     Name,
@@ -15,27 +16,262 @@ pub enum Piece {
 
 use Piece::{Field, Name, Words};
 
-/// Returns the sentence of a cell.
-#[must_use]
-pub fn sentence(cell: &Cell) -> Vec<Piece> {
-    match cell.kind {
-        Kind::Value => vec![Name, Words("is"), Field("entry", "")],
-        Kind::Formula => vec![
+/// What must hold of a cell.
+#[derive(Clone, Copy, Debug)]
+enum When {
+    /// The field was typed.
+    Typed(&'static str),
+    /// It was left out.
+    Absent(&'static str),
+    /// It holds one of these words.
+    Is(&'static str, &'static [&'static str]),
+    /// It holds none of them.
+    IsNot(&'static str, &'static [&'static str]),
+}
+
+use When::{Absent, Is, IsNot, Typed};
+
+impl When {
+    fn holds(self, cell: &Cell) -> bool {
+        match self {
+            Typed(field) => cell.field(field).is_some(),
+            Absent(field) => cell.field(field).is_none(),
+            Is(field, words) => cell.text(field).is_some_and(|text| words.contains(&text)),
+            IsNot(field, words) => !cell.text(field).is_some_and(|text| words.contains(&text)),
+        }
+    }
+}
+
+/// A sentence: of a kind, where all this holds.
+struct Telling(Kind, &'static [When], &'static [Piece]);
+
+/// The sentences; the first that fits a cell is told. A kind without one is
+/// told by its name, and all its fields are listed.
+const TELLINGS: &[Telling] = &[
+    Telling(Kind::Value, &[], &[Name, Words("is"), Field("entry", "")]),
+    Telling(
+        Kind::Formula,
+        &[],
+        &[
             Name,
             Words("is"),
             Field("entry", ""),
             Words("in"),
             Field("unit", ""),
         ],
-        Kind::Surroundings => vec![
+    ),
+    Telling(
+        Kind::Surroundings,
+        &[],
+        &[
             Name,
             Words("has air at"),
             Field("air_temperature", ","),
             Words("walls at"),
             Field("radiant_temperature", ""),
         ],
-        Kind::Source => source(cell),
-        Kind::Position if cell.field("from").is_none() && cell.field("x").is_some() => vec![
+    ),
+    Telling(
+        Kind::Source,
+        &[Typed("spectrum")],
+        &[
+            Name,
+            Words("is a"),
+            Field("form", ","),
+            Field("outline", ","),
+            Words("at"),
+            Field("temperature", ","),
+            Words("ε by wavelength"),
+            Field("spectrum", ""),
+        ],
+    ),
+    Telling(
+        Kind::Source,
+        &[Is("form", &["opening"]), Is("outline", &["polygon"])],
+        &[
+            Name,
+            Words("is an"),
+            Field("form", ","),
+            Field("outline", ""),
+            Words("through"),
+            Field("vertices", ","),
+            Words("at"),
+            Field("temperature", ","),
+            Words("ε"),
+            Field("emissivity", ""),
+        ],
+    ),
+    Telling(
+        Kind::Source,
+        &[Is("outline", &["polygon"])],
+        &[
+            Name,
+            Words("is a"),
+            Field("form", ","),
+            Field("outline", ""),
+            Words("through"),
+            Field("vertices", ","),
+            Words("at"),
+            Field("temperature", ","),
+            Words("ε"),
+            Field("emissivity", ""),
+        ],
+    ),
+    Telling(
+        Kind::Source,
+        &[Is("outline", &["cylinder"])],
+        &[
+            Name,
+            Words("is a"),
+            Field("form", ","),
+            Field("outline", ""),
+            Field("diameter", ""),
+            Words("across,"),
+            Field("height", ""),
+            Words("from end to end, at"),
+            Field("temperature", ","),
+            Words("ε"),
+            Field("emissivity", ""),
+        ],
+    ),
+    Telling(
+        Kind::Source,
+        &[Is("outline", &["plate"])],
+        &[
+            Name,
+            Words("is a"),
+            Field("form", ","),
+            Field("outline", ""),
+            Field("width", ""),
+            Words("×"),
+            Field("height", ","),
+            Words("at"),
+            Field("temperature", ","),
+            Words("ε"),
+            Field("emissivity", ""),
+        ],
+    ),
+    Telling(
+        Kind::Source,
+        &[Is("form", &["opening"]), Is("outline", &["rectangle"])],
+        &[
+            Name,
+            Words("is an"),
+            Field("form", ","),
+            Field("outline", ""),
+            Field("width", ""),
+            Words("×"),
+            Field("height", ","),
+            Words("at"),
+            Field("temperature", ","),
+            Words("ε"),
+            Field("emissivity", ""),
+        ],
+    ),
+    Telling(
+        Kind::Source,
+        &[Is("form", &["pool"]), Is("outline", &["rectangle"])],
+        &[
+            Name,
+            Words("is a"),
+            Field("form", ","),
+            Field("outline", ""),
+            Field("width", ""),
+            Words("×"),
+            Field("length", ","),
+            Words("at"),
+            Field("temperature", ","),
+            Words("ε"),
+            Field("emissivity", ""),
+        ],
+    ),
+    Telling(
+        Kind::Source,
+        &[Is("form", &["opening"])],
+        &[
+            Name,
+            Words("is an"),
+            Field("form", ","),
+            Field("outline", ""),
+            Field("diameter", ""),
+            Words("across, at"),
+            Field("temperature", ","),
+            Words("ε"),
+            Field("emissivity", ""),
+        ],
+    ),
+    Telling(
+        Kind::Source,
+        &[],
+        &[
+            Name,
+            Words("is a"),
+            Field("form", ","),
+            Field("outline", ""),
+            Field("diameter", ""),
+            Words("across, at"),
+            Field("temperature", ","),
+            Words("ε"),
+            Field("emissivity", ""),
+        ],
+    ),
+    Telling(
+        Kind::Screen,
+        &[Is("make", &["mesh"])],
+        &[
+            Name,
+            Words("is a"),
+            Field("make", ""),
+            Words("screen"),
+            Field("width", ""),
+            Words("×"),
+            Field("height", ","),
+            Words("open by"),
+            Field("open_fraction", ","),
+            Words("its centre"),
+            Field("z", ""),
+            Words("high"),
+        ],
+    ),
+    Telling(
+        Kind::Screen,
+        &[Is("make", &["filter"])],
+        &[
+            Name,
+            Words("is a"),
+            Field("make", ""),
+            Words("screen"),
+            Field("width", ""),
+            Words("×"),
+            Field("height", ","),
+            Words("lets through"),
+            Field("transmittance", ""),
+            Words("of all and"),
+            Field("near_ir_transmittance", ""),
+            Words("of near infrared"),
+        ],
+    ),
+    Telling(
+        Kind::Screen,
+        &[],
+        &[
+            Name,
+            Words("is a"),
+            Field("make", ""),
+            Words("screen"),
+            Field("width", ""),
+            Words("×"),
+            Field("height", ","),
+            Words("its centre"),
+            Field("z", ""),
+            Words("high, facing"),
+            Field("heading", ""),
+        ],
+    ),
+    Telling(
+        Kind::Position,
+        &[Absent("from"), Typed("x")],
+        &[
             Name,
             Words("stands at"),
             Field("x", " east,"),
@@ -45,26 +281,42 @@ pub fn sentence(cell: &Cell) -> Vec<Piece> {
             Words("for"),
             Field("stay", ""),
         ],
-        Kind::Position => {
-            let mut pieces = vec![
-                Name,
-                Words("stands"),
-                Field("distance", ""),
-                Words("from"),
-                Field("from", ","),
-            ];
-            if cell.field("bearing").is_some() {
-                pieces.extend([Field("bearing", ""), Words("off its axis,")]);
-            }
-            pieces.extend([
-                Words("eye"),
-                Field("z", ","),
-                Words("for"),
-                Field("stay", ""),
-            ]);
-            pieces
-        }
-        Kind::Curve => vec![
+    ),
+    Telling(
+        Kind::Position,
+        &[Typed("bearing")],
+        &[
+            Name,
+            Words("stands"),
+            Field("distance", ""),
+            Words("from"),
+            Field("from", ","),
+            Field("bearing", ""),
+            Words("off its axis, eye"),
+            Field("z", ","),
+            Words("for"),
+            Field("stay", ""),
+        ],
+    ),
+    Telling(
+        Kind::Position,
+        &[],
+        &[
+            Name,
+            Words("stands"),
+            Field("distance", ""),
+            Words("from"),
+            Field("from", ","),
+            Words("eye"),
+            Field("z", ","),
+            Words("for"),
+            Field("stay", ""),
+        ],
+    ),
+    Telling(
+        Kind::Curve,
+        &[],
+        &[
             Name,
             Words("runs out from"),
             Field("from", ","),
@@ -75,14 +327,22 @@ pub fn sentence(cell: &Cell) -> Vec<Piece> {
             Words("at height"),
             Field("z", ""),
         ],
-        Kind::Assessment => vec![
+    ),
+    Telling(
+        Kind::Assessment,
+        &[],
+        &[
             Name,
             Words("judges"),
             Field("position", ""),
             Words("by"),
             Field("guidance", ""),
         ],
-        Kind::Zone => vec![
+    ),
+    Telling(
+        Kind::Zone,
+        &[],
+        &[
             Name,
             Words("is the ground around"),
             Field("from", ""),
@@ -92,38 +352,58 @@ pub fn sentence(cell: &Cell) -> Vec<Piece> {
             Field("guidance", ""),
             Words("allows"),
         ],
-        Kind::Note => vec![Field("text", "")],
-    }
-}
+    ),
+    Telling(Kind::Note, &[], &[Field("text", "")]),
+];
 
-fn source(cell: &Cell) -> Vec<Piece> {
-    let article = match cell.text("form") {
-        Some("opening") => "an",
-        _ => "a",
-    };
-    let mut pieces = vec![
-        Name,
-        Words("is"),
-        Words(article),
-        Field("form", ","),
-        Field("outline", ""),
-    ];
-    match (cell.text("outline"), cell.text("form")) {
-        (Some("rectangle"), Some("pool")) => {
-            pieces.extend([Field("width", ""), Words("×"), Field("length", ",")]);
-        }
-        (Some("rectangle"), _) => {
-            pieces.extend([Field("width", ""), Words("×"), Field("height", ",")]);
-        }
-        _ => pieces.extend([Field("diameter", ""), Words("across,")]),
-    }
-    pieces.extend([
-        Words("at"),
-        Field("temperature", ","),
-        Words("ε"),
-        Field("emissivity", ""),
-    ]);
-    pieces
+/// The fields that mean something only where all this holds; every other field
+/// of a kind always does.
+const MEANINGS: &[(Kind, &str, &[When])] = &[
+    (Kind::Source, "diameter", &[IsNot("outline", &["rectangle", "polygon", "plate"])]),
+    (Kind::Source, "width", &[Is("outline", &["rectangle", "plate"])]),
+    (Kind::Source, "height", &[Is("outline", &["rectangle", "cylinder", "plate"]), IsNot("form", &["pool"])]),
+    (Kind::Source, "length", &[Is("outline", &["rectangle"]), Is("form", &["pool"])]),
+    (Kind::Source, "vertices", &[Is("outline", &["polygon"])]),
+    (Kind::Source, "stance", &[Is("outline", &["cylinder"])]),
+    (Kind::Source, "wall_thickness", &[Is("form", &["opening"])]),
+    (Kind::Source, "wall", &[Is("form", &["opening"]), Typed("wall_thickness")]),
+    (Kind::Source, "tilt", &[IsNot("form", &["pool"]), IsNot("outline", &["sphere"])]),
+    (Kind::Source, "freeboard", &[Is("form", &["pool"])]),
+    (Kind::Source, "vessel_tilt", &[Is("form", &["pool"]), Typed("freeboard")]),
+    (Kind::Source, "wall_temperature", &[Is("form", &["pool"]), Typed("freeboard")]),
+    (Kind::Source, "wall_emissivity", &[Is("form", &["pool"]), Typed("freeboard")]),
+    (Kind::Source, "emissivity", &[Absent("spectrum")]),
+    (Kind::Source, "near_ir_emissivity", &[Absent("spectrum")]),
+    (Kind::Source, "spectrum", &[Absent("emissivity")]),
+    (Kind::Screen, "front_emissivity", &[Is("make", &["solid"])]),
+    (Kind::Screen, "back_emissivity", &[Is("make", &["solid"])]),
+    (Kind::Screen, "front_absorptance", &[Is("make", &["solid"])]),
+    (Kind::Screen, "back_absorptance", &[Is("make", &["solid"])]),
+    (Kind::Screen, "open_fraction", &[Is("make", &["mesh"])]),
+    (Kind::Screen, "transmittance", &[Is("make", &["filter"])]),
+    (Kind::Screen, "near_ir_transmittance", &[Is("make", &["filter"])]),
+    (Kind::Screen, "visible_transmittance", &[Is("make", &["filter"])]),
+    (Kind::Position, "x", &[Absent("from")]),
+    (Kind::Position, "y", &[Absent("from")]),
+    (
+        Kind::Position,
+        "surface_emissivity",
+        &[Typed("surface_temperature")],
+    ),
+];
+
+/// Returns the sentence of a cell.
+#[must_use]
+pub fn sentence(cell: &Cell) -> Vec<Piece> {
+    TELLINGS
+        .iter()
+        .find(|Telling(kind, when, _)| {
+            *kind == cell.kind && when.iter().all(|when| when.holds(cell))
+        })
+        .map_or_else(
+            || vec![Name, Words("is a"), Words(cell.kind.name())],
+            |Telling(_, _, pieces)| pieces.to_vec(),
+        )
 }
 
 /// Returns the fields that the sentence leaves out and this cell can use, in
@@ -146,31 +426,12 @@ pub fn others(cell: &Cell) -> Vec<&'static str> {
 
 /// Returns whether a field means something in this cell.
 fn fits(cell: &Cell, field: &str) -> bool {
-    if cell.field(field).is_some() {
-        return true;
-    }
-    match cell.kind {
-        Kind::Source => {
-            let (form, outline) = (cell.text("form"), cell.text("outline"));
-            match field {
-                "diameter" => matches!(outline, Some("disc" | "sphere")),
-                "width" => outline == Some("rectangle"),
-                "height" => outline == Some("rectangle") && form != Some("pool"),
-                "length" => outline == Some("rectangle") && form == Some("pool"),
-                "wall_thickness" | "tilt" => form == Some("opening"),
-                "freeboard" => form == Some("pool"),
-                _ => true,
-            }
-        }
-        Kind::Position => {
-            let by_source = cell.field("from").is_some();
-            match field {
-                "x" | "y" => !by_source,
-                _ => true,
-            }
-        }
-        _ => true,
-    }
+    // What was typed is shown, whatever it means.
+    cell.field(field).is_some()
+        || MEANINGS
+            .iter()
+            .filter(|(kind, name, _)| *kind == cell.kind && *name == field)
+            .all(|(_, _, when)| when.iter().all(|when| when.holds(cell)))
 }
 
 /// Returns the words that stand where a field was left out.
@@ -182,6 +443,13 @@ pub fn absent(kind: Kind, field: &str) -> &'static str {
         (Kind::Position, "stay") => "how long?",
         (Kind::Curve | Kind::Zone, "heading") => "straight out",
         (Kind::Source, "near_ir_emissivity") => "taken from ε",
+        (Kind::Source, "wall") => "reradiating",
+        (Kind::Source, "stance") => "upright",
+        (Kind::Source, "wall_temperature") => "that of the melt",
+        (Kind::Surroundings, "absorption") => "off",
+        (Kind::Screen, "front_emissivity" | "back_emissivity") => "0.9",
+        (Kind::Screen, "front_absorptance" | "back_absorptance") => "as of a soiled plate",
+        (Kind::Screen, "visible_transmittance") => "all",
         _ => match kind.field(field).map(|spec| spec.need) {
             Some(Need::Default(text)) => text,
             Some(Need::Required) => "not given",
@@ -242,28 +510,68 @@ pub fn is_chosen(cell: &Cell, field: &str) -> bool {
     )
 }
 
+/// Returns whether a field is prose, edited over several lines.
+#[must_use]
+pub fn is_prose(cell: &Cell, field: &str) -> bool {
+    matches!(
+        cell.kind.field(field).map(|spec| spec.form),
+        Some(Form::Text)
+    )
+}
+
+/// Returns whether a field is an input that came from somewhere.
+#[must_use]
+pub fn is_input(cell: &Cell, field: &str) -> bool {
+    matches!(
+        cell.kind.field(field).map(|spec| spec.form),
+        Some(Form::Entry(_) | Form::Pairs(_) | Form::Facing)
+    )
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
 
     #[test]
-    fn every_field_of_a_kind_is_told_or_listed() {
-        for kind in Kind::ALL {
-            let cell = Cell::new(kind, "it");
-            for piece in sentence(&cell) {
+    fn the_tables_name_fields_that_their_kinds_have() {
+        for Telling(kind, when, pieces) in TELLINGS {
+            for piece in *pieces {
                 if let Field(field, _) = piece {
                     assert!(kind.field(field).is_some(), "{kind}: {field}");
                 }
             }
-            if kind == Kind::Source || kind == Kind::Position {
-                continue;
+            for when in *when {
+                let (Typed(field) | Absent(field) | Is(field, _) | IsNot(field, _)) = when;
+                assert!(kind.field(field).is_some(), "{kind}: {field}");
             }
-            let told = sentence(&cell)
+        }
+        for (kind, field, _) in MEANINGS {
+            assert!(kind.field(field).is_some(), "{kind}: {field}");
+        }
+    }
+
+    #[test]
+    fn every_field_of_a_kind_is_told_or_listed() {
+        for kind in Kind::ALL {
+            let cell = Cell::new(kind, "it");
+            let told: Vec<&str> = sentence(&cell)
                 .iter()
-                .filter(|piece| matches!(piece, Field(..)))
-                .count();
-            let all = told + others(&cell).len();
-            assert_eq!(all, kind.fields().len(), "{kind}");
+                .filter_map(|piece| match piece {
+                    Field(field, _) => Some(*field),
+                    Name | Words(_) => None,
+                })
+                .collect();
+            let listed = others(&cell);
+            for spec in kind.fields() {
+                let conditional = MEANINGS
+                    .iter()
+                    .any(|(of, name, _)| *of == kind && *name == spec.name);
+                assert!(
+                    conditional || told.contains(&spec.name) || listed.contains(&spec.name),
+                    "{kind}: {}",
+                    spec.name
+                );
+            }
         }
     }
 

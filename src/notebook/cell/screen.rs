@@ -275,6 +275,7 @@ impl StandTask {
                 clear: self.clear,
             }),
             frame: Some(frame),
+            tunnel: None,
             region,
         })))
     }

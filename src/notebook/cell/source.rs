@@ -10,6 +10,7 @@ use crate::notebook::datum::{Datum, Output, Slot};
 use crate::notebook::engine::Linker;
 use crate::notebook::task::{Inputs, Task};
 use crate::physics::planck;
+use shape::Behind;
 use crate::units::{Dimension, Quantity};
 
 pub use emission::Emitted;
@@ -273,17 +274,28 @@ impl OutcomeTask {
     }
 
     pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
-        let area = inputs.shape(self.shape).region.area();
+        let shape = inputs.shape(self.shape);
+        let area = shape.region.area();
         let emission = &inputs.emission(self.emission).face;
         let temperature = inputs.si(self.temperature);
+        // Of a thin source: what leaves it over what a black one would send.
+        let emissivity = emission.total / planck::exitance(temperature);
+        let (effective_emissivity, power) = match &shape.tunnel {
+            None => (emissivity, emission.total * area),
+            Some(tunnel) => {
+                let effective = tunnel
+                    .effective_emissivity(emissivity.min(1.0))
+                    .map_err(|error| Diagnostic::of_cell("no-such-emission", error.to_string()))?;
+                (effective, effective * planck::exitance(temperature) * area)
+            }
+        };
         let outcome = Outcome {
             exitance: emission.total,
             near_infrared: emission.near_infrared,
-            power: emission.total * area,
+            power,
             peak_wavelength: planck::peak_wavelength(temperature),
             area,
-            // Of a thin source: what leaves it over what a black one would send.
-            effective_emissivity: emission.total / planck::exitance(temperature),
+            effective_emissivity,
         };
         if outcome.power.is_finite() && outcome.effective_emissivity.is_finite() {
             Ok(Datum::Source(outcome))
@@ -335,8 +347,9 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
         }
     }
     let place = ["x", "y", "z"].map(|field| linker.always(field));
-    let [heading, tilt, freeboard, temperature] =
-        ["heading", "tilt", "freeboard", "temperature"].map(|field| linker.always(field));
+    let [heading, tilt, temperature] =
+        ["heading", "tilt", "temperature"].map(|field| linker.always(field));
+    let behind = kind.map_or(Behind::Nothing, |kind| shape::behind(linker, kind));
     let surface = emission::surface_of(linker);
     let shape = kind.zip(outline).map(|(kind, outline)| {
         Task::Shape(ShapeTask {
@@ -345,15 +358,17 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
             place,
             heading,
             tilt,
-            freeboard,
+            behind,
         })
     });
     let shape = linker.group("shape", shape);
+    let parts = emission::parts_of(linker, behind, shape);
     let emission = kind.zip(surface).map(|(kind, surface)| {
         Task::Emission(EmissionTask {
             kind,
             temperature,
             surface,
+            parts,
         })
     });
     let emission = linker.group("emission", emission);

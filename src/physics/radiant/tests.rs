@@ -12,8 +12,7 @@ fn room_alone_gives_its_own_temperature() {
     let sphere = mean_temperature_of_sphere(&[], &[], ROOM).expect("a room");
     assert!((sphere - ROOM).abs() < 1e-10, "{sphere}");
     for posture in [Posture::Standing, Posture::Seated] {
-        let person =
-            mean_temperature_of_person(&[], &[], ROOM, posture, DVec3::Y).expect("a room");
+        let person = mean_temperature_of_person(&[], &[], ROOM, posture, DVec3::Y).expect("a room");
         assert!((person - ROOM).abs() < 1e-10, "{person}");
     }
     // A source as warm as the room changes nothing.
@@ -65,14 +64,8 @@ fn sphere_takes_up_the_mean_over_all_normals() {
 /// front and back are alike, and a source adds.
 #[test]
 fn person_takes_up_most_from_in_front() {
-    let door = Region::rectangle(
-        DVec3::new(0.0, 2.5, 0.2),
-        DVec3::NEG_Y,
-        DVec3::Z,
-        0.9,
-        0.7,
-    )
-    .expect("a door");
+    let door = Region::rectangle(DVec3::new(0.0, 2.5, 0.2), DVec3::NEG_Y, DVec3::Z, 0.9, 0.7)
+        .expect("a door");
     let seen = view(&door, DVec3::ZERO);
     let of = |posture, faces| {
         mean_temperature_of_person(std::slice::from_ref(&seen), &[290e3], ROOM, posture, faces)

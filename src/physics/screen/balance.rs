@@ -197,8 +197,7 @@ fn screen_in_balance(
         let temperature = plate.temperature(taken.absorbed());
         let convected = plate.convected(temperature);
         let black = planck::exitance(temperature);
-        residual = residual
-            .max((plate.emissivities * black + convected - taken.absorbed()).abs());
+        residual = residual.max((plate.emissivities * black + convected - taken.absorbed()).abs());
         found.mean_temperature += share * temperature;
         found.absorbed += share * (taken.hot[FRONT] + taken.hot[BACK]);
         found.convected += share * convected;

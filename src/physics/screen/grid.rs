@@ -54,8 +54,12 @@ impl Grid {
         let scale = (values.iter().sum::<f64>() / 9.0).max(LITTLE);
         let spread = |places: [usize; 3]| {
             let of = places.map(|place| values[place]);
-            let most = of.iter().fold(f64::NEG_INFINITY, |most, value| most.max(*value));
-            let least = of.iter().fold(f64::INFINITY, |least, value| least.min(*value));
+            let most = of
+                .iter()
+                .fold(f64::NEG_INFINITY, |most, value| most.max(*value));
+            let least = of
+                .iter()
+                .fold(f64::INFINITY, |least, value| least.min(*value));
             (most - least) / scale
         };
         let needed = |lines: [[usize; 3]; 3]| {

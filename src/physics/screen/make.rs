@@ -12,6 +12,9 @@ use crate::physics::surface::Emission;
 /// Common practice, no source.
 pub const SOILED: f64 = 0.6;
 
+/// The least emissivity, and share of wires: less gives off nothing to speak of.
+const LEAST: f64 = 0.001;
+
 /// What a screen is made of.
 ///
 /// Front is the face that the normal points from.
@@ -19,7 +22,8 @@ pub const SOILED: f64 = 0.6;
 pub enum Make {
     /// A plate that lets nothing through.
     Solid {
-        /// The emissivities of front and back, in (0, 1].
+        /// The emissivities of front and back, from 0.001 to 1: no metal is below
+        /// 0.01.
         emissivities: [f64; 2],
         /// The absorptances of front and back for radiation from hot sources,
         /// in (0, 1].
@@ -27,7 +31,7 @@ pub enum Make {
     },
     /// Wire mesh or a chain curtain.
     Mesh {
-        /// The share of its area that lets through, in [0, 1).
+        /// The share of its area that lets through, from 0 to 0.999.
         open_fraction: f64,
     },
     /// Filter glass.
@@ -48,7 +52,7 @@ impl Make {
     ///
     /// # Errors
     ///
-    /// [`Error::OutOfRange`] for an emissivity not in (0, 1].
+    /// [`Error::OutOfRange`] for an emissivity not from 0.001 to 1.
     pub fn soiled(front_emissivity: f64, back_emissivity: f64) -> Result<Self, Error> {
         Self::Solid {
             emissivities: [front_emissivity, back_emissivity],
@@ -75,21 +79,30 @@ impl Make {
                 emissivities,
                 absorptances,
             } => {
-                let names = [
+                for (parameter, value) in [
                     ("front emissivity", emissivities[0]),
                     ("back emissivity", emissivities[1]),
+                ] {
+                    if !(LEAST..=1.0).contains(&value) {
+                        return Err(Error::OutOfRange {
+                            parameter,
+                            range: "from 0.001 to 1",
+                            value,
+                        });
+                    }
+                }
+                for (name, value) in [
                     ("front absorptance", absorptances[0]),
                     ("back absorptance", absorptances[1]),
-                ];
-                for (name, value) in names {
+                ] {
                     let _ = positive(name, value, 1.0, "above 0 and at most 1")?;
                 }
             }
             Self::Mesh { open_fraction } => {
-                if !(0.0..1.0).contains(&open_fraction) {
+                if !(0.0..=1.0 - LEAST).contains(&open_fraction) {
                     return Err(Error::OutOfRange {
                         parameter: "open fraction",
-                        range: "from 0 to below 1",
+                        range: "from 0 to 0.999",
                         value: open_fraction,
                     });
                 }
@@ -134,8 +147,8 @@ impl Make {
             } => {
                 let near_infrared = near * emission.near_infrared;
                 let infrared_a = emission.infrared_a.min(near_infrared);
-                let skin = near_infrared
-                    + visible * (emission.skin - emission.near_infrared).max(0.0);
+                let skin =
+                    near_infrared + visible * (emission.skin - emission.near_infrared).max(0.0);
                 let best = if emission.infrared_a > 0.0 {
                     visible.max(infrared_a / emission.infrared_a)
                 } else {
@@ -199,9 +212,7 @@ impl Make {
     pub(super) fn absorbed(&self, face: usize, emission: &Emission) -> f64 {
         match self {
             Self::Solid { absorptances, .. } => absorptances[face] * emission.total,
-            Self::Mesh { .. } | Self::Filter { .. } => {
-                emission.total - self.passed(emission).total
-            }
+            Self::Mesh { .. } | Self::Filter { .. } => emission.total - self.passed(emission).total,
         }
     }
 
@@ -308,15 +319,15 @@ mod tests {
         for (made, expected) in [
             (
                 Make::soiled(0.0, 0.5),
-                "front emissivity must be above 0 and at most 1, found 0",
+                "front emissivity must be from 0.001 to 1, found 0",
             ),
             (
                 Make::soiled(0.5, f64::NAN),
-                "back emissivity must be above 0 and at most 1, found NaN",
+                "back emissivity must be from 0.001 to 1, found NaN",
             ),
             (
                 Make::Mesh { open_fraction: 1.0 }.checked(),
-                "open fraction must be from 0 to below 1, found 1",
+                "open fraction must be from 0 to 0.999, found 1",
             ),
             (
                 filter(1.5, 0.1, 0.1).checked(),

@@ -71,7 +71,7 @@ impl Screen {
             if reflectance <= REFLECTING || (point - self.centre).dot(normal) <= 0.0 {
                 continue;
             }
-            let outline = self.piece(face, [-1.0; 2], [1.0; 2]);
+            let outline = self.outline(face);
             let pictures = parts
                 .iter()
                 .map(|part| Part {
@@ -109,7 +109,8 @@ impl Screen {
         let turned = |vector: DVec3| vector - 2.0 * vector.dot(self.normal) * self.normal;
         let place = |place: DVec3| self.centre + turned(place - self.centre);
         // Backwards, so that they go round as before when seen from in front.
-        let round = |vertices: &[DVec3]| vertices.iter().rev().map(|vertex| place(*vertex)).collect();
+        let round =
+            |vertices: &[DVec3]| vertices.iter().rev().map(|vertex| place(*vertex)).collect();
         match region {
             Region::Disc {
                 centre,
@@ -138,5 +139,93 @@ impl Screen {
                 radius: *radius,
             },
         }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::physics::view_factor::disc;
+
+    /// A screen 2 m in front of a disc in a wall, its front towards it.
+    fn screen(width: f64, height: f64, make: Make) -> Screen {
+        Screen::new(DVec3::Y * 2.0, DVec3::NEG_Y, DVec3::Z, width, height, make).expect("a screen")
+    }
+
+    fn polished() -> Make {
+        Make::soiled(0.1, 0.9).expect("a make")
+    }
+
+    fn source() -> Vec<Part> {
+        vec![Part::bare(
+            Region::disc(DVec3::ZERO, DVec3::Y, 0.4).expect("a disc"),
+        )]
+    }
+
+    #[test]
+    fn picture_lies_as_far_behind_as_the_source_before() {
+        // From 1.2 m before a large mirror the disc is seen 3.2 m off.
+        let found = screen(50.0, 50.0, polished())
+            .images(&source(), DVec3::Y * 0.8)
+            .expect("pictures");
+        let [image] = &found[..] else {
+            panic!("{found:?}")
+        };
+        let expected = disc::from_coaxial_element(0.4, 3.2).expect("a disc");
+        let factor = image.view.factor(DVec3::Y);
+        assert!(
+            (factor / expected - 1.0).abs() < 1e-9,
+            "{factor} against {expected}"
+        );
+        assert_eq!((image.part, image.reflectance), (0, 0.9));
+        assert_eq!(image.view.factor(DVec3::NEG_Y), 0.0);
+    }
+
+    #[test]
+    fn picture_is_cut_by_the_outline_of_the_mirror() {
+        // Through a square of 0.1 m the disc is more than covered: what is seen
+        // is the square itself.
+        let small = screen(0.1, 0.1, polished());
+        let found = small.images(&source(), DVec3::Y * 0.8).expect("pictures");
+        let [image] = &found[..] else {
+            panic!("{found:?}")
+        };
+        let outline = small
+            .region()
+            .view(DVec3::Y * 0.8)
+            .into_view()
+            .expect("ahead");
+        let (factor, expected) = (image.view.factor(DVec3::Y), outline.factor(DVec3::Y));
+        assert!(
+            (factor / expected - 1.0).abs() < 1e-6,
+            "{factor} against {expected}"
+        );
+        // Aside, the picture lies outside the small square.
+        let found = small
+            .images(&source(), DVec3::new(3.0, 0.8, 0.0))
+            .expect("pictures");
+        assert!(found.is_empty(), "{found:?}");
+    }
+
+    #[test]
+    fn no_picture_from_behind_or_in_a_dull_plate() {
+        let from_behind = screen(2.0, 2.0, polished())
+            .images(&source(), DVec3::Y * 3.0)
+            .expect("pictures");
+        assert!(from_behind.is_empty(), "{from_behind:?}");
+        for make in [
+            Make::soiled(0.9, 0.1).expect("a make"),
+            Make::Mesh { open_fraction: 0.2 },
+        ] {
+            let found = screen(2.0, 2.0, make)
+                .images(&source(), DVec3::Y * 0.8)
+                .expect("pictures");
+            assert!(found.is_empty(), "{make:?}: {found:?}");
+        }
+        // Behind a mirror turned away from it there is nothing to see either.
+        let away = Screen::new(DVec3::Y * 2.0, DVec3::Y, DVec3::Z, 2.0, 2.0, polished())
+            .expect("a screen");
+        let found = away.images(&source(), DVec3::Y * 3.0).expect("pictures");
+        assert!(found.is_empty(), "{found:?}");
     }
 }

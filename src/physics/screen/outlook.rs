@@ -5,7 +5,7 @@ use glam::DVec3;
 
 use super::{BACK, FRONT, Screen};
 use crate::physics::Error;
-use crate::physics::scene::{Glimpse, Part, Scene, Stance};
+use crate::physics::scene::{Glimpse, Part, Scene};
 use crate::physics::surface::Emission;
 
 /// What one face sees from one place.
@@ -62,22 +62,18 @@ impl<'a> Surroundings<'a> {
         let looked = self.scene.look(place);
         let sources = self.emissions.len();
         let faces = 2 * self.screens.len();
-        for part in 0..sources + faces {
-            // Its own two faces it always touches.
-            if looked.stance(part) == Stance::Touching
-                && (part < sources || (part - sources) / 2 != screen)
-            {
-                return Err(match part.checked_sub(sources) {
-                    None => Error::TouchesSource {
-                        screen: screen + 1,
-                        part: part + 1,
-                    },
-                    Some(face) => Error::TouchesScreen {
-                        screen: screen + 1,
-                        other: face / 2 + 1,
-                    },
-                });
-            }
+        if let Some(part) = looked.touched().filter(|part| *part < sources) {
+            return Err(Error::TouchesSource {
+                screen: screen + 1,
+                part: part + 1,
+            });
+        }
+        let lies_on = |other: &usize| *other != screen && self.screens[*other].has(place);
+        if let Some(other) = (0..self.screens.len()).find(lies_on) {
+            return Err(Error::TouchesScreen {
+                screen: screen + 1,
+                other: other + 1,
+            });
         }
         let own = &self.screens[screen];
         Ok([FRONT, BACK].map(|face| {

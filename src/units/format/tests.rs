@@ -156,3 +156,48 @@ fn the_unit_fits_the_size() {
     let other = natural_unit(Dimension::AREA, 0.5, Some(&feet));
     assert_eq!(other.symbol(), "m²", "a hint of another kind is left aside");
 }
+
+#[test]
+fn zeros_that_a_value_does_not_need_are_left_out() {
+    let literal = |text: &str| {
+        crate::units::Literal::read(text)
+            .expect("this is a literal")
+            .quantity()
+    };
+    for (text, expected) in [
+        ("0.63 m²", "0.63 m²"),
+        ("1250 °C", "1250 °C"),
+        ("2.5 m", "2.5 m"),
+        ("0 m", "0 m"),
+        ("-4.20 m", "−4.2 m"),
+        ("12346 m", "12\u{202f}350 m"),
+        ("0.123456", "0.1235"),
+    ] {
+        assert_eq!(at_most(literal(text), None, 4), expected, "{text}");
+    }
+    // A product whose last bits are noise needs no more figures than it has.
+    let area = Quantity::new(0.9 * 0.7, Dimension::AREA);
+    assert_eq!(at_most(area, None, 4), "0.63 m²");
+}
+
+#[test]
+fn feet_go_up_to_the_next_half() {
+    // 1 ft is 0.3048 m exactly (international yard and pound agreement, 1959).
+    for (metres, expected) in [
+        (0.3048, "1 ft"),
+        (0.305, "1.5 ft"),
+        (19.05, "62.5 ft"),
+        (18.9, "62.5 ft"),
+        (0.0, "0 ft"),
+    ] {
+        assert_eq!(safe_feet(metres), expected, "{metres} m");
+    }
+    assert_eq!(safe_feet(f64::NAN), NOT_FINITE);
+}
+
+#[test]
+fn a_limit_that_is_reached_at_once_says_the_second() {
+    for (seconds, expected) in [(3.9, "3 s"), (0.2, "0 s"), (-1.0, "0 s"), (95.0, "95 s")] {
+        assert_eq!(reached(seconds), expected, "{seconds} s");
+    }
+}

@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use super::shape::Behind;
 use super::{Kind, POOL_NEAR_INFRARED};
 use crate::graph::Node;
 use crate::notebook::Diagnostic;
@@ -19,17 +20,6 @@ pub struct Emitted {
     pub face: Emission,
     /// What each part of the shape sends.
     pub parts: Vec<Emission>,
-}
-
-impl Emitted {
-    /// Returns what is sent where all of it is of one exitance.
-    #[must_use]
-    pub fn simple(face: Emission) -> Emitted {
-        Emitted {
-            face,
-            parts: vec![face],
-        }
-    }
 }
 
 /// How strongly a surface emits, with the nodes of what was typed.
@@ -50,6 +40,23 @@ pub(in crate::notebook) struct EmissionTask {
     pub(super) kind: Kind,
     pub(super) temperature: Node,
     pub(super) surface: Surface,
+    /// Its parts, where there may be more than one.
+    pub(super) parts: Parts,
+}
+
+/// What may emit beside the hot surface itself.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub(in crate::notebook) enum Parts {
+    /// Nothing.
+    Face,
+    /// The tunnel through the wall, whose zones are in the shape.
+    Tunnel { shape: Node },
+    /// The inner wall of a vessel above the melt.
+    Vessel {
+        shape: Node,
+        temperature: Option<Node>,
+        emissivity: Node,
+    },
 }
 
 impl EmissionTask {
@@ -64,6 +71,18 @@ impl EmissionTask {
                 nodes.extend(near_infrared);
             }
             Surface::Spectral(rows) => nodes.extend(rows.iter().flatten()),
+        }
+        match self.parts {
+            Parts::Face => {}
+            Parts::Tunnel { shape } => nodes.push(shape),
+            Parts::Vessel {
+                shape,
+                temperature,
+                emissivity,
+            } => {
+                nodes.extend([shape, emissivity]);
+                nodes.extend(temperature);
+            }
         }
     }
 
@@ -90,11 +109,40 @@ impl EmissionTask {
                 Emission::spectral(temperature, &spectrum)
             }
         };
-        face.map(|face| Datum::Emission(Arc::new(Emitted::simple(face))))
-            .map_err(|error| {
-                Diagnostic::of_field("temperature", "no-such-emission", error.to_string())
-                    .with_hint("check the temperature and the emissivities")
-            })
+        let fault = |error: physics::Error| {
+            Diagnostic::of_field("temperature", "no-such-emission", error.to_string())
+                .with_hint("check the temperature and the emissivities")
+        };
+        let face = face.map_err(fault)?;
+        let parts = match self.parts {
+            Parts::Face => vec![face],
+            Parts::Tunnel { shape } => match &inputs.shape(shape).tunnel {
+                None => vec![face],
+                Some(tunnel) => tunnel.emissions(&face).map_err(fault)?,
+            },
+            Parts::Vessel {
+                shape,
+                temperature: own,
+                emissivity,
+            } => {
+                let mut parts = vec![face];
+                if inputs.shape(shape).parts.len() > 1 {
+                    let temperature = inputs.maybe(own).unwrap_or(temperature);
+                    let emissivity = inputs.si(emissivity);
+                    let wall = Emission::grey(temperature, emissivity, emissivity);
+                    parts.push(wall.map_err(|error| {
+                        Diagnostic::of_field(
+                            "wall_temperature",
+                            "no-such-emission",
+                            error.to_string(),
+                        )
+                        .with_hint("check the wall's temperature and emissivity")
+                    })?);
+                }
+                parts
+            }
+        };
+        Ok(Datum::Emission(Arc::new(Emitted { face, parts })))
     }
 }
 
@@ -107,6 +155,19 @@ fn of_spectrum(error: physics::Error) -> Diagnostic {
             fault.in_item(u16::try_from(row.saturating_sub(1)).ok().map(|row| (row, 0)))
         }
         _ => fault,
+    }
+}
+
+/// Reads what may emit beside the hot surface.
+pub(super) fn parts_of(linker: &mut Linker<'_>, behind: Behind, shape: Node) -> Parts {
+    match behind {
+        Behind::Nothing => Parts::Face,
+        Behind::Wall { .. } => Parts::Tunnel { shape },
+        Behind::Vessel { .. } => Parts::Vessel {
+            shape,
+            temperature: linker.entry("wall_temperature"),
+            emissivity: linker.always("wall_emissivity"),
+        },
     }
 }
 

@@ -10,6 +10,8 @@ use crate::notebook::Diagnostic;
 use crate::notebook::datum::Datum;
 use crate::notebook::engine::Linker;
 use crate::notebook::task::Inputs;
+use crate::physics::opening::{Opening, Walls};
+use crate::physics::pool::Pool;
 use crate::physics::{self, region::Region};
 use crate::physics::scene::{Barrier, Part};
 
@@ -42,7 +44,7 @@ pub(in crate::notebook) enum Outline {
 }
 
 /// The place and the outline of a source or a screen in the room.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Debug)]
 pub struct Shape {
     /// The outline that people see first: of an opening its outer edge, of a
     /// pool its rim.
@@ -62,6 +64,22 @@ pub struct Shape {
     pub barrier: Option<Barrier>,
     /// How a screen stands.
     pub frame: Option<Frame>,
+    /// The opening through a thick wall, with its walls in balance.
+    pub tunnel: Option<Arc<Opening>>,
+}
+
+impl PartialEq for Shape {
+    /// The tunnel follows from the outline, the depth and the parts.
+    fn eq(&self, other: &Shape) -> bool {
+        self.region == other.region
+            && self.kind == other.kind
+            && self.centre == other.centre
+            && self.ahead == other.ahead
+            && self.depth == other.depth
+            && self.parts == other.parts
+            && self.barrier == other.barrier
+            && self.frame == other.frame
+    }
 }
 
 /// How a flat rectangle stands: its directions, and its sizes in m.
@@ -91,6 +109,7 @@ impl Shape {
             parts: vec![part],
             barrier: None,
             frame: None,
+            tunnel: None,
         }
     }
 
@@ -141,6 +160,17 @@ pub fn direction(heading: f64) -> DVec3 {
     DVec3::new(heading.sin(), heading.cos(), 0.0)
 }
 
+/// What lies behind the outline of a source, with the nodes of its sizes.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub(in crate::notebook) enum Behind {
+    /// Nothing that was given.
+    Nothing,
+    /// A wall with a tunnel through it.
+    Wall { thickness: Node, walls: Walls },
+    /// A vessel: the melt lies below its rim, and the vessel leans.
+    Vessel { freeboard: Node, lean: Node },
+}
+
 /// Works out where a source is.
 #[derive(Clone, Debug, PartialEq)]
 pub(in crate::notebook) struct ShapeTask {
@@ -149,7 +179,8 @@ pub(in crate::notebook) struct ShapeTask {
     pub(super) place: [Node; 3],
     pub(super) heading: Node,
     pub(super) tilt: Node,
-    pub(super) freeboard: Node,
+    /// What lies behind the outline.
+    pub(super) behind: Behind,
 }
 
 impl ShapeTask {
@@ -164,23 +195,15 @@ impl ShapeTask {
             Outline::Plate { width, height } => nodes.extend([width, height]),
         }
         nodes.extend(self.place);
-        nodes.extend([self.heading, self.tilt, self.freeboard]);
+        nodes.extend([self.heading, self.tilt]);
+        match self.behind {
+            Behind::Nothing => {}
+            Behind::Wall { thickness, .. } => nodes.push(thickness),
+            Behind::Vessel { freeboard, lean } => nodes.extend([freeboard, lean]),
+        }
     }
 
     pub(in crate::notebook) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
-        if self.kind == Kind::Pool && inputs.si(self.freeboard) > 0.0 {
-            // A rim hides metal, but the hot wall above the metal shows: leaving
-            // both out could be on the unsafe side.
-            return Err(Diagnostic::of_field(
-                "freeboard",
-                "not-worked-out",
-                "expected a full pool, found a freeboard: the rim and the inner wall above the \
-                 metal are not worked out in this version",
-            )
-            .with_hint(
-                "write `0 m` and take the rim as the metal's surface, with its emissivity",
-            ));
-        }
         let [x, y, z] = self.place.map(|node| inputs.si(node));
         let centre = DVec3::new(x, y, z);
         let heading = inputs.si(self.heading);
@@ -192,10 +215,45 @@ impl ShapeTask {
                 (ahead * cos + DVec3::Z * sin, DVec3::Z * cos - ahead * sin)
             }
         };
-        let region = self.region(inputs, centre, normal, up)?;
-        Ok(Datum::Shape(Arc::new(Shape::simple(
-            region, self.kind, centre, ahead,
-        ))))
+        let simple = |region| Shape::simple(region, self.kind, centre, ahead);
+        let shape = match self.behind {
+            Behind::Nothing => simple(self.region(inputs, centre, normal, up)?),
+            Behind::Wall { thickness, walls } => {
+                let mut shape = simple(self.region(inputs, centre, normal, up)?);
+                let depth = inputs.si(thickness);
+                if depth > 0.0 {
+                    let opening =
+                        Opening::new(shape.region.clone(), depth, walls).map_err(of_wall)?;
+                    shape.depth = depth;
+                    shape.parts = opening.parts().to_vec();
+                    shape.tunnel = Some(Arc::new(opening));
+                }
+                shape
+            }
+            Behind::Vessel { freeboard, lean } => {
+                let (freeboard, lean) = (inputs.si(freeboard), inputs.si(lean));
+                if freeboard == 0.0 && lean == 0.0 {
+                    simple(self.region(inputs, centre, normal, up)?)
+                } else {
+                    let (sin, cos) = lean.sin_cos();
+                    let axis = DVec3::Z * cos + ahead * sin;
+                    let along = ahead * cos - DVec3::Z * sin;
+                    let mouth = centre + axis * freeboard;
+                    let rim = self.region(inputs, mouth, axis, along)?;
+                    let pool = if lean == 0.0 {
+                        Pool::new(self.region(inputs, centre, normal, up)?, freeboard)
+                    } else {
+                        Pool::tilted(rim.clone(), z)
+                    };
+                    let pool = pool.map_err(of_vessel)?;
+                    let mut shape = simple(rim);
+                    shape.depth = freeboard;
+                    shape.parts = pool.parts().to_vec();
+                    shape
+                }
+            }
+        };
+        Ok(Datum::Shape(Arc::new(shape)))
     }
 
     /// Returns the outline in the room.
@@ -252,6 +310,56 @@ fn of_polygon(error: physics::Error) -> Diagnostic {
     Diagnostic::of_field("vertices", "no-such-shape", error.to_string())
         .with_hint("give the corners in order around the outline, each once")
         .in_item(item.map(|pair| (pair, 0)))
+}
+
+/// Returns the fault of a wall at its place.
+fn of_wall(error: physics::Error) -> Diagnostic {
+    use physics::Error;
+    let field = match error {
+        Error::NotConvex { .. } => "vertices",
+        _ => "wall_thickness",
+    };
+    Diagnostic::of_field(field, "no-such-wall", error.to_string())
+        .with_hint("check the wall's thickness and the outline of the opening")
+}
+
+/// Returns the fault of a vessel at its place.
+fn of_vessel(error: physics::Error) -> Diagnostic {
+    use physics::Error;
+    let field = match error {
+        Error::NotConvex { .. } => "vertices",
+        Error::OutOfRange { parameter, .. } if parameter == "freeboard" => "freeboard",
+        _ => "vessel_tilt",
+    };
+    Diagnostic::of_field(field, "no-such-vessel", error.to_string())
+        .with_hint("check the freeboard and how far the vessel leans")
+}
+
+/// Reads what lies behind the outline.
+pub(super) fn behind(linker: &mut Linker<'_>, kind: Kind) -> Behind {
+    match kind {
+        Kind::Opening => {
+            let cold = linker.word("wall") == Some("cold");
+            let thickness = linker.always("wall_thickness");
+            if linker.has("wall_thickness") {
+                Behind::Wall {
+                    thickness,
+                    walls: if cold {
+                        Walls::Cold
+                    } else {
+                        Walls::Reradiating
+                    },
+                }
+            } else {
+                Behind::Nothing
+            }
+        }
+        Kind::Pool if linker.has("freeboard") || linker.has("vessel_tilt") => Behind::Vessel {
+            freeboard: linker.always("freeboard"),
+            lean: linker.always("vessel_tilt"),
+        },
+        Kind::Pool | Kind::Body | Kind::Screen => Behind::Nothing,
+    }
 }
 
 /// Reads the outline that goes with a form, or says what is wrong with it.

@@ -62,8 +62,12 @@ impl Exchange {
             makes,
         };
         let plates: Vec<Plate> = screens.iter().map(|screen| screen.plate(room)).collect();
-        let (mut leaving, mut slopes) = found.leaving(grids, &plates);
-        if !any(grids, |outlook| &outlook.long) {
+        let mut temperatures: Vec<Vec<f64>> = (grids.iter())
+            .map(|grid| vec![room.radiant; grid.pieces.len()])
+            .collect();
+        let coupled = any(grids, |outlook| &outlook.long);
+        let (mut leaving, mut slopes) = found.leaving(grids, &plates, &mut temperatures);
+        if !coupled {
             found.radiosities = leaving;
             return found;
         }
@@ -73,19 +77,25 @@ impl Exchange {
                 .map(|(leaving, radiosity)| leaving - radiosity)
                 .collect();
             let most = off.iter().fold(0.0, |most: f64, off| most.max(off.abs()));
-            let greatest = leaving.iter().fold(0.0, |most: f64, value| most.max(*value));
+            let greatest = leaving
+                .iter()
+                .fold(0.0, |most: f64, value| most.max(*value));
             found.residual = most;
             if most <= STILL * greatest {
                 break;
             }
             // Newton's step while it helps; a plain one always comes nearer.
-            let step = if most < before { newton(&slopes, &off) } else { None };
+            let step = if most < before {
+                newton(&slopes, &off)
+            } else {
+                None
+            };
             before = most;
             for (face, radiosity) in found.radiosities.iter_mut().enumerate() {
                 let change = step.as_ref().map_or(off[face], |step| step[face]);
                 *radiosity = (*radiosity + change).max(0.0);
             }
-            (leaving, slopes) = found.leaving(grids, &plates);
+            (leaving, slopes) = found.leaving(grids, &plates, &mut temperatures);
         }
         found
     }
@@ -101,10 +111,11 @@ impl Exchange {
         let falls = |outlook: &Outlook| {
             along(&outlook.long, &self.radiosities) + self.share_of_room(outlook) * self.room
         };
-        let back = outlook.each_ref().map(|outlook| along(&outlook.hot, &self.thrown_back));
-        let hot = [FRONT, BACK].map(|face| {
-            outlook[face].absorbed + make.hot_absorptance(face) * back[face]
-        });
+        let back = outlook
+            .each_ref()
+            .map(|outlook| along(&outlook.hot, &self.thrown_back));
+        let hot = [FRONT, BACK]
+            .map(|face| outlook[face].absorbed + make.hot_absorptance(face) * back[face]);
         Taken {
             fell: [FRONT, BACK].map(|face| outlook[face].fell + back[face]),
             hot,
@@ -127,7 +138,14 @@ impl Exchange {
 
     /// Returns what would leave each face if all others stay as they are, and
     /// how that grows with the radiosity of each, row by row.
-    fn leaving(&self, grids: &[Grid], plates: &[Plate]) -> (Vec<f64>, Vec<Vec<f64>>) {
+    ///
+    /// `temperatures` are those of the pieces before, and then the new ones.
+    fn leaving(
+        &self,
+        grids: &[Grid],
+        plates: &[Plate],
+        temperatures: &mut [Vec<f64>],
+    ) -> (Vec<f64>, Vec<Vec<f64>>) {
         let faces = 2 * grids.len();
         let mut leaving = vec![0.0; faces];
         let mut slopes = vec![vec![0.0; faces]; faces];
@@ -135,11 +153,11 @@ impl Exchange {
             let emissivities = self.makes[screen].emissivities();
             let reflectances = self.makes[screen].reflectances();
             let share = grid.share();
-            for piece in &grid.pieces {
+            for (piece, temperature) in grid.pieces.iter().zip(&mut temperatures[screen]) {
                 let taken = self.taken(screen, &piece.outlook);
-                let temperature = plate.temperature(taken.absorbed());
-                let black = planck::exitance(temperature);
-                let gain = plate.gain(temperature);
+                *temperature = plate.temperature_near(taken.absorbed(), *temperature);
+                let black = planck::exitance(*temperature);
+                let gain = plate.gain(*temperature, plate.convected(*temperature));
                 for face in [FRONT, BACK] {
                     let row = 2 * screen + face;
                     leaving[row] += share
@@ -179,13 +197,20 @@ impl Exchange {
 
 /// The sum of the products.
 fn along(factors: &[f64], values: &[f64]) -> f64 {
-    factors.iter().zip(values).map(|(factor, value)| factor * value).sum()
+    factors
+        .iter()
+        .zip(values)
+        .map(|(factor, value)| factor * value)
+        .sum()
 }
 
 /// Says whether any screen sees another.
 fn any(grids: &[Grid], of: fn(&Outlook) -> &Vec<f64>) -> bool {
-    (grids.iter().flat_map(|grid| &grid.pieces).flat_map(|piece| &piece.outlook))
-        .any(|outlook| of(outlook).iter().any(|factor| *factor != 0.0))
+    (grids
+        .iter()
+        .flat_map(|grid| &grid.pieces)
+        .flat_map(|piece| &piece.outlook))
+    .any(|outlook| of(outlook).iter().any(|factor| *factor != 0.0))
 }
 
 /// The step that would bring `off` to nothing if all went on along the slopes.
@@ -214,7 +239,11 @@ fn thrown_back(makes: &[Make], grids: &[Grid]) -> Vec<f64> {
     for (make, grid) in makes.iter().zip(grids) {
         for face in [FRONT, BACK] {
             let reflectance = make.hot_reflectances()[face];
-            let fell: f64 = grid.pieces.iter().map(|piece| piece.outlook[face].fell).sum();
+            let fell: f64 = grid
+                .pieces
+                .iter()
+                .map(|piece| piece.outlook[face].fell)
+                .sum();
             reflectances.push(reflectance);
             first.push(reflectance * grid.share() * fell);
         }
@@ -253,8 +282,18 @@ fn means(grids: &[Grid], of: fn(&Outlook) -> &Vec<f64>) -> Vec<Vec<f64>> {
 ///
 /// No face comes to see more than there is room for beside the sources.
 fn agree(screens: &[Screen], grids: &mut [Grid]) {
-    agree_on(screens, grids, |outlook| &outlook.long, |outlook| &mut outlook.long);
-    agree_on(screens, grids, |outlook| &outlook.hot, |outlook| &mut outlook.hot);
+    agree_on(
+        screens,
+        grids,
+        |outlook| &outlook.long,
+        |outlook| &mut outlook.long,
+    );
+    agree_on(
+        screens,
+        grids,
+        |outlook| &outlook.hot,
+        |outlook| &mut outlook.hot,
+    );
 }
 
 fn agree_on(

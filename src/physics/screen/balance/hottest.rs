@@ -29,10 +29,8 @@ pub(super) fn place(
         place: screen.centre,
         absorbed: f64::NEG_INFINITY,
     };
-    let mut least = f64::INFINITY;
     for piece in &grid.pieces {
         let absorbed = exchange.taken(index, &piece.outlook).absorbed();
-        least = least.min(absorbed);
         if absorbed > best.absorbed {
             best = Place {
                 place: piece.centre,
@@ -40,7 +38,6 @@ pub(super) fn place(
             };
         }
     }
-    // One piece for all: the same everywhere, by the grid's own measure.
     let mut steps = [
         screen.side / f64::from(grid.columns),
         screen.up / f64::from(grid.rows),

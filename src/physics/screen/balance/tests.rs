@@ -35,7 +35,11 @@ fn behind(heated: &Heated, point: DVec3) -> f64 {
         .iter()
         .map(|patch| patch.part.region.view(point).into_view().expect("clear"))
         .collect();
-    let weights: Vec<f64> = heated.patches.iter().map(|patch| patch.emission.total).collect();
+    let weights: Vec<f64> = heated
+        .patches
+        .iter()
+        .map(|patch| patch.emission.total)
+        .collect();
     exposure::facing(&views, &weights, DVec3::NEG_Y)
 }
 
@@ -48,7 +52,9 @@ fn cut(screen: &Screen, count: u32) -> Heated {
     let mut grids = vec![Grid::of(&around, screens, 0, count, count).expect("pieces")];
     let exchange = Exchange::solve(screens, &mut grids, &ROOM);
     let plate = screen.plate(&ROOM);
-    let mut found = screen_in_balance(screen, 0, &grids[0], &exchange, &plate).expect("a balance").0;
+    let mut found = screen_in_balance(screen, 0, &grids[0], &exchange, &plate)
+        .expect("a balance")
+        .0;
     let hottest = hottest::place(&around, 0, &grids[0], &exchange);
     found.hottest_temperature = plate.hottest(hottest.absorbed);
     found
