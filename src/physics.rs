@@ -19,5 +19,6 @@ pub mod subtense;
 pub mod surface;
 pub mod view;
 pub mod view_factor;
+mod visibility;
 
 pub use error::Error;

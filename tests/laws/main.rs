@@ -9,3 +9,4 @@ mod notebook_laws;
 mod printing_and_parsing_agree;
 mod screen_laws;
 mod view_factor_laws;
+mod visibility_laws;
