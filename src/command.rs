@@ -48,6 +48,7 @@ struct Arguments {
 #[derive(Debug, Subcommand)]
 enum Command {
     /// Work every cell of notebooks out and print them, with findings and cautions
+    #[command(after_long_help = crate::notebook::reference::text())]
     Calc {
         /// The notebooks
         #[arg(required = true, value_name = "FILE")]

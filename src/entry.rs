@@ -29,6 +29,22 @@ pub const LONGEST: usize = 1_000;
 /// The deepest that brackets may be nested.
 pub const DEEPEST: usize = 64;
 
+/// Returns every function as it is written and what it returns, by name.
+///
+/// An argument that may be left out stands in square brackets.
+pub fn functions() -> impl Iterator<Item = (String, &'static str)> {
+    function::FUNCTIONS
+        .iter()
+        .map(|function| (function.usage(), function.about))
+}
+
+/// Returns every constant and what it is, by name.
+pub fn constants() -> impl Iterator<Item = (&'static str, &'static str)> {
+    function::CONSTANTS
+        .iter()
+        .map(|constant| (constant.name, constant.about))
+}
+
 /// One parsed field text.
 ///
 /// Two entries are equal if their texts are.

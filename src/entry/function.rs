@@ -107,9 +107,20 @@ enum Work {
 impl Function {
     /// Returns how it is written, such as `exitance(temperature, emissivity)`.
     pub(super) fn usage(&self) -> String {
-        let mut names: Vec<&str> = self.parameters.iter().map(|known| known.name).collect();
+        let mut names: Vec<String> = self
+            .parameters
+            .iter()
+            .enumerate()
+            .map(|(at, known)| {
+                if at < self.least {
+                    known.name.to_owned()
+                } else {
+                    format!("[{}]", known.name)
+                }
+            })
+            .collect();
         if self.most == MANY {
-            names.push("…");
+            names.push("…".to_owned());
         }
         format!("{}({})", self.name, names.join(", "))
     }

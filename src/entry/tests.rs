@@ -196,6 +196,19 @@ fn the_bridge_to_the_physics_carries_values_across() {
             "",
         ),
         ("view_factor_sphere(0.5 m, 1 m)", 0.25, 1e-15, ""),
+        // The families `disc_disc` and `rect_rect_parallel`, by quadrature.
+        (
+            "view_factor_disc_disc(1 m, 1 m, 1 m)",
+            0.381_966_011_250,
+            1e-12,
+            "",
+        ),
+        (
+            "view_factor_rectangle_rectangle(1 m, 1 m, 1 m)",
+            0.199_824_895_698,
+            1e-12,
+            "",
+        ),
         ("view_factor_sphere(0.5 m, 1 m, 60 °)", 0.125, 1e-15, ""),
         // Worked values read in the tests of the library pythermalcomfort.
         (

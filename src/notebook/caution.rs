@@ -9,6 +9,7 @@ use serde::Deserialize;
 use super::cell::{Basis, Kind, assessment, source, zone};
 use super::datum::{CellId, Datum};
 use super::engine::{Engine, Slot};
+use super::listed;
 use super::results::{CellResult, Shown};
 use crate::guidance::{Library, Limit};
 use crate::units::format;
@@ -58,7 +59,7 @@ pub fn always() -> Vec<Caution> {
 }
 
 /// Returns a warning with its gaps filled in, in order.
-fn called(code: &str, field: Option<&'static str>, gaps: &[&str]) -> Caution {
+pub(super) fn called(code: &str, field: Option<&'static str>, gaps: &[&str]) -> Caution {
     let pattern = TEXTS
         .called
         .get(code)
@@ -106,6 +107,7 @@ pub(super) fn of_cell(engine: &Engine, id: CellId, result: &CellResult) -> Vec<C
             cautions.push(called("unconfirmed", Some(field.name), &[&what]));
         }
     }
+    listed::cautions(engine, id, &mut cautions);
     match cell.kind {
         Kind::Source => of_source(engine, id, &mut cautions),
         Kind::Position => of_position(engine, id, &mut cautions),
@@ -310,9 +312,10 @@ mod tests {
     #[test]
     fn every_code_in_the_source_has_a_text() {
         let whole = include_str!("caution.rs");
-        let (source, _) = whole
+        let (own, _) = whole
             .split_once("#[cfg(test)]")
             .expect("tests end the file");
+        let source = format!("{own}{}", include_str!("listed.rs"));
         let mut found = 0;
         for piece in source.split("called(").skip(1) {
             let Some(code) = piece.split('"').nth(1) else {

@@ -4,6 +4,7 @@ use super::caution::{is_assessed, is_unconfirmed, unconfirmed_limits};
 use super::cell::Kind;
 use super::date;
 use super::engine::Engine;
+use super::listed;
 use super::results::{CellResult, State};
 use crate::guidance::{Library, Limit};
 
@@ -111,6 +112,7 @@ pub(super) fn items(engine: &Engine, cells: &[CellResult]) -> Vec<Item> {
     }
     doubts(cells, engine, &mut items);
     baseless(engine, &mut items);
+    listed::readiness(engine, &mut items);
     let recalled = unconfirmed(engine);
     if !recalled.is_empty() {
         let ids: Vec<&str> = recalled.iter().map(|limit| limit.id.as_str()).collect();

@@ -7,6 +7,7 @@ use super::scene;
 use super::cell::field::{Expect, Item};
 use super::cell::{assessment, curve, position, screen, source, surroundings, zone};
 use super::datum::{CellId, Datum};
+use super::listed::ListedTask;
 use super::uncertainty::Draw;
 use crate::entry::{Entry, Outcome};
 use crate::graph::{Node, Values};
@@ -20,6 +21,7 @@ pub(super) enum Task {
     /// It cannot run because its own cell has a fault elsewhere.
     Stuck(CellId),
     Entry(EntryTask),
+    Listed(ListedTask),
     Shape(source::ShapeTask),
     Emission(source::EmissionTask),
     Source(source::OutcomeTask),
@@ -159,7 +161,7 @@ impl Task {
     pub(super) fn inputs(&self) -> Vec<Node> {
         let mut nodes = Vec::new();
         match self {
-            Task::Fault(_) | Task::Stuck(_) => {}
+            Task::Fault(_) | Task::Stuck(_) | Task::Listed(_) => {}
             Task::Entry(task) => nodes.extend(task.picks.iter().map(|pick| pick.node)),
             Task::Shape(task) => task.inputs(&mut nodes),
             Task::Emission(task) => task.inputs(&mut nodes),
@@ -210,6 +212,7 @@ impl Task {
             Task::Entry(task) => task
                 .run(node, inputs, draw)
                 .map_err(|fault| fault.in_item(task.item)),
+            Task::Listed(task) => task.run(node, draw),
             Task::Shape(task) => task.run(inputs),
             Task::Emission(task) => task.run(inputs),
             Task::Source(task) => task.run(inputs),
@@ -314,7 +317,7 @@ impl EntryTask {
                 if draw.is_some() {
                     quantity.si = self.expect.held(quantity.si);
                 }
-                self.check(&quantity)?;
+                fits(self.field, &self.expect, self.unit.as_ref(), &quantity)?;
                 Ok(Datum::Quantity(quantity))
             }
             Outcome::Truth(truth) if self.expect == Expect::ANYTHING => Ok(Datum::Truth(truth)),
@@ -325,31 +328,6 @@ impl EntryTask {
             )
             .with_hint("give a quantity; a comparison can stand in a formula of its own")),
         }
-    }
-
-    fn check(&self, quantity: &Quantity) -> Result<(), Diagnostic> {
-        self.expect
-            .check(quantity)
-            .map_err(|(code, message, hint)| {
-                Diagnostic::of_field(self.field, code, message).with_hint(hint)
-            })?;
-        if let Some(unit) = &self.unit
-            && let Err(error) = quantity.to_unit(unit)
-        {
-            return Err(
-                Diagnostic::of_field("unit", "not-in-that-unit", error.to_string())
-                    .with_hint("differences of temperature are shown in K"),
-            );
-        }
-        if self.expect == Expect::TEMPERATURE && quantity.sense == Sense::Difference {
-            return Err(Diagnostic::of_field(
-                self.field,
-                "difference-for-temperature",
-                "expected a temperature, found a difference of two temperatures",
-            )
-            .with_hint("add it to a temperature: `t_hearth + (t_a - t_b)`"));
-        }
-        Ok(())
     }
 
     fn pick(&self, pick: &Pick, inputs: Inputs<'_>) -> Result<Quantity, Diagnostic> {
@@ -375,4 +353,33 @@ impl EntryTask {
             }),
         }
     }
+}
+
+/// Says what is wrong with a quantity for its field.
+pub(super) fn fits(
+    field: &'static str,
+    expect: &Expect,
+    unit: Option<&Unit>,
+    quantity: &Quantity,
+) -> Result<(), Diagnostic> {
+    expect.check(quantity).map_err(|(code, message, hint)| {
+        Diagnostic::of_field(field, code, message).with_hint(hint)
+    })?;
+    if let Some(unit) = unit
+        && let Err(error) = quantity.to_unit(unit)
+    {
+        return Err(
+            Diagnostic::of_field("unit", "not-in-that-unit", error.to_string())
+                .with_hint("differences of temperature are shown in K"),
+        );
+    }
+    if *expect == Expect::TEMPERATURE && quantity.sense == Sense::Difference {
+        return Err(Diagnostic::of_field(
+            field,
+            "difference-for-temperature",
+            "expected a temperature, found a difference of two temperatures",
+        )
+        .with_hint("add it to a temperature: `t_hearth + (t_a - t_b)`"));
+    }
+    Ok(())
 }

@@ -1,7 +1,8 @@
 //! What the spreads of inputs do to the outputs, by drawing.
 //!
 //! Each `±` literal is one independent normal input whose expanded uncertainty
-//! (coverage factor 2) is the spread. The notebook is worked out once a draw,
+//! (coverage factor 2) is the spread, and each row of a library that a field
+//! names is one with the row's range as its central 95 %. The notebook is worked out once a draw,
 //! without changing it, and the central 95 % of each output are its bounds.
 
 mod record;
@@ -41,7 +42,7 @@ impl Default for Settings {
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Bounds {
     settings: Settings,
-    /// How many literals carry a spread.
+    /// How many literals and rows carry a spread.
     spreads: usize,
     nodes: BTreeMap<Node, NodeBounds>,
 }
@@ -63,7 +64,7 @@ impl Bounds {
         self.settings
     }
 
-    /// Returns how many literals carry a spread.
+    /// Returns how many literals and rows carry a spread.
     #[must_use]
     pub const fn spreads(&self) -> usize {
         self.spreads
@@ -121,7 +122,8 @@ impl Engine {
             .entries()
             .flat_map(|(.., entry)| entry.literals())
             .filter(|used| used.literal.spread.is_some_and(|spread| spread > 0.0))
-            .count();
+            .count()
+            + self.listed().count();
         let mut bounds = Bounds {
             settings,
             spreads,
@@ -197,6 +199,16 @@ impl Engine {
                 }
             }
             let _ = drawn.insert(node, Drawn { literals, values });
+        }
+        for (id, slot, node, row) in self.listed() {
+            let name = self.cell(id).map_or("", |cell| cell.name.as_str());
+            let scores = scores(seed, name, &slot.key(), 0, count);
+            let values = scores.into_iter().map(|score| row.at_score(score));
+            let drawn_row = Drawn {
+                literals: 1,
+                values: values.collect(),
+            };
+            let _ = drawn.insert(node, drawn_row);
         }
         drawn
     }

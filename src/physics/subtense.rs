@@ -60,8 +60,10 @@ impl Subtense {
 ///
 /// # Accuracy
 ///
-/// Discs, spheres and polygons exactly, to `1e-13` of a radian; cylinders as
-/// [`cylinder`]. The greatest angle of a polygon is that between two of its
+/// Discs, spheres, polygons and plates exactly, to `1e-13` of a radian. The end
+/// faces of a cylinder count as polygons of 96 sides drawn about their circles,
+/// so that an angle is never less than the truth and the part of it that the
+/// radius makes is greater by `6e-4` at most. The greatest angle of a polygon is that between two of its
 /// corners, or the smallest if that is more; above a right angle, where every
 /// limit has long been clipped, other points of it may lie farther apart.
 ///
@@ -97,9 +99,9 @@ pub fn of(region: &Region, point: DVec3) -> Option<Subtense> {
             radius,
         } => disc(*centre - point, *normal, *radius),
         Region::Polygon { vertices, normal } => polygon(vertices, *normal, point),
+        Region::Plate { vertices, normal } => plate(vertices, *normal, point),
         Region::Sphere { centre, radius } => sphere(centre.distance(point), *radius),
         Region::Cylinder { base, axis, radius } => cylinder(*base, *axis, *radius, point),
-        Region::Plate { vertices, normal } => plate(vertices, *normal, point),
     })
 }
 
@@ -150,10 +152,7 @@ fn polygon(vertices: &[DVec3], normal: DVec3, point: DVec3) -> Subtense {
 }
 
 /// A thin plate, seen from either side.
-///
-/// `vertices` in metres, at least three, in one plane with this `normal`.
-#[must_use]
-pub fn plate(vertices: &[DVec3], normal: DVec3, point: DVec3) -> Subtense {
+fn plate(vertices: &[DVec3], normal: DVec3, point: DVec3) -> Subtense {
     match vertices.first() {
         Some(first) if (*first - point).dot(normal) > 0.0 => polygon(vertices, -normal, point),
         Some(_) => polygon(vertices, normal, point),
@@ -161,18 +160,8 @@ pub fn plate(vertices: &[DVec3], normal: DVec3, point: DVec3) -> Subtense {
     }
 }
 
-/// Returns the angular subtense of a solid cylinder from a point outside it.
-///
-/// `base` is the centre of one end face and `axis` leads to that of the other,
-/// `radius` above zero; metres.
-///
-/// # Accuracy
-///
-/// The end faces count as polygons of 96 sides drawn about their circles, so
-/// that an angle is never less than the truth and the part of it that the
-/// radius makes is greater by `6e-4` at most.
-#[must_use]
-pub fn cylinder(base: DVec3, axis: DVec3, radius: f64, point: DVec3) -> Subtense {
+/// A solid cylinder, from a point outside it.
+fn cylinder(base: DVec3, axis: DVec3, radius: f64, point: DVec3) -> Subtense {
     /// Sides of an end face.
     const SIDES: u8 = 96;
     let along = axis.normalize_or(DVec3::Z);

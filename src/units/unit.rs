@@ -94,6 +94,12 @@ impl Unit {
         symbol::RESERVED
     }
 
+    /// Returns the symbol of every known unit, as it is printed, in the order of
+    /// their kinds.
+    pub fn known() -> impl Iterator<Item = &'static str> {
+        symbol::SYMBOLS.iter().map(|known| known.symbol)
+    }
+
     /// Returns the unit of a plain number; its symbol is empty.
     pub const fn one() -> Self {
         Self {

@@ -6,6 +6,7 @@ mod exposure_laws;
 mod graph_laws;
 mod json_laws;
 mod notebook_laws;
+mod opening_laws;
 mod printing_and_parsing_agree;
 mod screen_laws;
 mod view_factor_laws;

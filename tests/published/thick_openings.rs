@@ -10,7 +10,12 @@ use std::f64::consts::PI;
 
 use farglow::physics::opening::section::Section;
 use farglow::physics::opening::tunnel::Tunnel;
+use farglow::physics::opening::{Opening, Walls};
+use farglow::physics::region::Region;
+use farglow::physics::scene::Scene;
 use farglow::physics::view_factor::{disc, rectangle, strip};
+
+use glam::DVec3;
 
 use crate::rows::{self, Row};
 
@@ -233,4 +238,50 @@ fn a_beam_falls_off_the_axis_as_computed_elsewhere() {
             "{degrees}°: {found} against {expected}"
         );
     }
+}
+
+/// What a receiver that looks at the middle of a round opening gets, over σT⁴,
+/// from the scene.
+fn in_a_scene(depth: f64, point: DVec3) -> f64 {
+    let outer = Region::disc(DVec3::ZERO, DVec3::Y, 1.0).expect("a disc");
+    let opening = Opening::new(outer, depth, Walls::Reradiating).expect("a possible wall");
+    let scene = Scene::new(opening.parts().to_vec(), Vec::new()).expect("a scene");
+    let looked = scene.look(point);
+    looked
+        .glimpses()
+        .iter()
+        .map(|glimpse| opening.exitances()[glimpse.part] * glimpse.view.factor(-point))
+        .sum()
+}
+
+/// Source: families `thick_on_axis` and `thick_beam`, as parts of a scene: to 1e-4 of the thin opening.
+#[test]
+fn a_scene_of_zones_gives_the_same_rows() {
+    let mut ran = 0;
+    for row in rows::all() {
+        let Some(expected) = row.expected.as_f64() else {
+            continue;
+        };
+        let (found, whole) = match row.family.as_str() {
+            "thick_on_axis" => {
+                let distance = row.number("d_over_R");
+                let found = in_a_scene(row.number("L_over_R"), DVec3::Y * distance);
+                (found, 1.0 / (1.0 + distance * distance))
+            }
+            "thick_beam" => {
+                let angle = row.number("theta_deg").to_radians();
+                let point = 1e4 * DVec3::new(angle.sin(), angle.cos(), 0.0);
+                let found = in_a_scene(row.number("L_over_R"), point);
+                (found * 1e8 / angle.cos(), 1.0)
+            }
+            _ => continue,
+        };
+        ran += 1;
+        assert!(
+            (found - expected).abs() < 1e-4 * whole,
+            "{}: {found} against {expected}",
+            row.id
+        );
+    }
+    assert_eq!(ran, 27);
 }

@@ -144,6 +144,15 @@ fn print_typed(engine: &Engine, cell: &CellResult, out: &mut dyn Write) -> io::R
     if !fields.is_empty() {
         writeln!(out, "  {}", fields.join(" · "))?;
     }
+    for named in engine.rows_named(cell.id) {
+        writeln!(
+            out,
+            "  {}: {}; {}",
+            named.field.replace('_', " "),
+            named.row.said(),
+            named.row.cited()
+        )?;
+    }
     Ok(())
 }
 

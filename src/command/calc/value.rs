@@ -7,12 +7,19 @@ use crate::notebook::Diagnostic;
 use crate::notebook::caution::{self, Caution};
 use crate::notebook::cell::zone::Extent;
 use crate::notebook::datum::Span;
+use crate::notebook::engine::Engine;
+use crate::notebook::listed::Named;
 use crate::notebook::results::{CellResult, Figure, Shown};
 use crate::units::{Dimension, Quantity};
 
 /// Returns the object of one notebook.
 pub(super) fn notebook(file: &str, loaded: &Loaded) -> Value {
-    let cells: Vec<Value> = loaded.results.cells.iter().map(cell).collect();
+    let cells: Vec<Value> = loaded
+        .results
+        .cells
+        .iter()
+        .map(|worked_out| cell(&loaded.engine, worked_out))
+        .collect();
     let readiness: Vec<Value> = loaded
         .results
         .readiness
@@ -34,7 +41,7 @@ pub(super) fn notebook(file: &str, loaded: &Loaded) -> Value {
     })
 }
 
-fn cell(cell: &CellResult) -> Value {
+fn cell(engine: &Engine, cell: &CellResult) -> Value {
     let errors: Vec<Value> = cell
         .errors
         .iter()
@@ -56,9 +63,27 @@ fn cell(cell: &CellResult) -> Value {
         put("waiting_for", cells.as_slice().into());
     }
     put("outputs", outputs(cell));
+    let rows: Vec<Value> = engine.rows_named(cell.id).iter().map(row).collect();
+    if !rows.is_empty() {
+        put("rows", rows.into());
+    }
     put("errors", errors.into());
     put("cautions", cautions.into());
     Value::Object(object)
+}
+
+/// A row of a library that a field names.
+fn row(named: &Named) -> Value {
+    let row = named.row;
+    let unit = row.quantity().dimension.si_unit();
+    json!({
+        "field": named.field,
+        "row": row.id,
+        "text": row.said(),
+        "value": { "si": row.typical, "unit": unit, "low": row.low, "high": row.high },
+        "source": row.source,
+        "how_known": row.how_known.words(),
+    })
 }
 
 fn fault(cell: &str, error: &Diagnostic) -> Value {

@@ -135,6 +135,17 @@ pub(super) static FUNCTIONS: &[Function] = &[
         Dimension::SPECTRAL_EXITANCE,
         |x| Ok(planck::spectral_exitance(x[1], x[0])),
     ),
+    function(
+        "view_factor_disc_disc",
+        &[
+            RADIUS,
+            Parameter::called("other_radius", Kind::Length, "other radius"),
+            DISTANCE,
+        ],
+        "from a disc of the first radius to one of the other, both on one axis, face to face",
+        Dimension::NONE,
+        |x| disc::to_coaxial_disc(x[0], x[1], x[2]),
+    ),
     last_at_will(function(
         "view_factor_disc_parallel",
         &[RADIUS, DISTANCE, OFFSET],
@@ -165,6 +176,13 @@ pub(super) static FUNCTIONS: &[Function] = &[
         "from a small element to a rectangle that stands on its plane, opposite the end of its foot",
         Dimension::NONE,
         |x| rectangle::from_perpendicular_element_at_corner(x[1], x[0], x[2]),
+    ),
+    function(
+        "view_factor_rectangle_rectangle",
+        &[WIDTH, HEIGHT, DISTANCE],
+        "from one of two equal rectangles to the other, parallel and face to face",
+        Dimension::NONE,
+        |x| rectangle::to_parallel_rectangle(x[0], x[1], x[2]),
     ),
     last_at_will(function(
         "view_factor_sphere",

@@ -14,6 +14,7 @@ use crate::notebook::cell::{
     Cell, Kind, assessment, curve, position, screen, source, surroundings, zone,
 };
 use crate::notebook::datum::CellId;
+use crate::notebook::listed::{self, ListedTask};
 use crate::notebook::scene::ApartTask;
 use crate::notebook::task::{EntryTask, Pick, Task};
 use crate::spelling::nearest;
@@ -508,6 +509,23 @@ impl<'e> Linker<'e> {
             Slot::Item(_, item) => Some(item),
             _ => None,
         };
+        match listed::read(field, text) {
+            Some(Ok(row)) => {
+                let task = ListedTask {
+                    field,
+                    item,
+                    row,
+                    expect,
+                    unit,
+                };
+                return self.set(slot, Task::Listed(task));
+            }
+            Some(Err(fault)) => {
+                let faults = vec![fault.in_item(item)];
+                return self.set(slot, Task::Fault(Arc::new(faults)));
+            }
+            None => {}
+        }
         let entry = match self.parsed(slot, text) {
             Ok(entry) => entry,
             Err(faults) => {

@@ -5,6 +5,7 @@ use super::Sheet;
 use crate::notebook::cell::{Field, Form, Kind, Need, Spec};
 use crate::notebook::datum::Datum;
 use crate::notebook::engine::Slot;
+use crate::notebook::listed;
 use crate::notebook::results::CellResult;
 use crate::notebook::wording;
 use crate::units::Quantity;
@@ -74,7 +75,8 @@ pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
     }
     blocks.push(Block::Heading("Inputs".to_owned()));
     blocks.push(Block::Paragraph(vec![Run::muted(
-        "A spread (±) is an expanded uncertainty with coverage factor 2, about 95 %. What was left \
+        "A spread (±) is an expanded uncertainty with coverage factor 2, about 95 %. A row of the \
+         library (`of …`) counts with its typical value and has its range as 95 %. What was left \
          out is listed with the value that counts instead; what is worked out stands under Formulas.",
     )]));
     blocks.push(Block::Table(inputs));
@@ -117,10 +119,23 @@ fn input(sheet: &Sheet<'_>, cell: &CellResult, spec: &Spec, first: bool) -> Opti
         None if is_main => typed.text("basis").unwrap_or_default().to_owned(),
         None => String::new(),
     };
-    let note = match field.note.clone() {
-        Some(note) => note,
-        None if is_main => typed.text("note").unwrap_or_default().to_owned(),
-        None => String::new(),
+    let mut notes = match field.note.clone() {
+        Some(note) => vec![note],
+        None if is_main => typed.text("note").map(str::to_owned).into_iter().collect(),
+        None => Vec::new(),
+    };
+    let mut of_row = None;
+    for named in sheet.engine.rows_named(cell.id) {
+        if named.field == spec.name {
+            of_row = Some(listed::basis(named.row).words().to_owned());
+            notes.push(format!("{}. {}", named.row.said(), named.row.cited()));
+        }
+    }
+    // A basis that somebody typed is their word; without one it is the row's.
+    let basis = if basis.is_empty() {
+        of_row.unwrap_or_default()
+    } else {
+        basis
     };
     let name = if first {
         Cell::runs(vec![Run::bold(cell.name.clone())])
@@ -137,7 +152,7 @@ fn input(sheet: &Sheet<'_>, cell: &CellResult, spec: &Spec, first: bool) -> Opti
         Cell::plain(spec.name.replace('_', " ")),
         Cell::plain(text(field)),
         basis,
-        Cell::plain(note),
+        Cell::plain(notes.join(" · ")),
     ])
 }
 
