@@ -8,9 +8,9 @@
 
 mod faces;
 pub mod section;
-pub mod tunnel;
 #[cfg(test)]
 mod tests;
+pub mod tunnel;
 
 use glam::DVec3;
 

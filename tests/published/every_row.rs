@@ -2,8 +2,8 @@
 
 use crate::rows::{self, Work};
 use crate::{
-    blackbody_tables, cavities, defining_constants, fixed_points, quadrature_of_planck, textbook_examples,
-    thick_openings, view_factor_catalogue,
+    blackbody_tables, cavities, defining_constants, fixed_points, quadrature_of_planck,
+    textbook_examples, thick_openings, view_factor_catalogue,
 };
 
 /// The families that run, with what works their rows out.
@@ -51,10 +51,7 @@ const RUNNING: [(&str, Work); 36] = [
         view_factor_catalogue::rect_rect_perpendicular,
     ),
     ("thick_round_black", thick_openings::round_black),
-    (
-        "thick_round_reradiating",
-        thick_openings::round_reradiating,
-    ),
+    ("thick_round_reradiating", thick_openings::round_reradiating),
     ("thick_square_black", thick_openings::square_black),
     (
         "thick_square_reradiating",

@@ -208,10 +208,17 @@ fn an_old_approximation_is_near() {
     }
 }
 
-/// Source: as `thick_square_reradiating`, the ratios for which no row stands in the file of checks.
+/// Source: as `thick_square_reradiating`, with the ratios for which no row stands in the file of checks, to what their extrapolation and this program are good for.
 #[test]
-fn squares_of_other_depths() {
+fn squares_of_all_depths() {
     for (depth, expected) in [
+        (0.05, 0.953_816_496_031_85),
+        (0.1, 0.912_982_910_511_066_5),
+        (0.5, 0.689_698_820_768_092_7),
+        (1.5, 0.442_276_677_474_699_8),
+        (2.0, 0.377_989_465_922_467_4),
+        (3.0, 0.294_655_375_520_827_7),
+        (5.0, 0.206_369_532_752_648_83),
         (0.25, 0.811_969_972_188_549_9),
         (0.46, 0.706_435_251_877_905_2),
         (1.0, 0.536_220_264_669_206_4),

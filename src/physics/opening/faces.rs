@@ -57,10 +57,17 @@ pub(super) fn transmitted(width: f64, height: f64, depth: f64) -> Option<f64> {
         points(height, 18.0),
         points(2.0 * depth, 24.0),
     ];
-    with_places(width, height, depth, counts)
+    with_places(width, height, depth, counts).map(|(transmitted, _)| transmitted)
 }
 
-fn with_places(width: f64, height: f64, depth: f64, counts: [u16; 3]) -> Option<f64> {
+/// What leaves the outer edge, and by how much the exitance at each place is
+/// above one half.
+fn with_places(
+    width: f64,
+    height: f64,
+    depth: f64,
+    counts: [u16; 3],
+) -> Option<(f64, Vec<(Place, f64)>)> {
     let mut places = Vec::new();
     for (wide, length, count) in [(true, width, counts[0]), (false, height, counts[1])] {
         for (along, across) in crowded(count, 0.5 * length) {
@@ -126,7 +133,9 @@ fn with_places(width: f64, height: f64, depth: f64, counts: [u16; 3]) -> Option<
         .map(|((place, net), above)| 4.0 * place.area * net * above)
         .sum();
     let straight = rectangle::between(width, height, depth);
-    Some((0.5 * (1.0 + straight) + walls / (width * height)).clamp(straight, 1.0))
+    let transmitted = 0.5 * (1.0 + straight) + walls / (width * height);
+    let above = places.into_iter().zip(above).collect();
+    Some((transmitted.clamp(straight, 1.0), above))
 }
 
 /// Points from zero to a length, crowded towards zero, with their weights.
@@ -142,9 +151,12 @@ fn crowded(count: u16, length: f64) -> Vec<(f64, f64)> {
 
 #[cfg(test)]
 mod tests {
+    use glam::DVec3;
+
     use super::*;
     use crate::physics::opening::section::Section;
     use crate::physics::opening::tunnel::Tunnel;
+    use crate::physics::region::Region;
 
     #[test]
     fn more_places_change_little() {
@@ -156,7 +168,8 @@ mod tests {
             (1.0, 5.0, 3.0),
         ] {
             let found = transmitted(width, height, depth).expect("worked out");
-            let finer = with_places(width, height, depth, [20, 20, 22]).expect("worked out");
+            let finer = with_places(width, height, depth, [16, 16, 18]);
+            let (finer, _) = finer.expect("worked out");
             assert!(
                 (found - finer).abs() < 2e-5,
                 "{width} × {height}, {depth} deep: {found} against {finer}"
@@ -177,6 +190,85 @@ mod tests {
                 assert!(
                     shared > own - 1e-6 && shared < own + 2e-4,
                     "{width} × {height}, {depth} deep: {own}, shared {shared}"
+                );
+            }
+        }
+    }
+
+    /// What a receiver before the opening gets of the walls that it sees, with
+    /// their exitances face by face and as if they shared their heat, and what
+    /// it would get without a wall.
+    fn looked_at(
+        [width, height, depth]: [f64; 3],
+        places: &[(Place, f64)],
+        point: DVec3,
+    ) -> [f64; 3] {
+        let normal = -point.normalize();
+        let section = Section::rectangle(width, height).expect("a rectangle");
+        let tunnel = Tunnel::new(section, depth).expect("a possible wall");
+        let mut sums = [0.0; 2];
+        for (place, above) in places.iter().copied() {
+            for turn in 0..8_u8 {
+                let flip = |bit: u8| turn >> bit & 1 == 1;
+                let own = if place.wide { width } else { height };
+                let along = 0.5 * own - place.along;
+                let along = if flip(0) { along } else { -along };
+                let (down, above) = if flip(1) {
+                    (depth - place.depth, -above)
+                } else {
+                    (place.depth, above)
+                };
+                let side = if flip(2) { 0.5 } else { -0.5 };
+                let (at, inward) = if place.wide {
+                    (DVec3::new(along, -down, side * height), DVec3::Z * -side)
+                } else {
+                    (DVec3::new(side * width, -down, along), DVec3::X * -side)
+                };
+                let way = at - point;
+                let through = point + way * (point.y / -way.y);
+                let cosines = way.dot(normal).max(0.0) * (-way.dot(inward)).max(0.0) * 2.0;
+                if through.x.abs() < 0.5 * width && through.z.abs() < 0.5 * height {
+                    let share = place.area * cosines / (PI * way.length_squared().powi(2));
+                    sums[0] += share * (0.5 + above);
+                    sums[1] += share * tunnel.exitance(down);
+                }
+            }
+        }
+        let outer = Region::rectangle(DVec3::ZERO, DVec3::Y, DVec3::Z, width, height);
+        let plain = outer.expect("a rectangle").view(point).into_view();
+        [
+            sums[0],
+            sums[1],
+            plain.map_or(0.0, |view| view.factor(normal)),
+        ]
+    }
+
+    #[test]
+    fn walls_that_share_their_heat_look_nearly_the_same() {
+        for sides in [
+            [1.0, 1.0, 0.5],
+            [1.0, 1.0, 2.0],
+            [2.0, 1.0, 0.5],
+            [2.0, 1.0, 3.0],
+            [5.0, 1.0, 1.0],
+            [5.0, 1.0, 3.0],
+        ] {
+            let [width, height, depth] = sides;
+            let (_, places) = with_places(width, height, depth, [16, 16, 16]).expect("worked out");
+            for (point, most) in [
+                (DVec3::new(0.0, 0.3, 0.0), 1.5e-3),
+                (DVec3::new(0.0, 1.0, 0.0), 1e-3),
+                (DVec3::new(0.0, 3.0, 0.0), 1e-3),
+                (DVec3::new(0.0, 10.0, 0.0), 5e-4),
+                (DVec3::new(1.5, 2.0, 0.0), 1e-3),
+                (DVec3::new(1.5, 2.0, 1.5), 1e-3),
+                (DVec3::new(2.0, 5.0, 0.0), 1e-3),
+                (DVec3::new(2.0, 1.0, 2.0), 2e-3),
+            ] {
+                let [own, shared, plain] = looked_at(sides, &places, point);
+                assert!(
+                    (shared - own).abs() < most * plain,
+                    "{sides:?} from {point}: {own}, shared {shared}, of {plain}"
                 );
             }
         }
