@@ -357,7 +357,7 @@ fn two_facing_plates_are_solved_by_hand_alike() {
             heated.mean_temperature
         );
     }
-    assert!(two > 310.0, "the second plate is warmed to {two} K");
+    assert!(two > 307.0, "the second plate is warmed to {two} K");
 }
 
 /// The unshaded scene is its own mirror image: so are the screens.
