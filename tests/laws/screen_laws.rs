@@ -357,7 +357,7 @@ fn two_facing_plates_are_solved_by_hand_alike() {
             heated.mean_temperature
         );
     }
-    assert!(two > 310.0, "the second plate is warmed to {two} K");
+    assert!(two > 307.0, "the second plate is warmed to {two} K");
 }
 
 /// The unshaded scene is its own mirror image: so are the screens.
@@ -403,6 +403,60 @@ fn meshes_absorb_what_they_do_not_let_through() {
         let share = heated.exitances[1] / whole.screens[0].exitances[1];
         assert!((share - (1.0 - open_fraction)).abs() < 1e-9, "{share}");
     }
+}
+
+/// A plate behind a mesh or a filter that covers all its view absorbs of the
+/// source what those let through, and is warmed by them.
+#[test]
+fn plate_behind_a_clear_screen_gets_what_goes_through() {
+    let hot = door(1500.0);
+    let plate = upright(
+        [0.0, 1.5, 1.0],
+        0.8,
+        Make::soiled(0.3, 0.9).expect("a make"),
+    );
+    let alone = solved(&hot, std::slice::from_ref(&plate), &room());
+    let filter = Make::Filter {
+        transmittance: 0.35,
+        near_infrared_transmittance: 0.2,
+        visible_transmittance: 0.1,
+    };
+    for (make, share) in [
+        (
+            Make::Mesh {
+                open_fraction: 0.45,
+            },
+            0.45,
+        ),
+        (filter, 0.35),
+    ] {
+        let screens = [upright([0.0, 1.0, 1.0], 3.0, make), plate.clone()];
+        let found = solved(&hot, &screens, &room());
+        let ratio = found.screens[1].power / alone.screens[0].power;
+        // What the plate throws back lights the filter or the mesh alone.
+        assert!((ratio / share - 1.0).abs() < 1e-9, "{make:?}: {ratio}");
+        let lone = solved(&hot, &screens[..1], &room());
+        assert!(
+            found.screens[0].mean_temperature > lone.screens[0].mean_temperature,
+            "{make:?}: {} K with the plate behind it, {} K without",
+            found.screens[0].mean_temperature,
+            lone.screens[0].mean_temperature
+        );
+        let dimmed = passed(&screens, &[0], &hot.1[0]);
+        assert!(
+            (dimmed.total / hot.1[0].total - share).abs() < 1e-12,
+            "{make:?}: {dimmed:?}"
+        );
+    }
+    // The second of two plates that the first hides takes up nothing directly.
+    let hidden = [upright([0.0, 1.0, 1.0], 3.0, grey(0.9, 0.9)), plate];
+    let found = solved(&hot, &hidden, &room());
+    assert_eq!(found.screens[1].power, 0.0);
+    assert!(
+        found.screens[1].mean_temperature > 310.0,
+        "{} K",
+        found.screens[1].mean_temperature
+    );
 }
 
 /// A screen does not hide its own patches, and people on each side see those of
@@ -453,6 +507,11 @@ fn more_screens_never_let_more_through() {
             .map(|place| upright([0.0, 1.0 + 0.15 * f64::from(place), 1.0], 2.0, make))
             .collect();
         let found = solved(&hot, &screens, &room());
+        let (absorbed, given) = budget(&found, &screens);
+        assert!(
+            (given - absorbed).abs() <= 1e-6 * absorbed,
+            "{count} plates: absorbed {absorbed} W, given off {given} W"
+        );
         let mut parts = hot.0.clone();
         let mut emissions = hot.1.clone();
         for patch in found.screens.iter().flat_map(|heated| &heated.patches) {

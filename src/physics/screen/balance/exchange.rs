@@ -10,8 +10,9 @@ use crate::physics::screen::{BACK, FRONT, Make, Plate, Room, Screen};
 /// needed.
 const ROUNDS: u32 = 200;
 
-/// How near the radiosities come to standing still, relative to the greatest.
-const STILL: f64 = 1e-12;
+/// How near the radiosities come to standing still, relative to the greatest:
+/// what rounding in the balances of pieces allows, with room.
+const STILL: f64 = 1e-10;
 
 /// What leaves the faces of all screens. Vectors and the rows of matrices are
 /// parallel to the faces, front and back of each screen in turn.
