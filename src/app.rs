@@ -285,7 +285,7 @@ impl Window {
             Drawer::Left => self.readiness.view(shared).map(Message::Readiness),
             Drawer::Keys => drawer::keys(shared.look),
         };
-        Some(drawer::view(content, shared.look))
+        Some(drawer::view(content, self.size.height, shared.look))
     }
 
     /// Returns what the window listens to. Nothing ticks while nothing is

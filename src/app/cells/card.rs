@@ -58,7 +58,8 @@ pub fn view<'a>(
         inner: wide - 2.0 * AROUND,
     };
     let told = figure::told(&shared, cell, result);
-    let mut body = column![card.head(), card.first(&told)].spacing(2);
+    let kind = theme::words(cell.kind.name(), SMALL, Role::Muted, look);
+    let mut body = column![kind, card.first(&told)].spacing(2);
     if let Some(origin) = card.origin() {
         body = body.push(theme::words(origin, SMALL, Role::Muted, look));
     }
@@ -83,6 +84,9 @@ pub fn view<'a>(
     if !result.cautions.is_empty() {
         body = body.push(found::cautions(result, selected, look));
     }
+    if selected {
+        body = body.push(card.foot());
+    }
     mouse_area(
         container(body)
             .padding([9.0, AROUND])
@@ -101,30 +105,25 @@ impl<'a> Card<'a, '_> {
         }
     }
 
-    /// The kind, and what can be done with the whole cell.
-    fn head(&self) -> Element<'a, Message> {
+    /// What can be done with the whole cell.
+    fn foot(&self) -> Element<'a, Message> {
         let (look, id) = (self.shared.look, self.result.id);
-        let kind = theme::words(self.cell.kind.name(), SMALL, Role::Muted, look);
-        if !self.selected {
-            return kind.into();
-        }
-        let tool = |text: &'static str, message: Message| {
+        let tool = |text: &'static str, message: Message| -> Element<'a, Message> {
             button(iced::widget::text(text).size(SMALL).font(theme::REGULAR))
-                .padding([0, 5])
+                .padding([0, 4])
                 .style(theme::plain(look))
                 .on_press(message)
+                .into()
         };
-        row![
-            kind,
-            space().width(Length::Fill),
+        let tools = [
+            theme::words("this cell:", SMALL, Role::Muted, look).into(),
             tool("rename", Message::Open(self.place(Part::Name))),
             tool("up", Message::Raise(id)),
             tool("down", Message::Lower(id)),
             tool("copy", Message::Duplicate(id)),
             tool("remove", Message::Remove(id)),
-        ]
-        .align_y(Alignment::Center)
-        .into()
+        ];
+        row(tools).spacing(4).align_y(Alignment::Center).into()
     }
 
     /// The sentence, with the governing quantity at the right edge.

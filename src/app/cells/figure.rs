@@ -228,15 +228,20 @@ fn curve(shared: &Shared<'_>, result: &CellResult) -> Told {
                 .unwrap_or_else(|| wording::nominal(name, shown, unit.as_ref())),
         )
     };
+    let far = |row: usize| {
+        let shown = result.in_row(row, "distance")?;
+        let unit = hint(shared, shown, None);
+        Some(format::at_most(shown.quantity()?, unit.as_ref(), 4))
+    };
     let rows = result.rows();
     let line = (rows > 1)
         .then(|| {
             Some(format!(
                 "{rows} points · {} at {}, {} at {}",
                 at(0, "irradiance")?,
-                at(0, "distance")?,
+                far(0)?,
                 at(rows - 1, "irradiance")?,
-                at(rows - 1, "distance")?,
+                far(rows - 1)?,
             ))
         })
         .flatten();
