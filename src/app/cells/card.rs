@@ -157,9 +157,14 @@ impl<'a> Card<'a, '_> {
     fn sentence(&self, wide: f32) -> Element<'a, Message> {
         let look = self.shared.look;
         let mut pieces: Vec<Element<'a, Message>> = Vec::new();
+        // A sign stands on the line of what it belongs to.
+        let mut sign = None;
         for piece in sentence::sentence(self.cell) {
             match piece {
                 Piece::Name => pieces.push(self.name(wide)),
+                Piece::Words(words) if words.chars().count() == 1 => {
+                    sign = Some(theme::words(words, BODY, Role::Ink, look));
+                }
                 Piece::Words(words) => {
                     pieces.extend(
                         words
@@ -168,7 +173,12 @@ impl<'a> Card<'a, '_> {
                     );
                 }
                 Piece::Field(field, after) => {
-                    pieces.extend(self.field(field, after, wide));
+                    let mut words = self.field(field, after, wide).into_iter();
+                    if let Some(sign) = sign.take() {
+                        let first = words.next();
+                        pieces.push(row![sign].push(first).spacing(4).into());
+                    }
+                    pieces.extend(words);
                 }
             }
         }
@@ -288,7 +298,13 @@ impl<'a> Card<'a, '_> {
         let look: Look = self.shared.look;
         let label = LABEL.min(self.inner * 0.4);
         let wide = self.inner - label - theme::STEP;
-        let lines = sentence::others(self.cell).into_iter().map(|name| {
+        // What is open below the sentence is not listed again.
+        let open =
+            self.cell.kind == Kind::Value && self.area.is_open(self.place(Part::Field("entry")));
+        let listed = sentence::others(self.cell)
+            .into_iter()
+            .filter(|name| !(open && matches!(*name, "basis" | "note")));
+        let lines = listed.map(|name| {
             let pieces = row(self.field(name, "", wide))
                 .spacing(4)
                 .wrap()

@@ -159,7 +159,13 @@ pub fn strip<'a>(
     let look = shared.look;
     let mut strip = column![].spacing(6);
     if let Some(spec) = cell.kind.field(field) {
-        strip = strip.push(theme::words(spec.about, SMALL, Role::Muted, look));
+        strip = strip.push(theme::words(
+            // The marks of code say nothing on a card.
+            spec.about.replace('`', ""),
+            SMALL,
+            Role::Muted,
+            look,
+        ));
     }
     let names = |kinds: &[crate::notebook::Kind]| {
         shared
