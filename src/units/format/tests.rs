@@ -65,6 +65,26 @@ fn distances_go_up_to_the_next_tenth() {
 }
 
 #[test]
+fn distances_in_feet_go_up_to_the_next_half() {
+    let table = [
+        (0.0, "0.0 ft"),
+        (0.3048, "1.0 ft"),
+        (0.304_800_001, "1.5 ft"),
+        // 10 m is 32.81 ft.
+        (10.0, "33.0 ft"),
+        (9.9, "32.5 ft"),
+        (3_048_000.0, "10\u{202f}000\u{202f}000.0 ft"),
+        (-0.2, "−0.5 ft"),
+        (1e300, "3.28083989501312×10³⁰⁰ ft"),
+        (f64::NAN, NOT_FINITE),
+        (f64::MAX, NOT_FINITE),
+    ];
+    for (si, expected) in table {
+        assert_eq!(safe_feet(si), expected, "{si}");
+    }
+}
+
+#[test]
 fn times_go_down_to_what_a_watch_shows() {
     let table = [
         (-1.0, "no planned stay"),
