@@ -48,7 +48,9 @@ pub fn told(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
         Kind::Value | Kind::Formula => quantity(shared, result),
         Kind::Surroundings => Told {
             lines: one(shared, result, "background")
-                .map(|text| format!("sends {text} to whoever stands in it, counted apart"))
+                .map(|text| {
+                    format!("the room's own air and walls send {text}; no limit counts that")
+                })
                 .into_iter()
                 .collect(),
             ..Told::default()
