@@ -3,6 +3,7 @@
 //! Areas answer with an action; only the window changes the notebook, the files
 //! and itself. Everything that is drawn comes from one [`shared::Shared`].
 
+mod action;
 mod bar;
 pub mod canvas;
 pub mod cautions;

@@ -47,7 +47,9 @@ pub fn told(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
     match cell.kind {
         Kind::Surroundings => Told {
             lines: one(shared, result, "background")
-                .map(|text| format!("sends {text} to whoever stands in it, counted apart"))
+                .map(|text| {
+                    format!("the room's own air and walls send {text}; no limit counts that")
+                })
                 .into_iter()
                 .collect(),
             ..Told::default()
