@@ -50,7 +50,7 @@ pub use files::PATH;
 pub use open::{Unopened, start};
 
 /// The least height in which drawing and rail can be read.
-const DRAWING: f32 = 560.0;
+const DRAWING: f32 = 608.0;
 
 /// The window with everything in it.
 #[derive(Debug)]

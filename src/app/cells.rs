@@ -179,6 +179,13 @@ impl Area {
         was
     }
 
+    /// Closes a name that is open for typing: it was given.
+    pub fn close_name(&mut self) {
+        if self.open.is_some_and(|open| open.part == Part::Name) {
+            let _ = self.close();
+        }
+    }
+
     /// Lets the next letter begin a change of its own.
     pub fn break_run(&mut self) {
         self.typed = false;
@@ -246,19 +253,24 @@ impl Area {
     ) -> Action {
         match message {
             Message::Select(id) => {
+                let mut action = Action::Select(id);
                 if self.open.is_some_and(|open| open.cell != id) {
+                    // A name that was typed is not lost by looking elsewhere.
+                    action = self.renaming(engine, Some(id)).unwrap_or(action);
                     let _ = self.close();
                 }
-                Action::Select(id)
+                action
             }
             Message::Open(place) => {
+                let mut action = Action::Focus(place.cell);
                 if self.open != Some(place) {
+                    action = self.renaming(engine, Some(place.cell)).unwrap_or(action);
                     self.open = Some(place);
                     self.prose = None;
                     self.remark = None;
                     self.reload(engine);
                 }
-                Action::Focus(place.cell)
+                action
             }
             Message::Typed(text) => self.type_in(text, engine),
             Message::Keep => self.keep(engine),

@@ -248,3 +248,19 @@ fn figures_have_the_digits_that_they_need() {
     assert!(shown.iter().any(|text| text.ends_with(" ft")), "{shown:#?}");
     assert!(!shown.iter().any(long), "{shown:#?}");
 }
+
+#[test]
+fn a_name_that_is_typed_is_given_when_another_cell_is_looked_at() {
+    let mut desk = Desk::tall(preset::demo());
+    desk.click("t_hearth");
+    desk.press(Key::Named(Named::F2), Modifiers::empty());
+    desk.type_into(app::TYPING, "t_hearth", "bath");
+    desk.click("charger");
+    assert_eq!(desk.text("door", "temperature"), Some("bath"));
+    // One that is taken is said, and the old one stays.
+    desk.press(Key::Named(Named::F2), Modifiers::empty());
+    desk.type_into(app::TYPING, "charger", "door");
+    desk.click("0.90 m");
+    desk.expect("which another cell has");
+    assert!(desk.notebook().find("charger").is_some());
+}

@@ -4,6 +4,7 @@ use iced::widget::text_editor;
 
 use super::{Action, Area, Part, change, prose, sentence};
 use crate::notebook::cell::{Basis, Content, Form};
+use crate::notebook::datum::CellId;
 use crate::notebook::edit::Edit;
 use crate::notebook::engine::Engine;
 use crate::notebook::name;
@@ -105,31 +106,33 @@ impl Area {
     }
 
     pub(super) fn keep(&mut self, engine: &Engine) -> Action {
-        let (Some(place), draft) = (self.open, self.draft.clone()) else {
-            return Action::None;
-        };
-        if place.part != Part::Name {
-            let _ = self.close();
-            return Action::None;
+        if let Some(renaming) = self.renaming(engine, None) {
+            return renaming;
         }
-        let Some(cell) = engine.cell(place.cell) else {
-            return Action::None;
+        let _ = self.close();
+        Action::None
+    }
+
+    /// Returns the renaming that is typed and not made yet; the cell `next` is
+    /// selected afterwards.
+    pub(super) fn renaming(&self, engine: &Engine, next: Option<CellId>) -> Option<Action> {
+        let place = self.open.filter(|place| place.part == Part::Name)?;
+        let cell = engine.cell(place.cell)?;
+        let to = self.draft.clone().filter(|to| *to != cell.name)?;
+        let select = match next {
+            Some(id) if id == place.cell => Some(to.clone()),
+            Some(id) => engine.cell(id).map(|cell| cell.name.clone()),
+            None => None,
         };
-        match draft {
-            Some(to) if to != cell.name => Action::Change {
-                title: format!("rename {} to {to}", cell.name),
-                edit: Edit::Rename {
-                    name: cell.name.clone(),
-                    to,
-                },
-                joins: false,
-                select: None,
+        Some(Action::Change {
+            title: format!("rename {} to {to}", cell.name),
+            edit: Edit::Rename {
+                name: cell.name.clone(),
+                to,
             },
-            _ => {
-                let _ = self.close();
-                Action::None
-            }
-        }
+            joins: false,
+            select,
+        })
     }
 
     pub(super) fn choose(&mut self, word: &str, engine: &Engine) -> Action {

@@ -28,6 +28,10 @@ const BESIDE: f64 = 7.0;
 const APART: f64 = 5.0;
 /// The least length of the ruler, m.
 const LEAST: f64 = 5.0;
+/// How much a height may fall short and still be enough: what the window's
+/// single precision loses. A flag that is left out costs a line that tells of
+/// it, so that a hair too little would cost all of them.
+const SLACK: f64 = 0.05;
 /// No flag is slimmer than this.
 const SLIMMEST: f64 = 16.0;
 
@@ -62,7 +66,7 @@ impl<'a> Plan<'a> {
         // More than this have no room however they lie: there may be thousands.
         let lanes = (height / LANE).max(1.0);
         let most = (lanes * (plan.width / SLIMMEST)).ceil() as usize;
-        while plan.height() > height && !plan.flags.is_empty() {
+        while plan.height() > height + SLACK && !plan.flags.is_empty() {
             let mut kept: Vec<Of<'a>> = plan.flags.iter().map(|flag| flag.of).collect();
             // The most needed stay; of equals, the nearest.
             kept.sort_by(|a, b| {
