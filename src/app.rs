@@ -3,6 +3,7 @@
 //! Areas answer with an action; only the window changes the notebook, the files
 //! and itself. Everything that is drawn comes from one [`shared::Shared`].
 
+mod action;
 mod bar;
 pub mod canvas;
 pub mod cautions;
@@ -30,7 +31,7 @@ mod wrap;
 
 use std::path::PathBuf;
 
-use iced::widget::{column, container, row, rule};
+use iced::widget::{column, container, responsive, row, rule};
 use iced::{Element, Event, Length, Size, Subscription, Theme, event, window};
 
 use crate::drawing::role::{self, Role};
@@ -47,6 +48,9 @@ pub use cells::{REMARK, TYPING};
 pub use desk::Error;
 pub use files::PATH;
 pub use open::{Unopened, start};
+
+/// The least height in which drawing and rail can be read.
+const DRAWING: f32 = 608.0;
 
 /// The window with everything in it.
 #[derive(Debug)]
@@ -250,14 +254,21 @@ impl Window {
             .width(Length::Fixed(wide))
             .height(Length::Fill)
             .style(theme::ground(Role::Ground, look));
-        let right = column![
-            self.curve.view(shared).map(Message::Curve),
-            self.rail.view(shared).map(Message::Rail),
-        ]
-        .spacing(12)
-        .padding([14, 14])
-        .width(Length::Fill)
-        .height(Length::Fill);
+        // Where there is little room the drawing keeps its height, and scrolls.
+        let right = responsive(move |size| {
+            let both = column![
+                self.curve.view(shared).map(Message::Curve),
+                self.rail.view(shared).map(Message::Rail),
+            ]
+            .spacing(12)
+            .padding([14, 14])
+            .width(Length::Fill);
+            if size.height < DRAWING {
+                theme::scrolling(both.height(Length::Fixed(DRAWING)), look).into()
+            } else {
+                both.height(Length::Fill).into()
+            }
+        });
         page = page
             .push(row![cells, split::line(look).map(Message::Split), right].height(Length::Fill));
         page = page.push(self.cautions.view(shared).map(Message::Cautions));
@@ -285,7 +296,7 @@ impl Window {
             Drawer::Left => self.readiness.view(shared).map(Message::Readiness),
             Drawer::Keys => drawer::keys(shared.look),
         };
-        Some(drawer::view(content, shared.look))
+        Some(drawer::view(content, self.size.height, shared.look))
     }
 
     /// Returns what the window listens to. Nothing ticks while nothing is

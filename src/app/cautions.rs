@@ -12,6 +12,8 @@ use crate::drawing::role::Role;
 use crate::notebook::caution;
 use crate::notebook::datum::CellId;
 
+pub use super::action::Action;
+
 /// What is said first, whatever the notebook holds.
 const FIRST: &str = "Planning aid.";
 
@@ -51,15 +53,6 @@ pub enum Message {
     Shut,
     /// Go to the cell that calls a caution up.
     Show(CellId),
-}
-
-/// What the window has to do.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub enum Action {
-    /// Nothing.
-    None,
-    /// Select this cell and bring it into view.
-    SelectCell(CellId),
 }
 
 /// One warning with the cells that call it up.

@@ -11,14 +11,14 @@ mod height;
 mod new;
 mod prose;
 mod sentence;
+mod typing;
 
 use iced::widget::text_editor;
 
-use crate::notebook::cell::{Basis, Cell, Content, Form, Kind};
+use crate::notebook::cell::{Basis, Cell, Kind};
 use crate::notebook::datum::CellId;
 use crate::notebook::edit::Edit;
 use crate::notebook::engine::Engine;
-use crate::notebook::name;
 
 pub use column::COLUMN;
 pub use field::{REMARK, TYPING};
@@ -179,6 +179,13 @@ impl Area {
         was
     }
 
+    /// Closes a name that is open for typing: it was given.
+    pub fn close_name(&mut self) {
+        if self.open.is_some_and(|open| open.part == Part::Name) {
+            let _ = self.close();
+        }
+    }
+
     /// Lets the next letter begin a change of its own.
     pub fn break_run(&mut self) {
         self.typed = false;
@@ -246,19 +253,24 @@ impl Area {
     ) -> Action {
         match message {
             Message::Select(id) => {
+                let mut action = Action::Select(id);
                 if self.open.is_some_and(|open| open.cell != id) {
+                    // A name that was typed is not lost by looking elsewhere.
+                    action = self.renaming(engine, Some(id)).unwrap_or(action);
                     let _ = self.close();
                 }
-                Action::Select(id)
+                action
             }
             Message::Open(place) => {
+                let mut action = Action::Focus(place.cell);
                 if self.open != Some(place) {
+                    action = self.renaming(engine, Some(place.cell)).unwrap_or(action);
                     self.open = Some(place);
                     self.prose = None;
                     self.remark = None;
                     self.reload(engine);
                 }
-                Action::Focus(place.cell)
+                action
             }
             Message::Typed(text) => self.type_in(text, engine),
             Message::Keep => self.keep(engine),
@@ -300,174 +312,6 @@ impl Area {
                 self.seen = seen;
                 Action::None
             }
-        }
-    }
-
-    /// Follows what happens in the open prose.
-    fn edit(&mut self, action: text_editor::Action, engine: &Engine) -> Action {
-        let Some(text) = self
-            .prose
-            .as_mut()
-            .and_then(|it| prose::perform(it, action))
-        else {
-            return Action::None;
-        };
-        let Some((cell, field)) = self.open_field(engine) else {
-            return Action::None;
-        };
-        let joins = std::mem::replace(&mut self.typed, true);
-        change::set(cell, field, Content::Text(text), joins)
-    }
-
-    /// Follows what happens in the remark on the open input.
-    fn remark(&mut self, action: text_editor::Action, engine: &Engine) -> Action {
-        let Some(text) = self
-            .remark
-            .as_mut()
-            .and_then(|it| prose::perform(it, action))
-        else {
-            return Action::None;
-        };
-        let Some((cell, field)) = self.open_field(engine) else {
-            return Action::None;
-        };
-        self.typed = false;
-        let joins = std::mem::replace(&mut self.remarked, true);
-        match change::remark(cell, field, text, joins) {
-            Some(action) => action,
-            None => self.needs_an_input(),
-        }
-    }
-
-    fn needs_an_input(&mut self) -> Action {
-        self.remarked = false;
-        self.refused = Some("type the input first, then say where it came from".to_owned());
-        Action::None
-    }
-
-    fn type_in(&mut self, text: String, engine: &Engine) -> Action {
-        let Some(place) = self.open else {
-            return Action::None;
-        };
-        let Some(cell) = engine.cell(place.cell) else {
-            return Action::None;
-        };
-        self.refused = None;
-        let field = match place.part {
-            Part::Name => {
-                // A name is given when it is whole: half of one may be taken.
-                self.refused = (text != cell.name)
-                    .then(|| name::check(&text).err().map(|error| error.to_string()))
-                    .flatten();
-                self.draft = Some(text);
-                return Action::None;
-            }
-            Part::Field(field) => field,
-        };
-        if sentence::is_chosen(cell, field) {
-            // Only its words fit it, and those are clicked on.
-            return Action::None;
-        }
-        let content = match cell.kind.field(field).map(|spec| spec.form) {
-            // Without a number it is left out.
-            Some(Form::Count(..)) if text.trim().is_empty() => {
-                self.draft = Some(text);
-                return change::leave_out(cell, field);
-            }
-            Some(Form::Count(least, most)) => match text.trim().parse::<u32>() {
-                Ok(number) => {
-                    self.draft = None;
-                    Content::Count(f64::from(number))
-                }
-                Err(_) => {
-                    // The file has a number here, or nothing.
-                    self.refused = Some(format!(
-                        "expected a whole number from {least} to {most}, found `{text}`"
-                    ));
-                    self.draft = Some(text);
-                    return Action::None;
-                }
-            },
-            Some(form @ Form::Pairs(_)) => {
-                // What is typed is kept as it is while it is being typed.
-                self.draft = Some(text.clone());
-                Content::typed(form, text)
-            }
-            Some(Form::Text) => {
-                prose::follow(&mut self.prose, Some(text.clone()));
-                Content::Text(text)
-            }
-            _ => Content::Text(text),
-        };
-        let joins = std::mem::replace(&mut self.typed, true);
-        change::set(cell, field, content, joins)
-    }
-
-    fn keep(&mut self, engine: &Engine) -> Action {
-        let (Some(place), draft) = (self.open, self.draft.clone()) else {
-            return Action::None;
-        };
-        if place.part != Part::Name {
-            let _ = self.close();
-            return Action::None;
-        }
-        let Some(cell) = engine.cell(place.cell) else {
-            return Action::None;
-        };
-        match draft {
-            Some(to) if to != cell.name => Action::Change {
-                title: format!("rename {} to {to}", cell.name),
-                edit: Edit::Rename {
-                    name: cell.name.clone(),
-                    to,
-                },
-                joins: false,
-                select: None,
-            },
-            _ => {
-                let _ = self.close();
-                Action::None
-            }
-        }
-    }
-
-    fn choose(&mut self, word: &str, engine: &Engine) -> Action {
-        let Some((cell, field)) = self.open_field(engine) else {
-            return Action::None;
-        };
-        let content = match cell.kind.field(field).map(|spec| spec.form) {
-            // What is typed is never a choice, but for a facing, which is both.
-            Some(
-                Form::Entry(_) | Form::Pairs(_) | Form::Count(..) | Form::Unit | Form::Text,
-            )
-            | None => {
-                return Action::None;
-            }
-            Some(Form::GuidanceList) => {
-                let mut list: Vec<String> =
-                    cell.texts(field).into_iter().map(str::to_owned).collect();
-                if list.iter().any(|other| other == word) {
-                    list.retain(|other| other != word);
-                } else {
-                    list.push(word.to_owned());
-                }
-                Content::List(list)
-            }
-            _ => Content::Text(word.to_owned()),
-        };
-        self.typed = false;
-        change::set(cell, field, content, false)
-    }
-
-    /// Sets or takes back the basis of the open input.
-    fn base(&mut self, basis: Basis, engine: &Engine) -> Action {
-        let Some((cell, field)) = self.open_field(engine) else {
-            return Action::None;
-        };
-        self.typed = false;
-        match change::base(cell, field, basis) {
-            Some(action) => action,
-            None => self.needs_an_input(),
         }
     }
 

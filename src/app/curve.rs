@@ -13,7 +13,7 @@ use iced::{Alignment, Element, Event, Length, Point, Rectangle, Renderer, Theme,
 use super::canvas::{Held, SCALE, paint};
 use super::shared::{Look, Shared};
 use super::theme::{self, BODY, REGULAR, SMALL, words};
-use crate::drawing::curve::{self, Curve};
+use crate::drawing::curve::{self, Axes, Curve};
 use crate::drawing::mark::{Dash, Fill, Mark, Shape, Stroke};
 use crate::drawing::picture::Picture;
 use crate::drawing::role::Role;
@@ -22,6 +22,8 @@ use crate::notebook::datum::CellId;
 use crate::notebook::results::{CellResult, State};
 
 use read::Readout;
+
+pub use super::action::Action;
 
 /// The area's own state.
 #[derive(Clone, Debug, Default)]
@@ -41,15 +43,6 @@ pub enum Message {
     Pointed(Option<f64>),
     /// Go to a cell.
     Show(CellId),
-}
-
-/// What the window has to do.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub enum Action {
-    /// Nothing.
-    None,
-    /// Select this cell and bring it into view.
-    SelectCell(CellId),
 }
 
 impl Area {
@@ -91,7 +84,7 @@ impl Area {
         }
         panel = match shown {
             Some(cell) if cell.state == State::Ok => {
-                let curve = Curve::of(shared.engine, shared.results, cell);
+                let curve = Curve::of(shared.engine, shared.results, cell, look.measure);
                 let readout = self
                     .pointed
                     .and_then(|distance| Readout::of(shared, cell, &curve, distance));
@@ -226,7 +219,7 @@ impl canvas::Program<Message> for Plot {
         }
         let (width, height) = size(bounds);
         let distance = cursor.position_in(bounds).and_then(|Point { x, y }| {
-            let axes = curve::axes(&self.curve, width, height)?;
+            let axes = Axes::of(&self.curve, width, height)?;
             let y = f64::from(y) / SCALE;
             if !(axes.area.from.y..=axes.area.to.y).contains(&y) {
                 return None;
@@ -250,7 +243,7 @@ impl canvas::Program<Message> for Plot {
         let mut layers = vec![held.draw(renderer, bounds.size(), picture, self.look.theme)];
         let axes = self
             .pointed
-            .and_then(|_| curve::axes(&self.curve, width, height));
+            .and_then(|_| Axes::of(&self.curve, width, height));
         if let (Some((distance, value)), Some(axes)) = (self.pointed, axes) {
             let mut frame = canvas::Frame::new(renderer, bounds.size());
             let over = hair(&axes, distance, value, width, height).scaled(SCALE);
@@ -276,7 +269,7 @@ impl canvas::Program<Message> for Plot {
 
 /// A line at the distance under the pointer, and a ring where it meets the
 /// curve.
-fn hair(axes: &curve::Axes, distance: f64, value: f64, width: f64, height: f64) -> Picture {
+fn hair(axes: &Axes, distance: f64, value: f64, width: f64, height: f64) -> Picture {
     let mut picture = Picture::new(width, height);
     // The upper end of the value axis is on the plot for any distance that is.
     let Some(at) = axes.place(distance, value) else {

@@ -9,8 +9,10 @@ use super::theme::{self, BODY, SMALL};
 use super::{Message, bar, shortcut};
 use crate::drawing::role::Role;
 
-/// How high a drawer grows before it scrolls, so that the desk stays in sight.
+/// How high a drawer grows before it scrolls: this, or this share of the
+/// window, so that the desk stays in sight.
 const TALLEST: f32 = 320.0;
+const SHARE: f32 = 0.45;
 
 /// What is open under the bar.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
@@ -30,12 +32,12 @@ pub enum Drawer {
     Keys,
 }
 
-/// Returns a drawer with a way to shut it.
-pub fn view<'a>(content: Element<'a, Message>, look: Look) -> Element<'a, Message> {
+/// Returns a drawer with a way to shut it, in a window that is `high`.
+pub fn view<'a>(content: Element<'a, Message>, high: f32, look: Look) -> Element<'a, Message> {
     let shut = link("close", Message::ShutDrawer, look);
     let inside = row![content, shut].spacing(16).padding([12, 20]);
     container(theme::scrolling(inside, look))
-        .max_height(TALLEST)
+        .max_height(TALLEST.max(SHARE * high))
         .width(Length::Fill)
         .style(theme::ground(Role::Panel, look))
         .into()

@@ -172,7 +172,7 @@ impl Area {
 }
 
 /// How wide the names of templates are.
-const WIDE: f32 = 132.0;
+const WIDE: f32 = 164.0;
 
 /// Returns a path with the notebook's own ending where it has none.
 #[must_use]

@@ -140,14 +140,21 @@ impl Window {
             } => {
                 let renames = matches!(edit, Edit::Rename { .. });
                 if self.change(title, edit, joins) && renames {
-                    let _ = self.cells.close();
+                    self.cells.close_name();
                 }
                 let selects = select.is_some();
                 if let Some(id) = select.and_then(|name| self.desk.engine().find(&name)) {
                     self.selected = Some(id);
                 }
                 self.drop_lost_selection();
-                if selects { self.reveal() } else { Task::none() }
+                if !selects {
+                    return Task::none();
+                }
+                let reveal = self.reveal();
+                if self.cells.is_typing() {
+                    return Task::batch([reveal, operation::focus(cells::TYPING)]);
+                }
+                reveal
             }
         }
     }

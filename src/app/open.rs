@@ -30,6 +30,15 @@ pub enum Unopened {
          libxkbcommon-x11-0 xkb-data`), or run `farglow calc FILE` for the figures without a window"
     )]
     NoLibrary(&'static str),
+    /// Whatever answers for the display is silent: it, or something that it
+    /// needs, is not there.
+    #[error(
+        "the display does not answer, so no window opens: see that DISPLAY or WAYLAND_DISPLAY names \
+         one that runs and that what it needs is installed (on Debian or Ubuntu: `sudo apt-get \
+         install libx11-6 libx11-xcb1 libxcursor1 libxi6 libxkbcommon-x11-0 xkb-data`), or run \
+         `farglow calc FILE` for the figures without a window"
+    )]
+    Silent,
     /// The window could not be made.
     #[error(
         "the window could not be opened ({0}): run `farglow calc FILE` for the figures without a \
@@ -128,7 +137,7 @@ fn guarded(
         Ok(outcome) => outcome,
         // Our own mistakes stay what they are.
         Err(payload) if begun.load(Ordering::Relaxed) => panic::resume_unwind(payload),
-        Err(_) => Err(Unopened::Refused("the display does not answer".to_owned())),
+        Err(_) => Err(Unopened::Silent),
     }
 }
 

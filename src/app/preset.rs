@@ -6,6 +6,7 @@ use std::path::Path;
 use super::desk::Desk;
 use super::dialog::{Answer, Ask, Dialog};
 use super::{Error, Window};
+use crate::notebook::cell::{Content, Field};
 use crate::notebook::{Cell, Kind, Notebook};
 use crate::store::file;
 use crate::store::template::{self, Template};
@@ -18,6 +19,18 @@ use crate::store::template::{self, Template};
 #[must_use]
 pub fn demo() -> Window {
     on_template(template::DEMO)
+}
+
+/// Returns the window on the demo as it opens: its bounds are still to be
+/// drawn.
+///
+/// # Panics
+///
+/// Never: the demo is a notebook, which a test proves.
+#[must_use]
+pub fn unsettled_demo() -> Window {
+    let desk = Desk::from_template(template::DEMO).expect("every template is a notebook");
+    Window::alone(desk).0
 }
 
 /// Returns the window on a template, with its bounds drawn.
@@ -61,6 +74,75 @@ pub fn chain(count: usize) -> Window {
         ..Notebook::default()
     };
     settled(Desk::new(notebook).expect("the names are legal"))
+}
+
+/// Returns the window on a works of `count` cells: furnace doors along a wall,
+/// all at one temperature, with people in front of them, the limits that judge
+/// on them, zones, curves, and values with formulas. Its bounds are still to be
+/// drawn.
+///
+/// # Panics
+///
+/// Never: the names are made to be legal.
+#[must_use]
+pub fn works(count: usize) -> Window {
+    let mut cells = vec![Cell::new(Kind::Value, "t_hearth").with("entry", "1250 ± 25 °C")];
+    // Doors are few beside people, and people beside figures.
+    let doors = (count / 100).clamp(1, 8);
+    for door in 0..doors {
+        cells.push(
+            Cell::new(Kind::Source, format!("door_{door}"))
+                .with("form", "opening")
+                .with("outline", "rectangle")
+                .with("width", "0.9 m")
+                .with("height", "0.7 m")
+                .with("temperature", "t_hearth")
+                .with("emissivity", "0.95 ± 0.03")
+                .with("x", format!("{} m", 6 * door))
+                .with("z", "1.2 m"),
+        );
+        cells.push(
+            Cell::new(Kind::Zone, format!("eye_line_{door}"))
+                .with("from", format!("door_{door}"))
+                .with("guidance", "icnirp-2013-ir-eye")
+                .with("stay", "8 h"),
+        );
+    }
+    cells.push(
+        Cell::new(Kind::Curve, "falloff")
+            .with("from", "door_0")
+            .with("nearest", "0.5 m")
+            .with("farthest", "20 m"),
+    );
+    for at in 0.. {
+        if cells.len() >= count {
+            break;
+        }
+        let cell = match at % 10 {
+            0 => Cell::new(Kind::Position, format!("person_{at}"))
+                .with("from", format!("door_{}", at / 10 % doors))
+                .with("distance", format!("{} m", 2 + at / 10 % 17))
+                .with("stay", "4 min"),
+            1 => {
+                let mut cell = Cell::new(Kind::Assessment, format!("judged_{at}"))
+                    .with("position", format!("person_{}", at - 1));
+                let guidance = vec!["icnirp-2013-ir-eye".to_owned(), "pain-time".to_owned()];
+                cell.fields
+                    .push(Field::new("guidance", Content::List(guidance)));
+                cell
+            }
+            2 => Cell::new(Kind::Value, format!("figure_{at}")).with("entry", "2.5 m"),
+            _ => Cell::new(Kind::Formula, format!("figure_{at}"))
+                .with("entry", format!("figure_{} * 1.01", at - 1)),
+        };
+        cells.push(cell);
+    }
+    let notebook = Notebook {
+        title: Some(format!("A works of {count} cells")),
+        cells,
+        ..Notebook::default()
+    };
+    Window::alone(Desk::new(notebook).expect("the names are legal")).0
 }
 
 /// Returns the window on a file.

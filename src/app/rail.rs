@@ -8,18 +8,23 @@ use iced::widget::{button, column, container, pick_list, responsive, row, scroll
 use iced::{Alignment, Element, Event, Length, Rectangle, Renderer, Theme, mouse};
 
 use super::canvas::{Held, SCALE};
-use super::shared::{Look, Measure, Shared};
+use super::shared::{Look, Shared};
 use super::theme::{self, BODY, REGULAR, SMALL, words};
 use crate::drawing::mark::Rectangle as Box;
-use crate::drawing::rail::{self, Lengths, Line, Rail, Shading};
+use crate::drawing::rail::{self, Line, Rail, Shading};
 use crate::drawing::role::Role;
 use crate::notebook::datum::CellId;
+
+pub use super::action::Action;
 
 /// How high the panel is, at 100 %.
 const HEIGHT: f32 = 216.0;
 
 /// How much higher where there are lines to choose from.
 const CHOICES: f32 = 34.0;
+
+/// How high the rail grows before flags are left out and counted.
+const TALLEST: f32 = 900.0;
 
 /// How much room a scrolling bar takes.
 const BAR: f32 = 16.0;
@@ -42,15 +47,6 @@ pub enum Message {
     Choose(String, String, Option<CellId>),
     /// Go to the cell of a flag.
     Show(CellId),
-}
-
-/// What the window has to do.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub enum Action {
-    /// Nothing.
-    None,
-    /// Select this cell and bring it into view.
-    SelectCell(CellId),
 }
 
 impl Area {
@@ -103,7 +99,7 @@ impl Area {
         let known = line.and_then(|line| {
             let mut held = self.shading.borrow_mut();
             let (engine, results) = (shared.engine, shared.results);
-            let rail = Rail::held(engine, results, &line, lengths(look), &mut held)?;
+            let rail = Rail::held(engine, results, &line, look.measure, &mut held)?;
             Some(if shared.fresh {
                 rail
             } else {
@@ -120,15 +116,6 @@ impl Area {
             .height(HEIGHT + if lines.len() > 1 { CHOICES } else { 0.0 })
             .style(theme::panel(look))
             .into()
-    }
-}
-
-/// Returns the unit of lengths in a system of units.
-#[must_use]
-pub const fn lengths(look: Look) -> Lengths {
-    match look.measure {
-        Measure::Metric => Lengths::Metres,
-        Measure::Us => Lengths::Feet,
     }
 }
 
@@ -214,7 +201,10 @@ fn drawn(shared: Shared<'_>, rail: Rail) -> Element<'_, Message> {
         .filter_map(|name| Some((name.to_owned(), shared.engine.find(name)?)))
         .collect::<Vec<_>>();
     responsive(move |size| {
-        let needed = |width: f32| (rail::height(&rail, f64::from(width) / SCALE) * SCALE) as f32;
+        let needed = |width: f32| {
+            let height = rail::height(&rail, f64::from(width) / SCALE) * SCALE;
+            (height as f32).min(TALLEST)
+        };
         let ruler = |height: f32| {
             Canvas::new(Ruler {
                 rail: rail.clone(),

@@ -81,7 +81,8 @@ impl Area {
         };
         let mut list = column![].spacing(4).width(Length::Fill);
         for item in items {
-            let words = words(item.text.as_str(), BODY, Role::Ink, look).width(Length::Fill);
+            let words =
+                words(item.text.replace('`', ""), BODY, Role::Ink, look).width(Length::Fill);
             let line = row![super::canvas::shape(Shape::NotAssessed, 10.0, look), words]
                 .spacing(8)
                 .align_y(Alignment::Center);

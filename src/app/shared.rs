@@ -5,6 +5,8 @@ use crate::notebook::datum::CellId;
 use crate::notebook::engine::Engine;
 use crate::notebook::results::Results;
 
+pub use crate::drawing::measure::Measure;
+
 /// What is shown.
 #[derive(Clone, Copy, Debug)]
 pub struct Shared<'a> {
@@ -28,16 +30,6 @@ pub struct Look {
     pub theme: Theme,
     /// How much larger than 100 % everything is, such as 1.25.
     pub zoom: f32,
-    /// The units that quantities are shown in.
+    /// The units that quantities are shown in; what was typed stays as typed.
     pub measure: Measure,
-}
-
-/// A system of units to show quantities in; what was typed stays as typed.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
-pub enum Measure {
-    /// Metres, °C, W/m².
-    #[default]
-    Metric,
-    /// Feet, °F, Btu/(h·ft²).
-    Us,
 }

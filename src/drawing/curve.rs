@@ -4,19 +4,25 @@
 //! colour alone. No label covers another: limits are named in a column beside
 //! the plot, and a position that finds no room in the plot is named there too.
 
+mod axes;
+mod comparison;
 mod data;
-pub(super) mod plot;
+mod plot;
 mod scale;
 
 use glam::DVec2;
 
-use crate::drawing::font::Weight;
-use crate::drawing::mark::{Anchor, Mark, Rectangle, Shape, Text};
+use crate::drawing::font::{Weight, fit};
+use crate::drawing::mark::{Anchor, Mark, Shape, Text};
 use crate::drawing::picture::Picture;
 use crate::drawing::role::Role;
+use crate::drawing::screen::{Screen, Shadow};
 use crate::notebook::cell::position::Band;
 
-use plot::{BODY, Plot, TITLE, fit};
+use plot::{BODY, Plot, TITLE};
+
+pub use axes::Axes;
+pub use comparison::InverseSquare;
 
 /// Where a limit line meets the curve.
 #[derive(Clone, Debug, PartialEq)]
@@ -43,6 +49,8 @@ pub struct LimitLine {
 /// A work position on the plot.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Marker {
+    /// The position's cell.
+    pub cell: String,
     /// What it is called, best with its finding's word: `charger · over`.
     pub label: String,
     /// Its distance, in metres.
@@ -64,18 +72,24 @@ pub struct Curve {
     pub x_label: String,
     /// The quantity upwards, with its unit.
     pub y_label: String,
+    /// How many metres one unit of the lower axis is: 0.3048 for feet.
+    pub x_unit: f64,
     /// How many SI units one unit of the upward axis is: 1000 for kW/m².
     pub y_unit: f64,
     /// Pairs of distance in metres and value in SI units, in order of distance.
     pub rows: Vec<(f64, f64)>,
     /// The same for the 97.5 % bound, where inputs carry an uncertainty.
     pub upper: Option<Vec<(f64, f64)>>,
-    /// A point through which the inverse-square comparison is drawn.
-    pub inverse_square: Option<(f64, f64)>,
+    /// The inverse square that is drawn beside the curve.
+    pub inverse_square: Option<InverseSquare>,
     /// Limits, in any order.
     pub limits: Vec<LimitLine>,
     /// Work positions, in any order.
     pub positions: Vec<Marker>,
+    /// Screens that stand across the line.
+    pub screens: Vec<Screen>,
+    /// Stretches from which a source is hidden.
+    pub shadows: Vec<Shadow>,
     /// Writes a number of an axis; the caller's one place where numbers become text.
     pub number: fn(f64) -> String,
 }
@@ -100,12 +114,15 @@ const DEPTH: f64 = 1e6;
 ///     band: Band::Total,
 ///     x_label: "distance (m)".into(),
 ///     y_label: "irradiance (kW/m²)".into(),
+///     x_unit: 1.0,
 ///     y_unit: 1000.0,
 ///     rows: (1..20).map(|m| (f64::from(m), 9e4 / f64::from(m * m))).collect(),
 ///     upper: None,
 ///     inverse_square: None,
 ///     limits: Vec::new(),
 ///     positions: Vec::new(),
+///     screens: Vec::new(),
+///     shadows: Vec::new(),
 ///     number: |value| value.to_string(),
 /// };
 /// let picture = curve::picture(&curve, 480.0, 280.0);
@@ -122,7 +139,7 @@ pub fn picture(curve: &Curve, width: f64, height: f64) -> Picture {
         )
         .bold(),
     ));
-    let Some((x, y)) = domains(curve) else {
+    let Some(axes) = Axes::of(curve, width, height) else {
         let text = "nothing to draw: no value above zero on this line";
         picture.push(Mark::Text(
             Text::new(DVec2::new(width / 2.0, height / 2.0), BODY, text)
@@ -131,7 +148,7 @@ pub fn picture(curve: &Curve, width: f64, height: f64) -> Picture {
         ));
         return picture;
     };
-    Plot::new(curve, picture, x, y).finish()
+    Plot::new(curve, picture, axes).finish()
 }
 
 /// The size that is really drawn.
@@ -144,47 +161,6 @@ fn drawn(width: f64, height: f64) -> (f64, f64) {
         }
     };
     (at_least(width, 240.0), at_least(height, 160.0))
-}
-
-/// Where the plot stands in its picture, and what its axes say there.
-#[derive(Clone, Debug)]
-pub struct Axes {
-    /// The frame of the plot, in points.
-    pub area: Rectangle,
-    x: scale::Scale,
-    y: scale::Scale,
-    unit: f64,
-}
-
-impl Axes {
-    /// Returns the distance in metres above a point of the lower axis, `None`
-    /// beside the plot.
-    #[must_use]
-    pub fn distance(&self, x: f64) -> Option<f64> {
-        let share = (x - self.area.from.x) / self.area.width();
-        (0.0..=1.0).contains(&share).then(|| self.x.value(share))
-    }
-
-    /// Returns the place of a distance in metres and a value in SI units, `None`
-    /// outside the plot.
-    #[must_use]
-    pub fn place(&self, distance: f64, value: f64) -> Option<DVec2> {
-        let at = DVec2::new(
-            self.area.from.x + self.x.fraction(distance) * self.area.width(),
-            self.area.to.y - self.y.fraction(value / self.unit) * self.area.height(),
-        );
-        let inside = at.is_finite() && self.area.grown(0.01).holds(&Rectangle { from: at, to: at });
-        inside.then_some(at)
-    }
-}
-
-/// Returns the axes of the picture of the same size; `None` where there is
-/// nothing to draw.
-#[must_use]
-pub fn axes(curve: &Curve, width: f64, height: f64) -> Option<Axes> {
-    let (width, height) = drawn(width, height);
-    let (x, y) = domains(curve)?;
-    Some(Plot::new(curve, Picture::new(width, height), x, y).axes())
 }
 
 /// The range of both axes, or nothing to show.

@@ -143,6 +143,25 @@ pub fn width(text: &str, size: f64, weight: Weight) -> f64 {
     text.chars().map(|c| table.advance(c)).sum::<f64>() * size
 }
 
+/// Returns a text shortened to `width` with an ellipsis, where it is longer.
+#[must_use]
+pub fn fit(text: &str, width: f64, size: f64, weight: Weight) -> String {
+    if self::width(text, size, weight) <= width {
+        return text.to_owned();
+    }
+    let room = width - self::width("…", size, weight);
+    let mut used = 0.0;
+    let mut cut: String = text
+        .chars()
+        .take_while(|c| {
+            used += advance(*c, weight) * size;
+            used <= room
+        })
+        .collect();
+    cut.truncate(cut.trim_end().len());
+    cut + "…"
+}
+
 /// Returns the glyph of a character, or `None` if the font lacks it.
 pub fn glyph(c: char, weight: Weight) -> Option<u16> {
     table(weight).glyph(c)
@@ -195,6 +214,14 @@ mod tests {
                 );
             }
         }
+    }
+
+    #[test]
+    fn a_text_is_shortened_to_its_room() {
+        assert_eq!(fit("crane hand", 90.0, 8.0, Weight::Regular), "crane hand");
+        let short = fit("crane hand", 30.0, 8.0, Weight::Regular);
+        assert_eq!(short, "crane…");
+        assert_eq!(fit("crane hand", 0.0, 8.0, Weight::Regular), "…");
     }
 
     #[test]

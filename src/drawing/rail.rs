@@ -7,12 +7,15 @@
 mod data;
 mod line;
 mod plan;
+mod shading;
 
 use crate::drawing::mark::{Rectangle, Shape};
+use crate::drawing::measure::Measure;
 use crate::drawing::picture::Picture;
+use crate::drawing::screen::{Screen, Shadow};
 
-pub use data::Shading;
-pub use line::{Lengths, Line, Probe, Reading};
+pub use line::{Line, Probe, Reading};
+pub use shading::Shading;
 
 /// Where a rule begins to be met.
 #[derive(Clone, Debug, PartialEq)]
@@ -78,8 +81,12 @@ pub struct Rail {
     pub elsewhere: Vec<String>,
     /// What belongs here and has no place on the ruler.
     pub notes: Vec<String>,
-    /// The unit of the ruler.
-    pub lengths: Lengths,
+    /// Screens that stand across the line.
+    pub screens: Vec<Screen>,
+    /// Stretches from which a source is hidden.
+    pub shadows: Vec<Shadow>,
+    /// The units of the ruler.
+    pub measure: Measure,
     /// Whether pins and findings hold; not while bounds are being worked out.
     pub settled: bool,
 }

@@ -6,12 +6,16 @@ use std::sync::LazyLock;
 
 use serde::Deserialize;
 
+use super::cell::position::Sights;
+use super::cell::surroundings::{self, Formula};
 use super::cell::{Basis, Kind, assessment, source, zone};
 use super::datum::{CellId, Datum};
 use super::engine::{Engine, Slot};
 use super::listed;
 use super::results::{CellResult, Shown};
+use super::scene::may_be_polished;
 use crate::guidance::{Library, Limit};
+use crate::physics::screen::Make;
 use crate::units::format;
 
 /// One warning.
@@ -110,14 +114,14 @@ pub(super) fn of_cell(engine: &Engine, id: CellId, result: &CellResult) -> Vec<C
     listed::cautions(engine, id, &mut cautions);
     match cell.kind {
         Kind::Source => of_source(engine, id, &mut cautions),
+        Kind::Screen => of_screen(engine, id, &mut cautions),
+        Kind::Surroundings => of_room(cell, &mut cautions),
+        Kind::Curve => polished_line(engine, &mut cautions),
         Kind::Position => of_position(engine, id, &mut cautions),
         Kind::Assessment => of_assessment(engine, result, &mut cautions),
         Kind::Zone => of_zone(engine, id, result, &mut cautions),
         Kind::Value
         | Kind::Formula
-        | Kind::Surroundings
-        | Kind::Screen
-        | Kind::Curve
         | Kind::Note => {}
     }
     if result.failed > 0 {
@@ -142,12 +146,29 @@ fn si(engine: &Engine, id: CellId, field: &'static str) -> Option<f64> {
 }
 
 fn of_source(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
+    let typed = |field: &str| {
+        engine
+            .cell(id)
+            .is_some_and(|cell| cell.field(field).is_some())
+    };
     if si(engine, id, "wall_thickness").is_some_and(|depth| depth > 0.0) {
-        cautions.push(called("thick-wall", Some("wall_thickness"), &[]));
+        let cold = engine.cell(id).and_then(|cell| cell.text("wall")) == Some("cold");
+        cautions.push(if cold {
+            called("wall-cold", Some("wall"), &[])
+        } else {
+            called("wall-in-balance", Some("wall_thickness"), &[])
+        });
     }
-    let has_own = engine
-        .cell(id)
-        .is_some_and(|cell| cell.field("near_ir_emissivity").is_some());
+    if let Some(Datum::Shape(shape)) = engine.value_of(id, Slot::Group("shape"))
+        && shape.kind == source::Kind::Pool
+        && shape.parts.len() > 1
+    {
+        if !typed("wall_temperature") {
+            cautions.push(called("wall-as-melt", Some("wall_temperature"), &[]));
+        }
+        cautions.push(called("vessel-reflects", Some("freeboard"), &[]));
+    }
+    let has_own = typed("near_ir_emissivity") || typed("spectrum");
     if !has_own && let Some(Datum::Shape(shape)) = engine.value_of(id, Slot::Group("shape")) {
         match shape.kind {
             source::Kind::Pool => cautions.push(called("near-infrared-assumed", None, &[])),
@@ -177,8 +198,147 @@ fn of_source(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
     }
 }
 
+/// Beyond these film temperatures in kelvin the properties of air that stand
+/// behind the convection are not known to hold.
+const FILM: std::ops::RangeInclusive<f64> = 200.0..=1200.0;
+
+/// A plate hotter than this, in kelvin (60 °C), burns whoever touches it. Common
+/// practice, no source.
+const BURNS: f64 = 333.15;
+
+fn of_screen(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
+    let typed = |field: &str| {
+        engine
+            .cell(id)
+            .is_some_and(|cell| cell.field(field).is_some())
+    };
+    if let Some(Datum::Make(make)) = engine.value_of(id, Slot::Group("make")) {
+        match make {
+            Make::Solid { .. } => {
+                if may_be_polished(make) {
+                    cautions.push(called("polished", Some("front_emissivity"), &[]));
+                }
+                if !typed("front_absorptance") || !typed("back_absorptance") {
+                    cautions.push(called("soiled", Some("front_absorptance"), &[]));
+                }
+            }
+            Make::Mesh { .. } => {
+                cautions.push(called("mesh-aslant", Some("open_fraction"), &[]));
+            }
+            Make::Filter { .. } => {
+                if !typed("visible_transmittance") {
+                    cautions.push(called(
+                        "filter-visible",
+                        Some("visible_transmittance"),
+                        &[],
+                    ));
+                }
+                cautions.push(called("filter-breaks", None, &[]));
+            }
+        }
+    }
+    let Some(Datum::Screen(outcome)) = engine.value_of(id, Slot::Group("outcome")) else {
+        return;
+    };
+    let told = |kelvin: f64| {
+        let unit = format::natural_unit(crate::units::Dimension::TEMPERATURE, kelvin, None);
+        format::quantity(kelvin, &unit, 3, format::Rounding::Up)
+    };
+    if outcome.hottest > BURNS {
+        cautions.push(called("screen-hot", None, &[&told(outcome.hottest)]));
+    }
+    let air = engine.room().map_or(surroundings::AIR_TEMPERATURE, |room| {
+        room.air_temperature
+    });
+    for film in [0.5 * (outcome.temperature + air), 0.5 * (outcome.hottest + air)] {
+        if !FILM.contains(&film) {
+            cautions.push(called("screen-convection", None, &[&told(film)]));
+            break;
+        }
+    }
+}
+
+fn of_room(cell: &super::Cell, cautions: &mut Vec<Caution>) {
+    if let Some(formula) = cell.text("absorption").and_then(Formula::from_word) {
+        cautions.push(called(
+            "air-absorbs",
+            Some("absorption"),
+            &[formula.citation()],
+        ));
+    }
+}
+
+/// Warns of polished screens beside a line that is not looked at place by place.
+fn polished_line(engine: &Engine, cautions: &mut Vec<Caution>) {
+    let names: Vec<String> = engine
+        .heat()
+        .and_then(|heat| heat.polished.as_ref())
+        .map(|balanced| {
+            let polished = balanced
+                .screens
+                .iter()
+                .filter(|state| may_be_polished(&state.screen.make()));
+            polished.map(|state| state.name.to_string()).collect()
+        })
+        .unwrap_or_default();
+    if !names.is_empty() {
+        cautions.push(called("polished-line", None, &[&names.join(", ")]));
+    }
+}
+
+/// Warns where a way through shop air lies outside the range of its formula.
+fn air_range(engine: &Engine, sights: &Sights, cautions: &mut Vec<Caution>) {
+    let Some(air) = engine.heat().and_then(|heat| heat.air.as_ref()) else {
+        return;
+    };
+    let mut outside: Vec<&str> = Vec::new();
+    for (piece, (part, _)) in sights.around_eye.parts(0).enumerate() {
+        let name = &sights.form.names[sights.form.owner(part)];
+        let in_range = sights
+            .around_eye
+            .tag(0, piece)
+            .is_none_or(|tag| air.transmitted(tag.path).in_range);
+        if !in_range && !outside.contains(&name.as_ref()) {
+            outside.push(name);
+        }
+    }
+    if !outside.is_empty() {
+        cautions.push(called("air-range", None, &[&outside.join(", ")]));
+    }
+}
+
 fn of_position(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
+    if let Some(Datum::Exposure(exposure)) = engine.value_of(id, Slot::Group("exposure"))
+        && !exposure.mirrored.is_empty()
+    {
+        cautions.push(called("mirrored", None, &[&exposure.mirrored.join(", ")]));
+    }
     if let Some(Datum::Sights(sights)) = engine.value_of(id, Slot::Group("sights")) {
+        air_range(engine, sights, cautions);
+        let past: Vec<&str> = sights
+            .form
+            .names
+            .iter()
+            .zip(&sights.form.shapes)
+            .filter(|(_, shape)| {
+                let mut points = sights.around_skin.points.iter();
+                !shape.is_source()
+                    && points.any(|point| {
+                        let from = sights.eye.with_z(point.z);
+                        shape.region.crosses(from, *point)
+                    })
+            })
+            .map(|(name, _)| name.as_ref())
+            .collect();
+        if !past.is_empty() {
+            let unit = crate::units::Unit::coherent(crate::units::Dimension::LENGTH);
+            let reach = format::quantity(sights.reach, &unit, 2, format::Rounding::Nearest);
+            cautions.push(called(
+                "reach-past-screen",
+                Some("reach"),
+                &[&reach, &past.join(", ")],
+            ));
+        }
         if !sights.behind.is_empty() {
             let verb = if sights.behind.len() == 1 {
                 "is"
@@ -249,6 +409,7 @@ fn of_assessment(engine: &Engine, result: &CellResult, cautions: &mut Vec<Cautio
 }
 
 fn of_zone(engine: &Engine, id: CellId, result: &CellResult, cautions: &mut Vec<Caution>) {
+    polished_line(engine, cautions);
     if let Some(cell) = engine.cell(id) {
         recalled(engine, cell.texts("guidance").into_iter(), cautions);
         if cell

@@ -14,7 +14,7 @@ use std::collections::{BTreeMap, BTreeSet, HashMap};
 use std::sync::Arc;
 
 use super::cell::field::Item;
-use super::cell::surroundings::{Formula, RoomTask};
+use super::cell::surroundings::{Formula, Room, RoomTask};
 use super::cell::{Cell, Kind};
 use super::datum::{CellId, Datum};
 use super::edit::{self, Edit};
@@ -264,6 +264,15 @@ impl Engine {
     pub fn form(&self) -> Option<&Arc<Form>> {
         match self.value(self.form)? {
             Datum::Form(form) => Some(form),
+            _ => None,
+        }
+    }
+
+    /// Returns the room, unless it is in error.
+    #[must_use]
+    pub fn room(&self) -> Option<&Room> {
+        match self.value(self.room)? {
+            Datum::Room(room) => Some(room),
             _ => None,
         }
     }

@@ -1,7 +1,7 @@
 //! What still stops a worksheet from being issued as final.
 
 use super::caution::{is_assessed, is_unconfirmed, unconfirmed_limits};
-use super::cell::Kind;
+use super::cell::{Form, Kind};
 use super::date;
 use super::engine::Engine;
 use super::listed;
@@ -185,7 +185,7 @@ fn doubts(cells: &[CellResult], engine: &Engine, items: &mut Vec<Item>) {
 
 /// The inputs that a finding rests on: each says where it came from, unless it
 /// is worked out from others.
-const BASED: [(Kind, &[&str]); 3] = [
+const BASED: [(Kind, &[&str]); 4] = [
     (Kind::Value, &["entry"]),
     (
         Kind::Source,
@@ -197,6 +197,27 @@ const BASED: [(Kind, &[&str]); 3] = [
             "temperature",
             "emissivity",
             "near_ir_emissivity",
+            "vertices",
+            "spectrum",
+            "wall_thickness",
+            "freeboard",
+            "vessel_tilt",
+            "wall_temperature",
+        ],
+    ),
+    (
+        Kind::Screen,
+        &[
+            "width",
+            "height",
+            "open_fraction",
+            "transmittance",
+            "near_ir_transmittance",
+            "visible_transmittance",
+            "front_emissivity",
+            "back_emissivity",
+            "front_absorptance",
+            "back_absorptance",
         ],
     ),
     (Kind::Position, &["x", "y", "distance"]),
@@ -214,7 +235,12 @@ fn baseless(engine: &Engine, items: &mut Vec<Item>) {
                     .id(place)
                     .zip(cell.kind.field(name))
                     .and_then(|(id, spec)| engine.entry(id, spec.name));
-                let is_input = typed.is_some_and(|entry| entry.names().is_empty());
+                let is_input = typed.is_some_and(|entry| entry.names().is_empty())
+                    || cell.pairs(name).is_some_and(|_| {
+                        cell.kind
+                            .field(name)
+                            .is_some_and(|spec| matches!(spec.form, Form::Pairs(_)))
+                    });
                 let has_basis = cell.field(name).is_some_and(|field| field.basis.is_some())
                     || (**name == "entry" && cell.field("basis").is_some());
                 is_input && !has_basis

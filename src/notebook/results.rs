@@ -1,6 +1,8 @@
 //! Everything that was worked out, cell by cell, with bounds: what the command
 //! line prints, the worksheet paints and the window shows.
 
+use std::collections::BTreeMap;
+
 use super::caution::{self, Caution};
 use super::cell::assessment::{self, Verdict};
 use super::cell::zone::Extent;
@@ -230,15 +232,26 @@ impl Results {
     /// that judge it; `None` where none does, or none could be worked out.
     #[must_use]
     pub fn word_of(&self, engine: &Engine, position: &str) -> Option<&'static str> {
-        let words: Vec<&str> = self
+        let judging = self
             .cells
             .iter()
-            .filter(|cell| cell.judges(engine, position))
-            .filter_map(|cell| cell.overall.as_ref().map(Overall::word))
-            .collect();
-        ["over", "not assessed", "within"]
-            .into_iter()
-            .find(|word| words.contains(word))
+            .filter(|cell| cell.judges(engine, position));
+        worst_word(judging)
+    }
+
+    /// Returns the assessments of every position, by its name: for whoever asks
+    /// about many positions.
+    #[must_use]
+    pub fn assessments<'a>(&'a self, engine: &'a Engine) -> BTreeMap<&'a str, Vec<&'a CellResult>> {
+        let mut found: BTreeMap<&str, Vec<&CellResult>> = BTreeMap::new();
+        for cell in &self.cells {
+            if cell.kind == Kind::Assessment
+                && let Some(position) = engine.cell(cell.id).and_then(|cell| cell.text("position"))
+            {
+                found.entry(position).or_default().push(cell);
+            }
+        }
+        found
     }
 
     /// Returns whether every cell was worked out.
@@ -246,6 +259,21 @@ impl Results {
     pub fn is_whole(&self) -> bool {
         self.cells.iter().all(|cell| cell.state == State::Ok)
     }
+}
+
+/// Returns the worst finding's word of some assessments; `None` where none
+/// could be worked out.
+#[must_use]
+pub fn worst_word<'a>(
+    assessments: impl IntoIterator<Item = &'a CellResult>,
+) -> Option<&'static str> {
+    let words: Vec<&str> = assessments
+        .into_iter()
+        .filter_map(|cell| cell.overall.as_ref().map(Overall::word))
+        .collect();
+    ["over", "not assessed", "within"]
+        .into_iter()
+        .find(|word| words.contains(word))
 }
 
 impl CellResult {

@@ -95,32 +95,12 @@ impl Form {
                 balls.push((part.region.centre(), part.region.bounding_radius()));
             }
         }
-        let parts = || shapes.iter().flat_map(|shape| shape.parts.iter());
-        let barriers: Vec<Barrier> = shapes
-            .iter()
-            .filter_map(|shape| shape.barrier.clone())
-            .collect();
-        let bodies = parts().any(|part| {
-            matches!(
-                part.region,
-                Region::Sphere { .. } | Region::Cylinder { .. } | Region::Plate { .. }
-            )
-        });
-        let hides = !barriers.is_empty()
-            || (bodies && owners.len() > 1)
-            || parts().any(|part| part.through.is_some() || part.less.is_some());
-        let sight = if hides {
-            let parts: Vec<Part> = parts().cloned().collect();
-            Looking::Through(Arc::new(Scene::new(parts, barriers)?))
-        } else {
-            Looking::Plainly(parts().map(|part| part.region.clone()).collect())
-        };
         Ok(Form {
             names,
+            sight: looking(&shapes)?,
             shapes,
             owners,
             balls,
-            sight,
             air,
         })
     }
@@ -209,6 +189,54 @@ impl Form {
     }
 }
 
+/// Returns how the parts of these shapes are looked at.
+fn looking(shapes: &[Arc<Shape>]) -> Result<Looking, crate::physics::Error> {
+    let parts = || shapes.iter().flat_map(|shape| shape.parts.iter());
+    let barriers: Vec<Barrier> = shapes
+        .iter()
+        .filter_map(|shape| shape.barrier.clone())
+        .collect();
+    let bodies = parts().any(|part| {
+        matches!(
+            part.region,
+            Region::Sphere { .. } | Region::Cylinder { .. } | Region::Plate { .. }
+        )
+    });
+    let hides = !barriers.is_empty()
+        || (bodies && parts().nth(1).is_some())
+        || parts().any(|part| part.through.is_some() || part.less.is_some());
+    if !hides {
+        let regions = parts().map(|part| part.region.clone()).collect();
+        return Ok(Looking::Plainly(regions));
+    }
+    let parts: Vec<Part> = parts().cloned().collect();
+    Ok(Looking::Through(Arc::new(Scene::new(parts, barriers)?)))
+}
+
+/// Returns the two shapes that a scene's refusal is about.
+fn culprits(shapes: &[Arc<Shape>], error: crate::physics::Error) -> (usize, usize) {
+    use crate::physics::Error;
+    let owner = |part: usize| {
+        let mut past = 0;
+        let own = shapes.iter().position(|shape| {
+            past += shape.parts.len();
+            part < past
+        });
+        own.unwrap_or(0)
+    };
+    let screen = |barrier: usize| {
+        let mut screens = shapes.iter().enumerate();
+        let own = screens.by_ref().filter(|(_, shape)| shape.barrier.is_some());
+        own.map(|(at, _)| at).nth(barrier).unwrap_or(0)
+    };
+    match error {
+        Error::PartsOverlap { first, second } => (owner(first), owner(second)),
+        Error::BarrierOverlaps { barrier, part } => (owner(part), screen(barrier)),
+        Error::NotAnOutline { part } => (owner(part), owner(part)),
+        _ => (0, shapes.len().saturating_sub(1)),
+    }
+}
+
 /// The sources and screens that cannot stand as they do.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Layout {
@@ -240,8 +268,22 @@ impl LayoutTask {
                 _ => None,
             })
             .collect();
+        let mut pairs = clash::all(&known);
+        if pairs.is_empty() {
+            // What the scene itself refuses, it refuses for two that overlap.
+            let shapes: Vec<Arc<Shape>> = known.iter().map(|(_, shape)| Arc::clone(shape)).collect();
+            if let Err(error) = looking(&shapes) {
+                let (first, second) = culprits(&shapes, error);
+                pairs.extend(
+                    known
+                        .get(first)
+                        .zip(known.get(second))
+                        .map(|((first, _), (second, _))| (*first.min(second), *first.max(second))),
+                );
+            }
+        }
         Datum::Layout(Arc::new(Layout {
-            clashes: clash::all(&known)
+            clashes: pairs
                 .into_iter()
                 .map(|(first, second)| Clash {
                     first: Arc::clone(&self.names[first]),

@@ -5,7 +5,7 @@
 use super::cell::Kind;
 use super::cell::assessment::{self, Verdict};
 use super::cell::zone::Extent;
-use super::datum::Span;
+use super::datum::{Datum, Span};
 use super::engine::{Engine, Slot};
 use super::results::{CellResult, Figure, Shown, State};
 use crate::guidance::{Finding, Library, Overall};
@@ -27,7 +27,7 @@ pub fn label(name: &str) -> &str {
         "irradiance" => "irradiance",
         "near_ir_irradiance" => "near infrared, 780–3000 nm",
         "skin_irradiance" => "skin band, 380–3000 nm",
-        "background" => "from air and walls, in no limit",
+        "background" => "from the room itself (air, walls), counted in no limit",
         "envelope_irradiance" => "worst within reach",
         "envelope_near_ir_irradiance" => "near infrared, worst at the eye",
         "envelope_skin_irradiance" => "skin band, worst within reach",
@@ -383,6 +383,19 @@ pub fn finding(engine: &Engine, result: &CellResult) -> Option<Sentence> {
         text.push_str(&format!(
             "; {} seen from behind, and counted as nothing",
             behind.join(", ")
+        ));
+    }
+    let mirrored = engine
+        .find(position)
+        .and_then(|id| engine.value_of(id, Slot::Group("exposure")))
+        .map_or(&[][..], |datum| match datum {
+            Datum::Exposure(exposure) => exposure.mirrored.as_slice(),
+            _ => &[],
+        });
+    if !mirrored.is_empty() {
+        text.push_str(&format!(
+            "; {} may be polished and mirrors a source here: the truth is higher",
+            mirrored.join(", ")
         ));
     }
     Some(Sentence {

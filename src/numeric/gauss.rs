@@ -102,15 +102,24 @@ mod tests {
     #[test]
     fn the_next_power_is_not_exact() {
         let found = Rule::new(2).integral(-1.0, 1.0, |x| x.powi(4));
-        assert!((found - 2.0 / 9.0).abs() < 1e-15, "{found} against 2/9, not 2/5");
+        assert!(
+            (found - 2.0 / 9.0).abs() < 1e-15,
+            "{found} against 2/9, not 2/5"
+        );
     }
 
     #[test]
     fn points_rise_and_the_sixteen_integrate_a_logarithm() {
         let places: Vec<f64> = SIXTEEN.on(1.0, 3.0).map(|(x, _)| x).collect();
-        assert!(places.is_sorted() && places[0] > 1.0 && places[15] < 3.0, "{places:?}");
+        assert!(
+            places.is_sorted() && places[0] > 1.0 && places[15] < 3.0,
+            "{places:?}"
+        );
         let found = SIXTEEN.integral(1.0, 3.0, f64::ln);
         let expected = 3.0 * 3.0_f64.ln() - 2.0;
-        assert!((found - expected).abs() < 1e-14, "{found} against {expected}");
+        assert!(
+            (found - expected).abs() < 1e-14,
+            "{found} against {expected}"
+        );
     }
 }

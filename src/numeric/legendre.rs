@@ -67,7 +67,10 @@ mod tests {
                 (1.0, 0.0),
                 (x, 1.0),
                 (0.5 * (3.0 * x * x - 1.0), 3.0 * x),
-                (0.5 * (5.0 * x.powi(3) - 3.0 * x), 0.5 * (15.0 * x * x - 3.0)),
+                (
+                    0.5 * (5.0 * x.powi(3) - 3.0 * x),
+                    0.5 * (15.0 * x * x - 3.0),
+                ),
                 (
                     (35.0 * x.powi(4) - 30.0 * x * x + 3.0) / 8.0,
                     (140.0 * x.powi(3) - 60.0 * x) / 8.0,
@@ -75,7 +78,10 @@ mod tests {
             ];
             for (order, (found, expected)) in Legendre::at(x).zip(expected).enumerate() {
                 let error = (found.0 - expected.0).abs() + (found.1 - expected.1).abs();
-                assert!(error < 2e-15, "{order} at {x}: {found:?} against {expected:?}");
+                assert!(
+                    error < 2e-15,
+                    "{order} at {x}: {found:?} against {expected:?}"
+                );
             }
         }
     }

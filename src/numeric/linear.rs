@@ -45,7 +45,10 @@ pub fn solve(mut rows: Vec<Vec<f64>>) -> Option<Vec<f64>> {
             .sum();
         solution[index] = (row[count] - known) / row[index];
     }
-    solution.iter().all(|value| value.is_finite()).then_some(solution)
+    solution
+        .iter()
+        .all(|value| value.is_finite())
+        .then_some(solution)
 }
 
 #[cfg(test)]

@@ -100,7 +100,12 @@ pub fn gouffe(radius: f64, depth: f64, emissivity: f64) -> Result<f64, Error> {
 /// The depth in radii, and the emissivity, if both are possible.
 fn checked(radius: f64, depth: f64, emissivity: f64) -> Result<(f64, f64), Error> {
     let ratio = length("depth", depth)? / length("radius", radius)?;
-    let ratio = positive("depth over radius", ratio, DEEPEST, "above 0 and at most 100")?;
+    let ratio = positive(
+        "depth over radius",
+        ratio,
+        DEEPEST,
+        "above 0 and at most 100",
+    )?;
     let emissivity = positive("emissivity", emissivity, 1.0, "above 0 and at most 1")?;
     Ok((ratio, emissivity))
 }

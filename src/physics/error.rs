@@ -34,26 +34,6 @@ pub enum Error {
         /// How many vertices were given.
         found: usize,
     },
-    /// A screen touches a hot source.
-    #[error(
-        "a screen must stand clear of hot sources, found screen {screen} touching part {part}; move one of them"
-    )]
-    TouchesSource {
-        /// Which screen, counted from 1.
-        screen: usize,
-        /// Which emitting part, counted from 1.
-        part: usize,
-    },
-    /// The middle of a piece of a screen lies on another screen.
-    #[error(
-        "screens must not lie in one another, found screen {screen} in screen {other}; move one of them"
-    )]
-    TouchesScreen {
-        /// Which screen, counted from 1.
-        screen: usize,
-        /// Which other one, counted from 1.
-        other: usize,
-    },
     /// The vertices of a polygon enclose no area.
     #[error(
         "a polygon must enclose an area, found {area} m²; give its vertices in order around it"
@@ -159,6 +139,28 @@ pub enum Error {
     NotAnOutline {
         /// The part, by its place in the scene.
         part: usize,
+    },
+    /// A screen touches a hot source.
+    #[error(
+        "a screen must stand clear of hot sources, found screen {} touching part {}; move one of them",
+        screen + 1, part + 1
+    )]
+    ScreenTouches {
+        /// The screen, by its place among the screens.
+        screen: usize,
+        /// The part, by its place among those of the sources.
+        part: usize,
+    },
+    /// The middle of a piece of a screen lies on another screen.
+    #[error(
+        "screens must not lie in one another, found screen {} in screen {}; move one of them",
+        screen + 1, other + 1
+    )]
+    ScreensOverlap {
+        /// The screen, by its place among the screens.
+        screen: usize,
+        /// The other one.
+        other: usize,
     },
 }
 

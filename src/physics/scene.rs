@@ -215,7 +215,8 @@ impl Scene {
         Ok(scene)
     }
 
-    /// Two screens in one plane that overlap: each would hide the other's face.
+    /// Two screens in one plane that overlap, or a screen and a plate: each
+    /// would hide the other's face.
     fn refuse_faces_under_barriers(&self) -> Result<(), Error> {
         for (index, target) in self.targets.iter().enumerate() {
             let Some(plane) = target.solid.plane() else {
@@ -233,7 +234,7 @@ impl Scene {
                 let Some(barrier) = occluder.barrier else {
                     continue;
                 };
-                if occluder.clear || !matches!(relation, Relation::InFront) {
+                if !matches!(relation, Relation::InFront) {
                     continue;
                 }
                 let (low, high) = occluder.solid.heights(plane);

@@ -25,6 +25,11 @@ pub const ALL: &[Template] = &[
         text: include_str!("../../templates/ladle.farglow"),
     },
     Template {
+        name: "ladle-screen",
+        about: "a ladle behind a half screen, and who watches it from a platform",
+        text: include_str!("../../templates/ladle-screen.farglow"),
+    },
+    Template {
         name: "gathering-opening",
         about: "the gathering opening of a glass furnace, with the gatherer at about 1 m",
         text: include_str!("../../templates/gathering-opening.farglow"),

@@ -5,6 +5,9 @@
 use super::dimension::superscript;
 use super::{Dimension, Quantity, Sense, Unit};
 
+/// One foot in metres, exact (NIST SP 811, B.8).
+const FOOT: f64 = 0.3048;
+
 /// Which way a number is rounded.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Rounding {
@@ -261,18 +264,22 @@ pub fn safe_distance(si: f64) -> String {
     )
 }
 
-/// Returns a stand-off distance in feet, up to the next half foot.
+/// Returns a stand-off distance of `si` metres in feet, up to the next half
+/// foot.
 pub fn safe_feet(si: f64) -> String {
-    if !si.is_finite() {
+    let feet = si / FOOT;
+    if !feet.is_finite() {
         return NOT_FINITE.to_owned();
     }
-    let foot = Unit::parse("ft").expect("the foot is a known unit");
-    let halves = up(foot.from_si(si) * 2.0) / 2.0;
-    at_most(
-        Quantity::new(foot.to_si(halves), Dimension::LENGTH),
-        Some(&foot),
-        15,
-    )
+    let halves = up(feet * 2.0);
+    if halves.abs() >= 1e15 {
+        return format!("{} ft", significant(feet, 15, Rounding::Up));
+    }
+    let sign = if halves < 0.0 { "−" } else { "" };
+    // Whole and below 1e15, so the casts keep every digit.
+    let halves = halves.abs() as u64;
+    let place = if halves % 2 == 0 { 0 } else { 5 };
+    format!("{sign}{}.{place} ft", grouped(&(halves / 2).to_string()))
 }
 
 /// Returns a time after which a limit is reached, down to the whole second:

@@ -1,7 +1,7 @@
 //! A worksheet of realistic length in an invented foundry; every number in it is
 //! made up for its looks alone.
 
-use farglow::drawing::curve::{self, Crossing, Curve, LimitLine, Marker};
+use farglow::drawing::curve::{self, Crossing, Curve, InverseSquare, LimitLine, Marker};
 use farglow::drawing::mark::Shape;
 use farglow::drawing::picture::Picture;
 use farglow::worksheet::Error;
@@ -57,9 +57,14 @@ pub fn plot() -> Picture {
             .into(),
         x_label: "distance from the face of the door (m)".into(),
         y_label: "near-infrared irradiance, facing strongest (kW/m²)".into(),
+        x_unit: 1.0,
         y_unit: 1000.0,
         upper: Some(rows.iter().map(|(d, v)| (*d, v * 1.11)).collect()),
-        inverse_square: rows.last().copied(),
+        inverse_square: Some(InverseSquare {
+            distance: 2.5,
+            value: value(2.5),
+            from: "charger, 2.50 m".into(),
+        }),
         limits: vec![
             limit("eye, 4 min", 295.0, 6.2, 6.6),
             limit("eye, all shift", 100.0, 10.8, 11.4),
@@ -67,24 +72,29 @@ pub fn plot() -> Picture {
         ],
         positions: vec![
             Marker {
+                cell: "charger".into(),
                 label: "charger · over".into(),
                 distance: 2.5,
                 value: value(2.5),
                 shape: Shape::Over,
             },
             Marker {
+                cell: "crane_hand".into(),
                 label: "crane hand · not assessed".into(),
                 distance: 8.2,
                 value: value(8.2),
                 shape: Shape::NotAssessed,
             },
             Marker {
+                cell: "control_desk".into(),
                 label: "control desk · within".into(),
                 distance: 14.0,
                 value: value(14.0),
                 shape: Shape::Within,
             },
         ],
+        screens: Vec::new(),
+        shadows: Vec::new(),
         number: |value| value.to_string(),
         rows,
     };

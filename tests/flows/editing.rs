@@ -132,17 +132,19 @@ fn guidance_and_basis_are_chosen_by_a_click() {
     desk.click("charger_limits");
     // A list is broken between its words, each of which opens it.
     desk.click("icnirp-2013-skin,");
-    desk.click("pain-time");
-    let place = desk.notebook().find("charger_limits").expect("it is there");
-    assert_eq!(
-        desk.notebook().cells[place].texts("guidance"),
-        [
-            "eu-2006-25-m",
-            "eu-2006-25-o",
-            "icnirp-2013-ir-eye",
-            "icnirp-2013-skin"
-        ]
-    );
+    let guidance = |desk: &Desk| -> Vec<String> {
+        let place = desk.notebook().find("charger_limits").expect("it is there");
+        let texts = desk.notebook().cells[place].texts("guidance");
+        texts.into_iter().map(str::to_owned).collect()
+    };
+    let before = guidance(&desk);
+    desk.click("eu-2006-25-n");
+    let mut with = before.clone();
+    with.push("eu-2006-25-n".to_owned());
+    assert_eq!(guidance(&desk), with);
+    // The choices stand below the words of the list.
+    desk.click_last("eu-2006-25-n");
+    assert_eq!(guidance(&desk), before);
 }
 
 #[test]
@@ -153,8 +155,17 @@ fn a_number_that_is_none_is_kept_under_the_hand_and_not_stored() {
     desk.type_into(app::TYPING, "60", "x");
     desk.expect("expected a whole number from 2 to 2000, found `x`");
     let place = desk.notebook().find("falloff").expect("it is there");
+    // The number was emptied first, and is left out until there is another.
     let points = desk.notebook().cells[place].field("points");
-    assert!(points.is_some(), "the last number stays: {points:?}");
+    assert!(points.is_none(), "{points:?}");
+    desk.type_into(app::TYPING, "x", "40");
+    let points = &desk.notebook().cells[place]
+        .field("points")
+        .map(|field| &field.content);
+    assert_eq!(
+        *points,
+        Some(&farglow::notebook::cell::Content::Count(40.0))
+    );
 }
 
 #[test]
@@ -236,4 +247,20 @@ fn figures_have_the_digits_that_they_need() {
     let shown = desk.shown();
     assert!(shown.iter().any(|text| text.ends_with(" ft")), "{shown:#?}");
     assert!(!shown.iter().any(long), "{shown:#?}");
+}
+
+#[test]
+fn a_name_that_is_typed_is_given_when_another_cell_is_looked_at() {
+    let mut desk = Desk::tall(preset::demo());
+    desk.click("t_hearth");
+    desk.press(Key::Named(Named::F2), Modifiers::empty());
+    desk.type_into(app::TYPING, "t_hearth", "bath");
+    desk.click("charger");
+    assert_eq!(desk.text("door", "temperature"), Some("bath"));
+    // One that is taken is said, and the old one stays.
+    desk.press(Key::Named(Named::F2), Modifiers::empty());
+    desk.type_into(app::TYPING, "charger", "door");
+    desk.click("0.90 m");
+    desk.expect("which another cell has");
+    assert!(desk.notebook().find("charger").is_some());
 }

@@ -30,7 +30,7 @@ fn the_cells_are_drawn_wider_and_neither_side_is_lost() {
         );
         // Cards and drawing are both still there.
         desk.expect("2.5 m");
-        desk.expect("Distance rail");
+        desk.expect("Rest the pointer on the plot");
     }
 }
 

@@ -9,6 +9,7 @@ use farglow::physics::opening::{Opening, Walls};
 use farglow::physics::pool::{Pool, stream};
 use farglow::physics::region::Region;
 use farglow::physics::scene::{Part, Scene};
+use farglow::physics::view_factor::{disc, rectangle};
 use glam::DVec3;
 use proptest::prelude::*;
 
@@ -105,7 +106,7 @@ fn round(depth: f64) -> (Opening, Tunnel) {
 }
 
 proptest! {
-    #![proptest_config(config(40))]
+    #![proptest_config(config(24))]
 
     #[test]
     fn a_round_opening_sends_what_its_rays_meet(
@@ -115,11 +116,11 @@ proptest! {
         let (opening, tunnel) = round(depth);
         let normal = -point.normalize();
         let found = lit(&opening, point, normal);
-        let expected = by_rays(over_a_disc(200_000), point, normal, |place, way| {
+        let expected = by_rays(over_a_disc(120_000), point, normal, |place, way| {
             let met = round_depth(place, way);
             if met > depth { 1.0 } else { tunnel.exitance(met) }
         });
-        let plain = by_rays(over_a_disc(200_000), point, normal, |_, _| 1.0);
+        let plain = by_rays(over_a_disc(120_000), point, normal, |_, _| 1.0);
         prop_assert!(
             (found - expected).abs() < 3e-4 * plain,
             "{} against {}, of {} through a thin wall", found, expected, plain
@@ -208,7 +209,7 @@ proptest! {
         let real = |place: DVec3| right * place.x + axis * place.y - DVec3::Y * place.z;
         let normal = -point.normalize();
         let found = factors(pool.parts(), real(point), real(normal))[0];
-        let expected = by_rays(over_a_disc(200_000), point, normal, |place, way| {
+        let expected = by_rays(over_a_disc(120_000), point, normal, |place, way| {
             let deep = round_depth(place, way) / -way.y;
             let (place, way) = (real(place), real(way));
             let along = (level - place.z) / way.z;
@@ -217,6 +218,60 @@ proptest! {
         prop_assert!(
             (found - expected).abs() < 1e-3 * expected + 3e-4,
             "{} against {} by rays", found, expected
+        );
+    }
+}
+
+#[test]
+fn factors_between_faces_are_reciprocal_and_fill_a_box() {
+    for (a, b, c) in [
+        (1.0, 2.0, 0.5),
+        (0.1, 3.0, 7.0),
+        (5.0, 4.0, 3.0),
+        (1e-3, 1.0, 1e3),
+    ] {
+        let there = disc::to_coaxial_disc(a, b, c).expect("two discs");
+        let back = disc::to_coaxial_disc(b, a, c).expect("two discs");
+        assert!(
+            (a * a * there / (b * b * back) - 1.0).abs() < 1e-14,
+            "discs {a}, {b}, {c}: {there} and {back}"
+        );
+        let there = rectangle::to_perpendicular_rectangle(a, b, c).expect("two rectangles");
+        let back = rectangle::to_perpendicular_rectangle(a, c, b).expect("two rectangles");
+        assert!(
+            (b * there / (c * back) - 1.0).abs() < 1e-9,
+            "rectangles {a}, {b}, {c}: {there} and {back}"
+        );
+        // From the floor of a box, a × b and c high, to all that closes it.
+        let sum = rectangle::to_parallel_rectangle(a, b, c).expect("floor and ceiling")
+            + 2.0 * rectangle::to_perpendicular_rectangle(a, b, c).expect("walls along a")
+            + 2.0 * rectangle::to_perpendicular_rectangle(b, a, c).expect("walls along b");
+        assert!((sum - 1.0).abs() < 1e-12, "box {a}, {b}, {c}: {sum}");
+    }
+}
+
+#[test]
+fn parallel_rectangles_meet_without_a_step_where_their_forms_change() {
+    // The shorter side at half the distance.
+    for long in [0.5, 1.0, 30.0] {
+        let at = |distance| rectangle::to_parallel_rectangle(long, 0.5, distance).expect("two");
+        let (near, far) = (at(1.0 - 1e-12), at(1.0 + 1e-12));
+        assert!(
+            (near / far - 1.0).abs() < 1e-11,
+            "{long}: {near} against {far}"
+        );
+    }
+}
+
+#[test]
+fn far_faces_keep_their_digits() {
+    // A F = A² / (π d²) far away.
+    for distance in [1e4, 1e6] {
+        let found = rectangle::to_parallel_rectangle(2.0, 0.5, distance).expect("two");
+        let expected = 1.0 / (std::f64::consts::PI * distance * distance);
+        assert!(
+            (found / expected - 1.0).abs() < 3.0 / (distance * distance) + 1e-14,
+            "{distance}: {found:e} against {expected:e}"
         );
     }
 }

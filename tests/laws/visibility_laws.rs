@@ -8,7 +8,7 @@ use farglow::physics::view::View;
 use glam::{DQuat, DVec2, DVec3};
 use proptest::prelude::*;
 
-use crate::view_factor_laws::{config, heading, place, region, turned};
+use crate::view_factor_laws::{config, place, region, turned};
 
 /// Where a ray from the origin of `way` first meets a region, as a share of the
 /// way: written for this check alone, by the textbook relations.
@@ -345,7 +345,7 @@ prop_compose! {
         shares in proptest::collection::vec(0.2..0.9_f64, 5),
         clear in proptest::collection::vec(any::<bool>(), 5),
     ) -> (Vec<Part>, Vec<Barrier>, DVec3) {
-        let mut parts = bare(&[part.clone()]);
+        let mut parts = bare(std::slice::from_ref(&part));
         parts.extend(bare(&others));
         let barriers = between(&part, point, barriers, &shares)
             .into_iter()
@@ -410,5 +410,69 @@ proptest! {
         }
         prop_assert!(worst.0 <= 1e-5, "{}: {} of {whole}", worst.1, worst.0);
         prop_assert!(looked.stance(0) == Stance::InFront || looked.of(0).is_empty());
+    }
+}
+
+/// Regions on a lattice, as people draw them: edges in line, in one plane, end
+/// to end.
+fn lattice_region() -> impl Strategy<Value = Region> {
+    let whole = |low: i32, high: i32| (low..=high).prop_map(f64::from);
+    let spot = [whole(-2, 2), whole(-2, 2), whole(-2, 2)].prop_map(DVec3::from_array);
+    let axis = prop_oneof![
+        Just(DVec3::X),
+        Just(DVec3::Y),
+        Just(DVec3::Z),
+        Just(DVec3::NEG_X),
+        Just(DVec3::NEG_Y),
+        Just(DVec3::NEG_Z)
+    ];
+    (spot, axis, whole(1, 3), whole(1, 3), 0..6_u8).prop_map(|(spot, axis, wide, high, kind)| {
+        let up = if axis.z == 0.0 { DVec3::Z } else { DVec3::X };
+        match kind {
+            0 => Region::disc(spot, axis, 0.5 * wide),
+            1 => Region::sphere(spot, 0.5 * wide),
+            2 => Region::cylinder(spot, axis * high, 0.5 * wide),
+            3 => Region::plate(spot, axis, up, wide, high),
+            4 => Region::outline(
+                spot,
+                axis,
+                up,
+                &[
+                    [0.0, 0.0],
+                    [wide, 0.0],
+                    [wide, high],
+                    [0.5 * wide, 0.5],
+                    [0.0, high],
+                ],
+            ),
+            _ => Region::rectangle(spot, axis, up, wide, high),
+        }
+        .expect("a possible region")
+    })
+}
+
+proptest! {
+    #![proptest_config(config(6000))]
+
+    #[test]
+    fn edges_in_line_leave_no_gap(part in lattice_region(), barriers in proptest::collection::vec(lattice_region(), 1..5), spot in [-6..=6_i32, -6..=6_i32, -6..=6_i32], jitter in place()) {
+        let point = DVec3::from_array(spot.map(|at| 0.5 * f64::from(at)));
+        let clear: Vec<Barrier> = barriers.iter().cloned().map(Barrier::clear).collect();
+        let Ok(scene) = Scene::new(bare(std::slice::from_ref(&part)), clear) else { return Ok(()) };
+        let looked = scene.look(point);
+        let Some(view) = alone(&part, point) else { return Ok(()) };
+        let (sum, all) = (flux(&looked, 0), view.flux());
+        prop_assert!((sum - all).length() <= 1e-11, "{sum} against {all}");
+        let hidden = Scene::new(bare(std::slice::from_ref(&part)), solid(&barriers)).expect("as before");
+        let here = hidden.look(point);
+        let free: DVec3 = looked.of(0).iter().filter(|glimpse| glimpse.through.is_empty()).map(|glimpse| glimpse.view.flux()).sum();
+        prop_assert!((free - flux(&here, 0)).length() <= 1e-11, "{free} against {}", flux(&here, 0));
+        // A hair off everything is nearly the same.
+        let there = hidden.look(point + jitter * 1e-9);
+        if here.touched_barrier().is_some() || there.touched_barrier().is_some() || there.touched().is_some() {
+            return Ok(());
+        }
+        let (here, there) = (flux(&here, 0), flux(&there, 0));
+        prop_assert!((here - there).length() <= 1e-6, "{here} against {there} a hair off");
     }
 }

@@ -211,7 +211,8 @@ fn disc_in_any_pose() {
 fn ring_is_the_difference_of_two_discs() {
     assert_eq!(rows::check("ring", ring), 3);
     let closed = |row: &Row| {
-        let on_axis = row.vector("center_m") == DVec3::Z && row.vector("receiver_normal") == DVec3::Z;
+        let on_axis =
+            row.vector("center_m") == DVec3::Z && row.vector("receiver_normal") == DVec3::Z;
         let (inner, outer) = (row.number("r_in_m"), row.number("r_out_m"));
         let factor = view_factor::ring::from_coaxial_element(inner, outer, 1.0);
         on_axis.then(|| factor.expect("a possible ring"))

@@ -58,7 +58,8 @@ pub fn view<'a>(
         inner: wide - 2.0 * AROUND,
     };
     let told = figure::told(&shared, cell, result);
-    let mut body = column![card.head(), card.first(&told)].spacing(2);
+    let kind = theme::words(cell.kind.name(), SMALL, Role::Muted, look);
+    let mut body = column![kind, card.first(&told)].spacing(2);
     if let Some(origin) = card.origin() {
         body = body.push(theme::words(origin, SMALL, Role::Muted, look));
     }
@@ -83,6 +84,9 @@ pub fn view<'a>(
     if !result.cautions.is_empty() {
         body = body.push(found::cautions(result, selected, look));
     }
+    if selected {
+        body = body.push(card.foot());
+    }
     mouse_area(
         container(body)
             .padding([9.0, AROUND])
@@ -101,30 +105,25 @@ impl<'a> Card<'a, '_> {
         }
     }
 
-    /// The kind, and what can be done with the whole cell.
-    fn head(&self) -> Element<'a, Message> {
+    /// What can be done with the whole cell.
+    fn foot(&self) -> Element<'a, Message> {
         let (look, id) = (self.shared.look, self.result.id);
-        let kind = theme::words(self.cell.kind.name(), SMALL, Role::Muted, look);
-        if !self.selected {
-            return kind.into();
-        }
-        let tool = |text: &'static str, message: Message| {
+        let tool = |text: &'static str, message: Message| -> Element<'a, Message> {
             button(iced::widget::text(text).size(SMALL).font(theme::REGULAR))
-                .padding([0, 5])
+                .padding([0, 4])
                 .style(theme::plain(look))
                 .on_press(message)
+                .into()
         };
-        row![
-            kind,
-            space().width(Length::Fill),
+        let tools = [
+            theme::words("this cell:", SMALL, Role::Muted, look).into(),
             tool("rename", Message::Open(self.place(Part::Name))),
             tool("up", Message::Raise(id)),
             tool("down", Message::Lower(id)),
             tool("copy", Message::Duplicate(id)),
             tool("remove", Message::Remove(id)),
-        ]
-        .align_y(Alignment::Center)
-        .into()
+        ];
+        row(tools).spacing(4).align_y(Alignment::Center).into()
     }
 
     /// The sentence, with the governing quantity at the right edge.
@@ -158,9 +157,14 @@ impl<'a> Card<'a, '_> {
     fn sentence(&self, wide: f32) -> Element<'a, Message> {
         let look = self.shared.look;
         let mut pieces: Vec<Element<'a, Message>> = Vec::new();
+        // A sign stands on the line of what it belongs to.
+        let mut sign = None;
         for piece in sentence::sentence(self.cell) {
             match piece {
                 Piece::Name => pieces.push(self.name(wide)),
+                Piece::Words(words) if words.chars().count() == 1 => {
+                    sign = Some(theme::words(words, BODY, Role::Ink, look));
+                }
                 Piece::Words(words) => {
                     pieces.extend(
                         words
@@ -169,7 +173,12 @@ impl<'a> Card<'a, '_> {
                     );
                 }
                 Piece::Field(field, after) => {
-                    pieces.extend(self.field(field, after, wide));
+                    let mut words = self.field(field, after, wide).into_iter();
+                    if let Some(sign) = sign.take() {
+                        let first = words.next();
+                        pieces.push(row![sign].push(first).spacing(4).into());
+                    }
+                    pieces.extend(words);
                 }
             }
         }
@@ -289,7 +298,13 @@ impl<'a> Card<'a, '_> {
         let look: Look = self.shared.look;
         let label = LABEL.min(self.inner * 0.4);
         let wide = self.inner - label - theme::STEP;
-        let lines = sentence::others(self.cell).into_iter().map(|name| {
+        // What is open below the sentence is not listed again.
+        let open =
+            self.cell.kind == Kind::Value && self.area.is_open(self.place(Part::Field("entry")));
+        let listed = sentence::others(self.cell)
+            .into_iter()
+            .filter(|name| !(open && matches!(*name, "basis" | "note")));
+        let lines = listed.map(|name| {
             let pieces = row(self.field(name, "", wide))
                 .spacing(4)
                 .wrap()

@@ -124,7 +124,10 @@ pub fn one_line(text: &str, size: f32, wide: f32) -> String {
         }
         end = at + letter.len_utf8();
     }
-    format!("{} …", first[..end].trim_end())
+    // Between two words, if there are any.
+    let cut = first[..end].trim_end();
+    let cut = cut.rfind(' ').map_or(cut, |at| cut[..at].trim_end());
+    format!("{cut} …")
 }
 
 /// Returns a field that is open for typing, as wide as what is typed.
@@ -156,7 +159,13 @@ pub fn strip<'a>(
     let look = shared.look;
     let mut strip = column![].spacing(6);
     if let Some(spec) = cell.kind.field(field) {
-        strip = strip.push(theme::words(spec.about, SMALL, Role::Muted, look));
+        strip = strip.push(theme::words(
+            // The marks of code say nothing on a card.
+            spec.about.replace('`', ""),
+            SMALL,
+            Role::Muted,
+            look,
+        ));
     }
     let names = |kinds: &[crate::notebook::Kind]| {
         shared

@@ -47,7 +47,9 @@ pub fn told(shared: &Shared<'_>, cell: &Cell, result: &CellResult) -> Told {
     match cell.kind {
         Kind::Surroundings => Told {
             lines: one(shared, result, "background")
-                .map(|text| format!("sends {text} to whoever stands in it, counted apart"))
+                .map(|text| {
+                    format!("the room's own air and walls send {text}; no limit counts that")
+                })
                 .into_iter()
                 .collect(),
             ..Told::default()
@@ -228,15 +230,20 @@ fn curve(shared: &Shared<'_>, result: &CellResult) -> Told {
                 .unwrap_or_else(|| wording::nominal(name, shown, unit.as_ref())),
         )
     };
+    let far = |row: usize| {
+        let shown = result.in_row(row, "distance")?;
+        let unit = hint(shared, shown, None);
+        Some(format::at_most(shown.quantity()?, unit.as_ref(), 4))
+    };
     let rows = result.rows();
     let line = (rows > 1)
         .then(|| {
             Some(format!(
                 "{rows} points · {} at {}, {} at {}",
                 at(0, "irradiance")?,
-                at(0, "distance")?,
+                far(0)?,
                 at(rows - 1, "irradiance")?,
-                at(rows - 1, "distance")?,
+                far(rows - 1)?,
             ))
         })
         .flatten();

@@ -1,7 +1,6 @@
 //! What is met at one distance of a curve, and how long guidance allows there.
 
-use crate::app::rail::lengths;
-use crate::app::shared::{Look, Measure, Shared};
+use crate::app::shared::{Look, Shared};
 use crate::drawing::curve::Curve;
 use crate::drawing::rail::{Line, Probe, Reading};
 use crate::guidance::{Allowed, Library};
@@ -12,8 +11,6 @@ use crate::notebook::datum::{Datum, Span};
 use crate::notebook::engine::Slot;
 use crate::notebook::results::{CellResult, Shown};
 use crate::notebook::wording;
-use crate::units::Unit;
-use crate::units::format::{self, Rounding};
 
 /// What is met at one distance, at the point itself: reach is not counted.
 #[derive(Clone, Debug, PartialEq)]
@@ -63,14 +60,14 @@ impl Readout {
 
     /// Where it is.
     pub(super) fn place(&self, look: Look) -> String {
-        let lengths = lengths(look);
+        let measure = look.measure;
         if (self.distance - self.clear).abs() < 1e-9 {
-            return format!("{} from the face", lengths.standing(self.clear));
+            return format!("{} from the face", measure.standing(self.clear));
         }
         format!(
             "{} clear, {} from the centre",
-            lengths.standing(self.clear),
-            lengths.standing(self.distance)
+            measure.standing(self.clear),
+            measure.standing(self.distance)
         )
     }
 
@@ -79,10 +76,10 @@ impl Readout {
         let told = |(nominal, upper): (f64, Option<f64>)| match upper {
             Some(upper) => format!(
                 "at most {} (nominal {})",
-                irradiance(upper, look),
-                irradiance(nominal, look)
+                look.measure.safe_irradiance(upper),
+                look.measure.safe_irradiance(nominal)
             ),
-            None => irradiance(nominal, look),
+            None => look.measure.safe_irradiance(nominal),
         };
         format!(
             "near infrared {} · in all {}",
@@ -108,16 +105,6 @@ impl Readout {
             Some((id, span)) => {
                 format!("{id} allows {}, without reach", wording::span(*span))
             }
-        }
-    }
-}
-
-fn irradiance(si: f64, look: Look) -> String {
-    match look.measure {
-        Measure::Metric => format::safe_irradiance(si),
-        Measure::Us => {
-            let unit = Unit::parse("Btu/(h·ft²)").expect("the unit is made of known ones");
-            format::quantity(si, &unit, 3, Rounding::Up)
         }
     }
 }

@@ -1,68 +1,107 @@
 //! What a notebook's curve cell shows: its rows, the rules that judge on them,
 //! and the positions that stand on its line.
 
-use super::{Crossing, Curve, LimitLine, Marker};
+use super::comparison::value_at;
+use super::{Crossing, Curve, InverseSquare, LimitLine, Marker, drawable};
 use crate::drawing::mark::Shape;
+use crate::drawing::measure::Measure;
 use crate::notebook::cell::position::Band;
 use crate::notebook::cell::zone::Extent;
 use crate::notebook::cell::{Cell, Kind};
 use crate::notebook::datum::Datum;
 use crate::notebook::engine::{Engine, Slot};
-use crate::notebook::results::{CellResult, Results, Shown, sights};
-use crate::notebook::wording;
+use crate::notebook::results::{CellResult, Results, Shown, sights, worst_word};
 use crate::units::format::{self, Rounding};
 
 impl Curve {
-    /// Returns the plot of a curve cell that was worked out.
+    /// Returns the plot of a curve cell that was worked out, told in a system of
+    /// units.
     ///
     /// It shows the near infrared irradiance, or the irradiance over all
     /// wavelengths where only that is judged by a limit on this line.
     #[must_use]
-    pub fn of(engine: &Engine, results: &Results, cell: &CellResult) -> Curve {
-        let near_infrared = plot(engine, results, cell, Band::NearInfrared);
-        let total = plot(engine, results, cell, Band::Total);
-        if near_infrared.limits.is_empty() && !total.limits.is_empty() {
-            total
-        } else {
-            near_infrared
+    pub fn of(engine: &Engine, results: &Results, cell: &CellResult, measure: Measure) -> Curve {
+        let limits = |band| limits(engine, results, cell, band, measure);
+        let (band, limits) = match limits(Band::NearInfrared) {
+            none if none.is_empty() => match limits(Band::Total) {
+                none if none.is_empty() => (Band::NearInfrared, none),
+                total => (Band::Total, total),
+            },
+            near_infrared => (Band::NearInfrared, near_infrared),
+        };
+        let column = match band {
+            Band::NearInfrared => "near_ir_irradiance",
+            Band::Total | Band::Skin => "irradiance",
+        };
+        let typed = engine.cell(cell.id);
+        let from = typed.and_then(|cell| cell.text("from")).unwrap_or_default();
+        let rows: Vec<(f64, f64)> = series(cell, column, |shown| {
+            shown.quantity().map(|quantity| quantity.si)
+        });
+        let bounded = cell
+            .in_row(0, column)
+            .is_some_and(|shown| matches!(shown, Shown::Quantity { high: Some(_), .. }));
+        let upper = bounded.then(|| series(cell, column, Shown::upper));
+        let height = engine
+            .value_of(cell.id, Slot::Field("z"))
+            .and_then(Datum::as_quantity)
+            .map_or_else(String::new, |z| format!(", at {}", measure.height(z.si)));
+        let positions = positions(engine, results, cell, column);
+        let (length, irradiance) = (measure.length(), measure.irradiance());
+        Curve {
+            band,
+            title: format!("{}: from {from}{height}", cell.name),
+            x_label: format!(
+                "horizontal distance from the centre of {from} ({})",
+                length.symbol()
+            ),
+            y_label: format!(
+                "{} ({})",
+                match band {
+                    Band::NearInfrared => "near infrared irradiance, 780–3000 nm",
+                    Band::Total | Band::Skin => "irradiance, all wavelengths",
+                },
+                irradiance.symbol()
+            ),
+            x_unit: length.factor(),
+            y_unit: irradiance.factor(),
+            inverse_square: inverse_square(&rows, &positions, measure),
+            limits,
+            positions,
+            screens: Vec::new(),
+            shadows: Vec::new(),
+            rows,
+            upper,
+            number: |value| format::significant(value, 1, Rounding::Nearest),
         }
     }
 }
 
-fn plot(engine: &Engine, results: &Results, cell: &CellResult, quantity: Band) -> Curve {
-    let column = match quantity {
-        Band::NearInfrared => "near_ir_irradiance",
-        Band::Total | Band::Skin => "irradiance",
-    };
-    let typed = engine.cell(cell.id);
-    let from = typed.and_then(|cell| cell.text("from")).unwrap_or_default();
-    let rows: Vec<(f64, f64)> = series(cell, column, |shown| {
-        shown.quantity().map(|quantity| quantity.si)
-    });
-    let bounded = cell
-        .in_row(0, column)
-        .is_some_and(|shown| matches!(shown, Shown::Quantity { high: Some(_), .. }));
-    let upper = bounded.then(|| series(cell, column, Shown::upper));
-    let height = typed.and_then(|cell| cell.text("z")).unwrap_or("1.6 m");
-    Curve {
-        band: quantity,
-        title: format!("{}: from {from}, at {height}", cell.name),
-        x_label: format!("horizontal distance from the centre of {from} (m)"),
-        y_label: format!(
-            "{} (W/m²)",
-            match quantity {
-                Band::NearInfrared => "near infrared irradiance, 780–3000 nm",
-                Band::Total | Band::Skin => "irradiance, all wavelengths",
-            }
-        ),
-        y_unit: 1.0,
-        inverse_square: rows.last().copied(),
-        limits: limits(engine, results, cell, quantity),
-        positions: positions(engine, results, cell, column),
-        rows,
-        upper,
-        number: |value| format::significant(value, 1, Rounding::Nearest),
+/// Returns the inverse square that goes on from the nearest position on the
+/// curve, as a sheet does that takes one figure there; without a position, from
+/// the middle of the curve.
+fn inverse_square(
+    rows: &[(f64, f64)],
+    positions: &[Marker],
+    measure: Measure,
+) -> Option<InverseSquare> {
+    let nearest = positions
+        .iter()
+        .filter_map(|marker| Some((marker, value_at(rows, marker.distance)?)))
+        .min_by(|a, b| a.0.distance.total_cmp(&b.0.distance));
+    if let Some((marker, value)) = nearest {
+        return Some(InverseSquare {
+            distance: marker.distance,
+            value,
+            from: format!("{}, {}", marker.cell, measure.standing(marker.distance)),
+        });
     }
+    let (distance, value) = rows.get(rows.len() / 2).copied().filter(drawable)?;
+    Some(InverseSquare {
+        distance,
+        value,
+        from: measure.standing(distance),
+    })
 }
 
 /// Returns a column against the distances, in one pass: a table may have
@@ -94,6 +133,7 @@ fn limits(
     results: &Results,
     curve: &CellResult,
     quantity: Band,
+    measure: Measure,
 ) -> Vec<LimitLine> {
     let Some(line) = engine.cell(curve.id) else {
         return Vec::new();
@@ -121,8 +161,8 @@ fn limits(
         limits.push(LimitLine {
             label: format!("{id}, {}", typed.text("stay").unwrap_or_default()),
             value,
-            crossing: nominal.and_then(crossing),
-            upper_crossing: safe.and_then(crossing),
+            crossing: nominal.and_then(|extent| crossing(extent, measure)),
+            upper_crossing: safe.and_then(|extent| crossing(extent, measure)),
         });
     }
     limits
@@ -132,11 +172,11 @@ fn judges(id: &str, quantity: Band) -> bool {
     Band::of_guidance(id) == Some(quantity)
 }
 
-fn crossing(extent: Extent) -> Option<Crossing> {
+fn crossing(extent: Extent, measure: Measure) -> Option<Crossing> {
     match extent {
         Extent::At(distance) => Some(Crossing {
             distance,
-            text: wording::extent(extent),
+            text: measure.safe_distance(distance),
         }),
         Extent::MetEverywhere | Extent::NotMetWithin(_) | Extent::NotAssessed => None,
     }
@@ -171,6 +211,7 @@ fn positions(engine: &Engine, results: &Results, curve: &CellResult, column: &st
         return Vec::new();
     };
     let mut markers = Vec::new();
+    let judged = results.assessments(engine);
     for cell in &results.cells {
         let Some(sights) = sights(engine, cell.id) else {
             continue;
@@ -186,8 +227,10 @@ fn positions(engine: &Engine, results: &Results, curve: &CellResult, column: &st
         let Some(value) = cell.shown(column).and_then(Shown::quantity) else {
             continue;
         };
-        let word = results.word_of(engine, &cell.name);
+        let judging = judged.get(cell.name.as_str()).into_iter().flatten();
+        let word = worst_word(judging.copied());
         markers.push(Marker {
+            cell: cell.name.clone(),
             label: format!("{} · {}", cell.name, word.unwrap_or("not assessed")),
             distance,
             value: value.si,

@@ -2,6 +2,7 @@ use glam::DVec2;
 
 use super::*;
 use crate::drawing::mark::Rectangle;
+use crate::drawing::screen::HIDDEN;
 
 fn number(value: f64) -> String {
     format!("{value}")
@@ -19,9 +20,14 @@ fn base() -> Curve {
         title: "door: near-infrared irradiance, straight out at 1.60 m".into(),
         x_label: "distance from the face of the door (m)".into(),
         y_label: "near-infrared irradiance (W/m²)".into(),
+        x_unit: 1.0,
         y_unit: 1.0,
         upper: Some(rows.iter().map(|(d, v)| (*d, v * 1.1)).collect()),
-        inverse_square: rows.last().copied(),
+        inverse_square: Some(InverseSquare {
+            distance: rows[24].0,
+            value: rows[24].1,
+            from: "charger, 2.24 m".into(),
+        }),
         rows,
         limits: vec![
             LimitLine {
@@ -51,20 +57,39 @@ fn base() -> Curve {
         ],
         positions: vec![
             Marker {
+                cell: "charger".into(),
                 label: "charger".into(),
                 distance: 2.5,
                 value: 1832.0,
                 shape: Shape::Over,
             },
             Marker {
+                cell: "crane_hand".into(),
                 label: "crane hand".into(),
                 distance: 8.2,
                 value: 177.0,
                 shape: Shape::NotAssessed,
             },
         ],
+        screens: Vec::new(),
+        shadows: Vec::new(),
         number,
     }
+}
+
+fn screened() -> Curve {
+    let mut curve = base();
+    curve.screens = vec![Screen {
+        cell: "plate".into(),
+        label: "plate · 208 °C".into(),
+        distance: 1.4,
+    }];
+    curve.shadows = vec![Shadow {
+        from: 1.4,
+        to: 4.4,
+        source: "door".into(),
+    }];
+    curve
 }
 
 fn crowded() -> Curve {
@@ -89,6 +114,7 @@ fn crowded() -> Curve {
         .collect();
     curve.positions = (0..12)
         .map(|i| Marker {
+            cell: format!("position_{i}"),
             label: format!("position {i}"),
             distance: 6.0 + 0.05 * f64::from(i),
             value: 300.0,
@@ -126,7 +152,23 @@ fn hostile() -> Curve {
         (f64::INFINITY, -1.0),
     ];
     curve.y_unit = 0.0;
-    curve.inverse_square = Some((0.0, f64::NAN));
+    curve.inverse_square = Some(InverseSquare {
+        distance: 0.0,
+        value: f64::NAN,
+        from: "nowhere".into(),
+    });
+    curve.screens = [f64::NAN, -1.0, 1e301, 1.0]
+        .map(|distance| Screen {
+            cell: "plate".into(),
+            label: "plate".repeat(40),
+            distance,
+        })
+        .to_vec();
+    curve.shadows = vec![Shadow {
+        from: f64::NEG_INFINITY,
+        to: f64::NAN,
+        source: "s".repeat(300),
+    }];
     curve.limits[0].value = -4.0;
     curve.limits[1].crossing = Some(Crossing {
         distance: f64::NAN,
@@ -135,6 +177,17 @@ fn hostile() -> Curve {
     curve.positions[0].distance = 0.0;
     curve.title = "t".repeat(400);
     curve
+}
+
+fn sets() -> [Curve; 6] {
+    [
+        base(),
+        crowded(),
+        with_zeros(),
+        single_decade(),
+        screened(),
+        hostile(),
+    ]
 }
 
 fn overlap(picture: &Picture) -> Option<(String, String)> {
@@ -152,8 +205,7 @@ fn overlap(picture: &Picture) -> Option<(String, String)> {
 
 #[test]
 fn no_label_covers_another() {
-    let sets = [base(), crowded(), with_zeros(), single_decade(), hostile()];
-    for (i, curve) in sets.iter().enumerate() {
+    for (i, curve) in sets().iter().enumerate() {
         for (width, height) in [
             (493.0, 300.0),
             (360.0, 240.0),
@@ -168,10 +220,7 @@ fn no_label_covers_another() {
 
 #[test]
 fn every_text_stays_on_the_sheet() {
-    for (i, curve) in [base(), crowded(), with_zeros(), single_decade(), hostile()]
-        .iter()
-        .enumerate()
-    {
+    for (i, curve) in sets().iter().enumerate() {
         for (width, height) in [(493.0, 300.0), (240.0, 160.0)] {
             let picture = picture(curve, width, height);
             let sheet = Rectangle::new(0.0, 0.0, width, height).grown(0.5);
@@ -283,10 +332,10 @@ fn a_crossing_is_pinned_at_its_place() {
 #[test]
 fn findings_and_lines_differ_without_colour() {
     let dashes = [
-        Plot::nominal(),
-        Plot::bound(),
-        Plot::comparison(),
-        Plot::limit(),
+        plot::stroke::nominal(),
+        plot::stroke::bound(),
+        plot::stroke::comparison(),
+        plot::stroke::limit(),
     ]
     .map(|s| s.dash);
     for (i, dash) in dashes.iter().enumerate() {
@@ -304,4 +353,58 @@ fn a_limit_that_cannot_be_drawn_is_still_named() {
         assert!(texts.contains(&"eye, 4 min"), "{value}: {texts:?}");
         assert!(texts.contains(&"off this plot"), "{value}: {texts:?}");
     }
+}
+
+#[test]
+fn a_screen_and_the_ground_behind_it_are_drawn_and_named() {
+    let curve = screened();
+    let picture = picture(&curve, 493.0, 300.0);
+    let texts: Vec<&str> = picture.texts().iter().map(|t| t.text.as_str()).collect();
+    for words in ["plate · 208 °C", "door hidden: less heat, not none"] {
+        assert!(texts.contains(&words), "{words} not in {texts:?}");
+    }
+    let axes = Axes::of(&curve, 493.0, 300.0).expect("there is something to draw");
+    let hatched = picture.marks.iter().filter_map(|mark| match mark {
+        Mark::Area {
+            outline,
+            hatch: Some(hatch),
+            ..
+        } if *hatch == HIDDEN => Some((outline[0].x, outline[1].x)),
+        _ => None,
+    });
+    // The sample of the legend comes first.
+    let found = hatched.last().expect("the ground is hatched");
+    let expected = [1.4, 4.4].map(|d| axes.place(d, 500.0).expect("it is on the plot").x);
+    assert!(
+        (found.0 - expected[0]).abs() < 1e-9 && (found.1 - expected[1]).abs() < 1e-9,
+        "{found:?}, wanted {expected:?}"
+    );
+}
+
+#[test]
+fn the_comparison_says_where_it_begins_and_how_it_errs() {
+    let picture = picture(&base(), 493.0, 300.0);
+    let texts: Vec<&str> = picture.texts().iter().map(|t| t.text.as_str()).collect();
+    let words = "inverse square from charger, 2.24 m: too high nearer in, too low farther out";
+    assert!(texts.contains(&words), "{words} not in {texts:?}");
+}
+
+#[test]
+fn feet_and_metres_stand_at_the_same_place() {
+    let metric = base();
+    let mut us = base();
+    (us.x_unit, us.y_unit) = (0.3048, 3.154_591);
+    for curve in [&metric, &us] {
+        let axes = Axes::of(curve, 493.0, 300.0).expect("there is something to draw");
+        let at = axes.place(2.5, 1832.0).expect("it is on the plot");
+        let back = axes.distance(at.x).expect("it is on the plot");
+        assert!((back - 2.5).abs() < 1e-9, "{back} m, wanted 2.5");
+    }
+    let picture = picture(&us, 493.0, 300.0);
+    let texts: Vec<&str> = picture.texts().iter().map(|t| t.text.as_str()).collect();
+    // 0.5 m to 20 m is 1.6 ft to 66 ft: the axis runs from 1 to 100.
+    assert!(
+        texts.contains(&"100") && !texts.contains(&"0.5"),
+        "{texts:?}"
+    );
 }

@@ -14,7 +14,6 @@ use crate::notebook::engine::{Engine, Slot};
 use crate::notebook::results::sights;
 use crate::notebook::scene::{Form, Heat};
 use crate::units::format::{self, Rounding};
-use crate::units::{Dimension, Unit};
 
 /// The height of a standing eye where nothing on the line gives one, m.
 const EYE: f64 = 1.6;
@@ -269,62 +268,5 @@ impl Probe {
             near_infrared,
             skin,
         })
-    }
-}
-
-/// The unit that distances along a line are told in.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
-pub enum Lengths {
-    /// Metres, stand-off distances up to the next 0.1 m.
-    #[default]
-    Metres,
-    /// Feet, stand-off distances up to the next half foot.
-    Feet,
-}
-
-impl Lengths {
-    /// Returns the unit's symbol.
-    #[must_use]
-    pub const fn symbol(self) -> &'static str {
-        match self {
-            Lengths::Metres => "m",
-            Lengths::Feet => "ft",
-        }
-    }
-
-    fn unit(self) -> Unit {
-        match self {
-            Lengths::Metres => Unit::coherent(Dimension::LENGTH),
-            Lengths::Feet => Unit::parse("ft").expect("the foot is a known unit"),
-        }
-    }
-
-    /// Returns how many metres the unit is.
-    #[must_use]
-    pub fn metres(self) -> f64 {
-        self.unit().factor()
-    }
-
-    /// Returns a stand-off distance in metres, rounded outwards.
-    #[must_use]
-    pub fn safe(self, si: f64) -> String {
-        match self {
-            Lengths::Metres => format::safe_distance(si),
-            Lengths::Feet => {
-                // A half foot at a time, but for a hair of noise.
-                let halves = (2.0 * self.unit().from_si(si) * (1.0 - 1e-9)).ceil();
-                format!("{:.1} ft", halves / 2.0)
-            }
-        }
-    }
-
-    /// Returns where something stands, in metres, rounded inwards: who stands
-    /// farther out than is told is no worse off.
-    #[must_use]
-    pub fn standing(self, si: f64) -> String {
-        if si <= 0.0 {
-            return format!("0 {}", self.symbol());
-        }
-        format::quantity(si, &self.unit(), 3, Rounding::Down)
     }
 }

@@ -1,12 +1,15 @@
-//! Where everything on the rail goes: flags in lanes above the ruler, so that
-//! no flag covers another and no pole runs through one.
+//! Where everything on the rail goes, in points: the ruler, the flags above it,
+//! its numbers, legend and notes under it.
 
+mod flag;
 mod paint;
 
-use super::{Pin, Rail, Stand};
-use crate::drawing::curve::plot::fit;
-use crate::drawing::font::{self, Weight};
-use crate::drawing::mark::{Rectangle, Shape};
+use super::Rail;
+use crate::drawing::font::{self, Weight, fit};
+use crate::drawing::mark::Rectangle;
+use crate::drawing::screen::Shadow;
+
+use flag::{Flag, Of};
 
 const HEADING: &str = "Distance rail";
 const TITLE: f64 = 10.0;
@@ -23,72 +26,14 @@ const SIDE: f64 = 12.0;
 const BESIDE: f64 = 7.0;
 /// Between a flag and the next pole to its right.
 const APART: f64 = 5.0;
-
-/// What a flag stands for.
-#[derive(Clone, Copy, Debug)]
-enum Of<'a> {
-    Pin(&'a Pin),
-    Stand(&'a Stand),
-}
-
-impl<'a> Of<'a> {
-    fn distance(&self) -> f64 {
-        match self {
-            Of::Pin(pin) => pin.distance,
-            Of::Stand(stand) => stand.distance,
-        }
-    }
-
-    fn cell(self) -> &'a str {
-        match self {
-            Of::Pin(pin) => &pin.cell,
-            Of::Stand(stand) => &stand.cell,
-        }
-    }
-
-    fn name(self) -> &'a str {
-        match self {
-            Of::Pin(pin) => &pin.label,
-            Of::Stand(stand) => &stand.cell,
-        }
-    }
-
-    fn lines(&self) -> [String; 2] {
-        match self {
-            Of::Pin(pin) => [
-                format!("{}: {}", pin.label, pin.text),
-                pin.nominal
-                    .as_ref()
-                    .map_or_else(String::new, |(_, text)| format!("nominal {text}")),
-            ],
-            Of::Stand(stand) => [
-                format!("{} {}", stand.cell, stand.text),
-                stand.finding.clone(),
-            ],
-        }
-    }
-
-    /// What is left out first where there is no room: greatest first.
-    fn rank(&self) -> u8 {
-        match self {
-            Of::Pin(_) => 0,
-            Of::Stand(stand) => match stand.shape {
-                Shape::Over => 1,
-                Shape::Within => 3,
-                _ => 2,
-            },
-        }
-    }
-}
-
-/// A flag in its lane.
-#[derive(Clone, Debug)]
-struct Flag<'a> {
-    of: Of<'a>,
-    x: f64,
-    lane: usize,
-    lines: [String; 2],
-}
+/// The least length of the ruler, m.
+const LEAST: f64 = 5.0;
+/// How much a height may fall short and still be enough: what the window's
+/// single precision loses. A flag that is left out costs a line that tells of
+/// it, so that a hair too little would cost all of them.
+const SLACK: f64 = 0.05;
+/// No flag is slimmer than this.
+const SLIMMEST: f64 = 16.0;
 
 /// A rail laid out at a width.
 #[derive(Debug)]
@@ -108,7 +53,9 @@ pub(super) struct Plan<'a> {
 impl<'a> Plan<'a> {
     pub(super) fn new(rail: &'a Rail, width: f64) -> Self {
         let pins = rail.pins.iter().map(Of::Pin);
-        let all = pins.chain(rail.stands.iter().map(Of::Stand));
+        let all = pins
+            .chain(rail.stands.iter().map(Of::Stand))
+            .chain(rail.screens.iter().map(Of::Screen));
         let known = all.filter(|of| of.distance().is_finite() && of.distance() >= 0.0);
         Self::with(rail, width, known.collect(), Vec::new())
     }
@@ -116,74 +63,28 @@ impl<'a> Plan<'a> {
     /// Lays out as many flags as a height has room for.
     pub(super) fn fitted(rail: &'a Rail, width: f64, height: f64) -> Self {
         let mut plan = Self::new(rail, width);
-        while plan.height() > height && !plan.flags.is_empty() {
+        // More than this have no room however they lie: there may be thousands.
+        let lanes = (height / LANE).max(1.0);
+        let most = (lanes * (plan.width / SLIMMEST)).ceil() as usize;
+        while plan.height() > height + SLACK && !plan.flags.is_empty() {
             let mut kept: Vec<Of<'a>> = plan.flags.iter().map(|flag| flag.of).collect();
-            // The last of the least needed: ties go to the farthest.
-            let Some(last) = (0..kept.len()).max_by(|a, b| {
+            // The most needed stay; of equals, the nearest.
+            kept.sort_by(|a, b| {
                 let key = |of: &Of<'_>| (of.rank(), of.distance());
-                let (a, b) = (key(&kept[*a]), key(&kept[*b]));
+                let (a, b) = (key(a), key(b));
                 a.0.cmp(&b.0).then(a.1.total_cmp(&b.1))
-            }) else {
-                break;
-            };
+            });
             let mut left_out = plan.left_out.clone();
-            left_out.push(kept.remove(last).name());
+            let stay = (kept.len() - 1).min(most);
+            left_out.extend(kept.drain(stay..).rev().map(Of::name));
             plan = Self::with(rail, width, kept, left_out);
         }
         plan
     }
 
-    fn with(rail: &'a Rail, width: f64, mut all: Vec<Of<'a>>, left_out: Vec<&'a str>) -> Self {
-        let width = if width.is_finite() {
-            width.max(240.0)
-        } else {
-            240.0
-        };
-        all.sort_by(|a, b| a.distance().total_cmp(&b.distance()));
-        let room = width - 2.0 * SIDE;
-        let flags: Vec<(Of<'a>, [String; 2], f64)> = all
-            .into_iter()
-            .map(|of| {
-                let most = room * 0.45;
-                let [first, second] = of.lines();
-                let lines = [
-                    fit(&first, most, SMALL, Weight::SemiBold),
-                    fit(&second, most, SMALL, Weight::Regular),
-                ];
-                let wide = font::width(&lines[0], SMALL, Weight::SemiBold).max(font::width(
-                    &lines[1],
-                    SMALL,
-                    Weight::Regular,
-                ));
-                (of, lines, wide)
-            })
-            .collect();
-        // The words stand to the right of their pole: the ruler goes on until
-        // the last of them has room.
-        let needed = flags.iter().map(|(of, _, wide)| {
-            of.distance() * room / (room + SIDE - wide - BESIDE).max(room * 0.4)
-        });
-        let end = needed.fold(5.0, f64::max);
-        let x = |distance: f64| SIDE + room * (distance / end).min(1.0);
-        let mut placed: Vec<Flag<'a>> = Vec::new();
-        // From the right: a flag stands above every pole that its words pass.
-        for (of, lines, wide) in flags.into_iter().rev() {
-            let at = x(of.distance());
-            let right = at + BESIDE + wide;
-            let lane = placed
-                .iter()
-                .filter(|other| other.x - SYMBOL / 2.0 <= right + APART)
-                .map(|other| other.lane + 1)
-                .max()
-                .unwrap_or(0);
-            placed.push(Flag {
-                of,
-                x: at,
-                lane,
-                lines,
-            });
-        }
-        placed.reverse();
+    fn with(rail: &'a Rail, width: f64, all: Vec<Of<'a>>, left_out: Vec<&'a str>) -> Self {
+        let width = drawn(width);
+        let (end, flags) = flag::placed(all, width);
         let mut notes: Vec<String> = Vec::new();
         let mut about = rail.about.clone();
         if !rail.elsewhere.is_empty() {
@@ -199,6 +100,10 @@ impl<'a> Plan<'a> {
             let text = format!("and {} more: {}", left_out.len(), left_out.join(", "));
             notes.push(fit(&text, width, SMALL, Weight::Regular));
         }
+        if !rail.shadows.is_empty() {
+            let text = format!("hatched, {}", Shadow::words(&rail.shadows));
+            notes.extend(wrapped(&text, width));
+        }
         for note in &rail.notes {
             notes.extend(wrapped(note, width));
         }
@@ -206,7 +111,7 @@ impl<'a> Plan<'a> {
             rail,
             width,
             end,
-            flags: placed,
+            flags,
             left_out,
             notes,
             about,
@@ -315,6 +220,15 @@ impl<'a> Plan<'a> {
                 (area, flag.of.cell().to_owned())
             })
             .collect()
+    }
+}
+
+/// The width that is really drawn.
+fn drawn(width: f64) -> f64 {
+    if width.is_finite() {
+        width.max(240.0)
+    } else {
+        240.0
     }
 }
 

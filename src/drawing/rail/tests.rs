@@ -27,7 +27,9 @@ fn base() -> Rail {
         ],
         elsewhere: Vec::new(),
         notes: Vec::new(),
-        lengths: Lengths::Metres,
+        screens: Vec::new(),
+        shadows: Vec::new(),
+        measure: Measure::Metric,
         settled: true,
     }
 }
@@ -37,8 +39,11 @@ fn pin(label: &str, distance: f64) -> Pin {
         cell: label.replace(' ', "_"),
         label: label.into(),
         distance,
-        text: Lengths::Metres.safe(distance),
-        nominal: Some((distance * 0.95, Lengths::Metres.safe(distance * 0.95))),
+        text: Measure::Metric.safe_distance(distance),
+        nominal: Some((
+            distance * 0.95,
+            Measure::Metric.safe_distance(distance * 0.95),
+        )),
     }
 }
 
@@ -46,7 +51,7 @@ fn stand(cell: &str, distance: f64, shape: Shape) -> Stand {
     Stand {
         cell: cell.into(),
         distance,
-        text: Lengths::Metres.standing(distance),
+        text: Measure::Metric.standing(distance),
         shape,
         finding: match shape {
             Shape::Over => "over: no planned stay",
@@ -78,6 +83,21 @@ fn crowded() -> Rail {
     rail
 }
 
+fn screened() -> Rail {
+    let mut rail = base();
+    rail.screens = vec![Screen {
+        cell: "plate".into(),
+        label: "plate 208 °C".into(),
+        distance: 1.4,
+    }];
+    rail.shadows = vec![Shadow {
+        from: 1.4,
+        to: 4.4,
+        source: "door".into(),
+    }];
+    rail
+}
+
 fn empty() -> Rail {
     Rail {
         pins: Vec::new(),
@@ -93,14 +113,31 @@ fn hostile() -> Rail {
     rail.pins[2].distance = 1e300;
     rail.stands[0].cell = "w".repeat(300);
     rail.notes.push("n".repeat(900));
+    rail.screens = vec![Screen {
+        cell: "plate".into(),
+        label: "p".repeat(200),
+        distance: f64::NAN,
+    }];
+    rail.shadows = vec![Shadow {
+        from: f64::NAN,
+        to: -1.0,
+        source: "s".repeat(300),
+    }];
     rail.stretches.clear();
     rail.levels.clear();
     rail.level_texts.clear();
     rail
 }
 
-fn sets() -> [Rail; 5] {
-    [base(), crowded(), empty(), hostile(), base().provisional()]
+fn sets() -> [Rail; 6] {
+    [
+        base(),
+        crowded(),
+        empty(),
+        screened(),
+        hostile(),
+        base().provisional(),
+    ]
 }
 
 #[test]
@@ -241,7 +278,7 @@ fn pins_tell_the_clear_distances_of_their_zones() {
         let (engine, results) = worked_out(template.text);
         for line in Line::all(&engine) {
             let rail =
-                Rail::of(&engine, &results, &line, Lengths::Metres).expect("no source is in error");
+                Rail::of(&engine, &results, &line, Measure::Metric).expect("no source is in error");
             for pin in &rail.pins {
                 let zone = results.cell(&pin.cell).expect("a pin has its zone");
                 let Some(Shown::Extent { extent, high, .. }) = zone.shown("clear_distance") else {
@@ -264,9 +301,9 @@ fn curve_and_rail_tell_the_same_distances_as_the_zones() {
     use crate::drawing::curve::Curve;
     let (engine, results) = worked_out(template::DEMO.text);
     let cell = results.cell("falloff").expect("the demo has a curve");
-    let curve = Curve::of(&engine, &results, cell);
+    let curve = Curve::of(&engine, &results, cell, Measure::Metric);
     let line = Line::of(&engine, cell.id).expect("a curve has a line");
-    let rail = Rail::of(&engine, &results, &line, Lengths::Metres).expect("no fault");
+    let rail = Rail::of(&engine, &results, &line, Measure::Metric).expect("no fault");
     assert_eq!(rail.pins.len(), 2);
     for pin in &rail.pins {
         let crossed = curve
@@ -318,7 +355,7 @@ fn a_zone_without_an_edge_is_told_in_a_note() {
     );
     let (engine, results) = worked_out(&text);
     let line = Line::all(&engine).remove(0);
-    let rail = Rail::of(&engine, &results, &line, Lengths::Metres).expect("no fault");
+    let rail = Rail::of(&engine, &results, &line, Measure::Metric).expect("no fault");
     assert_eq!(rail.pins.len(), 1, "{:?}", rail.pins);
     let told = rail
         .notes
@@ -331,7 +368,7 @@ fn a_zone_without_an_edge_is_told_in_a_note() {
 fn positions_off_the_line_are_named_and_not_drawn() {
     let (engine, results) = worked_out(template::DEMO.text);
     let line = Line::all(&engine).remove(0);
-    let rail = Rail::of(&engine, &results, &line, Lengths::Metres).expect("no fault");
+    let rail = Rail::of(&engine, &results, &line, Measure::Metric).expect("no fault");
     let names: Vec<&str> = rail
         .stands
         .iter()
@@ -344,20 +381,6 @@ fn positions_off_the_line_are_named_and_not_drawn() {
         .iter()
         .any(|text| text.text.contains("not on this line: spotter"));
     assert!(told, "the picture does not name the spotter");
-}
-
-#[test]
-fn feet_are_rounded_outwards_for_safety_and_inwards_for_people() {
-    for (si, safe, standing) in [
-        (3.048, "10.0 ft", "10.0 ft"),
-        (3.06, "10.5 ft", "10.0 ft"),
-        (2.5, "8.5 ft", "8.20 ft"),
-    ] {
-        assert_eq!(Lengths::Feet.safe(si), safe, "{si} m");
-        assert_eq!(Lengths::Feet.standing(si), standing, "{si} m");
-    }
-    assert_eq!(Lengths::Metres.safe(11.31), "11.4 m");
-    assert_eq!(Lengths::Metres.standing(11.39), "11.3 m");
 }
 
 #[test]
@@ -393,7 +416,7 @@ fn a_held_shading_is_used_while_nothing_it_hangs_on_changes() {
     let line = Line::all(&engine).remove(0);
     let mut held = None;
     let rail = |engine: &Engine, held: &mut Option<Shading>| {
-        Rail::held(engine, &results, &line, Lengths::Metres, held).expect("no fault")
+        Rail::held(engine, &results, &line, Measure::Metric, held).expect("no fault")
     };
     let first = rail(&engine, &mut held);
     assert_eq!(rail(&engine, &mut held), first, "held as it was");
@@ -421,7 +444,7 @@ fn a_held_shading_is_used_while_nothing_it_hangs_on_changes() {
         after.stretches, first.stretches,
         "a hotter hearth shades farther"
     );
-    let fresh = Rail::of(&engine, &results, &line, Lengths::Metres).expect("no fault");
+    let fresh = Rail::of(&engine, &results, &line, Measure::Metric).expect("no fault");
     assert_eq!(after, fresh, "held equals fresh");
 }
 
@@ -458,4 +481,66 @@ fn every_source_has_a_line_and_a_selected_cell_finds_its_own() {
         let found = Line::of(&engine, id).map(|line| line.source);
         assert_eq!(found.as_deref(), source, "{cell}");
     }
+}
+
+#[test]
+fn a_screen_has_a_flag_and_the_ground_behind_it_is_hatched() {
+    use crate::drawing::screen::HIDDEN;
+    let rail = screened();
+    let picture = picture(&rail, 493.0, height(&rail, 493.0));
+    let texts: Vec<&str> = picture.texts().iter().map(|t| t.text.as_str()).collect();
+    for words in ["plate 208 °C", "hatched, door hidden: less heat, not none"] {
+        assert!(texts.contains(&words), "{words} not in {texts:?}");
+    }
+    let cells: Vec<String> = hits(&rail, 493.0, height(&rail, 493.0))
+        .into_iter()
+        .map(|hit| hit.1)
+        .collect();
+    assert!(cells.contains(&"plate".to_owned()), "{cells:?}");
+    let poles = |of: &str| {
+        let place = hits(&rail, 493.0, height(&rail, 493.0));
+        let (area, _) = place.iter().find(|hit| hit.1 == of).expect("it has a flag");
+        area.from.x + 3.5
+    };
+    let scale = (poles("crane_hand") - poles("charger")) / (8.2 - 2.5);
+    let hatched = picture.marks.iter().find_map(|mark| match mark {
+        Mark::Area {
+            outline,
+            hatch: Some(hatch),
+            ..
+        } if hatch.spacing == HIDDEN.spacing => Some(outline[1].x - outline[0].x),
+        _ => None,
+    });
+    let (got, expected) = (hatched.expect("the ground is hatched"), 3.0 * scale);
+    assert!(
+        (got - expected).abs() < 1e-9,
+        "{got} points, wanted {expected}"
+    );
+}
+
+#[test]
+fn thousands_of_flags_are_left_out_at_once_and_counted() {
+    let mut rail = base();
+    rail.stands = (0..3000)
+        .map(|i| {
+            stand(
+                &format!("person_{i}"),
+                2.0 + 0.001 * f64::from(i),
+                Shape::Within,
+            )
+        })
+        .collect();
+    let picture = picture(&rail, 560.0, 140.0);
+    let texts: Vec<&str> = picture.texts().iter().map(|t| t.text.as_str()).collect();
+    assert!(
+        texts
+            .iter()
+            .any(|text| text.starts_with("and ") && text.contains(" more: ")),
+        "{texts:?}"
+    );
+    // Pins are the last to go.
+    assert!(
+        texts.iter().any(|text| text.starts_with("eye, 4 min")),
+        "{texts:?}"
+    );
 }

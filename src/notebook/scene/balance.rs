@@ -91,8 +91,8 @@ impl BalanceTask {
             Err(error) => {
                 use crate::physics::Error;
                 let at = match error {
-                    Error::TouchesSource { screen, .. } | Error::TouchesScreen { screen, .. } => {
-                        screen.saturating_sub(1)
+                    Error::ScreenTouches { screen, .. } | Error::ScreensOverlap { screen, .. } => {
+                        screen
                     }
                     _ => 0,
                 };

@@ -19,8 +19,7 @@ fn more_terms_change_nothing() {
     for depth in [0.1, 1.0, 4.0, 30.0] {
         for emissivity in [0.1, 0.5] {
             let found = Cylinder::new(depth, emissivity).expect("a possible cavity");
-            let finer =
-                Cylinder::with_terms(depth, emissivity, 60, 50).expect("a possible cavity");
+            let finer = Cylinder::with_terms(depth, emissivity, 60, 50).expect("a possible cavity");
             let (found, expected) = (found.apparent(), finer.apparent());
             assert!(
                 (found - expected).abs() < 1e-6,
@@ -43,7 +42,10 @@ fn deeper_cavities_are_blacker_and_never_black() {
             );
             last = found;
         }
-        assert_eq!(of_cylinder(1.0, 3.0, 1.0).map(|black| (black * 1e12).round()), Ok(1e12));
+        assert_eq!(
+            of_cylinder(1.0, 3.0, 1.0).map(|black| (black * 1e12).round()),
+            Ok(1e12)
+        );
     }
 }
 

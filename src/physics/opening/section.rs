@@ -113,6 +113,15 @@ impl Section {
         }
     }
 
+    /// Returns the sides of a rectangle, in metres.
+    #[must_use]
+    pub fn sides(&self) -> Option<[f64; 2]> {
+        match self.kind {
+            Kind::Rectangle { width, height } => Some([width, height]),
+            Kind::Disc { .. } | Kind::Slot { .. } | Kind::Polygon { .. } => None,
+        }
+    }
+
     /// Returns the length of the outline over the area, 1/m.
     #[must_use]
     pub fn outline_over_area(&self) -> f64 {

@@ -98,7 +98,10 @@ fn cold_walls_leave_the_furnace_alone() {
     assert_eq!(opening.exitances(), [1.0]);
     let found = opening.effective_emissivity(0.8).expect("an emissivity");
     let expected = 0.8 * 0.381_966_011_250_105_1;
-    assert!((found - expected).abs() < 1e-15, "{found} against {expected}");
+    assert!(
+        (found - expected).abs() < 1e-15,
+        "{found} against {expected}"
+    );
     assert_eq!(opening.reflection_gain(0.5), Ok(1.0));
 }
 
@@ -177,7 +180,10 @@ fn impossible_openings_are_refused_by_name() {
             "an opening must be a flat disc or polygon, found another shape",
         ),
     ] {
-        assert_eq!(text(Opening::new(outer, depth, Walls::Reradiating)), expected);
+        assert_eq!(
+            text(Opening::new(outer, depth, Walls::Reradiating)),
+            expected
+        );
     }
 }
 

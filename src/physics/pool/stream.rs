@@ -53,8 +53,10 @@ pub fn along(points: &[DVec3], diameter: f64) -> Result<Vec<Region>, Error> {
     let ways: Vec<DVec3> = points.windows(2).map(|pair| pair[1] - pair[0]).collect();
     let cut = |joint: usize| {
         // Half of the bend between the ways before and behind a point.
-        let (Some(came), Some(goes)) = (joint.checked_sub(1).map(|before| ways[before]), ways.get(joint))
-        else {
+        let (Some(came), Some(goes)) = (
+            joint.checked_sub(1).map(|before| ways[before]),
+            ways.get(joint),
+        ) else {
             return 0.0;
         };
         let bend = came.cross(*goes).length().atan2(came.dot(*goes));

@@ -95,7 +95,10 @@ fn rays_through_the_rim_meet_the_metal_where_its_outline_is() {
             if found { metal += 1 } else { wall += 1 }
         }
     }
-    assert!(metal > 300 && wall > 300, "{metal} meet the metal, {wall} the wall");
+    assert!(
+        metal > 300 && wall > 300,
+        "{metal} meet the metal, {wall} the wall"
+    );
 }
 
 #[test]
@@ -105,7 +108,10 @@ fn a_tilted_trough_is_cut_exactly() {
     let rim = Region::rectangle(DVec3::Z, turn * DVec3::Z, DVec3::Y, 1.0, 0.6).expect("a rim");
     let pool = Pool::tilted(rim, 0.5).expect("a tilted trough");
     let (found, expected) = (pool.metal().area(), 0.6 / (PI / 6.0).cos());
-    assert!((found - expected).abs() < 1e-12, "{found} against {expected}");
+    assert!(
+        (found - expected).abs() < 1e-12,
+        "{found} against {expected}"
+    );
 }
 
 #[test]
@@ -152,7 +158,10 @@ fn impossible_pools_are_refused_by_name() {
         "a vessel that lies beyond its side"
     );
     let spilling = Pool::tilted(rim(0.6), 0.8);
-    assert!(text(spilling).contains("the metal runs out"), "over the low side of the rim");
+    assert!(
+        text(spilling).contains("the metal runs out"),
+        "over the low side of the rim"
+    );
 }
 
 #[test]

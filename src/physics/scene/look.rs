@@ -154,7 +154,8 @@ impl Scene {
             return vec![(Box::default(), view)];
         }
         let Some((own, axis)) = target.solid.outline(point) else {
-            return Vec::new();
+            // A disc seen so flat that what hides it makes no odds.
+            return vec![(Box::default(), view)];
         };
         let mut overlay = Overlay {
             outlines: vec![Cow::Owned(own)],
@@ -252,7 +253,6 @@ impl Scene {
     /// place at which edges meet so closely that rounding left a gap.
     #[cold]
     fn seen_a_hair_off(&self, target: &Target, view: View, point: DVec3, attempt: u8) -> Glimpses {
-        #[cfg(debug_assertions)]
         if attempt >= ATTEMPTS {
             // Nothing is known to be hidden: the hot side.
             return vec![(Box::default(), view)];

@@ -145,7 +145,7 @@ impl Solid {
                 let (middle, normal, radius) =
                     sphere::silhouette(way / distance, *radius, distance);
                 let circle = Circle::new(middle, normal, radius);
-                Some((Outline::of_circle(circle), way))
+                Some((Outline::of_circle(circle)?, way))
             }
             Region::Disc {
                 centre,
@@ -154,7 +154,7 @@ impl Solid {
             } => {
                 let normal = self.facing(*normal, point)?;
                 let circle = Circle::new(*centre - point, normal, *radius);
-                Some((Outline::of_circle(circle), -normal))
+                Some((Outline::of_circle(circle)?, -normal))
             }
             Region::Cylinder { base, axis, radius } => {
                 if self.region.touches(point) {
@@ -167,7 +167,7 @@ impl Solid {
                         centre,
                         normal,
                         radius,
-                    } => Outline::of_circle(Circle::new(centre, normal, radius)),
+                    } => Outline::of_circle(Circle::new(centre, normal, radius))?,
                     cylinder::Outline::Side(pieces) => {
                         Outline::of_cylinder(cylinder, point, &pieces)
                     }

@@ -93,8 +93,8 @@ pub struct Patch {
 /// # Errors
 ///
 /// [`Error::OutOfRange`] if a number of the room lies outside its range or the
-/// emissions are not as many as the parts; [`Error::TouchesSource`],
-/// [`Error::TouchesScreen`]; what [`Scene::new`](crate::physics::scene::Scene::new)
+/// emissions are not as many as the parts; [`Error::ScreenTouches`],
+/// [`Error::ScreensOverlap`]; what [`Scene::new`](crate::physics::scene::Scene::new)
 /// refuses.
 ///
 /// # Source

@@ -160,6 +160,12 @@ impl Circle {
         self.radius
     }
 
+    /// Returns the distance of the centre from the foot of the receiver's
+    /// perpendicular on the circle's plane.
+    pub(in crate::physics) fn offset(&self) -> f64 {
+        self.offset
+    }
+
     /// Returns the direction of angle zero in the plane, of length one.
     pub(in crate::physics) fn away(&self) -> DVec3 {
         self.away

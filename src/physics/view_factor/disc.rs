@@ -145,7 +145,10 @@ pub fn to_coaxial_disc(radius: f64, other: f64, distance: f64) -> Result<f64, Er
 /// As [`to_coaxial_disc`], of lengths that are known to be in range; the
 /// distance may be zero.
 pub(in crate::physics) fn between(radius: f64, other: f64, distance: f64) -> f64 {
-    let (near, far) = (distance.hypot(other - radius), distance.hypot(other + radius));
+    let (near, far) = (
+        distance.hypot(other - radius),
+        distance.hypot(other + radius),
+    );
     let sum = radius * radius + other * other + distance * distance;
     (2.0 * other * other / (sum + near * far)).min(1.0)
 }

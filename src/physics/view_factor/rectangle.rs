@@ -135,7 +135,8 @@ pub(in crate::physics) fn between(width: f64, height: f64, distance: f64) -> f64
         let (wide, tall) = (1.0_f64.hypot(x), 1.0_f64.hypot(y));
         // (1 + X²)(1 + Y²)/(1 + X² + Y²) is one more than this.
         let more = (x * y / wide.hypot(y)).powi(2);
-        let sum = 0.5 * more.ln_1p() + x * (tall * (x / tall).atan() - x.atan())
+        let sum = 0.5 * more.ln_1p()
+            + x * (tall * (x / tall).atan() - x.atan())
             + y * (wide * (y / wide).atan() - y.atan());
         FRAC_2_PI / (x * y) * sum
     };

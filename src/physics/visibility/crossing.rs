@@ -23,10 +23,10 @@ pub(super) fn find(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
     match (one, other) {
         (Edge::Straight { .. }, Edge::Straight { .. }) => straight(one, other, hair, common),
         (Edge::Straight { from, to, .. }, Edge::Round { rim, .. }) => {
-            mixed(*from, *to, rim, common);
+            mixed(*from, *to, rim, hair, common);
         }
         (Edge::Round { rim, .. }, Edge::Straight { from, to, .. }) => {
-            mixed(*from, *to, rim, common);
+            mixed(*from, *to, rim, hair, common);
         }
         (Edge::Round { rim: first, .. }, Edge::Round { rim: second, .. }) => {
             if runs_along(first, second, hair) {
@@ -35,7 +35,7 @@ pub(super) fn find(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
                 let (c, d) = other.ends();
                 common.places.extend([a, b, c, d]);
             } else {
-                round(first, second, &mut common.places);
+                round(first, second, hair, &mut common.places);
             }
         }
     }
@@ -106,7 +106,7 @@ fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
 }
 
 /// A straight edge and a circle: a + u (b − a) on the cone is quadratic in u.
-fn mixed(a: DVec3, b: DVec3, rim: &Rim, common: &mut Common) {
+fn mixed(a: DVec3, b: DVec3, rim: &Rim, hair: f64, common: &mut Common) {
     let (share_a, off_a) = rim.seen(a);
     let (share_b, off_b) = rim.seen(b);
     let (share, off) = (share_b - share_a, off_b - off_a);
@@ -117,10 +117,14 @@ fn mixed(a: DVec3, b: DVec3, rim: &Rim, common: &mut Common) {
     let constant = square * share_a * share_a - off_a.length_squared();
     let root = first * first - second * constant;
     let bound = first * first + (second * constant).abs();
-    if root < -1e-13 * bound {
+    if root < -1e-12 * bound {
         return;
     }
-    let root = root.max(0.0).sqrt();
+    let middle = (second != 0.0).then(|| a + (b - a) * (-first / second));
+    let touches = middle.is_some_and(|middle| rim.is_passed_by(middle, hair));
+    // One that only touches has one place in common, not two that rounding
+    // puts anywhere.
+    let root = if touches { 0.0 } else { root.max(0.0).sqrt() };
     let sum = -(first + root.copysign(first));
     let mut push = |share: f64| {
         if (-1e-9..=1.0 + 1e-9).contains(&share) {
@@ -150,7 +154,7 @@ fn runs_along(first: &Rim, second: &Rim, hair: f64) -> bool {
 
 /// Two circles: on the first the second's cone is quadratic in sin and cos, and
 /// of degree four in the tangent of the half angle.
-fn round(first: &Rim, second: &Rim, places: &mut Vec<DVec3>) {
+fn round(first: &Rim, second: &Rim, hair: f64, places: &mut Vec<DVec3>) {
     let circle = &first.circle;
     let bases = [
         circle.centre(),
@@ -171,10 +175,19 @@ fn round(first: &Rim, second: &Rim, places: &mut Vec<DVec3>) {
             4.0 * (m02 - m12),
             m00 - 2.0 * m01 + m11,
         ];
+        let mut last = f64::INFINITY;
         for tangent in quartic::roots(terms) {
-            let place = circle.point(turn + 2.0 * tangent.atan());
+            let mut angle = turn + 2.0 * tangent.atan();
+            // Circles that only touch have one place in common, not two.
+            let middle = circle.point(0.5 * (last + angle));
+            if last.is_finite() && (angle - last).abs() < 0.1 && second.is_passed_by(middle, hair) {
+                angle = 0.5 * (last + angle);
+                let _ = places.pop();
+            }
+            let place = circle.point(angle);
             if second.seen(place).0 > 0.0 {
                 places.push(place.normalize_or(place));
+                last = angle;
             }
         }
     }

@@ -34,7 +34,8 @@ impl Edge {
         })
     }
 
-    /// The edge of this piece of an outline. Arcs that lie edge on are straight.
+    /// The edge of this piece of an outline. Arcs that are seen edge on are
+    /// straight; none if nothing is left of it.
     pub(in crate::physics) fn of_piece(piece: &Piece) -> Option<Self> {
         match *piece {
             Piece::Straight { from, to } => Self::straight(from, to),
@@ -46,7 +47,7 @@ impl Edge {
                 to,
             } => {
                 let rim = Rim::new(circle);
-                if rim.height <= 1e-11 * (circle.radius() + circle.centre().length()) {
+                if rim.is_edge_on() {
                     Self::straight(from, to)
                 } else {
                     Some(Self::Round { rim, start, stop })
@@ -131,6 +132,12 @@ impl Rim {
         }
     }
 
+    /// Whether the circle is seen so flat that it passes for a straight edge:
+    /// what it encloses is less than 10⁻⁷ sr.
+    pub(super) fn is_edge_on(&self) -> bool {
+        self.height <= 1e-7 * (self.circle.offset() - self.circle.radius())
+    }
+
     /// A direction in the circle's plane: what multiplies its distance there
     /// (above zero in front of the receiver), and so many times its place off
     /// the centre.
@@ -156,6 +163,11 @@ impl Rim {
         }
         let apart = off.length() - share * self.circle.radius();
         Some(apart.abs() / (self.height * direction.length()))
+    }
+
+    /// Whether a direction passes the circle within a hair.
+    pub(super) fn is_passed_by(&self, direction: DVec3, hair: f64) -> bool {
+        self.miss(direction).is_some_and(|miss| miss <= 4.0 * hair)
     }
 
     /// The angle on the circle of a direction near its cone.

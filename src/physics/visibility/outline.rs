@@ -63,12 +63,12 @@ impl Outline {
         Self { edges, inside }
     }
 
-    /// What lies within a whole circle.
-    pub(in crate::physics) fn of_circle(circle: Circle) -> Self {
-        Self {
-            edges: Edge::of_piece(&Piece::whole(circle)).into_iter().collect(),
+    /// What lies within a whole circle; none if it is seen edge on.
+    pub(in crate::physics) fn of_circle(circle: Circle) -> Option<Self> {
+        Edge::of_piece(&Piece::whole(circle)).map(|edge| Self {
+            edges: vec![edge],
             inside: Inside::Round,
-        }
+        })
     }
 
     /// The outline of a cylinder as seen from a point outside it.
@@ -94,10 +94,7 @@ impl Outline {
     /// Says whether a direction lies inside.
     pub(super) fn holds(&self, direction: DVec3) -> bool {
         match &self.inside {
-            Inside::Convex | Inside::Front => self.edges.iter().all(|edge| match edge {
-                Edge::Straight { inward, .. } => inward.dot(direction) > 0.0,
-                Edge::Round { .. } => true,
-            }),
+            Inside::Convex | Inside::Front => self.is_left_of_all(direction),
             Inside::Crooked {
                 normal,
                 height,
@@ -127,10 +124,21 @@ impl Outline {
                 Some(Edge::Round { rim, .. }) => rim.holds(direction),
                 _ => false,
             },
-            Inside::Solid { cylinder, point } => cylinder
-                .stretch(*point, direction)
-                .is_some_and(|(_, leave)| leave > 0.0),
+            // Its straight edges too, for one may stand for an arc seen edge on.
+            Inside::Solid { cylinder, point } => {
+                self.is_left_of_all(direction)
+                    && cylinder
+                        .stretch(*point, direction)
+                        .is_some_and(|(_, leave)| leave > 0.0)
+            }
         }
+    }
+
+    fn is_left_of_all(&self, direction: DVec3) -> bool {
+        self.edges.iter().all(|edge| match edge {
+            Edge::Straight { inward, .. } => inward.dot(direction) > 0.0,
+            Edge::Round { .. } => true,
+        })
     }
 
     /// Says whether all of another outline surely lies beyond one edge of this.

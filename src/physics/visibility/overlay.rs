@@ -49,6 +49,37 @@ pub(in crate::physics) struct Seen {
     nodes: Vec<(u32, u32)>,
 }
 
+impl Seen {
+    /// Closes the gap between an arc's own ends and the places it is split at:
+    /// where a circle is seen nearly edge on, a hair off it is far along it.
+    fn close(&mut self, piece: &Piece, forward: bool) {
+        const GAP: f64 = 1e-14;
+        let Piece::Round {
+            circle,
+            start,
+            stop,
+            from,
+            to,
+        } = *piece
+        else {
+            return;
+        };
+        for (node, angle, is_start) in [(from, start, true), (to, stop, false)] {
+            let end = circle.point(angle).normalize();
+            if end.distance_squared(node) > GAP * GAP {
+                let inwards = is_start == forward;
+                let (from, to) = if inwards { (node, end) } else { (end, node) };
+                self.pieces.push(Piece::Straight { from, to });
+                if let Some(Piece::Round { from, to, .. }) =
+                    (self.pieces.iter_mut()).rfind(|piece| matches!(piece, Piece::Round { .. }))
+                {
+                    *(if inwards { from } else { to }) = end;
+                }
+            }
+        }
+    }
+}
+
 /// A place where an edge is split.
 struct Split {
     edge: u32,
@@ -259,6 +290,7 @@ impl Overlay<'_> {
             part.whole &= own == 0 && forward;
             part.pieces
                 .push(if forward { piece } else { piece.reversed() });
+            part.close(&piece, forward);
             part.nodes.push(if forward {
                 (from.node, to.node)
             } else {

@@ -65,6 +65,26 @@ fn distances_go_up_to_the_next_tenth() {
 }
 
 #[test]
+fn distances_in_feet_go_up_to_the_next_half() {
+    let table = [
+        (0.0, "0.0 ft"),
+        (0.3048, "1.0 ft"),
+        (0.304_800_001, "1.5 ft"),
+        // 10 m is 32.81 ft.
+        (10.0, "33.0 ft"),
+        (9.9, "32.5 ft"),
+        (3_048_000.0, "10\u{202f}000\u{202f}000.0 ft"),
+        (-0.2, "−0.5 ft"),
+        (1e300, "3.28083989501312×10³⁰⁰ ft"),
+        (f64::NAN, NOT_FINITE),
+        (f64::MAX, NOT_FINITE),
+    ];
+    for (si, expected) in table {
+        assert_eq!(safe_feet(si), expected, "{si}");
+    }
+}
+
+#[test]
 fn times_go_down_to_what_a_watch_shows() {
     let table = [
         (-1.0, "no planned stay"),
@@ -178,21 +198,6 @@ fn zeros_that_a_value_does_not_need_are_left_out() {
     // A product whose last bits are noise needs no more figures than it has.
     let area = Quantity::new(0.9 * 0.7, Dimension::AREA);
     assert_eq!(at_most(area, None, 4), "0.63 m²");
-}
-
-#[test]
-fn feet_go_up_to_the_next_half() {
-    // 1 ft is 0.3048 m exactly (international yard and pound agreement, 1959).
-    for (metres, expected) in [
-        (0.3048, "1 ft"),
-        (0.305, "1.5 ft"),
-        (19.05, "62.5 ft"),
-        (18.9, "62.5 ft"),
-        (0.0, "0 ft"),
-    ] {
-        assert_eq!(safe_feet(metres), expected, "{metres} m");
-    }
-    assert_eq!(safe_feet(f64::NAN), NOT_FINITE);
 }
 
 #[test]

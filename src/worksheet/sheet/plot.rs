@@ -3,7 +3,8 @@
 
 use super::Sheet;
 use crate::drawing::curve::{self, Curve};
-use crate::drawing::rail::{self, Lengths, Line, Rail};
+use crate::drawing::measure::Measure;
+use crate::drawing::rail::{self, Line, Rail};
 use crate::notebook::cell::Kind;
 use crate::notebook::results::State;
 use crate::worksheet::block::Block;
@@ -20,7 +21,7 @@ pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
         if blocks.is_empty() {
             blocks.push(Block::Heading("Irradiance against distance".to_owned()));
         }
-        let shown = Curve::of(sheet.engine, sheet.results, cell);
+        let shown = Curve::of(sheet.engine, sheet.results, cell, Measure::Metric);
         blocks.push(Block::Picture {
             picture: curve::picture(&shown, SIZE.0, SIZE.1),
             caption: caption(&shown),
@@ -34,7 +35,7 @@ pub(super) fn blocks(sheet: &Sheet<'_>) -> Vec<Block> {
 fn rails(sheet: &Sheet<'_>) -> Vec<Block> {
     let mut blocks = Vec::new();
     for line in Line::all(sheet.engine) {
-        let Some(rail) = Rail::of(sheet.engine, sheet.results, &line, Lengths::Metres) else {
+        let Some(rail) = Rail::of(sheet.engine, sheet.results, &line, Measure::Metric) else {
             continue;
         };
         let drawn = sheet.results.cells.iter().any(|cell| {
@@ -69,9 +70,19 @@ fn caption(curve: &Curve) -> String {
     if curve.upper.is_some() {
         text.push_str("Dashed: upper bound (97.5 %). ");
     }
-    text.push_str(
-        "Dotted: inverse square through the farthest point, for comparison: too high or too low \
-         near the source. Pins mark where a rule begins to be met: for zones with the reach counted.",
-    );
+    if let Some(square) = &curve.inverse_square {
+        let error = square.error(&curve.rows);
+        let error = if error.is_empty() {
+            "agrees with the model along this line".to_owned()
+        } else {
+            format!("reads {error}")
+        };
+        text.push_str(&format!(
+            "Dotted: {}, what a sheet says that goes on from one figure with the square of the \
+             distance; it {error}. ",
+            square.name()
+        ));
+    }
+    text.push_str("Pins mark where a rule begins to be met: for zones with the reach counted.");
     text
 }

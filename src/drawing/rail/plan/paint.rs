@@ -2,13 +2,15 @@
 
 use glam::DVec2;
 
-use super::{BAR, BESIDE, HEADING, LINE, Of, Plan, SIDE, SMALL, SYMBOL, TITLE, title_width};
-use crate::drawing::curve::plot::fit;
-use crate::drawing::font::{self, Weight};
+use super::flag::Of;
+use super::{BAR, BESIDE, HEADING, LINE, Plan, SIDE, SMALL, SYMBOL, TITLE, title_width};
+use crate::drawing::font::{self, Weight, fit};
+use crate::drawing::hatch::Hatch;
 use crate::drawing::mark::{Anchor, Fill, Mark, Rectangle, Shape, Stroke, Text};
+use crate::drawing::measure::Measure;
 use crate::drawing::picture::Picture;
-use crate::drawing::rail::Lengths;
 use crate::drawing::role::Role;
+use crate::drawing::screen::{HIDDEN, PLATE, THICK};
 
 impl Plan<'_> {
     pub(in crate::drawing::rail) fn picture(&self, height: f64) -> Picture {
@@ -63,10 +65,11 @@ impl Plan<'_> {
                 }
             }
         }
+        self.shadows(picture, top);
         let frame = Rectangle::new(SIDE, top, self.width - 2.0 * SIDE, BAR);
         picture.push(Mark::frame(frame, Stroke::solid(Role::Ink, 0.75)));
 
-        let unit = self.rail.lengths.metres();
+        let unit = self.rail.measure.length().factor();
         let end = self.end / unit;
         let (step, parts) = tick(end, (self.width - 2.0 * SIDE) / 46.0);
         let count = (end / step * f64::from(parts) * (1.0 + 1e-9)).floor() as u32;
@@ -82,7 +85,7 @@ impl Plan<'_> {
             if !whole {
                 continue;
             }
-            let text = number(value, self.rail.lengths);
+            let text = number(value, self.rail.measure);
             let text = Text::new(DVec2::new(x, foot + 4.0 + LINE - 1.0), SMALL, text)
                 .anchored(Anchor::Middle);
             let extent = text.extent();
@@ -93,11 +96,36 @@ impl Plan<'_> {
         }
     }
 
+    /// The ground from which a source is hidden, hatched over its shade.
+    fn shadows(&self, picture: &mut Picture, top: f64) {
+        for shadow in &self.rail.shadows {
+            let Some((from, to)) = shadow.between(0.0, self.end) else {
+                continue;
+            };
+            let (from, to) = (self.x(from), self.x(to));
+            let area = Rectangle::new(from, top, to - from, BAR);
+            // Pale lines beside dark ones are seen on any shade.
+            for (role, width) in [(Role::Card, 1.4), (Role::Ink, HIDDEN.width)] {
+                picture.push(Mark::Area {
+                    outline: area.corners(),
+                    fill: None,
+                    hatch: Some(Hatch {
+                        role,
+                        width,
+                        ..HIDDEN
+                    }),
+                    edge: None,
+                });
+            }
+        }
+    }
+
     fn poles(&self, picture: &mut Picture, top: f64) {
         for flag in &self.flags {
             let role = match flag.of {
                 Of::Pin(_) => Role::Action,
                 Of::Stand(stand) => stand.shape.role(),
+                Of::Screen(_) => Role::Steel,
             };
             let head = DVec2::new(flag.x, Self::lane(top, flag.lane) + LINE * 0.5);
             let foot = DVec2::new(flag.x, top + BAR);
@@ -122,6 +150,10 @@ impl Plan<'_> {
         }
         for flag in &self.flags {
             let (shape, at) = match flag.of {
+                Of::Screen(_) => {
+                    picture.push(plate(flag.x, top));
+                    continue;
+                }
                 Of::Pin(_) if self.rail.settled => (Shape::Pin, DVec2::new(flag.x, top)),
                 Of::Pin(_) => (Shape::NominalPin, DVec2::new(flag.x, top)),
                 Of::Stand(stand) => {
@@ -144,7 +176,7 @@ impl Plan<'_> {
             let role = match flag.of {
                 _ if !self.rail.settled => Role::Muted,
                 Of::Pin(_) => Role::Action,
-                Of::Stand(_) => Role::Ink,
+                Of::Stand(_) | Of::Screen(_) => Role::Ink,
             };
             let [first, second] = &flag.lines;
             picture.push(Mark::Text(
@@ -205,12 +237,23 @@ impl Plan<'_> {
     }
 }
 
+/// A screen across the ruler: a thin hatched bar that stands out above it.
+fn plate(x: f64, top: f64) -> Mark {
+    let out = SYMBOL / 2.0;
+    Mark::Area {
+        outline: Rectangle::new(x - THICK / 2.0, top - out, THICK, BAR + out).corners(),
+        fill: Some(Fill::Role(Role::Steel)),
+        hatch: Some(PLATE),
+        edge: Some(Stroke::hair(Role::Ink)),
+    }
+}
+
 /// Writes a number of the ruler, with its unit.
-fn number(value: f64, lengths: Lengths) -> String {
+fn number(value: f64, measure: Measure) -> String {
     // Steps are 1, 2, 5 times powers of ten: three places hold any of them.
     let text = format!("{value:.3}");
     let text = text.trim_end_matches('0').trim_end_matches('.');
-    format!("{text} {}", lengths.symbol())
+    format!("{text} {}", measure.length().symbol())
 }
 
 /// Returns the step between numbers on a ruler, 1, 2 or 5 times a power of

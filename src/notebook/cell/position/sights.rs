@@ -389,17 +389,27 @@ impl Views {
         {
             return weight * alone.worst;
         }
+        self.worst_point(orientation, weights).0
+    }
+
+    /// Returns the greatest irradiance over all points in W/m², and the number
+    /// of the point that meets it: the first, where nothing is met anywhere.
+    #[must_use]
+    pub fn worst_point(&self, orientation: Orientation, weights: &Weights<'_>) -> (f64, usize) {
         let bounds: Vec<f64> = (0..self.points.len())
             .map(|point| self.bound(point, weights))
             .collect();
         let highest = (0..bounds.len()).max_by(|a, b| bounds[*a].total_cmp(&bounds[*b]));
-        let mut worst = 0.0;
+        let (mut worst, mut at) = (0.0, 0);
         for point in highest.into_iter().chain(0..bounds.len()) {
             if bounds[point] > worst && (worst == 0.0 || Some(point) != highest) {
-                worst = self.irradiance(point, orientation, weights).0.max(worst);
+                let found = self.irradiance(point, orientation, weights).0;
+                if found > worst {
+                    (worst, at) = (found, point);
+                }
             }
         }
-        worst
+        (worst, at)
     }
 
     /// Returns what a single part sends the strongest way, if that is asked.

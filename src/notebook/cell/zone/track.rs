@@ -64,9 +64,20 @@ const STOPS: u32 = 160;
 
 impl Line {
     fn look(&self, distance: f64) -> Option<Views> {
+        let (eye, points) = self.points(distance);
+        Views::look(&self.form, eye, points).ok()
+    }
+
+    /// Looks from one of the points around a distance alone.
+    fn look_from(&self, distance: f64, point: usize) -> Option<Views> {
+        let (eye, points) = self.points(distance);
+        Views::look(&self.form, eye, vec![*points.get(point)?]).ok()
+    }
+
+    fn points(&self, distance: f64) -> (DVec3, Vec<DVec3>) {
         let eye = (self.origin + self.ahead * distance).with_z(self.z);
         let points = envelope(eye, self.ground, self.reach, self.envelope);
-        Views::look(&self.form, eye, points).ok()
+        (eye, points)
     }
 
     /// Returns the distances at which the line is looked at: geometric steps,
@@ -204,11 +215,35 @@ impl Track {
     /// the crossing, so that it closes it in. Halving where a source is touched
     /// or the steps stay large.
     fn narrow(&self, inside: &Stop, outside: &Stop, rule: &Rule<'_>) -> f64 {
+        let height = |views: Option<&Views>| rule.height(rule.exposure(views));
+        let whole = |distance| height(self.line.look(distance).as_ref());
+        let a = (inside.distance, height(self.views(inside)));
+        let b = (outside.distance, height(self.views(outside)));
+        // Past much that hides, looking costs: the point that is worst on the
+        // inner side is followed alone, and all the others are asked at the end.
+        if !self.line.form.is_plain()
+            && let Some(views) = self.views(inside)
+        {
+            let (_, point) = views.worst_point(rule.orientation, rule.weights);
+            let alone = |distance| height(self.line.look_from(distance, point).as_ref());
+            let end = close_in(a, (b.0, alone(b.0)), alone);
+            let there = whole(end);
+            if there <= 0.0 {
+                return end;
+            }
+            return close_in((end, there), b, whole);
+        }
+        close_in(a, b, whole)
+    }
+}
+
+/// Closes a crossing in between a place inside and one outside, each with the
+/// logarithm of exposure over limit, and returns its outer side.
+fn close_in(inside: (f64, f64), outside: (f64, f64), between: impl Fn(f64) -> f64) -> f64 {
+    {
         const WIDTH: f64 = 1e-4;
-        let at = |stop| rule.height(rule.exposure(self.views(stop)));
-        let between = |distance| rule.height(rule.exposure(self.line.look(distance).as_ref()));
-        let (mut a, mut fa) = (inside.distance, at(inside));
-        let (mut b, mut fb) = (outside.distance, at(outside));
+        let (mut a, mut fa) = inside;
+        let (mut b, mut fb) = outside;
         let (mut side, mut beyond) = (0_i8, 0.0);
         for round in 0..100 {
             if b - a <= WIDTH {

@@ -55,7 +55,10 @@ fn every_wall_sends_what_it_gets() {
             gets += share * tunnel.exitance(step * (f64::from(shell) + 0.5));
         }
         let sends = tunnel.exitance(x);
-        assert!((gets - sends).abs() < 1e-6, "{x}: gets {gets}, sends {sends}");
+        assert!(
+            (gets - sends).abs() < 1e-6,
+            "{x}: gets {gets}, sends {sends}"
+        );
     }
 }
 
@@ -122,7 +125,10 @@ fn the_exitance_rises_inwards_and_is_one_half_in_the_middle() {
                 last = found;
             }
             let middle = tunnel.exitance(0.5 * depth);
-            assert!((middle - 0.5).abs() < 1e-12, "{section:?} {ratio}: {middle}");
+            assert!(
+                (middle - 0.5).abs() < 1e-12,
+                "{section:?} {ratio}: {middle}"
+            );
         }
     }
 }
