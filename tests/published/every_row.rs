@@ -7,7 +7,7 @@ use crate::{
 };
 
 /// The families that run, with what works their rows out.
-const RUNNING: [(&str, Work); 21] = [
+const RUNNING: [(&str, Work); 22] = [
     ("constant", defining_constants::constant),
     ("its90", fixed_points::celsius),
     ("bb_table_modest", blackbody_tables::below),
@@ -27,6 +27,7 @@ const RUNNING: [(&str, Work); 21] = [
     ),
     ("disc_pose", view_factor_catalogue::disc_pose),
     ("ring", view_factor_catalogue::ring),
+    ("cylinder", view_factor_catalogue::cylinder),
     ("sphere_tilt", view_factor_catalogue::sphere_tilt),
     ("disc_axis_tilt", view_factor_catalogue::disc_axis_tilt),
     (
@@ -44,7 +45,7 @@ const RUNNING: [(&str, Work); 21] = [
 ];
 
 /// Rows, or whole families, that the program cannot work out yet.
-const PENDING: [(&str, &str); 35] = [
+const PENDING: [(&str, &str); 34] = [
     (
         "its90-01",
         "a defining point, nothing to work out: for the list of process temperatures",
@@ -81,7 +82,6 @@ const PENDING: [(&str, &str); 35] = [
     ("textbook-10", "radiation shields: with screens"),
     ("textbook-13", "radiation shields: with screens"),
     ("textbook-14", "radiation shields: with screens"),
-    ("cylinder", "cylinders as sources come later"),
     (
         "disc_disc",
         "factor between two finite discs: with thick openings",
@@ -194,4 +194,4 @@ fn every_row_runs_or_waits_for_a_stated_reason() {
 }
 
 /// How many rows run: it may only grow.
-const RAN: usize = 213;
+const RAN: usize = 220;

@@ -381,12 +381,24 @@ fn cut<'a>(
                 clear,
             });
         }
-    } else if !solid.region.touches(around.point)
-        && let Some(outline) = clip::front_of_body(solid, plane, around.point)
-    {
+        return;
+    }
+    if solid.region.touches(around.point) {
+        return;
+    }
+    let halves = match &solid.region {
+        Region::Sphere { centre, radius } => {
+            clip::front_of_sphere(*centre, *radius, plane, around.point)
+        }
+        _ => clip::front_of_cylinder(solid, plane, around.point)
+            .map(|outline| (outline, None))
+            .into_iter()
+            .collect(),
+    };
+    for (outline, within) in halves {
         shadows.push(Cast {
             outline: Cow::Owned(outline),
-            within: None,
+            within,
             clear,
         });
     }
