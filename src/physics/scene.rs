@@ -9,6 +9,8 @@ mod look;
 mod looked;
 mod relation;
 mod solid;
+#[cfg(test)]
+mod tests;
 
 use super::Error;
 use super::region::Region;

@@ -7,7 +7,7 @@ use crate::{
 };
 
 /// The families that run, with what works their rows out.
-const RUNNING: [(&str, Work); 36] = [
+const RUNNING: [(&str, Work); 37] = [
     ("constant", defining_constants::constant),
     ("its90", fixed_points::celsius),
     ("bb_table_modest", blackbody_tables::below),
@@ -27,6 +27,7 @@ const RUNNING: [(&str, Work); 36] = [
     ),
     ("disc_pose", view_factor_catalogue::disc_pose),
     ("ring", view_factor_catalogue::ring),
+    ("cylinder", view_factor_catalogue::cylinder),
     ("sphere_tilt", view_factor_catalogue::sphere_tilt),
     ("disc_axis_tilt", view_factor_catalogue::disc_axis_tilt),
     (
@@ -68,7 +69,7 @@ const RUNNING: [(&str, Work); 36] = [
 ];
 
 /// Rows, or whole families, that the program cannot work out yet.
-const PENDING: [(&str, &str); 18] = [
+const PENDING: [(&str, &str); 17] = [
     (
         "its90-01",
         "a defining point, nothing to work out: for the list of process temperatures",
@@ -97,7 +98,6 @@ const PENDING: [(&str, &str); 18] = [
     ("textbook-10", "radiation shields: with screens"),
     ("textbook-13", "radiation shields: with screens"),
     ("textbook-14", "radiation shields: with screens"),
-    ("cylinder", "cylinders as sources come later"),
     ("atmosphere_pw", "absorption by air comes later"),
     ("atmosphere_wayne", "absorption by air comes later"),
     ("atmosphere_bound", "absorption by air comes later"),
@@ -159,4 +159,4 @@ fn every_row_runs_or_waits_for_a_stated_reason() {
 }
 
 /// How many rows run: it may only grow.
-const RAN: usize = 313;
+const RAN: usize = 320;
