@@ -7,6 +7,7 @@
 mod clip;
 mod look;
 mod looked;
+mod mouth;
 mod relation;
 mod solid;
 #[cfg(test)]
