@@ -8,7 +8,7 @@ use glam::DVec3;
 use super::looked::{Looked, Stance};
 use super::relation::Relation;
 use super::solid::{Plane, Solid};
-use super::{Occluder, Scene, Target, clip};
+use super::{Occluder, Scene, Target, clip, mouth};
 use crate::physics::region::Region;
 use crate::physics::view::loops::Loops;
 use crate::physics::view::{Sight, View};
@@ -152,6 +152,22 @@ impl Scene {
         let shadows = self.shadows(target, around);
         if shadows.is_empty() && target.through.is_none() && target.less.is_none() {
             return vec![(Box::default(), view)];
+        }
+        if shadows.is_empty()
+            && let Some(plane) = target.solid.plane()
+            && let Some(pieces) = mouth::seen(
+                &target.solid,
+                target.through.as_ref(),
+                target.less.as_ref(),
+                point,
+            )
+        {
+            let view = View::of_loops(Loops::new(pieces.into(), -plane.normal));
+            return if view == View::EMPTY {
+                Vec::new()
+            } else {
+                vec![(Box::default(), view)]
+            };
         }
         let Some((own, axis)) = target.solid.outline(point) else {
             // A disc seen so flat that what hides it makes no odds.
@@ -381,12 +397,24 @@ fn cut<'a>(
                 clear,
             });
         }
-    } else if !solid.region.touches(around.point)
-        && let Some(outline) = clip::front_of_body(solid, plane, around.point)
-    {
+        return;
+    }
+    if solid.region.touches(around.point) {
+        return;
+    }
+    let halves = match &solid.region {
+        Region::Sphere { centre, radius } => {
+            clip::front_of_sphere(*centre, *radius, plane, around.point)
+        }
+        _ => clip::front_of_cylinder(solid, plane, around.point)
+            .map(|outline| (outline, None))
+            .into_iter()
+            .collect(),
+    };
+    for (outline, within) in halves {
         shadows.push(Cast {
             outline: Cow::Owned(outline),
-            within: None,
+            within,
             clear,
         });
     }

@@ -10,6 +10,9 @@ use super::quartic;
 pub(super) struct Common {
     /// Directions that lie on both: all crossings, and a few that are not.
     pub(super) places: Vec<DVec3>,
+    /// Directions in which they only touch. Rounding puts them anywhere on a
+    /// stretch on which the two lie within a hair of each other.
+    pub(super) touches: Vec<DVec3>,
     /// They run along each other, at least in part; the places are the ends.
     pub(super) shared: bool,
 }
@@ -19,6 +22,7 @@ pub(super) struct Common {
 /// `hair` is the angle in radians below which directions count as one.
 pub(super) fn find(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
     common.places.clear();
+    common.touches.clear();
     common.shared = false;
     match (one, other) {
         (Edge::Straight { .. }, Edge::Straight { .. }) => straight(one, other, hair, common),
@@ -35,13 +39,15 @@ pub(super) fn find(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
                 let (c, d) = other.ends();
                 common.places.extend([a, b, c, d]);
             } else {
-                round(first, second, hair, &mut common.places);
+                round(first, second, hair, common);
             }
         }
     }
-    common.places.retain(|place| {
+    let on_both = |place: &DVec3| {
         one.place_of(*place, hair).is_some() && other.place_of(*place, hair).is_some()
-    });
+    };
+    common.places.retain(on_both);
+    common.touches.retain(on_both);
     if common.shared && common.places.len() < 2 {
         common.shared = false;
     }
@@ -130,7 +136,12 @@ fn mixed(a: DVec3, b: DVec3, rim: &Rim, hair: f64, common: &mut Common) {
         if (-1e-9..=1.0 + 1e-9).contains(&share) {
             let place = a + (b - a) * share.clamp(0.0, 1.0);
             if rim.seen(place).0 > 0.0 {
-                common.places.push(place.normalize_or(a));
+                let found = if touches {
+                    &mut common.touches
+                } else {
+                    &mut common.places
+                };
+                found.push(place.normalize_or(a));
             }
         }
     };
@@ -154,7 +165,7 @@ fn runs_along(first: &Rim, second: &Rim, hair: f64) -> bool {
 
 /// Two circles: on the first the second's cone is quadratic in sin and cos, and
 /// of degree four in the tangent of the half angle.
-fn round(first: &Rim, second: &Rim, hair: f64, places: &mut Vec<DVec3>) {
+fn round(first: &Rim, second: &Rim, hair: f64, common: &mut Common) {
     let circle = &first.circle;
     let bases = [
         circle.centre(),
@@ -175,20 +186,37 @@ fn round(first: &Rim, second: &Rim, hair: f64, places: &mut Vec<DVec3>) {
             4.0 * (m02 - m12),
             m00 - 2.0 * m01 + m11,
         ];
-        let mut last = f64::INFINITY;
-        for tangent in quartic::roots(terms) {
-            let mut angle = turn + 2.0 * tangent.atan();
-            // Circles that only touch have one place in common, not two.
-            let middle = circle.point(0.5 * (last + angle));
-            if last.is_finite() && (angle - last).abs() < 0.1 && second.is_passed_by(middle, hair) {
-                angle = 0.5 * (last + angle);
-                let _ = places.pop();
-            }
-            let place = circle.point(angle);
+        // Roots at which the circles only touch come in twos or threes, with no
+        // more than a hair between the circles all the way.
+        let mut run: Option<(f64, f64)> = None;
+        let mut settle = |run: Option<(f64, f64)>| {
+            let Some((first, last)) = run else { return };
+            let place = circle.point(0.5 * (first + last));
             if second.seen(place).0 > 0.0 {
-                places.push(place.normalize_or(place));
-                last = angle;
+                let place = place.normalize_or(place);
+                let beside = |angle: f64| second.is_passed_by(circle.point(angle), hair);
+                if first < last || (beside(first - 3e-7) && beside(first + 3e-7)) {
+                    common.touches.push(place);
+                } else {
+                    common.places.push(place);
+                }
             }
+        };
+        for tangent in quartic::roots(terms) {
+            let angle = turn + 2.0 * tangent.atan();
+            run = match run {
+                Some((first, last))
+                    if angle - last < 0.1
+                        && second.is_passed_by(circle.point(0.5 * (last + angle)), hair) =>
+                {
+                    Some((first, angle))
+                }
+                before => {
+                    settle(before);
+                    Some((angle, angle))
+                }
+            };
         }
+        settle(run);
     }
 }

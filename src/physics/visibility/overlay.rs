@@ -186,7 +186,18 @@ impl Overlay<'_> {
                     continue;
                 }
                 crossing::find(edge, crossed, self.hair, &mut common);
-                for place in &common.places {
+                // Where two edges only touch, an end or a crossing on that
+                // stretch stands for it.
+                let touches = common.touches.iter().map(|place| {
+                    let near = nodes.places.iter().find(|node| {
+                        node.distance(*place) < 1e-5
+                            && edge.is_passed_by(**node, self.hair)
+                            && crossed.is_passed_by(**node, self.hair)
+                    });
+                    near.copied().unwrap_or(*place)
+                });
+                let touches: Vec<DVec3> = touches.collect();
+                for place in common.places.iter().chain(&touches) {
                     let node = nodes.number(*place);
                     // At the node's own place, where edges meet to the last bit.
                     let place = nodes.place(node);
