@@ -65,10 +65,11 @@ fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
             to: d,
             inward: second,
         },
-    ) = (*one, *other)
+    ) = (one, other)
     else {
         return;
     };
+    let (a, b, c, d) = (*a, *b, *c, *d);
     let side = |height: f64| {
         if height.abs() <= hair {
             0.0
@@ -86,9 +87,11 @@ fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
     if side_a * side_b > 0.0 {
         return;
     }
-    let near = [(a, side_a), (b, side_b), (c, side_c), (d, side_d)];
-    let on = near.iter().filter(|(_, side)| *side == 0.0);
-    common.places.extend(on.map(|(place, _)| *place));
+    for (place, side) in [(a, side_a), (b, side_b), (c, side_c), (d, side_d)] {
+        if side == 0.0 {
+            common.places.push(place);
+        }
+    }
     match common.places.len() {
         0 => {
             let place = c * high_d.abs() + d * high_c.abs();
