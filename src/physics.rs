@@ -10,6 +10,7 @@ pub mod exposure;
 mod hazard;
 pub mod planck;
 pub mod region;
+pub mod skin;
 pub mod surface;
 pub mod view;
 pub mod view_factor;
