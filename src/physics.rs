@@ -5,11 +5,15 @@
 //! What is finite at the door gives finite numbers; faults are an [`Error`].
 
 pub mod constant;
+pub mod contact;
+pub mod emergency;
 mod error;
 pub mod exposure;
 mod hazard;
+pub mod heat_strain;
 pub mod planck;
 pub mod region;
+pub mod repeated;
 pub mod skin;
 pub mod surface;
 pub mod view;

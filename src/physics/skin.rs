@@ -17,10 +17,10 @@ use super::error::Error;
 
 /// The largest irradiance or flux that is accepted, in W/m²: more than any
 /// surface below 10 000 K sends out.
-pub(super) const MOST_FLUX: f64 = 1e9;
+pub(in crate::physics) const MOST_FLUX: f64 = 1e9;
 
 /// The longest time that is accepted, in seconds: about thirty years.
-pub(super) const LONGEST_TIME: f64 = 1e9;
+pub(in crate::physics) const LONGEST_TIME: f64 = 1e9;
 
 /// When an effect begins under a steady exposure, by a source that covers only
 /// some times.
@@ -36,17 +36,17 @@ pub enum Onset {
 }
 
 /// Returns an irradiance if it is one, zero included.
-pub(super) fn irradiance(parameter: &'static str, value: f64) -> Result<f64, Error> {
+pub(in crate::physics) fn irradiance(parameter: &'static str, value: f64) -> Result<f64, Error> {
     within(parameter, value, 0.0, MOST_FLUX, "from 0 W/m² to 10⁹ W/m²")
 }
 
 /// Returns a time if it is one, zero included.
-pub(super) fn time(parameter: &'static str, value: f64) -> Result<f64, Error> {
+pub(in crate::physics) fn time(parameter: &'static str, value: f64) -> Result<f64, Error> {
     within(parameter, value, 0.0, LONGEST_TIME, "from 0 s to 10⁹ s")
 }
 
 /// Returns a number if it lies in a closed range.
-pub(super) fn within(
+pub(in crate::physics) fn within(
     parameter: &'static str,
     value: f64,
     least: f64,

@@ -175,7 +175,13 @@ pub fn onset_of_1959(absorbed: f64) -> Result<Onset, Error> {
 }
 
 fn pulse(duration: f64) -> Result<f64, Error> {
-    within("duration of the pulse", duration, FROM, UNTIL, "from 1 s to 30 s")
+    within(
+        "duration of the pulse",
+        duration,
+        FROM,
+        UNTIL,
+        "from 1 s to 30 s",
+    )
 }
 
 #[cfg(test)]
@@ -202,7 +208,11 @@ mod tests {
         };
         assert!((ratio(1.0) - 1.13).abs() < 0.005, "{}", ratio(1.0));
         for time in [5.0, 10.0, 20.0, 30.0] {
-            assert!((ratio(time) - 1.0).abs() < 0.06, "{} at {time} s", ratio(time));
+            assert!(
+                (ratio(time) - 1.0).abs() < 0.06,
+                "{} at {time} s",
+                ratio(time)
+            );
         }
     }
 

@@ -311,7 +311,10 @@ pub fn after_pulse(
     injury: Injury,
 ) -> Result<f64, Error> {
     let duration = time("duration of the exposure", duration)?;
-    ratio(&tissue.heated(&[Pulse::steady(duration, absorbed)])?, injury)
+    ratio(
+        &tissue.heated(&[Pulse::steady(duration, absorbed)])?,
+        injury,
+    )
 }
 
 #[cfg(test)]

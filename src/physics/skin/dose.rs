@@ -136,7 +136,10 @@ mod tests {
     fn ranges_hold_their_usual_value() {
         for threshold in Threshold::ALL {
             let (low, usual, high) = (threshold.least(), threshold.usual(), threshold.largest());
-            assert!(low <= usual && usual <= high, "{threshold:?}: {low} {usual} {high}");
+            assert!(
+                low <= usual && usual <= high,
+                "{threshold:?}: {low} {usual} {high}"
+            );
         }
     }
 

@@ -117,7 +117,9 @@ impl Relation {
             Relation::FlareTable => "API 521, older editions, recalled",
             Relation::StollGreene => "Stoll and Greene (1959), recalled",
             Relation::Hymes => "oil company's guide (1991) after Hymes (1983), read in a reprint",
-            Relation::Dose => "thermal dose for pain after HSL/2004/04, read in a text that cites it",
+            Relation::Dose => {
+                "thermal dose for pain after HSL/2004/04, read in a text that cites it"
+            }
         }
     }
 
@@ -249,7 +251,11 @@ mod tests {
             let best = shortest(q).expect("fair").expect("it hurts at some time");
             for relation in Relation::ALL {
                 if let Some(time) = relation.time(q).expect("fair") {
-                    assert!(best.time <= time, "{relation:?}: {time} below {}", best.time);
+                    assert!(
+                        best.time <= time,
+                        "{relation:?}: {time} below {}",
+                        best.time
+                    );
                 }
             }
         }

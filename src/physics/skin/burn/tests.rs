@@ -15,7 +15,10 @@ fn integral_of_a_held_temperature_is_rate_times_time() {
     let rate = EPIDERMIS.rate(316.15 + 130.0 * below);
     let found = integral(&history, 75e-6, &EPIDERMIS).expect("fair");
     let expected = rate * 1e5;
-    assert!((found / expected - 1.0).abs() < 3e-3, "{found} against {expected}");
+    assert!(
+        (found / expected - 1.0).abs() < 3e-3,
+        "{found} against {expected}"
+    );
 }
 
 #[test]
@@ -48,7 +51,8 @@ fn longest_exposure_is_where_the_criterion_is_reached() {
         for injury in Injury::ALL {
             match longest_exposure(Tissue::standard(), flux, injury).expect("fair") {
                 Onset::After(time) => {
-                    let reached = after_pulse(Tissue::standard(), flux, time, injury).expect("fair");
+                    let reached =
+                        after_pulse(Tissue::standard(), flux, time, injury).expect("fair");
                     assert!(
                         (reached - 1.0).abs() < 1e-5,
                         "{injury:?} at {flux} W/m² after {time} s: {reached}"
@@ -65,12 +69,17 @@ fn deeper_and_worse_burns_take_longer() {
     for flux in [3000.0, 20_000.0, 100_000.0] {
         let times: Vec<f64> = Injury::ALL
             .iter()
-            .map(|injury| match longest_exposure(Tissue::standard(), flux, *injury) {
-                Ok(Onset::After(time)) => time,
-                other => panic!("{injury:?} at {flux} W/m²: {other:?}"),
-            })
+            .map(
+                |injury| match longest_exposure(Tissue::standard(), flux, *injury) {
+                    Ok(Onset::After(time)) => time,
+                    other => panic!("{injury:?} at {flux} W/m²: {other:?}"),
+                },
+            )
             .collect();
-        assert!(times[0] < times[1] && times[1] < times[2], "{flux} W/m²: {times:?}");
+        assert!(
+            times[0] < times[1] && times[1] < times[2],
+            "{flux} W/m²: {times:?}"
+        );
     }
 }
 
@@ -78,8 +87,14 @@ fn deeper_and_worse_burns_take_longer() {
 fn no_flux_never_burns_and_a_huge_one_burns_at_once() {
     let tissue = Tissue::standard();
     for injury in Injury::ALL {
-        assert_eq!(longest_exposure(tissue, 0.0, injury), Ok(Onset::Later(LONGEST)));
-        assert_eq!(longest_exposure(tissue, 1e9, injury), Ok(Onset::Sooner(SHORTEST)));
+        assert_eq!(
+            longest_exposure(tissue, 0.0, injury),
+            Ok(Onset::Later(LONGEST))
+        );
+        assert_eq!(
+            longest_exposure(tissue, 1e9, injury),
+            Ok(Onset::Sooner(SHORTEST))
+        );
         let huge = after_pulse(tissue, 1e9, 1e9, injury).expect("fair");
         assert!(huge.is_finite() && huge > 1.0, "{huge}");
     }
@@ -93,7 +108,10 @@ fn rates_are_those_of_their_branches() {
     // Ω of 1 at 53 °C in about 6 s by Weaver and Stoll's upper branch.
     let rate = EPIDERMIS.rate(326.15);
     let by_hand = (1.823e51_f64.ln() - 39_109.8 / 326.15).exp();
-    assert!((rate / by_hand - 1.0).abs() < 1e-12, "{rate} against {by_hand}");
+    assert!(
+        (rate / by_hand - 1.0).abs() < 1e-12,
+        "{rate} against {by_hand}"
+    );
     assert_eq!(EPIDERMIS.rate(317.0), 0.0);
     assert!(HENRIQUES.rate(317.15) > 0.0);
 }

@@ -273,15 +273,25 @@ mod tests {
                     .zip(&element.weights)
                     .map(|(x, w)| w * x.powi(power as i32))
                     .sum();
-                let expected = if power % 2 == 0 { 2.0 / (power as f64 + 1.0) } else { 0.0 };
-                assert!((found - expected).abs() < 2e-14, "x^{power}: {found} {expected}");
+                let expected = if power % 2 == 0 {
+                    2.0 / (power as f64 + 1.0)
+                } else {
+                    0.0
+                };
+                assert!(
+                    (found - expected).abs() < 2e-14,
+                    "x^{power}: {found} {expected}"
+                );
             }
             for i in 0..size {
                 let found: f64 = (0..size)
                     .map(|j| element.slopes[i * size + j] * element.points[j].powi(degree as i32))
                     .sum();
                 let expected = degree as f64 * element.points[i].powi(degree as i32 - 1);
-                assert!((found - expected).abs() < 1e-10, "{found} against {expected}");
+                assert!(
+                    (found - expected).abs() < 1e-10,
+                    "{found} against {expected}"
+                );
             }
         }
     }
@@ -300,7 +310,10 @@ mod tests {
         for (k, found) in rates.iter().take(8).enumerate() {
             let wave = (k as f64 + 0.5) * std::f64::consts::PI / 0.01;
             let expected = 0.5 / 4e6 * wave * wave;
-            assert!((found / expected - 1.0).abs() < 1e-8, "{k}: {found} against {expected}");
+            assert!(
+                (found / expected - 1.0).abs() < 1e-8,
+                "{k}: {found} against {expected}"
+            );
         }
     }
 }
