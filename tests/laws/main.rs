@@ -7,4 +7,5 @@ mod graph_laws;
 mod json_laws;
 mod notebook_laws;
 mod printing_and_parsing_agree;
+mod skin_laws;
 mod view_factor_laws;

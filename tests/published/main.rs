@@ -5,14 +5,18 @@ mod guidance_rows;
 mod rows;
 
 mod blackbody_tables;
+mod burns;
 mod common_practice;
 mod defining_constants;
 mod directive_2006_25;
 mod every_guidance_row;
 mod every_row;
 mod fixed_points;
+mod heat_strain_library;
+mod heat_strain_rows;
 mod ladle_case;
 mod ladle_notebook;
+mod natural_wet_bulb;
 mod quadrature_of_planck;
 mod textbook_examples;
 mod time_to_pain;

@@ -129,33 +129,104 @@ pub fn natural(
     vapour: f64,
     speed: f64,
 ) -> Result<f64, Error> {
-    let air_temperature = air(air_temperature)?;
+    let stream = stream(air_temperature, vapour, speed)?;
     let radiant = surroundings("mean radiant temperature", mean_radiant)?;
-    let saturated = saturation(air_temperature)?;
-    let vapour = within(
-        "water vapour pressure",
-        vapour,
-        0.0,
-        saturated * (1.0 + 1e-9),
-        "from 0 Pa to that of saturated air",
-    )?;
-    let stream = Stream {
-        air: air_temperature,
-        vapour,
-        pressure: humidity::STANDARD_PRESSURE,
-        speed: air_speed(speed)?.max(LEAST_SPEED),
-    };
+    root(|wick| stream.gain(wick, radiant))
+}
+
+/// Returns the natural wet bulb temperature by the older heat balance, K.
+///
+/// Arguments as [`natural`]. With strong radiation it lies some tenths of a
+/// kelvin above [`natural`], without it below.
+///
+/// # Accuracy
+///
+/// As [`natural`].
+///
+/// # Errors
+///
+/// As [`natural`].
+///
+/// # Source
+///
+/// Malchaire, *Annals of Occupational Hygiene* 19:251–258 (1976), heat balance:
+/// 4.18·v^0.444·(t_a − t_nw) + 10⁻⁸·(T_r⁴ − T_nw⁴) − 77.1·v^0.421·(p_sat(t_nw) −
+/// p_a) = 0 in kPa; from memory, confirmed within half a kelvin by the others in
+/// `tests/published/natural_wet_bulb.rs`.
+pub fn after_malchaire(
+    air_temperature: f64,
+    mean_radiant: f64,
+    vapour: f64,
+    speed: f64,
+) -> Result<f64, Error> {
+    let stream = stream(air_temperature, vapour, speed)?;
+    let radiant = surroundings("mean radiant temperature", mean_radiant)?;
+    let (dry, wet) = (
+        4.18 * stream.speed.powf(0.444),
+        77.1 * stream.speed.powf(0.421),
+    );
+    root(|wick| {
+        Ok(
+            dry * (stream.air - wick) + 1e-8 * (radiant.powi(4) - wick.powi(4))
+                - wet * (saturation(wick)? - stream.vapour) / 1000.0,
+        )
+    })
+}
+
+/// Returns the warmer of the natural wet bulbs by both heat balances, K: the
+/// safe side, and what an index by calculation should take.
+///
+/// Arguments, accuracy and errors as [`natural`].
+///
+/// # Errors
+///
+/// As [`natural`].
+///
+/// # Source
+///
+/// The larger of [`natural`] and [`after_malchaire`].
+pub fn warmest(
+    air_temperature: f64,
+    mean_radiant: f64,
+    vapour: f64,
+    speed: f64,
+) -> Result<f64, Error> {
+    let new = natural(air_temperature, mean_radiant, vapour, speed)?;
+    let old = after_malchaire(air_temperature, mean_radiant, vapour, speed)?;
+    Ok(new.max(old))
+}
+
+/// The temperature at which a wick gains nothing.
+fn root(gain: impl Fn(f64) -> Result<f64, Error>) -> Result<f64, Error> {
     // A wet wick never boils: below 100 °C its drying outgrows all radiation.
     let (mut low, mut high) = (190.0_f64, 373.0_f64);
     for _ in 0..60 {
         let middle = f64::midpoint(low, high);
-        if stream.gain(middle, radiant)? > 0.0 {
+        if gain(middle)? > 0.0 {
             low = middle;
         } else {
             high = middle;
         }
     }
     Ok(f64::midpoint(low, high))
+}
+
+/// The air that a wick hangs in, checked.
+fn stream(air_temperature: f64, vapour: f64, speed: f64) -> Result<Stream, Error> {
+    let air = air(air_temperature)?;
+    let vapour = within(
+        "water vapour pressure",
+        vapour,
+        0.0,
+        saturation(air)? * (1.0 + 1e-9),
+        "from 0 Pa to that of saturated air",
+    )?;
+    Ok(Stream {
+        air,
+        vapour,
+        pressure: humidity::STANDARD_PRESSURE,
+        speed: air_speed(speed)?.max(LEAST_SPEED),
+    })
 }
 
 /// Returns the psychrometric wet bulb temperature, K: that of a wick in fast
@@ -176,19 +247,12 @@ pub fn natural(
 /// Psychrometer equation p = p_sat(t_w) − A·P·(t − t_w) with A = 6.62e-4 1/K of
 /// an aspirated psychrometer; from memory.
 pub fn psychrometric(air_temperature: f64, vapour: f64) -> Result<f64, Error> {
-    let air_temperature = air(air_temperature)?;
-    let vapour = within(
-        "water vapour pressure",
-        vapour,
-        0.0,
-        saturation(air_temperature)? * (1.0 + 1e-9),
-        "from 0 Pa to that of saturated air",
-    )?;
+    let stream = stream(air_temperature, vapour, 0.0)?;
     let constant = 6.62e-4 * humidity::STANDARD_PRESSURE;
-    let (mut low, mut high) = (175.0, air_temperature);
+    let (mut low, mut high) = (175.0, stream.air);
     for _ in 0..60 {
         let middle = f64::midpoint(low, high);
-        if saturation(middle)? - constant * (air_temperature - middle) < vapour {
+        if saturation(middle)? - constant * (stream.air - middle) < stream.vapour {
             low = middle;
         } else {
             high = middle;
