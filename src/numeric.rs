@@ -1,5 +1,7 @@
 //! Numerical pieces that no well-kept crate gives.
 
+pub mod linear;
+
 /// The largest square of a tangent that [`arc_over_tangent`] takes: angles up to
 /// 22.9°.
 pub const LARGEST_SQUARE: f64 = 0.18;

@@ -4,6 +4,7 @@
 //! [`glam::DVec3`] with x east, y north, z up. Surfaces are diffuse emitters.
 //! What is finite at the door gives finite numbers; faults are an [`Error`].
 
+pub mod atmosphere;
 pub mod constant;
 pub mod contact;
 pub mod emergency;
@@ -12,9 +13,14 @@ pub mod exposure;
 mod hazard;
 pub mod heat_strain;
 pub mod planck;
+pub mod radiant;
 pub mod region;
 pub mod repeated;
+pub mod scene;
+pub mod screen;
 pub mod skin;
+pub mod spectrum;
+pub mod subtense;
 pub mod surface;
 pub mod view;
 pub mod view_factor;

@@ -34,6 +34,26 @@ pub enum Error {
         /// How many vertices were given.
         found: usize,
     },
+    /// A screen touches a hot source.
+    #[error(
+        "a screen must stand clear of hot sources, found screen {screen} touching part {part}; move one of them"
+    )]
+    TouchesSource {
+        /// Which screen, counted from 1.
+        screen: usize,
+        /// Which emitting part, counted from 1.
+        part: usize,
+    },
+    /// The middle of a piece of a screen lies on another screen.
+    #[error(
+        "screens must not lie in one another, found screen {screen} in screen {other}; move one of them"
+    )]
+    TouchesScreen {
+        /// Which screen, counted from 1.
+        screen: usize,
+        /// Which other one, counted from 1.
+        other: usize,
+    },
     /// The vertices of a polygon enclose no area.
     #[error(
         "a polygon must enclose an area, found {area} m²; give its vertices in order around it"
@@ -59,6 +79,39 @@ pub enum Error {
         first: usize,
         /// The second edge.
         second: usize,
+    },
+    /// A table has too few rows, or too many.
+    #[error(
+        "a table must have from 2 to {} rows, found {found}",
+        crate::physics::spectrum::MOST_ROWS
+    )]
+    TableLength {
+        /// How many rows were given.
+        found: usize,
+    },
+    /// The rows of a table are not in order.
+    #[error(
+        "row {row} of the table must stand at a longer wavelength than the row before it, found {wavelength} m after {before} m; sort the rows by wavelength"
+    )]
+    TableOrder {
+        /// Which row, counted from 1.
+        row: usize,
+        /// Its wavelength, in metres.
+        wavelength: f64,
+        /// That of the row before it, in metres.
+        before: f64,
+    },
+    /// A number in a table lies outside the range in which it means something.
+    #[error("{parameter} in row {row} of the table must be {range}, found {value}")]
+    TableValue {
+        /// Which row, counted from 1.
+        row: usize,
+        /// The column as a person would call it.
+        parameter: &'static str,
+        /// The range, in words.
+        range: &'static str,
+        /// The value that was found.
+        value: f64,
     },
 }
 

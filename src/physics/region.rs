@@ -1,21 +1,23 @@
-//! Emitting regions in space: disc, polygon, sphere, in any pose.
+//! Emitting regions in space: disc, polygon, plate, sphere, cylinder, in any pose.
 //!
 //! Metres; x east, y north, z up. A flat region emits to the side its normal
 //! points to. Make regions with the constructors, which check: the rest stands
 //! on normals of length one and polygons that are flat and simple.
 
+pub(in crate::physics) mod cylinder;
 mod outline;
 mod plan;
 #[cfg(test)]
 mod tests;
 
-use std::f64::consts::PI;
+use std::f64::consts::{PI, TAU};
 
 use glam::DVec3;
 
 use super::Error;
 use super::error::{direction, length, place};
 use super::view::{Sight, View};
+use cylinder::Cylinder;
 
 /// The greatest number of vertices of a polygon.
 pub const MOST_VERTICES: usize = 1000;
@@ -52,6 +54,22 @@ pub enum Region {
         centre: DVec3,
         /// The radius.
         radius: f64,
+    },
+    /// A solid cylinder; all its faces emit.
+    Cylinder {
+        /// The centre of one end face.
+        base: DVec3,
+        /// From there to the centre of the other end face.
+        axis: DVec3,
+        /// The radius.
+        radius: f64,
+    },
+    /// A thin flat plate, which emits from both faces.
+    Plate {
+        /// The vertices, anticlockwise as seen from in front.
+        vertices: Vec<DVec3>,
+        /// The normal of the front, of length one.
+        normal: DVec3,
     },
 }
 
@@ -165,14 +183,58 @@ impl Region {
         })
     }
 
-    /// Returns the emitting area in m²: of a flat region one face, of a sphere
-    /// all of it.
+    /// Returns a solid cylinder.
+    ///
+    /// `base` is the centre of one end face and `axis` leads from there to the
+    /// centre of the other; lengths in metres.
+    ///
+    /// # Errors
+    ///
+    /// [`Error::OutOfRange`] if the radius or the axis is not from 10⁻⁹ m to
+    /// 10⁹ m long, or a coordinate beyond that; [`Error::NoDirection`] for the
+    /// axis.
+    pub fn cylinder(base: DVec3, axis: DVec3, radius: f64) -> Result<Self, Error> {
+        let base = place("base", base)?;
+        let _ = direction("axis", axis)?;
+        let axis = place("axis", axis)?;
+        let _ = length("length of the axis", axis.length())?;
+        Ok(Self::Cylinder {
+            base,
+            axis,
+            radius: length("radius", radius)?,
+        })
+    }
+
+    /// Returns a thin rectangular plate, which emits from both faces.
+    ///
+    /// As [`Region::rectangle`]; `normal` is that of its front.
+    ///
+    /// # Errors
+    ///
+    /// As [`Region::rectangle`].
+    pub fn plate(
+        centre: DVec3,
+        normal: DVec3,
+        up: DVec3,
+        width: f64,
+        height: f64,
+    ) -> Result<Self, Error> {
+        match Self::rectangle(centre, normal, up, width, height)? {
+            Self::Polygon { vertices, normal } => Ok(Self::Plate { vertices, normal }),
+            other => Ok(other),
+        }
+    }
+
+    /// Returns the emitting area in m²: of a flat region one face, of a plate
+    /// both, of a body all of it.
     #[must_use]
     pub fn area(&self) -> f64 {
         match self {
             Self::Disc { radius, .. } => PI * radius * radius,
             Self::Polygon { vertices, .. } => 0.5 * outline::double_area(vertices).length(),
+            Self::Plate { vertices, .. } => outline::double_area(vertices).length(),
             Self::Sphere { radius, .. } => 4.0 * PI * radius * radius,
+            Self::Cylinder { axis, radius, .. } => TAU * radius * (axis.length() + radius),
         }
     }
 
@@ -181,17 +243,22 @@ impl Region {
     pub fn centre(&self) -> DVec3 {
         match self {
             Self::Disc { centre, .. } | Self::Sphere { centre, .. } => *centre,
-            Self::Polygon { vertices, normal } => outline::centroid(vertices, *normal),
+            Self::Cylinder { base, axis, .. } => *base + *axis * 0.5,
+            Self::Polygon { vertices, normal } | Self::Plate { vertices, normal } => {
+                outline::centroid(vertices, *normal)
+            }
         }
     }
 
-    /// Returns the outward normal of a flat region, of length one; none of a
-    /// sphere.
+    /// Returns the outward normal of a flat region, of length one (of a plate
+    /// that of its front); none of a sphere or a cylinder.
     #[must_use]
     pub fn normal(&self) -> Option<DVec3> {
         match self {
-            Self::Disc { normal, .. } | Self::Polygon { normal, .. } => Some(*normal),
-            Self::Sphere { .. } => None,
+            Self::Disc { normal, .. }
+            | Self::Polygon { normal, .. }
+            | Self::Plate { normal, .. } => Some(*normal),
+            Self::Sphere { .. } | Self::Cylinder { .. } => None,
         }
     }
 
@@ -200,7 +267,8 @@ impl Region {
     pub fn bounding_radius(&self) -> f64 {
         match self {
             Self::Disc { radius, .. } | Self::Sphere { radius, .. } => *radius,
-            Self::Polygon { vertices, .. } => {
+            Self::Cylinder { axis, radius, .. } => (0.5 * axis.length()).hypot(*radius),
+            Self::Polygon { vertices, .. } | Self::Plate { vertices, .. } => {
                 let centre = self.centre();
                 vertices
                     .iter()
@@ -211,12 +279,13 @@ impl Region {
     }
 
     /// Returns a ball that holds the region, quickly rather than narrowly.
-    fn ball(&self) -> (DVec3, f64) {
+    pub(super) fn ball(&self) -> (DVec3, f64) {
         match self {
             Self::Disc { centre, radius, .. } | Self::Sphere { centre, radius } => {
                 (*centre, *radius)
             }
-            Self::Polygon { vertices, .. } => {
+            Self::Cylinder { .. } => (self.centre(), self.bounding_radius()),
+            Self::Polygon { vertices, .. } | Self::Plate { vertices, .. } => {
                 let first = vertices[0];
                 let distances = vertices.iter().map(|vertex| vertex.distance(first));
                 (first, distances.fold(0.0, f64::max))
@@ -225,7 +294,7 @@ impl Region {
     }
 
     /// Says whether a point lies on a flat region or its edge, or on or inside
-    /// a sphere: to 10⁻¹² of the lengths at play.
+    /// a body: to 10⁻¹² of the lengths at play.
     ///
     /// A point that is not a finite place counts as touching, so that it is
     /// refused.
@@ -256,6 +325,9 @@ impl Region {
         }
         match self {
             Self::Sphere { centre, radius } => distance_to_segment(*centre, from, to) <= *radius,
+            Self::Cylinder { base, axis, radius } => {
+                Cylinder::new(*base, *axis, *radius).is_met_by(from, to)
+            }
             Self::Disc {
                 centre,
                 normal,
@@ -265,11 +337,13 @@ impl Region {
                 Meeting::At(place) => place.distance(*centre) <= *radius,
                 Meeting::InPlane => distance_to_segment(*centre, from, to) <= *radius,
             },
-            Self::Polygon { vertices, normal } => match meeting(vertices[0], *normal, from, way) {
-                Meeting::Apart => false,
-                Meeting::At(place) => outline::holds(vertices, *normal, place, 0.0),
-                Meeting::InPlane => outline::is_met_by(vertices, *normal, from, to),
-            },
+            Self::Polygon { vertices, normal } | Self::Plate { vertices, normal } => {
+                match meeting(vertices[0], *normal, from, way) {
+                    Meeting::Apart => false,
+                    Meeting::At(place) => outline::holds(vertices, *normal, place, 0.0),
+                    Meeting::InPlane => outline::is_met_by(vertices, *normal, from, to),
+                }
+            }
         }
     }
 
@@ -295,7 +369,7 @@ impl Region {
     ///
     /// Behind the plane of a flat region nothing is; in that plane outside the
     /// outline it lies edge on, and the view is empty. On the region, on or
-    /// inside a sphere (to 10⁻¹² of the lengths at play), and from a place that
+    /// inside a body (to 10⁻¹² of the lengths at play), and from a place that
     /// is not finite, the answer is [`Sight::Touching`].
     #[must_use]
     #[inline]
@@ -338,7 +412,17 @@ impl Region {
                     Sight::Seen(View::EMPTY)
                 }
             }
-            Self::Polygon { vertices, normal } => {
+            Self::Cylinder { base, axis, radius } => {
+                if size(*base - point) > OUT_OF_SIGHT {
+                    return Sight::Seen(View::EMPTY);
+                }
+                let cylinder = Cylinder::new(*base, *axis, *radius);
+                if cylinder.touches(point) {
+                    return Sight::Touching;
+                }
+                Sight::Seen(cylinder.view(point))
+            }
+            Self::Polygon { vertices, normal } | Self::Plate { vertices, normal } => {
                 let seen = vertices[0] - point;
                 let height = -seen.dot(*normal);
                 let reach = TOUCH * (size(seen) + size(point));
@@ -349,7 +433,14 @@ impl Region {
                     return Sight::Seen(View::of_polygon(vertices, point));
                 }
                 if height < -reach {
-                    return Sight::Behind;
+                    if matches!(self, Self::Polygon { .. }) {
+                        return Sight::Behind;
+                    }
+                    if size(seen) > OUT_OF_SIGHT {
+                        return Sight::Seen(View::EMPTY);
+                    }
+                    let back: Vec<DVec3> = vertices.iter().rev().copied().collect();
+                    return Sight::Seen(View::of_polygon(&back, point));
                 }
                 if outline::holds(vertices, *normal, point, reach) {
                     Sight::Touching

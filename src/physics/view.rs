@@ -4,11 +4,18 @@
 //! from the point, so that any receiver orientation costs a few products, and a
 //! cut at the receiver's horizon only where there is one.
 
+pub(super) mod loops;
+#[cfg(test)]
+mod tests;
+
+use std::f64::consts::PI;
+
 use glam::DVec3;
 
 use super::view_factor::contour::{self, Circle};
 use super::view_factor::four::Four;
 use super::view_factor::{disc, sphere};
+use loops::{Loops, Piece};
 
 /// What is seen of a region from a point.
 #[derive(Clone, Debug, PartialEq)]
@@ -49,6 +56,8 @@ enum Shape {
     Few(Four),
     /// A polygon of more.
     Many(Box<[DVec3]>),
+    /// Anything else: closed loops of straight edges and arcs.
+    Loops(Box<Loops>),
 }
 
 /// The view of one region from one point.
@@ -112,6 +121,17 @@ impl View {
         }
     }
 
+    /// What lies inside closed loops.
+    pub(super) fn of_loops(loops: Loops) -> Self {
+        if loops.pieces().is_empty() {
+            return Self::EMPTY;
+        }
+        Self {
+            flux: loops.flux(),
+            shape: Shape::Loops(Box::new(loops)),
+        }
+    }
+
     /// Returns the flux vector, (1/π) ∫ ω dΩ over the directions in which the
     /// region is seen.
     ///
@@ -152,6 +172,53 @@ impl View {
             self.flux
         };
         normal.dot(flux).clamp(0.0, 1.0)
+    }
+
+    /// Returns the solid angle in which the region is seen, in sr.
+    ///
+    /// # Accuracy
+    ///
+    /// Exact relation for polygons and spheres, absolute error below `1e-13`;
+    /// edges that are arcs by quadrature of the contour, `1e-9`.
+    ///
+    /// # Source
+    ///
+    /// Spherical triangles by van Oosterom and Strackee (1983); checked against
+    /// 2π(1 − cos α) of a cone and the closed form of a rectangle on its axis in
+    /// `view/tests.rs`.
+    #[must_use]
+    pub fn solid_angle(&self) -> f64 {
+        let polygon = |vertices: &[DVec3]| {
+            let axis = self.flux;
+            let from = vertices.iter().cycle().skip(vertices.len() - 1);
+            let pieces = (from.zip(vertices))
+                .map(|(from, to)| Piece::Straight {
+                    from: *from,
+                    to: *to,
+                })
+                .collect();
+            Loops::new(pieces, axis).solid_angle()
+        };
+        match &self.shape {
+            Shape::Nothing => 0.0,
+            Shape::Circle {
+                centre,
+                normal,
+                radius,
+            } => {
+                // On the axis in closed form; it is that of every sphere.
+                let lateral = centre.cross(*normal).length();
+                if lateral <= 1e-15 * centre.length() {
+                    let far = centre.length().hypot(*radius);
+                    return 2.0 * PI * (radius / far) * (radius / (far + centre.length()));
+                }
+                let circle = Circle::new(*centre, *normal, *radius);
+                Loops::new([Piece::whole(circle)].into(), self.flux).solid_angle()
+            }
+            Shape::Few(four) => polygon(&four.vertices()),
+            Shape::Many(vertices) => polygon(vertices),
+            Shape::Loops(loops) => loops.solid_angle(),
+        }
     }
 
     /// Returns a bound on the configuration factor over all receiver
@@ -207,6 +274,7 @@ impl View {
             }
             Shape::Few(four) => four.lowest(normal) < 0.0,
             Shape::Many(vertices) => vertices.iter().any(|vertex| vertex.dot(normal) < 0.0),
+            Shape::Loops(loops) => loops.reaches_below(normal),
         }
     }
 
@@ -221,6 +289,7 @@ impl View {
             } => Circle::new(*centre, *own, *radius).above(normal),
             Shape::Few(four) => contour::polygon_above(&four.vertices(), normal),
             Shape::Many(vertices) => contour::polygon_above(vertices, normal),
+            Shape::Loops(loops) => loops.above(normal),
         }
     }
 
@@ -241,6 +310,7 @@ impl View {
             }
             Shape::Few(four) => four.vertices().iter().all(|vertex| within(*vertex)),
             Shape::Many(vertices) => vertices.iter().all(|vertex| within(*vertex)),
+            Shape::Loops(loops) => loops.extremes().into_iter().all(within),
         }
     }
 
@@ -262,6 +332,7 @@ impl View {
             }
             Shape::Few(four) => four.vertices().to_vec(),
             Shape::Many(vertices) => vertices.to_vec(),
+            Shape::Loops(loops) => loops.extremes(),
         }
     }
 }

@@ -8,4 +8,5 @@ mod json_laws;
 mod notebook_laws;
 mod printing_and_parsing_agree;
 mod skin_laws;
+mod screen_laws;
 mod view_factor_laws;

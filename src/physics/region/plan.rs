@@ -3,6 +3,7 @@
 use glam::{DVec2, DVec3};
 
 use super::Region;
+use super::cylinder::Cylinder;
 
 /// What counts as no width on the plan, relative to the region's size: a
 /// vertical plate whose normal carries rounding is still a line.
@@ -37,12 +38,17 @@ pub(super) fn edge_from(region: &Region, place: DVec3, heading: DVec3) -> f64 {
                 *radius,
             )
         }
-        Region::Polygon { vertices, .. } => polygon(vertices, place, heading),
+        Region::Cylinder { base, axis, radius } => {
+            Cylinder::new(*base, *axis, *radius).edge_from(place, heading)
+        }
+        Region::Polygon { vertices, .. } | Region::Plate { vertices, .. } => {
+            polygon(vertices, place, heading)
+        }
     }
 }
 
 /// An ellipse with half axis `half` along `short` and `long` across it.
-fn ellipse(centre: DVec2, heading: DVec2, short: DVec2, half: f64, long: f64) -> f64 {
+pub(super) fn ellipse(centre: DVec2, heading: DVec2, short: DVec2, half: f64, long: f64) -> f64 {
     let scaled =
         |vector: DVec2| DVec2::new(vector.dot(short) / half, short.perp_dot(vector) / long);
     let (way, middle) = (scaled(heading), scaled(centre));
@@ -56,7 +62,7 @@ fn ellipse(centre: DVec2, heading: DVec2, short: DVec2, half: f64, long: f64) ->
     }
 }
 
-fn polygon(vertices: &[DVec3], place: DVec3, heading: DVec2) -> f64 {
+pub(super) fn polygon(vertices: &[DVec3], place: DVec3, heading: DVec2) -> f64 {
     let seen = |vertex: DVec3| {
         let vertex = (vertex - place).truncate();
         DVec2::new(vertex.dot(heading), heading.perp_dot(vertex))

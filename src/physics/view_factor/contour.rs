@@ -145,6 +145,31 @@ impl Circle {
         self.centre + (self.away * cosine + self.along * sine) * self.radius
     }
 
+    /// Returns the derivative of [`Circle::point`] by the angle.
+    pub(in crate::physics) fn step(&self, angle: f64) -> DVec3 {
+        let (sine, cosine) = angle.sin_cos();
+        (self.along * cosine - self.away * sine) * self.radius
+    }
+
+    /// Returns the circle about the same centre, so many times as large.
+    pub(in crate::physics) fn widened(&self, times: f64) -> Self {
+        Self {
+            radius: self.radius * times,
+            ..*self
+        }
+    }
+
+    /// Returns how the height above a receiver's horizon goes round the circle.
+    pub(in crate::physics) fn swing(&self, normal: DVec3) -> Swing {
+        let cosine = self.radius * normal.dot(self.away);
+        let sine = self.radius * normal.dot(self.along);
+        Swing {
+            middle: normal.dot(self.centre),
+            half: cosine.hypot(sine),
+            highest: sine.atan2(cosine),
+        }
+    }
+
     /// Returns the part of the contour integral that an arc gives.
     ///
     /// The arc runs from one angle to another, in radians.
@@ -200,19 +225,71 @@ impl Circle {
     /// `normal` is the receiver's, of length one.
     #[must_use]
     pub fn above(&self, normal: DVec3) -> DVec3 {
-        let middle = normal.dot(self.centre);
-        let cosine = self.radius * normal.dot(self.away);
-        let sine = self.radius * normal.dot(self.along);
-        let swing = cosine.hypot(sine);
-        if middle >= swing {
+        let swing = self.swing(normal);
+        if swing.middle >= swing.half {
             return self.arc(-PI, PI);
         }
-        if middle <= -swing {
+        if swing.middle <= -swing.half {
             return DVec3::ZERO;
         }
-        let highest = sine.atan2(cosine);
-        let half = ((swing - middle) * (swing + middle)).sqrt().atan2(-middle);
-        let (from, to) = (highest - half, highest + half);
+        let half = swing.reach();
+        let (from, to) = (swing.highest - half, swing.highest + half);
         self.arc(from, to) + horizon_edge(self.point(to), self.point(from), normal)
+    }
+}
+
+/// The height of a circle's points above a plane through the receiver:
+/// `middle + half cos(angle − highest)`.
+#[derive(Clone, Copy, Debug)]
+pub(in crate::physics) struct Swing {
+    pub(in crate::physics) middle: f64,
+    pub(in crate::physics) half: f64,
+    pub(in crate::physics) highest: f64,
+}
+
+impl Swing {
+    /// Returns the height at an angle.
+    pub(in crate::physics) fn at(&self, angle: f64) -> f64 {
+        self.middle + self.half * (angle - self.highest).cos()
+    }
+
+    /// Returns how far to either side of the highest point the circle stays
+    /// above: of use where it crosses.
+    fn reach(&self) -> f64 {
+        ((self.half - self.middle) * (self.half + self.middle))
+            .max(0.0)
+            .sqrt()
+            .atan2(-self.middle)
+    }
+
+    /// Returns the angles strictly between `start` and `stop` at which the
+    /// height is zero, in the order of the way from one to the other.
+    pub(in crate::physics) fn stations(&self, start: f64, stop: f64) -> [Option<f64>; 4] {
+        let mut found = [None; 4];
+        if self.middle.abs() >= self.half {
+            return found;
+        }
+        let (low, high) = (start.min(stop), start.max(stop));
+        let reach = self.reach();
+        let mut count = 0;
+        for angle in [self.highest - reach, self.highest + reach] {
+            let mut angle = low + (angle - low).rem_euclid(TAU);
+            while angle < high && count < 4 {
+                if angle > low {
+                    found[count] = Some(angle);
+                    count += 1;
+                }
+                angle += TAU;
+            }
+        }
+        found[..count].sort_by(|one, other| {
+            let order = one.partial_cmp(other).unwrap_or(std::cmp::Ordering::Equal);
+            if start <= stop {
+                order
+            } else {
+                order.reverse()
+            }
+        });
+        found
     }
 }
