@@ -1,16 +1,18 @@
-//! Heat strain of the whole body: humidity, globe, wet bulb, indices, prediction.
+//! Heat strain of the whole body: humidity, wet bulb, indices, prediction.
 //!
 //! Temperatures in kelvin, pressures in pascals, speeds in m/s, metabolic rates
 //! in W or, per area of body, W/m². A number outside the range of a method is
 //! told as [`Outside`], with its reason, and never answered with a guess.
 
-pub mod globe;
+mod climate;
 pub mod humidity;
 pub mod predicted;
 pub mod radiant_load;
 pub mod threshold;
 pub mod wbgt;
 pub mod wet_bulb;
+
+pub use climate::Climate;
 
 use super::error::Error;
 use super::skin::within;

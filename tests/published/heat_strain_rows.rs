@@ -1,12 +1,12 @@
 //! Heat strain of the whole body: rows of the file of checks on the wet bulb
 //! globe temperature, the globe, NIOSH's limits and ISO 7933.
 
-use farglow::physics::heat_strain::globe::Globe;
 use farglow::physics::heat_strain::predicted::{
-    CLO, Climate, Clothing, Edition, Person, Posture, Prediction, Reflective, Strain, Stretch,
-    Walking, Work, predict,
+    CLO, Clothing, Edition, Person, Posture, Prediction, Reflective, Strain, Stretch, Walking,
+    Work, predict,
 };
-use farglow::physics::heat_strain::{humidity, threshold, wbgt};
+use farglow::physics::heat_strain::{Climate, humidity, threshold, wbgt};
+use farglow::physics::radiant::Globe;
 
 use crate::guidance_rows::{self, Row};
 
@@ -52,15 +52,16 @@ fn radiant(row: &Row) {
             .map(|value| value.as_f64().expect("a number"))
             .collect()
     };
-    let globe = Globe::new(row.input("D_m"), row.input("eps")).expect("a fair globe");
     let tolerance: f64 = row.tolerance.parse().expect("a number");
     let readings = list(&row.inputs, "tg")
         .into_iter()
         .zip(list(&row.inputs, "v"));
     let mut ran = 0;
     for ((tg, v), expected) in readings.zip(list(&row.expected, "tr")) {
-        let found = globe
-            .mean_radiant_temperature(tg + ZERO, row.input("ta") + ZERO, v)
+        let air = row.input("ta") + ZERO;
+        let found = Globe::new(row.input("D_m"), row.input("eps"), air, v)
+            .expect("a fair globe")
+            .radiant_temperature(tg + ZERO)
             .expect("fair readings");
         row.holds(
             "mean radiant temperature",

@@ -1,7 +1,7 @@
 //! The natural wet bulb by three independent formulas.
 
-use farglow::physics::heat_strain::globe::Globe;
 use farglow::physics::heat_strain::{humidity, wet_bulb};
+use farglow::physics::radiant::Globe;
 
 const ZERO: f64 = 273.15;
 
@@ -66,8 +66,9 @@ fn three_formulas_agree_within_their_spread() {
                 let speed = 0.3;
                 let t = air + ZERO;
                 let vapour = humidity::vapour_pressure(t, percent / 100.0).expect("fair air");
-                let radiant = Globe::STANDARD
-                    .mean_radiant_temperature(t + over, t, speed)
+                let radiant = Globe::new(0.15, 0.95, t, speed)
+                    .expect("a fair globe")
+                    .radiant_temperature(t + over)
                     .expect("fair readings");
                 let new = wet_bulb::natural(t, radiant, vapour, speed).expect("fair air");
                 let old = wet_bulb::after_malchaire(t, radiant, vapour, speed).expect("fair air");

@@ -6,7 +6,7 @@
 
 mod body;
 
-use super::{Error, Outside, within};
+use super::{Climate, Error, Outside, within};
 use body::{Body, Phase};
 
 /// One clo, m²·K/W.
@@ -36,19 +36,6 @@ pub enum Posture {
     Sitting,
     /// 0.67 of the surface radiates.
     Crouching,
-}
-
-/// The air and the radiation around the person.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct Climate {
-    /// Air temperature, K.
-    pub air_temperature: f64,
-    /// Mean radiant temperature, K.
-    pub mean_radiant: f64,
-    /// Pressure of water vapour, Pa.
-    pub vapour_pressure: f64,
-    /// Speed of the air, m/s.
-    pub air_speed: f64,
 }
 
 /// Clothing that reflects radiation.
@@ -148,7 +135,7 @@ impl Person {
 pub struct Stretch {
     /// How long it lasts, s; the model counts whole minutes, rounded up.
     pub duration: f64,
-    /// Air and radiation.
+    /// Air and radiation, the mean radiant temperature being that of a person.
     pub climate: Climate,
     /// What is worn.
     pub clothing: Clothing,
@@ -229,7 +216,7 @@ pub const LONGEST: f64 = 86_400.0;
 /// # Examples
 ///
 /// ```
-/// use farglow::physics::heat_strain::predicted::*;
+/// use farglow::physics::heat_strain::{Climate, predicted::*};
 /// let stretch = Stretch {
 ///     duration: 28_800.0,
 ///     climate: Climate {

@@ -5,6 +5,31 @@
 //! memory), in W/m²; it is not the irradiance that limits for eyes judge.
 
 use super::{Error, within};
+use crate::physics::constant::STEFAN_BOLTZMANN;
+
+/// Temperature of the skin that the effective irradiance is counted from, K.
+pub const SKIN: f64 = 305.15;
+
+/// Returns the effective irradiance, W/m²; below zero where the body gives off
+/// more than it takes up.
+///
+/// `sources` is the irradiance from hot sources and screens, `background` that
+/// from the room, both of all wavelengths, W/m². That of a surface which faces
+/// the source stands for the whole body on the safe side.
+///
+/// # Errors
+///
+/// [`Error::OutOfRange`] if one is negative, above 10⁹ W/m² or not finite.
+///
+/// # Source
+///
+/// DGUV Information 213-002: net of the body's own exchange at a skin of about
+/// 32 °C, which is taken for black; definition from memory.
+pub fn effective(sources: f64, background: f64) -> Result<f64, Error> {
+    let sources = crate::physics::skin::irradiance("irradiance from sources", sources)?;
+    let background = crate::physics::skin::irradiance("irradiance from the room", background)?;
+    Ok(sources + background - STEFAN_BOLTZMANN * SKIN.powi(4))
+}
 
 /// How long the guide values hold, in the columns of their table, s.
 const COLUMNS: [f64; 3] = [900.0, 1800.0, 3600.0];
@@ -155,6 +180,17 @@ mod tests {
                 }
             }
         }
+    }
+
+    #[test]
+    fn a_body_in_a_room_of_its_own_temperature_has_no_load() {
+        let room = STEFAN_BOLTZMANN * SKIN.powi(4);
+        let found = effective(0.0, room).expect("fair");
+        assert!(found.abs() < 1e-9, "{found} W/m²");
+        // A room at 20 °C cools by some 73 W/m², which a source has to make up.
+        let cool = effective(300.0, STEFAN_BOLTZMANN * 293.15_f64.powi(4)).expect("fair");
+        assert!((cool - 227.0).abs() < 1.0, "{cool} W/m²");
+        assert!(effective(-1.0, 0.0).is_err() && effective(0.0, f64::NAN).is_err());
     }
 
     #[test]
