@@ -18,7 +18,7 @@ pub struct Spell {
 }
 
 /// The most spells that a schedule holds.
-pub const MOST_SPELLS: usize = 100_000;
+pub const MOST_SPELLS: usize = 10_000;
 
 /// The longest window over which the eye is judged by a limit that falls with
 /// time, s.
@@ -70,7 +70,7 @@ impl Schedule {
     ///
     /// # Errors
     ///
-    /// [`Error::OutOfRange`] if there are over 100 000 spells, a number is
+    /// [`Error::OutOfRange`] if there are over 10 000 spells, a number is
     /// negative, above 10⁹ or not finite, or a spell begins before another
     /// one ends.
     pub fn new(mut spells: Vec<Spell>) -> Result<Schedule, Error> {
@@ -79,7 +79,7 @@ impl Schedule {
             spells.len() as f64,
             0.0,
             MOST_SPELLS as f64,
-            "at most 100 000",
+            "at most 10 000",
         )?;
         for spell in &spells {
             let _ = time("beginning of a spell", spell.start)?;
@@ -122,7 +122,7 @@ impl Schedule {
             f64::from(times),
             0.0,
             MOST_SPELLS as f64,
-            "at most 100 000",
+            "at most 10 000",
         )?;
         let (stay, rest) = (
             time("duration of a stay", stay)?,

@@ -198,7 +198,7 @@ pub const LONGEST: f64 = 86_400.0;
 ///
 /// The program of the standard to its own stopping rules (0.001 K). Seven
 /// published cases of 2004 agree to 0.1 K, 1 min and 10 g; of five of 2023
-/// four agree to 0.1 K, 10 min and 1 %, and one, with still air and strong
+/// four agree to 0.15 K, 10 min and 0.6 %, and one, with still air and strong
 /// radiation, does not: there this errs to the safe side
 /// (`tests/published/heat_strain_rows.rs`).
 ///

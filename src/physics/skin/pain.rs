@@ -63,6 +63,18 @@ pub struct Shortest {
     pub relation: Relation,
 }
 
+/// Effective irradiance from which skin is said to hurt in long exposure, W/m²;
+/// no time is given with it.
+///
+/// Another quantity, net of the body's own exchange, and another scale of time
+/// than the relations here, which take no pain below 1.5 kW/m² to 1.7 kW/m²:
+/// the two are never merged.
+///
+/// # Source
+///
+/// DGUV Information 212-013 (2013), section 1.2; read.
+pub const LONG_EXPOSURE: f64 = 300.0;
+
 /// Irradiance in W/m² at and below which two of the fits take no pain.
 const NO_PAIN: f64 = 1700.0;
 

@@ -29,8 +29,8 @@ fn integral_agrees_with_small_steps() {
             .expect("fair");
         for injury in Injury::ALL {
             let found = integral(&history, injury.depth(), injury.kinetics()).expect("fair");
-            let step = duration / 20_000.0;
-            let brute: f64 = (0..200_000)
+            let step = duration / 5000.0;
+            let brute: f64 = (0..50_000)
                 .map(|i| {
                     let at = (f64::from(i) + 0.5) * step;
                     let hot = history.temperature(injury.depth(), at).expect("fair");
@@ -38,7 +38,7 @@ fn integral_agrees_with_small_steps() {
                 })
                 .sum();
             assert!(
-                (found - brute).abs() < 1e-5 * brute + 1e-9,
+                (found - brute).abs() < 1e-4 * brute + 1e-9,
                 "{injury:?} at {flux} W/m²: {found} against {brute}"
             );
         }
@@ -54,7 +54,7 @@ fn longest_exposure_is_where_the_criterion_is_reached() {
                     let reached =
                         after_pulse(Tissue::standard(), flux, time, injury).expect("fair");
                     assert!(
-                        (reached - 1.0).abs() < 1e-5,
+                        (reached - 1.0).abs() < 1e-6,
                         "{injury:?} at {flux} W/m² after {time} s: {reached}"
                     );
                 }
@@ -114,4 +114,21 @@ fn rates_are_those_of_their_branches() {
     );
     assert_eq!(EPIDERMIS.rate(317.0), 0.0);
     assert!(HENRIQUES.rate(317.15) > 0.0);
+}
+
+#[test]
+fn integral_does_not_hang_on_where_the_pulses_are_cut() {
+    for (flux, injury) in [
+        (4000.0, Injury::SecondDegree),
+        (12_000.0, Injury::SecondDegree),
+        (12_000.0, Injury::ThirdDegree),
+    ] {
+        let whole = after_pulse(Tissue::standard(), flux, 30.0, injury).expect("fair");
+        let cut: Vec<Pulse> = [0.013, 3.3, 1.7, 24.987]
+            .iter()
+            .map(|duration| Pulse::steady(*duration, flux))
+            .collect();
+        let cut = ratio(&Tissue::standard().heated(&cut).expect("fair"), injury).expect("fair");
+        assert!((cut / whole - 1.0).abs() < 1e-8, "{cut} against {whole}");
+    }
 }

@@ -244,6 +244,13 @@ fn unfit_layers_and_pulses_are_refused() {
     ] {
         assert!(tissue.heated(&[pulse]).is_err(), "{pulse:?} was taken");
     }
+    let hair = Pulse {
+        duration: 1e-300,
+        from: 0.0,
+        to: 1e9,
+    };
+    let history = tissue.heated(&[hair]).expect("no pulse at all");
+    assert!(history.temperature(0.0, 1.0).expect("fair").is_finite());
     let history = tissue
         .heated(&[Pulse::steady(0.0, 1.0)])
         .expect("no pulse at all");
