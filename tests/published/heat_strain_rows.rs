@@ -185,8 +185,9 @@ fn strain_of_2023(row: &Row) {
         // warmer and the limit 31 min sooner than printed: the safe side. The
         // open library holds the coefficient at its value for clothing as hot
         // as the surroundings and errs to the other side (38.4 °C, 181 min);
-        // it marks the row as a known mismatch. Which input of the annex is
-        // missing could not be found out.
+        // it marks the row as a known mismatch. A person who sits (145 min,
+        // 38.7 °C, 1.4 % of water), or surroundings at 52 °C (150 min), would
+        // meet it: an input is likely misprinted, which one is not known.
         row.holds(
             "water",
             water,
