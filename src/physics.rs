@@ -24,5 +24,6 @@ pub mod subtense;
 pub mod surface;
 pub mod view;
 pub mod view_factor;
+mod visibility;
 
 pub use error::Error;

@@ -34,26 +34,6 @@ pub enum Error {
         /// How many vertices were given.
         found: usize,
     },
-    /// A screen touches a hot source.
-    #[error(
-        "a screen must stand clear of hot sources, found screen {screen} touching part {part}; move one of them"
-    )]
-    TouchesSource {
-        /// Which screen, counted from 1.
-        screen: usize,
-        /// Which emitting part, counted from 1.
-        part: usize,
-    },
-    /// The middle of a piece of a screen lies on another screen.
-    #[error(
-        "screens must not lie in one another, found screen {screen} in screen {other}; move one of them"
-    )]
-    TouchesScreen {
-        /// Which screen, counted from 1.
-        screen: usize,
-        /// Which other one, counted from 1.
-        other: usize,
-    },
     /// The vertices of a polygon enclose no area.
     #[error(
         "a polygon must enclose an area, found {area} m²; give its vertices in order around it"
@@ -112,6 +92,59 @@ pub enum Error {
         range: &'static str,
         /// The value that was found.
         value: f64,
+    },
+    /// Two bodies that emit overlap: which hides the other cannot be said.
+    #[error(
+        "bodies that emit must lie apart, found parts {} and {} overlapping; move them apart",
+        first + 1, second + 1
+    )]
+    PartsOverlap {
+        /// The first, by its place in the scene.
+        first: usize,
+        /// The second.
+        second: usize,
+    },
+    /// A barrier runs through a part, or lies upon another barrier's hot face.
+    #[error(
+        "a barrier must lie clear of what emits, found barrier {} overlapping part {}; move one of them",
+        barrier + 1, part + 1
+    )]
+    BarrierOverlaps {
+        /// The barrier, by its place in the scene.
+        barrier: usize,
+        /// The part, by its place in the scene.
+        part: usize,
+    },
+    /// The outline that a part is seen through, or past, is not flat.
+    #[error(
+        "a part must be seen through a disc or a polygon, found a body for part {}",
+        part + 1
+    )]
+    NotAnOutline {
+        /// The part, by its place in the scene.
+        part: usize,
+    },
+    /// A screen touches a hot source.
+    #[error(
+        "a screen must stand clear of hot sources, found screen {} touching part {}; move one of them",
+        screen + 1, part + 1
+    )]
+    ScreenTouches {
+        /// The screen, by its place among the screens.
+        screen: usize,
+        /// The part, by its place among those of the sources.
+        part: usize,
+    },
+    /// The middle of a piece of a screen lies on another screen.
+    #[error(
+        "screens must not lie in one another, found screen {} in screen {}; move one of them",
+        screen + 1, other + 1
+    )]
+    ScreensOverlap {
+        /// The screen, by its place among the screens.
+        screen: usize,
+        /// The other one.
+        other: usize,
     },
 }
 

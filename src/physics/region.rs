@@ -278,6 +278,31 @@ impl Region {
         }
     }
 
+    /// Checks what the constructors do, but for the outline of a polygon.
+    pub(super) fn checked(&self) -> Result<(), Error> {
+        match self {
+            Self::Disc {
+                centre,
+                normal,
+                radius,
+            } => Self::disc(*centre, *normal, *radius).map(drop),
+            Self::Sphere { centre, radius } => Self::sphere(*centre, *radius).map(drop),
+            Self::Cylinder { base, axis, radius } => {
+                Self::cylinder(*base, *axis, *radius).map(drop)
+            }
+            Self::Polygon { vertices, normal } | Self::Plate { vertices, normal } => {
+                let found = vertices.len();
+                if !(3..=MOST_VERTICES).contains(&found) {
+                    return Err(Error::VertexCount { found });
+                }
+                for vertex in vertices {
+                    let _ = place("vertex", *vertex)?;
+                }
+                direction("normal", *normal).map(drop)
+            }
+        }
+    }
+
     /// Returns a ball that holds the region, quickly rather than narrowly.
     pub(super) fn ball(&self) -> (DVec3, f64) {
         match self {

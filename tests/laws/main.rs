@@ -11,3 +11,4 @@ mod printing_and_parsing_agree;
 mod screen_laws;
 mod skin_laws;
 mod view_factor_laws;
+mod visibility_laws;

@@ -31,7 +31,8 @@ pub fn heading() -> impl Strategy<Value = DVec3> {
     })
 }
 
-/// Discs, rectangles, polygons with and without dents, spheres.
+/// Discs, rectangles, polygons with and without dents, spheres, cylinders,
+/// plates.
 pub fn region() -> impl Strategy<Value = Region> {
     let size = 0.05..2.0_f64;
     prop_oneof![
@@ -55,8 +56,17 @@ pub fn region() -> impl Strategy<Value = Region> {
                 let points: Vec<[f64; 2]> = star(&radii);
                 Region::outline(centre, normal, up, &points).ok()
             }),
-        (place(), size)
+        (place(), size.clone())
             .prop_map(|(centre, radius)| Region::sphere(centre, radius).expect("a sphere")),
+        (place(), heading(), size.clone(), size.clone()).prop_map(|(base, way, length, radius)| {
+            Region::cylinder(base, way * (2.0 * length), 0.7 * radius).expect("a cylinder")
+        }),
+        (place(), heading(), heading(), size.clone(), size).prop_filter_map(
+            "up along the normal",
+            |(centre, normal, up, width, height)| {
+                Region::plate(centre, normal, up, width, height).ok()
+            }
+        ),
     ]
 }
 
@@ -80,7 +90,8 @@ fn seen(region: &Region, point: DVec3) -> Option<View> {
     }
 }
 
-fn turned(region: &Region, turn: DQuat, shift: DVec3) -> Region {
+/// The region after a turn about the origin and a shift.
+pub fn turned(region: &Region, turn: DQuat, shift: DVec3) -> Region {
     let moved = |place: DVec3| turn * place + shift;
     match region {
         Region::Disc {
@@ -95,6 +106,13 @@ fn turned(region: &Region, turn: DQuat, shift: DVec3) -> Region {
         Region::Sphere { centre, radius } => {
             Region::sphere(moved(*centre), *radius).expect("a sphere")
         }
+        Region::Cylinder { base, axis, radius } => {
+            Region::cylinder(moved(*base), turn * *axis, *radius).expect("a cylinder")
+        }
+        Region::Plate { vertices, normal } => Region::Plate {
+            vertices: vertices.iter().map(|vertex| moved(*vertex)).collect(),
+            normal: turn * *normal,
+        },
     }
 }
 
@@ -162,11 +180,18 @@ fn quadrature(region: &Region, point: DVec3, normal: DVec3, panels: u32) -> f64 
         Region::Polygon {
             vertices,
             normal: own,
+        }
+        | Region::Plate {
+            vertices,
+            normal: own,
         } => {
+            // Of a plate the face towards the point.
+            let facing = (point - vertices[0]).dot(*own).signum();
+            let own = *own * facing;
             // Triangles off the first vertex; those of a dent count negatively.
             for pair in vertices.windows(2).skip(1) {
                 let (first, second) = (pair[0] - vertices[0], pair[1] - vertices[0]);
-                let double = first.cross(second).dot(*own);
+                let double = first.cross(second).dot(own) * facing;
                 for row in 0..panels {
                     for column in 0..panels {
                         for (u, wu) in &rule {
@@ -174,7 +199,51 @@ fn quadrature(region: &Region, point: DVec3, normal: DVec3, panels: u32) -> f64 
                                 let u = (f64::from(row) + u) / parts;
                                 let v = (f64::from(column) + v) / parts;
                                 let place = vertices[0] + (first * (1.0 - v) + second * v) * u;
-                                patch(place, *own, double * u * wu * wv / (parts * parts));
+                                patch(place, own, double * u * wu * wv / (parts * parts));
+                            }
+                        }
+                    }
+                }
+            }
+        }
+        Region::Cylinder { base, axis, radius } => {
+            // Of the side what is turned to the point, then the end that is.
+            let along = axis.normalize();
+            let off = point - *base;
+            let rise = off.dot(along);
+            let across = off - along * rise;
+            let offset = across.length();
+            let towards = across / offset;
+            let beside = along.cross(towards);
+            let half = if offset > *radius {
+                (radius / offset).acos()
+            } else {
+                0.0
+            };
+            let ends = [
+                (rise > axis.length(), *axis, along),
+                (rise < 0.0, DVec3::ZERO, -along),
+            ];
+            for band in 0..panels {
+                for (a, weight) in &rule {
+                    let share = (f64::from(band) + a) / parts;
+                    for slice in 0..panels {
+                        for (b, other) in &rule {
+                            let part = (f64::from(slice) + b) / parts;
+                            let angle = half * (2.0 * part - 1.0);
+                            let own = towards * angle.cos() + beside * angle.sin();
+                            let area = weight * other / (parts * parts);
+                            patch(
+                                *base + *axis * share + own * *radius,
+                                own,
+                                area * 2.0 * half * radius * axis.length(),
+                            );
+                            let turn = TAU * part;
+                            let out =
+                                (towards * turn.cos() + beside * turn.sin()) * (radius * share);
+                            for (_, end, own) in ends.iter().filter(|(seen, _, _)| *seen) {
+                                let area = area * TAU * radius * radius * share;
+                                patch(*base + *end + out, *own, area);
                             }
                         }
                     }
@@ -290,6 +359,8 @@ proptest! {
             Region::Disc { centre, normal, radius } => Region::disc(*centre * size, *normal, radius * size),
             Region::Polygon { vertices, .. } => Region::polygon(vertices.iter().map(|vertex| *vertex * size).collect()),
             Region::Sphere { centre, radius } => Region::sphere(*centre * size, radius * size),
+            Region::Cylinder { base, axis, radius } => Region::cylinder(*base * size, *axis * size, radius * size),
+            Region::Plate { vertices, normal } => Region::polygon(vertices.iter().map(|vertex| *vertex * size).collect()).map(|_| Region::Plate { vertices: vertices.iter().map(|vertex| *vertex * size).collect(), normal: *normal }),
         };
         let Ok(region) = region else { return Ok(()) };
         let centre = region.centre();

@@ -84,6 +84,18 @@ impl Cylinder {
         (range.0 <= range.1).then_some(range)
     }
 
+    /// Returns the place of the solid that is nearest to a point.
+    pub(in crate::physics) fn nearest(&self, point: DVec3) -> DVec3 {
+        let (along, across) = self.parted(point);
+        let offset = across.length();
+        let across = if offset > self.radius {
+            across * (self.radius / offset)
+        } else {
+            across
+        };
+        self.base + self.along * along.clamp(0.0, self.length) + across
+    }
+
     /// Says whether a segment meets the solid.
     pub(super) fn is_met_by(&self, from: DVec3, to: DVec3) -> bool {
         self.stretch(from, to - from)
@@ -99,8 +111,9 @@ impl Cylinder {
                 radius,
             } => View::of_disc(centre, normal, radius),
             Outline::Side(pieces) => {
-                let axis = self.base + self.along * (0.5 * self.length) - point;
-                View::of_loops(Loops::new(pieces, axis))
+                // All of a convex body lies beyond the plane through its nearest
+                // place, square to the way there.
+                View::of_loops(Loops::new(pieces, self.nearest(point) - point))
             }
         }
     }

@@ -33,7 +33,7 @@ pub struct Looked {
     glimpses: Vec<Glimpse>,
     /// Of each part how the point stands to it, and where its glimpses end.
     parts: Vec<(Stance, usize)>,
-    barrier: Option<usize>,
+    pub(super) barrier: Option<usize>,
 }
 
 impl Looked {

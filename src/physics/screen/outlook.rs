@@ -63,17 +63,11 @@ impl<'a> Surroundings<'a> {
         let sources = self.emissions.len();
         let faces = 2 * self.screens.len();
         if let Some(part) = looked.touched().filter(|part| *part < sources) {
-            return Err(Error::TouchesSource {
-                screen: screen + 1,
-                part: part + 1,
-            });
+            return Err(Error::ScreenTouches { screen, part });
         }
         let lies_on = |other: &usize| *other != screen && self.screens[*other].has(place);
         if let Some(other) = (0..self.screens.len()).find(lies_on) {
-            return Err(Error::TouchesScreen {
-                screen: screen + 1,
-                other: other + 1,
-            });
+            return Err(Error::ScreensOverlap { screen, other });
         }
         let own = &self.screens[screen];
         Ok([FRONT, BACK].map(|face| {

@@ -11,6 +11,8 @@ use crate::physics::{Error, planck};
 
 /// A thin plate, or a small piece of one, between what it takes up and what it
 /// gives off.
+///
+/// Nothing is checked here: [`balance`](super::balance()) makes it of what was.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Plate {
     /// The emissivities of both faces together: 2 at most.
@@ -98,27 +100,26 @@ impl Plate {
             let surplus = self.emissivities * planck::exitance(temperature) + convected - absorbed;
             (surplus, convected)
         };
-        let (mut at, mut next) = (near, near);
-        let (mut off, convected) = surplus(near);
-        let slope = self.slope(near, convected);
-        let mut step = -off / slope;
+        let (mut at, (mut off, convected)) = (near, surplus(near));
+        let mut step = -off / self.slope(near, convected);
+        // Far from the root secants may stand still where there is none.
         for _ in 0..8 {
-            next = at + step;
-            if next.is_nan() || next <= 0.0 || step.abs() <= 1e-13 * at {
+            if step.is_nan() || step.abs() > 0.3 * at {
                 break;
             }
-            let (found, _) = surplus(next);
-            if found == off {
+            let (found, _) = surplus(at + step);
+            at += step;
+            if step.abs() <= 1e-13 * at || found == 0.0 || found == off {
+                // As near as rounding lets it come, or not near at all.
+                if found.abs() <= 1e-11 * absorbed.abs().max(planck::exitance(at)) {
+                    return at;
+                }
                 break;
             }
             step *= -found / (found - off);
-            (at, off) = (next, found);
+            off = found;
         }
-        if next > 0.0 && step.abs() <= 1e-10 * next {
-            next
-        } else {
-            self.temperature(absorbed)
-        }
+        self.temperature(absorbed)
     }
 
     /// How what is given off grows with the temperature, W/(m²·K): that by
@@ -336,11 +337,23 @@ mod tests {
 
     #[test]
     fn temperatures_are_found_alike_from_anywhere() {
-        for convection in [Convection::Stated(10.0), Convection::Moving(0.3)] {
+        for convection in [
+            Convection::Stated(0.0),
+            Convection::Stated(10.0),
+            Convection::Moving(0.3),
+        ] {
             let plate = plate(1.2, convection, 298.15);
             for absorbed in [10.0, 537.0, 1000.0, 3e4, 1e6] {
                 let expected = plate.temperature(absorbed);
-                for near in [1.0, 298.15, 0.9 * expected, 1.001 * expected, expected, 9e3] {
+                for near in [
+                    1.0,
+                    2.5,
+                    298.15,
+                    0.9 * expected,
+                    1.001 * expected,
+                    expected,
+                    9e3,
+                ] {
                     let found = plate.temperature_near(absorbed, near);
                     assert!(
                         (found / expected - 1.0).abs() < 1e-11,

@@ -39,6 +39,26 @@ impl Piece {
         }
     }
 
+    /// The same edge the other way round.
+    pub(in crate::physics) fn reversed(self) -> Self {
+        match self {
+            Self::Straight { from, to } => Self::Straight { from: to, to: from },
+            Self::Round {
+                circle,
+                start,
+                stop,
+                from,
+                to,
+            } => Self::Round {
+                circle,
+                start: stop,
+                stop: start,
+                from: to,
+                to: from,
+            },
+        }
+    }
+
     fn ends(&self) -> (DVec3, DVec3) {
         match *self {
             Self::Straight { from, to } | Self::Round { from, to, .. } => (from, to),

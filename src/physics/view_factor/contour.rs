@@ -145,6 +145,37 @@ impl Circle {
         self.centre + (self.away * cosine + self.along * sine) * self.radius
     }
 
+    /// Returns the centre, from the receiver.
+    pub(in crate::physics) fn centre(&self) -> DVec3 {
+        self.centre
+    }
+
+    /// Returns the normal on the receiver's side, of length one.
+    pub(in crate::physics) fn normal(&self) -> DVec3 {
+        self.normal
+    }
+
+    /// Returns the radius.
+    pub(in crate::physics) fn radius(&self) -> f64 {
+        self.radius
+    }
+
+    /// Returns the distance of the centre from the foot of the receiver's
+    /// perpendicular on the circle's plane.
+    pub(in crate::physics) fn offset(&self) -> f64 {
+        self.offset
+    }
+
+    /// Returns the direction of angle zero in the plane, of length one.
+    pub(in crate::physics) fn away(&self) -> DVec3 {
+        self.away
+    }
+
+    /// Returns the direction of a quarter turn in the plane, of length one.
+    pub(in crate::physics) fn along(&self) -> DVec3 {
+        self.along
+    }
+
     /// Returns the derivative of [`Circle::point`] by the angle.
     pub(in crate::physics) fn step(&self, angle: f64) -> DVec3 {
         let (sine, cosine) = angle.sin_cos();
