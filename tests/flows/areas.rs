@@ -619,23 +619,30 @@ fn every_picture_that_is_kept_is_compared() {
         .collect();
     kept.sort();
     let themes = ["contrast", "dark", "light"];
-    let mut expected: Vec<String> = ["cautions", "cautions-open", "curve", "rail", "readiness", "screens"]
-        .iter()
-        .flat_map(|area| themes.map(|theme| format!("{area}-{theme}-tiny-skia.sha256")))
-        .chain(
-            [
-                "curve-feet",
-                "curve-ladle",
-                "curve-readout",
-                "rail-feet",
-                "rail-many-lines",
-                "rail-nominal",
-                "rail-other-line",
-                "rail-selected-line",
-            ]
-            .map(|name| format!("{name}-tiny-skia.sha256")),
-        )
-        .collect();
+    let mut expected: Vec<String> = [
+        "cautions",
+        "cautions-open",
+        "curve",
+        "rail",
+        "readiness",
+        "screens",
+    ]
+    .iter()
+    .flat_map(|area| themes.map(|theme| format!("{area}-{theme}-tiny-skia.sha256")))
+    .chain(
+        [
+            "curve-feet",
+            "curve-ladle",
+            "curve-readout",
+            "rail-feet",
+            "rail-many-lines",
+            "rail-nominal",
+            "rail-other-line",
+            "rail-selected-line",
+        ]
+        .map(|name| format!("{name}-tiny-skia.sha256")),
+    )
+    .collect();
     expected.sort();
     assert_eq!(kept, expected);
 }
