@@ -19,6 +19,7 @@ use crate::notebook::datum::{Datum, Output, Slot};
 use crate::notebook::engine::{Linker, Slot as Own};
 use crate::notebook::scene::{Heat, Weights};
 use crate::notebook::task::{Inputs, Task};
+use crate::physics::region::Region;
 use crate::physics::view::View;
 use crate::physics::{radiant, subtense};
 use crate::units::{Dimension, Quantity};
@@ -223,7 +224,18 @@ impl SightsTask {
         };
         let around_eye = look(Envelope::Eye)?;
         let subtense = |shape: &Arc<Shape>| {
-            subtense::of(&shape.region, eye).map_or(0.0, subtense::Subtense::mean)
+            let found = match &shape.region {
+                // A screen is seen from both sides.
+                Region::Polygon { vertices, normal } if !shape.is_source() => {
+                    let plate = Region::Plate {
+                        vertices: vertices.clone(),
+                        normal: *normal,
+                    };
+                    subtense::of(&plate, eye)
+                }
+                region => subtense::of(region, eye),
+            };
+            found.map_or(0.0, subtense::Subtense::mean)
         };
         Ok(Datum::Sights(Arc::new(Sights {
             subtenses: form.shapes.iter().map(subtense).collect(),

@@ -14,9 +14,11 @@ use crate::notebook::engine::Linker;
 use crate::notebook::task::{Inputs, Task};
 use crate::physics::region::Region;
 use crate::physics::scene::{Barrier, Part};
-use crate::physics::screen::{Make, SOILED};
+use crate::physics::screen::SOILED;
 use crate::physics::surface::Emission;
 use crate::units::{Dimension, Quantity};
+
+pub use crate::physics::screen::Make;
 
 /// An open fraction is less than the whole.
 const OPEN: Expect = Expect::of(Dimension::NONE, Range::Share);
