@@ -3,8 +3,8 @@
 
 use std::fmt::Write;
 
-use super::cell::field::{Form, Need};
 use super::cell::Kind;
+use super::cell::field::{Form, Need};
 use crate::entry;
 use crate::material::{Library, Property, Row};
 use crate::units::Unit;
@@ -22,10 +22,12 @@ pub fn text() -> String {
     let mut text = String::new();
     text.push_str(&wrapped(
         "An entry is one of three:",
-        &words("a quantity, `1250 ± 25 °C` (± is expanded, coverage factor 2); an expression over \
+        &words(
+            "a quantity, `1250 ± 25 °C` (± is expanded, coverage factor 2); an expression over \
                 cells, `door.width / 2 + 0.4 m`, with `+ - * / ^`, comparisons, `&& || !` and the \
                 functions below; or a row of the libraries below, `of cast_iron_molten_clean`, \
-                which gives its typical value with its range as the central 95 %."),
+                which gives its typical value with its range as the central 95 %.",
+        ),
     ));
     text.push_str("\n| function | returns |\n| --- | --- |\n");
     for (usage, about) in entry::functions() {
@@ -42,10 +44,7 @@ pub fn text() -> String {
         .collect();
     paragraph("**Constants:**", &listed(&constants));
     let units: Vec<String> = Unit::known().map(|symbol| format!("`{symbol}`")).collect();
-    paragraph(
-        "**Units**, also joined as in `W/(m²·sr)`:",
-        &listed(&units),
-    );
+    paragraph("**Units**, also joined as in `W/(m²·sr)`:", &listed(&units));
     let ids = |holds: &dyn Fn(&Row) -> bool| -> Vec<String> {
         let rows = Library::shipped().rows().filter(|row| holds(row));
         rows.map(|row| format!("`{}`", row.id)).collect()
@@ -56,7 +55,10 @@ pub fn text() -> String {
         "**Rows, total emissivities:**",
         &listed(&ids(&|row| !is_spectral(row) && !is_temperature(row))),
     );
-    paragraph("**Rows, near infrared emissivities:**", &listed(&ids(&is_spectral)));
+    paragraph(
+        "**Rows, near infrared emissivities:**",
+        &listed(&ids(&is_spectral)),
+    );
     paragraph("**Rows, temperatures:**", &listed(&ids(&is_temperature)));
     for kind in Kind::ALL {
         let fields: Vec<String> = kind

@@ -2,7 +2,8 @@
 
 use crate::rows::{self, Row, Work};
 use crate::{
-    blackbody_tables, cavities, defining_constants, fixed_points, quadrature_of_planck, shields, shop_air, textbook_examples, thick_openings, view_factor_catalogue,
+    blackbody_tables, cavities, defining_constants, fixed_points, quadrature_of_planck, shields,
+    shop_air, textbook_examples, thick_openings, view_factor_catalogue,
 };
 
 /// The families that run, with what works their rows out.
@@ -55,10 +56,7 @@ const RUNNING: [(&str, Work); 41] = [
         view_factor_catalogue::rect_rect_perpendicular,
     ),
     ("thick_round_black", thick_openings::round_black),
-    (
-        "thick_round_reradiating",
-        thick_openings::round_reradiating,
-    ),
+    ("thick_round_reradiating", thick_openings::round_reradiating),
     ("thick_square_black", thick_openings::square_black),
     (
         "thick_square_reradiating",

@@ -140,7 +140,10 @@ fn the_ladle_behind_the_half_screen_gives_what_counting_pieces_gives() {
             (out * radius + DVec3::Z * z, -out, area)
         })
     });
-    let (metal, wall) = (summed(eye, facing, metal, sees), summed(eye, facing, wall, sees));
+    let (metal, wall) = (
+        summed(eye, facing, metal, sees),
+        summed(eye, facing, wall, sees),
+    );
     assert!(metal > 1e-3 && wall > 1e-3, "both are seen: {metal} {wall}");
     let black = SIGMA * 1693.15_f64.powi(4);
     near(
@@ -159,7 +162,12 @@ fn the_ladle_behind_the_half_screen_gives_what_counting_pieces_gives() {
         .iter()
         .map(|name| si(&results, "watcher", &format!("irradiance_from.{name}")))
         .sum();
-    near("all parts", all, si(&results, "watcher", "irradiance"), 1e-12);
+    near(
+        "all parts",
+        all,
+        si(&results, "watcher", "irradiance"),
+        1e-12,
+    );
 }
 
 /// Source: quadrature of this file over the door and over the plate.
@@ -282,7 +290,11 @@ fn nothing_reads_within_where_a_polished_plate_mirrors_the_source() {
     let dull = beside("0.9", "0.9");
     assert!(!cautions(&dull, "eye").contains(&"mirrored"));
     let bright = beside("0.1", "0.6");
-    assert!(cautions(&bright, "eye").contains(&"mirrored"), "{:?}", cautions(&bright, "eye"));
+    assert!(
+        cautions(&bright, "eye").contains(&"mirrored"),
+        "{:?}",
+        cautions(&bright, "eye")
+    );
     assert!(cautions(&bright, "sheet").contains(&"polished"));
     let row = |results: &Results| match cell(results, "judged").in_row(0, "finding") {
         Some(Shown::Word(word)) => word.clone(),
@@ -321,7 +333,12 @@ fn bodies_and_polygons_are_seen_by_their_outlines() {
         r#""form": "opening", "outline": "polygon", "vertices": [["0.5 m", "1 m"], ["0 m", "0 m"],
            ["-0.5 m", "1 m"]]"#,
     );
-    near("notched", factor(&notch) + factor(&tooth), factor(&same), 1e-12);
+    near(
+        "notched",
+        factor(&notch) + factor(&tooth),
+        factor(&same),
+        1e-12,
+    );
     let cylinder = body(
         r#""form": "body", "outline": "cylinder", "diameter": "0.8 m", "height": "2 m", "stance": "lying",
            "heading": "90 °""#,
@@ -335,8 +352,18 @@ fn bodies_and_polygons_are_seen_by_their_outlines() {
             (out * 0.4 + DVec3::new(x, 0.0, 1.0), out, area)
         })
     });
-    near("cylinder", factor(&cylinder), summed(eye, facing, side, |_| true), 2e-5);
-    near("its area", si(&cylinder, "hot", "area"), TAU * 0.4 * 2.4, 1e-12);
+    near(
+        "cylinder",
+        factor(&cylinder),
+        summed(eye, facing, side, |_| true),
+        2e-5,
+    );
+    near(
+        "its area",
+        si(&cylinder, "hot", "area"),
+        TAU * 0.4 * 2.4,
+        1e-12,
+    );
 }
 
 /// Source: `thick_opening.json`, computed there by independent quadrature: round hole, depth half its diameter, re-radiating walls, 0.67198.
@@ -350,7 +377,12 @@ fn a_hole_through_a_wall_gives_its_chart_factor_and_more_on_its_axis() {
         ))
     };
     let thin = hole("0 m", "reradiating");
-    near("thin", si(&thin, "hole", "effective_emissivity"), 1.0, 1e-12);
+    near(
+        "thin",
+        si(&thin, "hole", "effective_emissivity"),
+        1.0,
+        1e-12,
+    );
     let thick = hole("0.5 m", "reradiating");
     near(
         "chart factor",
@@ -358,7 +390,8 @@ fn a_hole_through_a_wall_gives_its_chart_factor_and_more_on_its_axis() {
         0.671_98,
         2e-5,
     );
-    let share = |results: &Results| si(results, "eye", "irradiance") / si(&thin, "eye", "irradiance");
+    let share =
+        |results: &Results| si(results, "eye", "irradiance") / si(&thin, "eye", "irradiance");
     let (reradiating, cold) = (share(&thick), share(&hole("0.5 m", "cold")));
     assert!(
         0.9 < cold && cold < reradiating && reradiating < 1.0,
@@ -379,11 +412,23 @@ fn a_table_of_emissivities_stands_for_both_numbers() {
     let grey = with(r#""emissivity": "0.3", "near_ir_emissivity": "0.3""#);
     let flat = with(r#""spectrum": [["0.5 µm", "0.3"], ["20 µm", "0.3"]]"#);
     for output in ["exitance", "near_ir_exitance"] {
-        near(output, si(&flat, "melt", output), si(&grey, "melt", output), 1e-12);
+        near(
+            output,
+            si(&flat, "melt", output),
+            si(&grey, "melt", output),
+            1e-12,
+        );
     }
     let metal = with(r#""spectrum": "1 µm, 0.4; 3 µm, 0.25; 10 µm, 0.12""#);
-    let share = |results: &Results| si(results, "melt", "near_ir_exitance") / si(results, "melt", "exitance");
-    assert!(share(&metal) > share(&grey), "{} {}", share(&metal), share(&grey));
+    let share = |results: &Results| {
+        si(results, "melt", "near_ir_exitance") / si(results, "melt", "exitance")
+    };
+    assert!(
+        share(&metal) > share(&grey),
+        "{} {}",
+        share(&metal),
+        share(&grey)
+    );
     assert!(!cautions(&metal, "melt").contains(&"near-infrared-assumed"));
 }
 
@@ -444,7 +489,12 @@ fn shop_air_takes_from_the_total_alone_and_only_where_its_formula_holds() {
     };
     // 1169 Pa over 19.9 m: the way is taken to the nearest place of the door.
     let [total, near_infrared, skin] = shares("20 m", "power_law");
-    near("power law", total, 2.02 * (1169.0 * 19.9_f64).powf(-0.09), 2e-4);
+    near(
+        "power law",
+        total,
+        2.02 * (1169.0 * 19.9_f64).powf(-0.09),
+        2e-4,
+    );
     assert_eq!((near_infrared, skin), (1.0, 1.0));
     assert_eq!(shares("3 m", "power_law"), [1.0; 3]);
     assert!(cautions(&at("3 m", "power_law"), "eye").contains(&"air-range"));

@@ -425,8 +425,7 @@ impl ExposureTask {
         let heat = inputs.heat(self.heat);
         let orientation = self.facing.orientation(inputs);
         let weights = Band::ALL.map(|band| heat.weights(band));
-        let at_eye =
-            |weights: &Weights<'_>| sights.around_eye.irradiance(0, orientation, weights);
+        let at_eye = |weights: &Weights<'_>| sights.around_eye.irradiance(0, orientation, weights);
         let [total, near_infrared, skin] = weights.each_ref().map(at_eye);
         let worst = |around: &Views| weights.each_ref().map(|w| around.worst(orientation, w));
         let normal = total.1;
@@ -572,7 +571,10 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
     let temperature = linker.entry("surface_temperature");
     let emissivity = linker.always("surface_emissivity");
     if temperature.is_none() {
-        linker.refuse(&["surface_emissivity"], "goes with `surface_temperature` only");
+        linker.refuse(
+            &["surface_emissivity"],
+            "goes with `surface_temperature` only",
+        );
     }
     let surface = temperature.map(|temperature| [temperature, emissivity]);
     let exposure = facing.map(|facing| {

@@ -143,7 +143,12 @@ fn rows_that_are_not_there_are_told_at_their_place_with_the_nearest() {
             panic!("{entry}: {errors:?}");
         };
         assert_eq!(
-            (error.code, error.field, error.span.clone(), error.hint.as_deref()),
+            (
+                error.code,
+                error.field,
+                error.span.clone(),
+                error.hint.as_deref()
+            ),
             (code, Some("emissivity"), span, Some(hint)),
             "{entry}: {error}"
         );
@@ -163,7 +168,11 @@ fn a_row_outside_its_range_or_of_another_kind_calls_up_a_caution() {
         ("2372 degF", "of cast_iron_molten_clean", vec!["row-normal"]),
         ("1370 °C", "of cast_iron_molten_1um", vec!["row-spectral"]),
         ("1400 °C", "of slag_on_metal", vec![]),
-        ("800 °C", "of aluminium_molten_skimmed", vec!["row-recalled"]),
+        (
+            "800 °C",
+            "of aluminium_molten_skimmed",
+            vec!["row-recalled"],
+        ),
         // Also where the row stands in a cell of its own.
         ("1450 °C", "e_metal", vec!["row-temperature", "row-normal"]),
         ("1450 °C", "e_metal * 1.1", vec![]),
@@ -246,7 +255,10 @@ fn rows_survive_renaming_and_give_way_to_what_is_typed() {
     let _ = engine
         .apply(rename("e_metal", "e_bath"))
         .expect("a name that nobody has");
-    assert_eq!(engine.notebook().cells[1].text("entry"), Some("of slag_on_metal"));
+    assert_eq!(
+        engine.notebook().cells[1].text("entry"),
+        Some("of slag_on_metal")
+    );
     assert_eq!(si(&engine, "twice"), 1.7);
     let id = engine.find("e_bath").expect("the renamed cell");
     let named = engine.rows_named(id);

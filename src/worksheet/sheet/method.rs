@@ -140,7 +140,11 @@ fn of_source(sheet: &Sheet<'_>, cell: &CellResult) -> Option<Block> {
                 .and_then(Shown::quantity)
                 .map_or_else(String::new, |share| plain(share.si)),
         ));
-    } else if let Some([_, wall]) = emission.parts.get(..2).and_then(|parts| parts.first_chunk()) {
+    } else if let Some([_, wall]) = emission
+        .parts
+        .get(..2)
+        .and_then(|parts| parts.first_chunk())
+    {
         text.push_str(&format!(
             " Over the rim the melt is seen, and of the inner wall above it what the rim does not \
              hide: that sends {}.",
