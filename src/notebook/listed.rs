@@ -36,7 +36,7 @@ impl ListedTask {
         if let Some([drawn]) = draw.and_then(|draw| draw.literals(node)) {
             quantity.si = *drawn;
         }
-        fits(self.field, &self.expect, self.unit.as_ref(), &quantity)
+        fits(self.field, self.expect, self.unit.as_ref(), &quantity)
             .map_err(|fault| fault.in_item(self.item))?;
         Ok(Datum::Quantity(quantity))
     }

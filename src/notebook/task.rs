@@ -314,7 +314,7 @@ impl EntryTask {
                 if draw.is_some() {
                     quantity.si = self.expect.held(quantity.si);
                 }
-                fits(self.field, &self.expect, self.unit.as_ref(), &quantity)?;
+                fits(self.field, self.expect, self.unit.as_ref(), &quantity)?;
                 Ok(Datum::Quantity(quantity))
             }
             Outcome::Truth(truth) if self.expect == Expect::ANYTHING => Ok(Datum::Truth(truth)),
@@ -355,7 +355,7 @@ impl EntryTask {
 /// Says what is wrong with a quantity for its field.
 pub(super) fn fits(
     field: &'static str,
-    expect: &Expect,
+    expect: Expect,
     unit: Option<&Unit>,
     quantity: &Quantity,
 ) -> Result<(), Diagnostic> {
@@ -370,7 +370,7 @@ pub(super) fn fits(
                 .with_hint("differences of temperature are shown in K"),
         );
     }
-    if *expect == Expect::TEMPERATURE && quantity.sense == Sense::Difference {
+    if expect == Expect::TEMPERATURE && quantity.sense == Sense::Difference {
         return Err(Diagnostic::of_field(
             field,
             "difference-for-temperature",

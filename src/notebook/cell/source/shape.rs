@@ -328,7 +328,10 @@ fn of_vessel(error: physics::Error) -> Diagnostic {
     use physics::Error;
     let field = match error {
         Error::NotConvex { .. } => "vertices",
-        Error::OutOfRange { parameter, .. } if parameter == "freeboard" => "freeboard",
+        Error::OutOfRange {
+            parameter: "freeboard",
+            ..
+        } => "freeboard",
         _ => "vessel_tilt",
     };
     Diagnostic::of_field(field, "no-such-vessel", error.to_string())
