@@ -76,7 +76,7 @@ pub fn text() -> String {
                 }
             })
             .collect();
-        paragraph(&format!("**Fields of a {kind}:**"), &listed(&fields));
+        paragraph(&format!("**Fields, {kind}:**"), &listed(&fields));
     }
     text.push_str(&wrapped("", &words(
         "A field in bold must be there; one with `=` counts as what stands behind it if left out. \

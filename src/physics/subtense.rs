@@ -63,9 +63,10 @@ impl Subtense {
 /// Discs, spheres, polygons and plates exactly, to `1e-13` of a radian. The end
 /// faces of a cylinder count as polygons of 96 sides drawn about their circles,
 /// so that an angle is never less than the truth and the part of it that the
-/// radius makes is greater by `6e-4` at most. The greatest angle of a polygon is that between two of its
-/// corners, or the smallest if that is more; above a right angle, where every
-/// limit has long been clipped, other points of it may lie farther apart.
+/// radius makes is greater by `6e-4` at most. The greatest angle of a polygon is
+/// that between two of its corners, or the smallest if that is more; above a
+/// right angle, where every limit has long been clipped, other points of it may
+/// lie farther apart.
 ///
 /// # Source
 ///

@@ -378,7 +378,7 @@ fn table() -> Vec<Bad> {
         entry(
             "the root of a negative number",
             "sqrt(-1)",
-            &["character 1", "`sqrt`", "check the sign"],
+            &["character 6", "`sqrt`", "check the sign"],
         ),
         entry(
             "a chain of powers",

@@ -9,5 +9,6 @@ mod bad_input;
 mod calc_json;
 mod commands;
 mod layers;
+mod materials;
 mod notebook_files;
 mod pdf_read_back;
