@@ -11,7 +11,7 @@ use crate::physics::view_factor::contour::Circle;
 use crate::physics::visibility::Outline;
 
 /// How many corners stand for a curve that is neither straight nor an arc.
-const CORNERS: u32 = 240;
+const CORNERS: f64 = 360.0;
 
 /// Returns the outline of what lies left of the line in which the plane of a
 /// flat occluder meets another plane, as seen from a point: the side in front
@@ -46,9 +46,6 @@ pub(super) fn front_of_flat(occluder: &Solid, plane: Plane, point: DVec3) -> Opt
 /// Cut square it keeps its exact outline; of any other cut the edge is an
 /// ellipse, and the whole becomes a polygon of equal area.
 pub(super) fn front_of_cylinder(occluder: &Solid, plane: Plane, point: DVec3) -> Option<Outline> {
-    let step = TAU / f64::from(CORNERS);
-    let even = (step / step.sin()).sqrt();
-    let mut places: Vec<DVec3> = Vec::new();
     let Region::Cylinder { base, axis, radius } = &occluder.region else {
         return None;
     };
@@ -58,16 +55,36 @@ pub(super) fn front_of_cylinder(occluder: &Solid, plane: Plane, point: DVec3) ->
             .and_then(|solid| solid.outline(point))
             .map(|(outline, _)| outline);
     }
-    let (right, up) = along.any_orthonormal_pair();
-    for corner in 0..CORNERS {
-        let angle = f64::from(corner) * step;
-        let off = (right * angle.cos() + up * angle.sin()) * (radius * even);
+    let mut places: Vec<DVec3> = Vec::new();
+    let mut generator = |off: DVec3| {
         let (low, high) = (*base + off, *base + off + *axis);
         let (start, end) = (plane.height(low), plane.height(high));
         places.extend((start >= 0.0).then_some(low));
         places.extend((end >= 0.0).then_some(high));
         if (start >= 0.0) != (end >= 0.0) {
             places.push(low + *axis * (start / (start - end)));
+        }
+    };
+    // From one tangent point to the other, in front and behind: the generators
+    // of the silhouette stay exact, between them areas do.
+    let across = (point - *base).reject_from_normalized(along);
+    let towards = across.normalize_or(along.any_orthonormal_vector());
+    let beside = along.cross(towards);
+    let half = (radius / across.length().max(*radius)).acos();
+    for (start, turn) in [(-half, 2.0 * half), (half, TAU - 2.0 * half)] {
+        let count = (turn / TAU * CORNERS).ceil().max(1.0);
+        let step = turn / count;
+        let even = (step / step.sin().max(f64::MIN_POSITIVE)).sqrt();
+        let mut corner = 0.0;
+        while corner < count {
+            let (sine, cosine) = (start + corner * step).sin_cos();
+            let radius = if corner == 0.0 {
+                *radius
+            } else {
+                radius * even
+            };
+            generator((towards * cosine + beside * sine) * radius);
+            corner += 1.0;
         }
     }
     // Where the rims themselves pass the plane.

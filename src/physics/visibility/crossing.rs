@@ -25,7 +25,11 @@ pub(super) fn find(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
     common.touches.clear();
     common.shared = false;
     match (one, other) {
-        (Edge::Straight { .. }, Edge::Straight { .. }) => straight(one, other, hair, common),
+        (Edge::Straight { .. }, Edge::Straight { .. }) => {
+            if straight(one, other, hair, common) {
+                return;
+            }
+        }
         (Edge::Straight { from, to, .. }, Edge::Round { rim, .. }) => {
             mixed(*from, *to, rim, hair, common);
         }
@@ -53,7 +57,8 @@ pub(super) fn find(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
     }
 }
 
-fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
+/// Two straight edges; true if what was found needs no second look.
+fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) -> bool {
     let (
         Edge::Straight {
             from: a,
@@ -65,10 +70,11 @@ fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
             to: d,
             inward: second,
         },
-    ) = (*one, *other)
+    ) = (one, other)
     else {
-        return;
+        return true;
     };
+    let (a, b, c, d) = (*a, *b, *c, *d);
     let side = |height: f64| {
         if height.abs() <= hair {
             0.0
@@ -79,23 +85,29 @@ fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
     let (high_c, high_d) = (first.dot(c), first.dot(d));
     let (side_c, side_d) = (side(high_c), side(high_d));
     if side_c * side_d > 0.0 {
-        return;
+        return true;
     }
     let (high_a, high_b) = (second.dot(a), second.dot(b));
     let (side_a, side_b) = (side(high_a), side(high_b));
     if side_a * side_b > 0.0 {
-        return;
+        return true;
     }
-    let near = [(a, side_a), (b, side_b), (c, side_c), (d, side_d)];
-    let on = near.iter().filter(|(_, side)| *side == 0.0);
-    common.places.extend(on.map(|(place, _)| *place));
+    for (place, side) in [(a, side_a), (b, side_b), (c, side_c), (d, side_d)] {
+        if side == 0.0 {
+            common.places.push(place);
+        }
+    }
     match common.places.len() {
         0 => {
+            // Each passes between the other's ends, if not on the far side.
             let place = c * high_d.abs() + d * high_c.abs();
-            common.places.push(place.normalize_or(c));
+            if place.dot(a + b) > 0.0 {
+                common.places.push(place.normalize_or(c));
+            }
+            true
         }
         // An end of one on the other: that end is the crossing.
-        1 => {}
+        1 => false,
         // Two ends near the other edge: along it, unless they are one corner
         // or lie beyond its ends.
         _ => {
@@ -107,6 +119,7 @@ fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
                 .places
                 .iter()
                 .any(|place| place.distance(first) > 4.0 * hair);
+            false
         }
     }
 }
