@@ -2,12 +2,11 @@
 
 use crate::rows::{self, Row, Work};
 use crate::{
-    blackbody_tables, cavities, defining_constants, fixed_points, quadrature_of_planck, shields,
-    shop_air, textbook_examples, thick_openings, view_factor_catalogue,
+    blackbody_tables, cavities, defining_constants, fixed_points, quadrature_of_planck, shields, shop_air, textbook_examples, thick_openings, view_factor_catalogue,
 };
 
 /// The families that run, with what works their rows out.
-const RUNNING: [(&str, Work); 41] = [
+const RUNNING: [(&str, Work); 42] = [
     ("constant", defining_constants::constant),
     ("its90", fixed_points::celsius),
     ("bb_table_modest", blackbody_tables::below),
@@ -70,6 +69,7 @@ const RUNNING: [(&str, Work); 41] = [
     ("cavity_exact", cavities::exact),
     ("cavity_enclosure", cavities::enclosure),
     ("cavity_gouffe", cavities::gouffe),
+    ("cylinder", view_factor_catalogue::cylinder),
 ];
 
 /// Worked examples of textbooks, whichever relation they are of.
@@ -78,7 +78,7 @@ fn textbook(row: &Row) -> Option<f64> {
 }
 
 /// Rows, or whole families, that the program cannot work out yet.
-const PENDING: [(&str, &str); 9] = [
+const PENDING: [(&str, &str); 8] = [
     (
         "its90-01",
         "a defining point, nothing to work out: for the list of process temperatures",
@@ -103,7 +103,6 @@ const PENDING: [(&str, &str); 9] = [
         "textbook-03",
         "exchange between cylinder and slotted shell: no such source",
     ),
-    ("cylinder", "cylinders as sources come later"),
     (
         "uncertainty",
         "spread of results is the notebook's: checked with it",
