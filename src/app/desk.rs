@@ -42,7 +42,7 @@ enum Stored {
     /// There never was one.
     Never,
     /// This.
-    Holds(Notebook),
+    Holds(Box<Notebook>),
     /// Nothing: it is gone, or somebody else's.
     Lost,
 }
@@ -144,7 +144,7 @@ impl Desk {
             source,
         })?;
         let mut desk = Desk::new(stored.notebook)?;
-        desk.stored = Stored::Holds(desk.engine.notebook().clone());
+        desk.stored = Stored::Holds(Box::new(desk.engine.notebook().clone()));
         desk.file = Some(path.to_owned());
         desk.stamp = stamp;
         Ok(desk)
@@ -172,7 +172,7 @@ impl Desk {
     pub fn save(&mut self, path: &Path, writer: Writer) -> Result<(), Error> {
         let text = schema::write(self.engine.notebook());
         writer(path, text.as_bytes())?;
-        self.stored = Stored::Holds(self.engine.notebook().clone());
+        self.stored = Stored::Holds(Box::new(self.engine.notebook().clone()));
         self.file = Some(path.to_owned());
         self.stamp = Stamp::of(path, text.as_bytes());
         self.dirty = false;
@@ -309,7 +309,7 @@ impl Desk {
     fn changed(&mut self, heads: bool) {
         let notebook = self.engine.notebook();
         self.dirty = match &self.stored {
-            Stored::Holds(stored) => stored != notebook,
+            Stored::Holds(stored) => **stored != *notebook,
             Stored::Never => self.history.next_undo().is_some(),
             Stored::Lost => true,
         };

@@ -112,12 +112,12 @@ impl Widget<Message, Theme, Renderer> for Line {
                     shell.capture_event();
                 }
             }
-            Event::Mouse(mouse::Event::ButtonReleased(mouse::Button::Left)) => {
-                if state.held.take().is_some() {
-                    shell.publish(Message::Dropped);
-                    shell.capture_event();
-                    shell.request_redraw();
-                }
+            Event::Mouse(mouse::Event::ButtonReleased(mouse::Button::Left))
+                if state.held.take().is_some() =>
+            {
+                shell.publish(Message::Dropped);
+                shell.capture_event();
+                shell.request_redraw();
             }
             _ => {}
         }

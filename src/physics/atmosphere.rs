@@ -148,8 +148,8 @@ const WAYNE_TOP: f64 = -0.011_71 / (2.0 * 0.023_68);
 /// # Source
 ///
 /// Wayne (1991), *J. Loss Prev. Process Ind.* 4, 86: τ = 1.006 − 0.01171 lg X −
-/// 0.02368 lg² X − 0.03188 lg Y + 0.001164 lg² Y, X = φ x p_s[mmHg]
-/// 288.651/T, Y = 273 x/T; from memory. Checked in
+/// 0.02368 lg² X − 0.03188 lg Y + 0.001164 lg² Y, X = φ x p_s
+/// 288.651/T with p_s in mmHg, Y = 273 x/T; from memory. Checked in
 /// `tests/published/shop_air.rs`.
 pub fn wayne(humidity: f64, temperature: f64, path: f64) -> Result<Transmitted, Error> {
     let humidity = checked_humidity(humidity)?;

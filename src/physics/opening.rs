@@ -55,12 +55,15 @@ impl Opening {
     /// # Accuracy
     ///
     /// What is seen of the parts together, times their exitances, is that of
-    /// the smooth exitance of the walls to `1e-4` of the unhidden outer outline
-    /// in a far beam and better on the axis; the zones meet at the points of a
-    /// Gauss rule for that. Round walls have that exitance; the walls of other
-    /// outlines differ round the outline, and are taken at their mean: what is
-    /// seen of a rectangle with sides up to 1:20 may be off by `2e-3` of the
-    /// unhidden outline near the hole and far off its axis.
+    /// the smooth exitance of the walls, in shares of what the unhidden outline
+    /// would send to a receiver that faces along its axis: to `1e-4`, for walls
+    /// deeper than four openings to `2e-4`; zones meet at the points of a Gauss
+    /// rule for that. Round walls have that exitance exactly. Walls of other
+    /// outlines differ round the outline and are taken at their mean: of a
+    /// rectangle, held against walls worked out face by face, what is seen is
+    /// off by up to `1e-3` of the unhidden outline, and by up to `2e-3` within
+    /// a width of the hole or more than 60° off its axis. Of other polygons
+    /// that was not worked out.
     ///
     /// # Errors
     ///

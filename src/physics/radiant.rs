@@ -2,7 +2,7 @@
 //!
 //! Kelvin and W/m². The room is black and of one temperature wherever no source
 //! or hot screen is seen. `views` and `exitances` are parallel, as in
-//! [`exposure`](super::exposure): what is seen of each, and its exitance at all
+//! [`exposure`]: what is seen of each, and its exitance at all
 //! wavelengths; one that is not above zero counts as a body at absolute zero.
 
 use std::f64::consts::PI;

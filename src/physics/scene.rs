@@ -7,8 +7,11 @@
 mod clip;
 mod look;
 mod looked;
+mod mouth;
 mod relation;
 mod solid;
+#[cfg(test)]
+mod tests;
 
 use super::Error;
 use super::region::Region;

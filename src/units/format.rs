@@ -278,7 +278,7 @@ pub fn safe_feet(si: f64) -> String {
     let sign = if halves < 0.0 { "−" } else { "" };
     // Whole and below 1e15, so the casts keep every digit.
     let halves = halves.abs() as u64;
-    let place = if halves % 2 == 0 { 0 } else { 5 };
+    let place = if halves.is_multiple_of(2) { 0 } else { 5 };
     format!("{sign}{}.{place} ft", grouped(&(halves / 2).to_string()))
 }
 

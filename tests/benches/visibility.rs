@@ -54,17 +54,17 @@ fn plates(mixed: bool) -> Vec<Barrier> {
         Region::rectangle(DVec3::new(x, y, z), normal, DVec3::Z, wide, high).expect("a plate")
     };
     let mut regions = vec![
-        plate(-0.2, 2.0, 1.1, 0.8, 0.9, 0.0),
-        plate(0.2, 2.4, 1.5, 0.7, 0.5, 0.3),
-        plate(-0.5, 1.8, 1.4, 0.9, 0.4, -0.2),
+        plate(-0.2, 2.0, 1.2, 0.3, 0.5, 0.0),
+        plate(-0.1, 2.4, 1.5, 0.4, 0.3, 0.3),
+        plate(-0.45, 1.8, 1.45, 0.5, 0.2, -0.2),
     ];
     regions.extend((0..7_u32).map(|index| {
         let side = if index % 2 == 0 { 1.0 } else { -1.0 };
         plate(side * (4.0 + f64::from(index)), 6.0, 1.0, 1.0, 2.0, side)
     }));
     if mixed {
-        regions[1] = Region::disc(DVec3::new(0.2, 2.4, 1.5), DVec3::Y, 0.3).expect("a disc");
-        regions[2] = Region::cylinder(DVec3::new(-0.4, 1.8, 0.0), DVec3::Z * 1.9, 0.15)
+        regions[1] = Region::disc(DVec3::new(-0.1, 2.4, 1.5), DVec3::Y, 0.2).expect("a disc");
+        regions[2] = Region::cylinder(DVec3::new(-0.45, 1.8, 0.0), DVec3::Z * 1.9, 0.15)
             .expect("a column");
         regions[3] = Region::sphere(DVec3::new(0.6, 2.0, 1.3), 0.2).expect("a ball");
     }

@@ -72,7 +72,7 @@ impl Glass {
             let _ = glass.window.update(message);
         }
         glass.key();
-        glass.frame();
+        let _ = glass.frame();
         glass
     }
 

@@ -8,12 +8,12 @@ use farglow::physics::opening::tunnel::Tunnel;
 use farglow::physics::opening::{Opening, Walls};
 use farglow::physics::pool::{Pool, stream};
 use farglow::physics::region::Region;
-use farglow::physics::scene::{Part, Scene};
+use farglow::physics::scene::{Barrier, Part, Scene};
 use farglow::physics::view_factor::{disc, rectangle};
 use glam::DVec3;
 use proptest::prelude::*;
 
-use crate::view_factor_laws::config;
+use crate::view_factor_laws::{config, heading};
 
 /// The factors of the parts of a scene, one each.
 fn factors(parts: &[Part], point: DVec3, normal: DVec3) -> Vec<f64> {
@@ -156,6 +156,41 @@ proptest! {
             (found - expected).abs() < 1.5e-3 * plain,
             "{} against {}, of {} through a thin wall", found, expected, plain
         );
+    }
+
+    #[test]
+    fn a_speck_before_the_mouth_changes_nothing(
+        point in before(),
+        depth in 0.05..6.0_f64,
+        normal in heading(),
+        shape in 0..3_u8,
+    ) {
+        // With the speck each part goes the general way, without it the short one.
+        let outer = match shape {
+            0 => Region::disc(DVec3::ZERO, DVec3::Y, 1.0),
+            1 => Region::rectangle(DVec3::ZERO, DVec3::Y, DVec3::Z, 1.7, 1.0),
+            _ => Region::outline(
+                DVec3::ZERO,
+                DVec3::Y,
+                DVec3::Z,
+                &[[-1.0, -0.6], [1.1, -0.5], [0.7, 0.8], [-0.4, 0.9]],
+            ),
+        };
+        let opening = Opening::new(outer.expect("an outline"), depth, Walls::Reradiating)
+            .expect("a possible wall");
+        let alone = factors(opening.parts(), point, normal);
+        let speck = Region::disc(point * 0.5, DVec3::Y, 1e-7).expect("a speck");
+        let scene = Scene::new(opening.parts().to_vec(), vec![Barrier::solid(speck)])
+            .expect("a possible scene");
+        let looked = scene.look(point);
+        for (part, expected) in alone.iter().enumerate() {
+            let glimpses = looked.of(part).iter();
+            let found: f64 = glimpses.map(|glimpse| glimpse.view.factor(normal)).sum();
+            prop_assert!(
+                (found - expected).abs() < 1e-11,
+                "part {}: {} with a speck, {} without", part, found, expected
+            );
+        }
     }
 
     #[test]

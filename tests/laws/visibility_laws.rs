@@ -2,13 +2,14 @@
 
 use std::f64::consts::{PI, TAU};
 
+use farglow::physics::exposure;
 use farglow::physics::region::Region;
-use farglow::physics::scene::{Barrier, Looked, Part, Scene, Stance};
+use farglow::physics::scene::{Barrier, Looked, Part, Scene};
 use farglow::physics::view::View;
 use glam::{DQuat, DVec2, DVec3};
 use proptest::prelude::*;
 
-use crate::view_factor_laws::{config, place, region, turned};
+use crate::view_factor_laws::{config, heading, place, region, turned};
 
 /// Where a ray from the origin of `way` first meets a region, as a share of the
 /// way: written for this check alone, by the textbook relations.
@@ -205,14 +206,19 @@ fn edges(parts: &[Part], barriers: &[Barrier], from: DVec3) -> Vec<Vec<DVec3>> {
     ways
 }
 
+/// What lies below the receiver's horizon is marked by this in place of a barrier.
+const BELOW: u16 = u16::MAX;
+
 /// The flux vectors of what is seen of a part by itself, by scanning: lines
 /// across the cone round it, on each the places where what is seen changes, as
-/// closed in on by rays, and Gauss in between.
+/// closed in on by rays, and Gauss in between. What lies above the horizon of
+/// `normal` and what lies below it are told apart.
 fn scanned(
     parts: &[Part],
     barriers: &[Barrier],
     part: usize,
     from: DVec3,
+    normal: DVec3,
     lines: u32,
 ) -> Vec<(Vec<u16>, DVec3)> {
     let region = &parts[part].region;
@@ -222,7 +228,14 @@ fn scanned(
         let sine = region.bounding_radius() / region.centre().distance(from);
         1.001 * sine / (1.0 - sine * sine).sqrt()
     };
-    let seen = |x: f64, y: f64| is_seen(parts, barriers, part, from, axis + right * x + up * y);
+    let seen = |x: f64, y: f64| {
+        let way = axis + right * x + up * y;
+        let mut through = is_seen(parts, barriers, part, from, way)?;
+        if way.dot(normal) < 0.0 {
+            through.push(BELOW);
+        }
+        Some(through)
+    };
     let mut curves: Vec<[DVec2; 2]> = Vec::new();
     for way in edges(parts, barriers, from) {
         for pair in way.windows(2) {
@@ -249,6 +262,9 @@ fn scanned(
             .map(|[a, b]| a.y + (b.y - a.y) * (x - a.x) / (b.x - a.x))
             .filter(|y| y.abs() < reach)
             .collect();
+        stops.push(
+            (-(normal.dot(axis) + x * normal.dot(right)) / normal.dot(up)).clamp(-reach, reach),
+        );
         stops.extend((0..=40_u32).map(|stop| reach * (f64::from(stop) / 20.0 - 1.0)));
         stops.sort_by(f64::total_cmp);
         // Where what is seen changes, and what is seen from there on.
@@ -382,7 +398,7 @@ proptest! {
     #![proptest_config(config(60))]
 
     #[test]
-    fn what_is_seen_agrees_with_rays((parts, barriers, point) in scene()) {
+    fn what_is_seen_agrees_with_rays((parts, barriers, point) in scene(), normal in heading()) {
         let Ok(scene) = Scene::new(parts.clone(), barriers.clone()) else { return Ok(()) };
         let looked = scene.look(point);
         prop_assume!(looked.touched_barrier().is_none() && looked.touched().is_none());
@@ -390,27 +406,98 @@ proptest! {
         let region = &parts[0].region;
         prop_assume!(region.centre().distance(point) > 1.3 * region.bounding_radius());
         prop_assume!(view.flux().length() > 1e-4);
-        let whole = view.flux().length();
-        // As many lines as it takes to tell.
-        let mut worst = (f64::INFINITY, String::new());
-        for lines in [600, 2400, 9600, 38_400] {
-            worst = (0.0, String::new());
-            let expected = scanned(&parts, &barriers, 0, point, lines);
-            let unseen = looked.of(0).iter().map(|glimpse| (glimpse.through.to_vec(), DVec3::ZERO));
-            for (through, sum) in expected.iter().cloned().chain(unseen.filter(|(through, _)| expected.iter().all(|(other, _)| other != through))) {
-                let found: DVec3 = looked.of(0).iter().filter(|glimpse| *glimpse.through == *through).map(|glimpse| glimpse.view.flux()).sum();
-                let error = (found - sum).length() / whole;
-                if error > worst.0 {
-                    worst = (error, format!("{found} against {sum} by {lines} lines of rays, through {through:?}"));
-                }
+        agrees_with_rays(&parts, &barriers, point, normal, &looked, view.flux().length())?;
+    }
+
+    #[test]
+    fn what_is_seen_through_a_mouth_agrees_with_rays(
+        base in region(), depth in 0.05..1.0_f64, deeper in 0.05..1.0_f64, narrow in 0.4..1.0_f64, wall in any::<bool>(),
+        point in place(), normal in heading(), barriers in proptest::collection::vec(region(), 0..3), shares in proptest::collection::vec(0.2..0.7_f64, 3),
+    ) {
+        let Some(own) = base.normal() else { return Ok(()) };
+        prop_assume!(!matches!(base, Region::Plate { .. }));
+        // The mouth in front, and behind it a smaller outline that is left out.
+        let size = base.bounding_radius();
+        let mouth = turned(&base, DQuat::IDENTITY, own * (depth * size));
+        let less = match &base {
+            Region::Disc { centre, normal, radius } => Region::disc(*centre - own * (deeper * size), *normal, radius * narrow),
+            other => {
+                let Region::Polygon { vertices, .. } = other else { return Ok(()) };
+                let centre = base.centre();
+                Region::polygon(vertices.iter().map(|vertex| centre + (*vertex - centre) * narrow - own * (deeper * size)).collect())
             }
-            if worst.0 <= 1e-5 {
-                break;
+        };
+        let less = less.expect("smaller and farther back");
+        let part = Part { region: base.clone(), through: Some(mouth.clone()), less: wall.then_some(less) };
+        let point = if (point - base.centre()).dot(own) < 0.0 { point - own * (2.0 * (point - base.centre()).dot(own)) } else { point };
+        prop_assume!(base.centre().distance(point) > 1.3 * size && (point - mouth.centre()).dot(own) > 0.05);
+        // Barriers in front of the mouth: within it they would hide the wall.
+        let barriers: Vec<Barrier> = between(&mouth, point, barriers, &shares).into_iter()
+            .filter(|barrier| (barrier.centre() - mouth.centre()).dot(own) > barrier.bounding_radius())
+            .map(Barrier::solid).collect();
+        let view = alone(&base, point).expect("in front of it");
+        prop_assume!(view.flux().length() > 1e-4);
+        let parts = vec![part];
+        let scene = Scene::new(parts.clone(), barriers.clone()).expect("flat parts overlap nothing");
+        let looked = scene.look(point);
+        agrees_with_rays(&parts, &barriers, point, normal, &looked, view.flux().length())?;
+    }
+}
+
+/// Holds the glimpses of the first part against scans of rays, above and below
+/// a horizon, to 1e-5 of the unobstructed factor.
+fn agrees_with_rays(
+    parts: &[Part],
+    barriers: &[Barrier],
+    point: DVec3,
+    normal: DVec3,
+    looked: &Looked,
+    whole: f64,
+) -> Result<(), TestCaseError> {
+    // As many lines as it takes to tell.
+    let mut worst = (f64::INFINITY, String::new());
+    for lines in [600, 2400, 9600, 38_400] {
+        worst = (0.0, String::new());
+        let expected = scanned(parts, barriers, 0, point, normal, lines);
+        let mut known: Vec<Vec<u16>> = expected
+            .iter()
+            .map(|(through, _)| through.clone())
+            .collect();
+        for glimpse in looked.of(0) {
+            known.push(glimpse.through.to_vec());
+            known.push(glimpse.through.iter().copied().chain([BELOW]).collect());
+        }
+        for through in known {
+            let sum = expected
+                .iter()
+                .find(|(other, _)| *other == through)
+                .map_or(DVec3::ZERO, |(_, sum)| *sum);
+            let below = through.last() == Some(&BELOW);
+            let named = &through[..through.len() - usize::from(below)];
+            let found: DVec3 = looked
+                .of(0)
+                .iter()
+                .filter(|glimpse| *glimpse.through == *named)
+                .map(|glimpse| {
+                    glimpse
+                        .view
+                        .clipped_flux(if below { -normal } else { normal })
+                })
+                .sum();
+            let error = (found - sum).length() / whole;
+            if error > worst.0 {
+                worst = (
+                    error,
+                    format!("{found} against {sum} by {lines} lines of rays, through {through:?}"),
+                );
             }
         }
-        prop_assert!(worst.0 <= 1e-5, "{}: {} of {whole}", worst.1, worst.0);
-        prop_assert!(looked.stance(0) == Stance::InFront || looked.of(0).is_empty());
+        if worst.0 <= 1e-5 {
+            break;
+        }
     }
+    prop_assert!(worst.0 <= 1e-5, "{}: {} of {whole}", worst.1, worst.0);
+    Ok(())
 }
 
 /// Regions on a lattice, as people draw them: edges in line, in one plane, end
@@ -475,4 +562,177 @@ proptest! {
         let (here, there) = (flux(&here, 0), flux(&there, 0));
         prop_assert!((here - there).length() <= 1e-6, "{here} against {there} a hair off");
     }
+}
+
+proptest! {
+    #![proptest_config(config(1500))]
+
+    #[test]
+    fn every_glimpse_gives_a_factor_between_zero_and_one((parts, barriers, point) in scene(), normal in heading()) {
+        let Ok(scene) = Scene::new(parts, barriers) else { return Ok(()) };
+        let looked = scene.look(point);
+        let mut sum = 0.0;
+        for glimpse in looked.glimpses() {
+            let raw = glimpse.view.clipped_flux(normal).dot(normal);
+            prop_assert!((-1e-12..=1.0 + 1e-12).contains(&raw), "{raw}");
+            let (front, back, net) = (glimpse.view.factor(normal), glimpse.view.factor(-normal), glimpse.view.flux().dot(normal));
+            prop_assert!((front - back - net).abs() < 1e-12, "{front} - {back} against {net}");
+            let angle = glimpse.view.solid_angle();
+            prop_assert!(front <= angle / PI + 1e-9 && angle <= TAU, "{front} of {angle} sr");
+            if glimpse.part == 0 {
+                sum += front;
+            }
+        }
+        prop_assert!(sum <= 1.0 + 1e-12, "{sum}");
+    }
+
+    #[test]
+    fn a_screen_never_raises_a_sources_own_contribution((parts, barriers, point) in scene(), normal in heading()) {
+        let bare_parts = parts[..1].to_vec();
+        let (Ok(open), Ok(scene)) = (Scene::new(bare_parts, Vec::new()), Scene::new(parts, barriers)) else { return Ok(()) };
+        let factor = |looked: &Looked| -> f64 { looked.of(0).iter().map(|glimpse| glimpse.view.factor(normal)).sum() };
+        let (all, left) = (factor(&open.look(point)), factor(&scene.look(point)));
+        prop_assert!(left <= all + 1e-12, "{left} behind the screens, {all} without");
+    }
+
+    #[test]
+    fn a_source_that_hides_nothing_lowers_no_position((parts, barriers, point) in scene(), more in region(), normal in heading()) {
+        if !matches!(more, Region::Disc { .. } | Region::Polygon { .. }) {
+            return Ok(());
+        }
+        let mut others = parts.clone();
+        others.push(Part::bare(more));
+        let (Ok(before), Ok(after)) = (Scene::new(parts, barriers.clone()), Scene::new(others, barriers)) else { return Ok(()) };
+        let sum = |looked: &Looked| -> f64 { looked.glimpses().iter().map(|glimpse| glimpse.view.factor(normal)).sum() };
+        let (before, after) = (sum(&before.look(point)), sum(&after.look(point)));
+        prop_assert!(after >= before - 1e-13, "{after} with it, {before} without");
+    }
+
+    #[test]
+    fn turning_and_moving_a_scene_changes_nothing((parts, barriers, point) in scene(), axis in heading(), angle in 0.0..TAU, shift in place()) {
+        let turn = DQuat::from_axis_angle(axis, angle);
+        let moved = |region: &Region| turned(region, turn, shift);
+        let there_parts: Vec<Part> = parts.iter().map(|part| Part::bare(moved(&part.region))).collect();
+        let there_barriers: Vec<Barrier> = barriers.iter().map(|barrier| Barrier { region: moved(&barrier.region), clear: barrier.clear }).collect();
+        let mut regions = parts.iter().map(|part| &part.region).chain(barriers.iter().map(|barrier| &barrier.region));
+        let bars = regions.any(|region| matches!(region, Region::Cylinder { .. }));
+        let (Ok(here), Ok(there)) = (Scene::new(parts.clone(), barriers.clone()), Scene::new(there_parts, there_barriers)) else { return Ok(()) };
+        let (here, there) = (here.look(point), there.look(turn * point + shift));
+        // A cylinder that pierces a flat source is cut there along a polygon,
+        // whose corners turn otherwise.
+        let slack = if bars { 1e-7 } else { 1e-10 };
+        for part in 0..here.glimpses().iter().map(|glimpse| glimpse.part + 1).max().unwrap_or(0) {
+            let (one, other) = (turn * flux(&here, part), flux(&there, part));
+            prop_assert!((one - other).length() < slack, "{one} against {other}");
+        }
+    }
+
+    #[test]
+    fn parts_of_a_split_source_add_up_behind_screens((parts, barriers, point) in scene(), share in 0.1..0.9_f64) {
+        let Region::Polygon { vertices, .. } = &parts[0].region else { return Ok(()) };
+        if vertices.len() != 4 {
+            return Ok(());
+        }
+        let (top, bottom) = (vertices[3].lerp(vertices[2], share), vertices[0].lerp(vertices[1], share));
+        let halves = [vec![vertices[0], bottom, top, vertices[3]], vec![bottom, vertices[1], vertices[2], top]];
+        let split: Vec<Region> = halves.into_iter().map(|half| Region::polygon(half).expect("half a rectangle")).collect();
+        let mut others = bare(&split);
+        others.extend(parts[1..].to_vec());
+        let (Ok(whole), Ok(split)) = (Scene::new(parts, barriers.clone()), Scene::new(others, barriers.clone())) else { return Ok(()) };
+        // As above; and a bar may pierce the whole, but one half only.
+        let bars = barriers.iter().any(|barrier| matches!(barrier.region, Region::Cylinder { .. }));
+        let slack = if bars { 1e-7 } else { 1e-12 };
+        let (whole, split) = (whole.look(point), split.look(point));
+        let (all, sum) = (flux(&whole, 0), flux(&split, 0) + flux(&split, 1));
+        prop_assert!((all - sum).length() < slack, "{all} against {sum}");
+    }
+
+    #[test]
+    fn no_orientation_beats_the_strongest_behind_screens((parts, barriers, point) in scene(), tries in proptest::collection::vec(heading(), 20), weights in proptest::collection::vec(0.1..10.0_f64, 4)) {
+        let Ok(scene) = Scene::new(parts, barriers) else { return Ok(()) };
+        let looked = scene.look(point);
+        let views: Vec<View> = looked.glimpses().iter().map(|glimpse| glimpse.view.clone()).collect();
+        let weights: Vec<f64> = looked.glimpses().iter().map(|glimpse| weights[glimpse.part % 4]).collect();
+        let (found, normal) = exposure::strongest(&views, &weights);
+        let here = exposure::facing(&views, &weights, normal);
+        prop_assert!((found - here).abs() <= 1e-12 * found.max(1.0), "said {found}, is {here}");
+        for normal in tries {
+            let tried = exposure::facing(&views, &weights, normal);
+            prop_assert!(tried <= found * (1.0 + 1e-12) + 1e-13, "{tried} above {found}");
+        }
+    }
+
+    #[test]
+    fn no_scene_whatever_gives_a_nan((parts, barriers, point) in scene(), scale in -6..7_i32, far in -3..12_i32, normal in heading()) {
+        let size = 10_f64.powi(scale);
+        let sized = |region: &Region| match region {
+            Region::Disc { centre, normal, radius } => Region::disc(*centre * size, *normal, radius * size),
+            Region::Polygon { vertices, .. } => Region::polygon(vertices.iter().map(|vertex| *vertex * size).collect()),
+            Region::Sphere { centre, radius } => Region::sphere(*centre * size, radius * size),
+            Region::Cylinder { base, axis, radius } => Region::cylinder(*base * size, *axis * size, radius * size),
+            Region::Plate { vertices, normal } => Ok(Region::Plate { vertices: vertices.iter().map(|vertex| *vertex * size).collect(), normal: *normal }),
+        };
+        let parts: Result<Vec<Part>, _> = parts.iter().map(|part| sized(&part.region).map(Part::bare)).collect();
+        let barriers: Result<Vec<Barrier>, _> = barriers.iter().map(|barrier| sized(&barrier.region).map(|region| Barrier { region, clear: barrier.clear })).collect();
+        let (Ok(parts), Ok(barriers)) = (parts, barriers) else { return Ok(()) };
+        let Ok(scene) = Scene::new(parts.clone(), barriers) else { return Ok(()) };
+        let near = parts[0].region.centre();
+        for point in [point * size, point * size * 10_f64.powi(far), near + normal * size * 10_f64.powi(-far), near, DVec3::splat(1e300), point * f64::NAN] {
+            let looked = scene.look(point);
+            for glimpse in looked.glimpses() {
+                let (factor, flux, angle) = (glimpse.view.factor(normal), glimpse.view.clipped_flux(normal), glimpse.view.solid_angle());
+                prop_assert!((0.0..=1.0).contains(&factor) && flux.is_finite() && angle.is_finite(), "{factor} {flux} {angle}");
+            }
+        }
+    }
+}
+
+/// What the first of two plates sends to the second and the second to the first
+/// past a screen: A₁F₁₂ = A₂F₂₁, each by a sum over points of the one.
+#[test]
+fn reciprocity_holds_past_a_screen() {
+    let first = Region::rectangle(DVec3::ZERO, DVec3::Y, DVec3::Z, 1.0, 0.8).expect("a plate");
+    let second = Region::rectangle(
+        DVec3::new(0.4, 2.0, 0.3),
+        DVec3::new(-0.2, -1.0, 0.1),
+        DVec3::Z,
+        0.7,
+        1.2,
+    )
+    .expect("a plate");
+    let screens = [
+        Region::disc(DVec3::new(0.1, 1.0, 0.2), DVec3::new(0.1, 1.0, 0.3), 0.35).expect("a disc"),
+        Region::cylinder(DVec3::new(0.6, 0.7, -1.0), DVec3::Z * 2.0, 0.1).expect("a bar"),
+    ];
+    let sent = |from: &Region, to: &Region| -> f64 {
+        let scene = Scene::new(bare(std::slice::from_ref(from)), solid(&screens))
+            .expect("clear of each other");
+        let Region::Polygon { vertices, normal } = to else {
+            panic!("a rectangle")
+        };
+        let count = 200_u32;
+        let mut sum = 0.0;
+        for row in 0..count {
+            for column in 0..count {
+                let (u, v) = (
+                    (f64::from(row) + 0.5) / f64::from(count),
+                    (f64::from(column) + 0.5) / f64::from(count),
+                );
+                let point =
+                    vertices[0] + (vertices[1] - vertices[0]) * u + (vertices[3] - vertices[0]) * v;
+                sum += scene
+                    .look(point)
+                    .of(0)
+                    .iter()
+                    .map(|glimpse| glimpse.view.factor(*normal))
+                    .sum::<f64>();
+            }
+        }
+        sum * to.area() / f64::from(count * count)
+    };
+    let (there, back) = (sent(&first, &second), sent(&second, &first));
+    assert!(
+        (there / back - 1.0).abs() < 1e-4 && there > 0.01,
+        "{there} against {back}"
+    );
 }

@@ -6,7 +6,7 @@ use crate::{
 };
 
 /// The families that run, with what works their rows out.
-const RUNNING: [(&str, Work); 41] = [
+const RUNNING: [(&str, Work); 42] = [
     ("constant", defining_constants::constant),
     ("its90", fixed_points::celsius),
     ("bb_table_modest", blackbody_tables::below),
@@ -55,10 +55,7 @@ const RUNNING: [(&str, Work); 41] = [
         view_factor_catalogue::rect_rect_perpendicular,
     ),
     ("thick_round_black", thick_openings::round_black),
-    (
-        "thick_round_reradiating",
-        thick_openings::round_reradiating,
-    ),
+    ("thick_round_reradiating", thick_openings::round_reradiating),
     ("thick_square_black", thick_openings::square_black),
     (
         "thick_square_reradiating",
@@ -72,6 +69,7 @@ const RUNNING: [(&str, Work); 41] = [
     ("cavity_exact", cavities::exact),
     ("cavity_enclosure", cavities::enclosure),
     ("cavity_gouffe", cavities::gouffe),
+    ("cylinder", view_factor_catalogue::cylinder),
 ];
 
 /// Worked examples of textbooks, whichever relation they are of.
@@ -80,7 +78,7 @@ fn textbook(row: &Row) -> Option<f64> {
 }
 
 /// Rows, or whole families, that the program cannot work out yet.
-const PENDING: [(&str, &str); 9] = [
+const PENDING: [(&str, &str); 8] = [
     (
         "its90-01",
         "a defining point, nothing to work out: for the list of process temperatures",
@@ -105,7 +103,6 @@ const PENDING: [(&str, &str); 9] = [
         "textbook-03",
         "exchange between cylinder and slotted shell: no such source",
     ),
-    ("cylinder", "cylinders as sources come later"),
     (
         "uncertainty",
         "spread of results is the notebook's: checked with it",

@@ -16,6 +16,7 @@ mod globe;
 mod ladle_case;
 mod ladle_notebook;
 mod quadrature_of_planck;
+mod screened_scenes;
 mod shields;
 mod shop_air;
 mod textbook_examples;

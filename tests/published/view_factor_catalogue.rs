@@ -2,6 +2,7 @@
 //! quadrature (scipy, 2e-13) that agrees with the catalogue's closed forms.
 
 use farglow::physics::region::Region;
+use farglow::physics::scene::{Barrier, Part, Scene};
 use farglow::physics::view_factor::{self, disc, rectangle, sphere};
 use glam::DVec3;
 
@@ -72,6 +73,18 @@ pub fn disc_axis_tilt(row: &Row) -> Option<f64> {
     let tilt = row.number("tilt_deg").to_radians();
     let region = facing_disc(DVec3::Z, DVec3::Z, row.number("R_over_h"));
     Some(seen(&region, DVec3::new(tilt.sin(), 0.0, tilt.cos())))
+}
+
+pub fn cylinder(row: &Row) -> Option<f64> {
+    let point = DVec3::new(
+        row.number("axis_distance_m"),
+        0.0,
+        row.number("height_of_element_m"),
+    );
+    let region =
+        Region::cylinder(DVec3::ZERO, DVec3::Z * row.number("H_m"), row.number("R_m")).ok()?;
+    let view = region.view(point).into_view()?;
+    Some(view.factor(row.vector("receiver_normal")))
 }
 
 pub fn rect_parallel_corner(row: &Row) -> Option<f64> {
@@ -218,6 +231,43 @@ fn ring_is_the_difference_of_two_discs() {
         on_axis.then(|| factor.expect("a possible ring"))
     };
     assert_eq!(rows::check("ring", closed), 1);
+}
+
+/// Source: quadrature; family `ring`, as what a disc shows round a smaller one
+/// left out of it, and past a smaller one that hides it.
+#[test]
+fn ring_is_what_remains_round_a_disc() {
+    assert_eq!(rows::check("ring", |row| past(row, false)), 3);
+    assert_eq!(rows::check("ring", |row| past(row, true)), 3);
+}
+
+/// The ring as a scene: the inner disc left out, or hidden by one half as far
+/// away and half as large.
+fn past(row: &Row, hidden: bool) -> Option<f64> {
+    let (centre, axis) = (row.vector("center_m"), row.vector("axis"));
+    let outer = facing_disc(centre, axis, row.number("r_out_m"));
+    let inner = row.number("r_in_m");
+    let (part, barriers) = if hidden {
+        let near = facing_disc(centre * 0.5, axis, 0.5 * inner);
+        (Part::bare(outer), vec![Barrier::solid(near)])
+    } else {
+        let less = Some(facing_disc(centre, axis, inner));
+        let part = Part {
+            less,
+            ..Part::bare(outer)
+        };
+        (part, Vec::new())
+    };
+    let looked = Scene::new(vec![part], barriers).ok()?.look(DVec3::ZERO);
+    let normal = row.vector("receiver_normal");
+    let glimpses = looked.glimpses().iter();
+    Some(glimpses.map(|glimpse| glimpse.view.factor(normal)).sum())
+}
+
+/// Source: quadrature, and closed forms where there are any; family `cylinder`.
+#[test]
+fn cylinder_from_any_height() {
+    assert_eq!(rows::check("cylinder", cylinder), 7);
 }
 
 /// Source: catalogue, tilted element to sphere, quadrature where the horizon cuts; family `sphere_tilt`.

@@ -158,7 +158,10 @@ pub fn strip<'a>(
 ) -> Element<'a, Message> {
     let look = shared.look;
     let mut strip = column![].spacing(6);
-    if let Some(spec) = cell.kind.field(field) {
+    // Prose needs no word on what it is.
+    if let Some(spec) = cell.kind.field(field)
+        && !sentence::is_prose(cell, field)
+    {
         strip = strip.push(theme::words(
             // The marks of code say nothing on a card.
             spec.about.replace('`', ""),

@@ -39,7 +39,12 @@ fn sphere_takes_up_the_mean_over_all_normals() {
     let seen = view(&disc, DVec3::ZERO);
     let exitance = 150e3;
     let angle = 2.0 * PI * (1.0 - distance / distance.hypot(radius));
-    let found = mean_temperature_of_sphere(&[angle], &[exitance], ROOM).expect("a disc");
+    let solid_angle = seen.solid_angle();
+    assert!(
+        (solid_angle - angle).abs() < 1e-8,
+        "{solid_angle} sr against {angle} sr"
+    );
+    let found = mean_temperature_of_sphere(&[solid_angle], &[exitance], ROOM).expect("a disc");
     let (rings, steps) = (400_u32, 64_u32);
     let mut sum = 0.0;
     for ring in 0..rings {

@@ -8,7 +8,7 @@ use glam::DVec3;
 use super::looked::{Looked, Stance};
 use super::relation::Relation;
 use super::solid::{Plane, Solid};
-use super::{Occluder, Scene, Target, clip};
+use super::{Occluder, Scene, Target, clip, mouth};
 use crate::physics::region::Region;
 use crate::physics::view::loops::Loops;
 use crate::physics::view::{Sight, View};
@@ -70,7 +70,7 @@ struct Around<'a> {
     scene: &'a Scene,
     point: DVec3,
     cones: Vec<Cone>,
-    outlines: Vec<OnceCell<Option<Outline>>>,
+    outlines: Vec<OnceCell<Option<Box<Outline>>>>,
 }
 
 impl<'a> Around<'a> {
@@ -91,9 +91,11 @@ impl<'a> Around<'a> {
         self.outlines[index]
             .get_or_init(|| {
                 let solid = &self.scene.occluders[index].solid;
-                solid.outline(self.point).map(|(outline, _)| outline)
+                solid
+                    .outline(self.point)
+                    .map(|(outline, _)| Box::new(outline))
             })
-            .as_ref()
+            .as_deref()
     }
 }
 
@@ -109,10 +111,11 @@ impl Scene {
     /// Where nothing hides a part its view is that of
     /// [`Region::view`](super::region::Region::view). Else the edges that remain
     /// are exact; the factor's absolute error is below `1e-12` of the
-    /// unobstructed one. The one exception: a body that pierces the plane of a
+    /// unobstructed one. Two exceptions: a cylinder that pierces the plane of a
     /// flat part, within the part's outline and not square to it, is cut there
-    /// along a polygon of 240 sides (`1e-6`). What is all hidden is exactly
-    /// zero.
+    /// along a polygon of 360 sides (`1e-7`), and a disc or the end of a
+    /// cylinder passes for a straight edge where it fills less than `1e-7` sr.
+    /// What is all hidden is exactly zero.
     ///
     /// # Source
     ///
@@ -135,8 +138,13 @@ impl Scene {
         for target in &self.targets {
             match stance(target, point) {
                 (Stance::InFront, view) => {
-                    let glimpses = self.glimpses(target, view, &around, 0);
-                    looked.add(Stance::InFront, glimpses);
+                    let shadows = self.shadows(target, &around);
+                    if shadows.is_empty() && target.is_bare() {
+                        looked.add(Stance::InFront, [(Box::default(), view)]);
+                    } else {
+                        let glimpses = self.glimpses(target, view, &around, shadows, 0);
+                        looked.add(Stance::InFront, glimpses);
+                    }
                 }
                 (stance, _) => looked.add(stance, []),
             }
@@ -144,14 +152,34 @@ impl Scene {
         looked
     }
 
-    fn glimpses(&self, target: &Target, view: View, around: &Around<'_>, attempt: u8) -> Glimpses {
+    /// What is left of a part by its mouth, what it leaves out and shadows.
+    fn glimpses(
+        &self,
+        target: &Target,
+        view: View,
+        around: &Around<'_>,
+        shadows: Vec<Cast<'_>>,
+        attempt: u8,
+    ) -> Glimpses {
         if view == View::EMPTY {
             return Vec::new();
         }
         let point = around.point;
-        let shadows = self.shadows(target, around);
-        if shadows.is_empty() && target.through.is_none() && target.less.is_none() {
-            return vec![(Box::default(), view)];
+        if shadows.is_empty()
+            && let Some(plane) = target.solid.plane()
+            && let Some(pieces) = mouth::seen(
+                &target.solid,
+                target.through.as_ref(),
+                target.less.as_ref(),
+                point,
+            )
+        {
+            let view = View::of_loops(Loops::new(pieces.into(), -plane.normal));
+            return if view == View::EMPTY {
+                Vec::new()
+            } else {
+                vec![(Box::default(), view)]
+            };
         }
         let Some((own, axis)) = target.solid.outline(point) else {
             // A disc seen so flat that what hides it makes no odds.
@@ -263,7 +291,9 @@ impl Scene {
         let moved = point + DVec3::new(0.36, 0.48, 0.8 * sense) * step * sense;
         match stance(target, moved) {
             (Stance::InFront, view) => {
-                self.glimpses(target, view, &Around::new(self, moved), attempt + 1)
+                let around = Around::new(self, moved);
+                let shadows = self.shadows(target, &around);
+                self.glimpses(target, view, &around, shadows, attempt + 1)
             }
             _ => vec![(Box::default(), view)],
         }
@@ -345,6 +375,13 @@ impl Scene {
     }
 }
 
+impl Target {
+    /// Whether all of it belongs to it, and is seen from everywhere.
+    fn is_bare(&self) -> bool {
+        self.through.is_none() && self.less.is_none()
+    }
+}
+
 impl Occluder {
     /// The barrier's number if it is clear.
     fn clear_name(&self) -> Option<u16> {
@@ -381,12 +418,24 @@ fn cut<'a>(
                 clear,
             });
         }
-    } else if !solid.region.touches(around.point)
-        && let Some(outline) = clip::front_of_body(solid, plane, around.point)
-    {
+        return;
+    }
+    if solid.region.touches(around.point) {
+        return;
+    }
+    let halves = match &solid.region {
+        Region::Sphere { centre, radius } => {
+            clip::front_of_sphere(*centre, *radius, plane, around.point)
+        }
+        _ => clip::front_of_cylinder(solid, plane, around.point)
+            .map(|outline| (outline, None))
+            .into_iter()
+            .collect(),
+    };
+    for (outline, within) in halves {
         shadows.push(Cast {
             outline: Cow::Owned(outline),
-            within: None,
+            within,
             clear,
         });
     }

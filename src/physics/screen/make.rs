@@ -133,8 +133,9 @@ impl Make {
     /// 780–3000 nm, so that a part of that band may pass it better: IR-A counts
     /// as if all that passes lay there, or as not dimmed if that is less; the
     /// retinal weights, which reach from visible into infrared, with the better
-    /// of the two. The total is never less than the bands that make it up.
-    /// Each bound is on the safe side.
+    /// of the two. The total is never less than the bands that make it up: where
+    /// the numbers contradict each other for a source, the bands count, and of
+    /// two such filters the order. Each bound is on the safe side.
     #[must_use]
     pub fn passed(&self, emission: &Emission) -> Emission {
         match *self {

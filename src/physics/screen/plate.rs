@@ -11,6 +11,8 @@ use crate::physics::{Error, planck};
 
 /// A thin plate, or a small piece of one, between what it takes up and what it
 /// gives off.
+///
+/// Nothing is checked here: [`balance`](super::balance()) makes it of what was.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Plate {
     /// The emissivities of both faces together: 2 at most.

@@ -10,6 +10,9 @@ use super::quartic;
 pub(super) struct Common {
     /// Directions that lie on both: all crossings, and a few that are not.
     pub(super) places: Vec<DVec3>,
+    /// Directions in which they only touch. Rounding puts them anywhere on a
+    /// stretch on which the two lie within a hair of each other.
+    pub(super) touches: Vec<DVec3>,
     /// They run along each other, at least in part; the places are the ends.
     pub(super) shared: bool,
 }
@@ -19,9 +22,14 @@ pub(super) struct Common {
 /// `hair` is the angle in radians below which directions count as one.
 pub(super) fn find(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
     common.places.clear();
+    common.touches.clear();
     common.shared = false;
     match (one, other) {
-        (Edge::Straight { .. }, Edge::Straight { .. }) => straight(one, other, hair, common),
+        (Edge::Straight { .. }, Edge::Straight { .. }) => {
+            if straight(one, other, hair, common) {
+                return;
+            }
+        }
         (Edge::Straight { from, to, .. }, Edge::Round { rim, .. }) => {
             mixed(*from, *to, rim, hair, common);
         }
@@ -35,19 +43,22 @@ pub(super) fn find(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
                 let (c, d) = other.ends();
                 common.places.extend([a, b, c, d]);
             } else {
-                round(first, second, hair, &mut common.places);
+                round(first, second, hair, common);
             }
         }
     }
-    common.places.retain(|place| {
+    let on_both = |place: &DVec3| {
         one.place_of(*place, hair).is_some() && other.place_of(*place, hair).is_some()
-    });
+    };
+    common.places.retain(on_both);
+    common.touches.retain(on_both);
     if common.shared && common.places.len() < 2 {
         common.shared = false;
     }
 }
 
-fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
+/// Two straight edges; true if what was found needs no second look.
+fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) -> bool {
     let (
         Edge::Straight {
             from: a,
@@ -59,10 +70,11 @@ fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
             to: d,
             inward: second,
         },
-    ) = (*one, *other)
+    ) = (one, other)
     else {
-        return;
+        return true;
     };
+    let (a, b, c, d) = (*a, *b, *c, *d);
     let side = |height: f64| {
         if height.abs() <= hair {
             0.0
@@ -73,23 +85,29 @@ fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
     let (high_c, high_d) = (first.dot(c), first.dot(d));
     let (side_c, side_d) = (side(high_c), side(high_d));
     if side_c * side_d > 0.0 {
-        return;
+        return true;
     }
     let (high_a, high_b) = (second.dot(a), second.dot(b));
     let (side_a, side_b) = (side(high_a), side(high_b));
     if side_a * side_b > 0.0 {
-        return;
+        return true;
     }
-    let near = [(a, side_a), (b, side_b), (c, side_c), (d, side_d)];
-    let on = near.iter().filter(|(_, side)| *side == 0.0);
-    common.places.extend(on.map(|(place, _)| *place));
+    for (place, side) in [(a, side_a), (b, side_b), (c, side_c), (d, side_d)] {
+        if side == 0.0 {
+            common.places.push(place);
+        }
+    }
     match common.places.len() {
         0 => {
+            // Each passes between the other's ends, if not on the far side.
             let place = c * high_d.abs() + d * high_c.abs();
-            common.places.push(place.normalize_or(c));
+            if place.dot(a + b) > 0.0 {
+                common.places.push(place.normalize_or(c));
+            }
+            true
         }
         // An end of one on the other: that end is the crossing.
-        1 => {}
+        1 => false,
         // Two ends near the other edge: along it, unless they are one corner
         // or lie beyond its ends.
         _ => {
@@ -101,6 +119,7 @@ fn straight(one: &Edge, other: &Edge, hair: f64, common: &mut Common) {
                 .places
                 .iter()
                 .any(|place| place.distance(first) > 4.0 * hair);
+            false
         }
     }
 }
@@ -130,7 +149,12 @@ fn mixed(a: DVec3, b: DVec3, rim: &Rim, hair: f64, common: &mut Common) {
         if (-1e-9..=1.0 + 1e-9).contains(&share) {
             let place = a + (b - a) * share.clamp(0.0, 1.0);
             if rim.seen(place).0 > 0.0 {
-                common.places.push(place.normalize_or(a));
+                let found = if touches {
+                    &mut common.touches
+                } else {
+                    &mut common.places
+                };
+                found.push(place.normalize_or(a));
             }
         }
     };
@@ -154,7 +178,7 @@ fn runs_along(first: &Rim, second: &Rim, hair: f64) -> bool {
 
 /// Two circles: on the first the second's cone is quadratic in sin and cos, and
 /// of degree four in the tangent of the half angle.
-fn round(first: &Rim, second: &Rim, hair: f64, places: &mut Vec<DVec3>) {
+fn round(first: &Rim, second: &Rim, hair: f64, common: &mut Common) {
     let circle = &first.circle;
     let bases = [
         circle.centre(),
@@ -175,20 +199,37 @@ fn round(first: &Rim, second: &Rim, hair: f64, places: &mut Vec<DVec3>) {
             4.0 * (m02 - m12),
             m00 - 2.0 * m01 + m11,
         ];
-        let mut last = f64::INFINITY;
-        for tangent in quartic::roots(terms) {
-            let mut angle = turn + 2.0 * tangent.atan();
-            // Circles that only touch have one place in common, not two.
-            let middle = circle.point(0.5 * (last + angle));
-            if last.is_finite() && (angle - last).abs() < 0.1 && second.is_passed_by(middle, hair) {
-                angle = 0.5 * (last + angle);
-                let _ = places.pop();
-            }
-            let place = circle.point(angle);
+        // Roots at which the circles only touch come in twos or threes, with no
+        // more than a hair between the circles all the way.
+        let mut run: Option<(f64, f64)> = None;
+        let mut settle = |run: Option<(f64, f64)>| {
+            let Some((first, last)) = run else { return };
+            let place = circle.point(0.5 * (first + last));
             if second.seen(place).0 > 0.0 {
-                places.push(place.normalize_or(place));
-                last = angle;
+                let place = place.normalize_or(place);
+                let beside = |angle: f64| second.is_passed_by(circle.point(angle), hair);
+                if first < last || (beside(first - 3e-7) && beside(first + 3e-7)) {
+                    common.touches.push(place);
+                } else {
+                    common.places.push(place);
+                }
             }
+        };
+        for tangent in quartic::roots(terms) {
+            let angle = turn + 2.0 * tangent.atan();
+            run = match run {
+                Some((first, last))
+                    if angle - last < 0.1
+                        && second.is_passed_by(circle.point(0.5 * (last + angle)), hair) =>
+                {
+                    Some((first, angle))
+                }
+                before => {
+                    settle(before);
+                    Some((angle, angle))
+                }
+            };
         }
+        settle(run);
     }
 }

@@ -94,6 +94,17 @@ impl Edge {
         }
     }
 
+    /// Whether a direction passes the edge, or the way on past its ends, within
+    /// a hair.
+    pub(super) fn is_passed_by(&self, direction: DVec3, hair: f64) -> bool {
+        match self {
+            Self::Straight { inward, .. } => {
+                inward.dot(direction).abs() <= 4.0 * hair * direction.length()
+            }
+            Self::Round { rim, .. } => rim.is_passed_by(direction, hair),
+        }
+    }
+
     /// Where it starts and where it ends, in the terms of [`Edge::place_of`].
     pub(super) fn span(&self) -> (f64, f64) {
         match *self {

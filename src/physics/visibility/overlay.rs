@@ -81,6 +81,7 @@ impl Seen {
 }
 
 /// A place where an edge is split.
+#[derive(Clone, Copy, Debug)]
 struct Split {
     edge: u32,
     at: f64,
@@ -96,7 +97,8 @@ struct Nodes {
 impl Nodes {
     fn number(&mut self, place: DVec3) -> u32 {
         let near = |other: &DVec3| (place - *other).abs().max_element() <= self.hair;
-        let found = self.places.iter().position(near).unwrap_or_else(|| {
+        // From the last: an edge mostly starts where the one before ends.
+        let found = self.places.iter().rposition(near).unwrap_or_else(|| {
             self.places.push(place);
             self.places.len() - 1
         });
@@ -138,7 +140,7 @@ impl Overlay<'_> {
             }
         }
         let shared = self.split(&edges, &mut nodes, &mut splits);
-        splits.sort_by(|one, other| (one.edge.cmp(&other.edge)).then(one.at.total_cmp(&other.at)));
+        let splits = in_order(&splits, edges.len());
         let mut seen: Vec<Seen> = Vec::new();
         let mut own_edges = 0;
         for run in splits.chunk_by(|one, other| one.edge == other.edge) {
@@ -186,7 +188,18 @@ impl Overlay<'_> {
                     continue;
                 }
                 crossing::find(edge, crossed, self.hair, &mut common);
-                for place in &common.places {
+                // Where two edges only touch, an end or a crossing on that
+                // stretch stands for it.
+                let touches = common.touches.iter().map(|place| {
+                    let near = nodes.places.iter().find(|node| {
+                        node.distance(*place) < 1e-5
+                            && edge.is_passed_by(**node, self.hair)
+                            && crossed.is_passed_by(**node, self.hair)
+                    });
+                    near.copied().unwrap_or(*place)
+                });
+                let touches: Vec<DVec3> = touches.collect();
+                for place in common.places.iter().chain(&touches) {
                     let node = nodes.number(*place);
                     // At the node's own place, where edges meet to the last bit.
                     let place = nodes.place(node);
@@ -242,7 +255,6 @@ impl Overlay<'_> {
                 (rim.circle.point(0.5 * (from.at + to.at)), piece)
             }
         };
-        let middle = middle.normalize_or(from_place);
         let sides = |outline: usize| -> Option<Sides> {
             if outline == own {
                 return Some([true, false]);
@@ -280,9 +292,9 @@ impl Overlay<'_> {
                 .unwrap_or_else(|| {
                     seen.push(Seen {
                         through,
-                        pieces: Vec::new(),
+                        pieces: Vec::with_capacity(8),
                         whole: true,
-                        nodes: Vec::new(),
+                        nodes: Vec::with_capacity(8),
                     });
                     seen.len() - 1
                 });
@@ -339,6 +351,27 @@ impl Overlay<'_> {
         }
         Some([seen[0].then_some(through[0]), seen[1].then_some(through[1])])
     }
+}
+
+/// The splits edge by edge, and along each edge in order.
+fn in_order(splits: &[Split], edges: usize) -> Vec<Split> {
+    let mut ends = vec![0_usize; edges + 1];
+    for split in splits {
+        ends[split.edge as usize + 1] += 1;
+    }
+    for edge in 0..edges {
+        ends[edge + 1] += ends[edge];
+    }
+    let mut sorted = splits.to_vec();
+    for split in splits {
+        let next = &mut ends[split.edge as usize];
+        sorted[*next] = *split;
+        *next += 1;
+    }
+    for run in sorted.chunk_by_mut(|one, other| one.edge == other.edge) {
+        run.sort_unstable_by(|one, other| one.at.total_cmp(&other.at));
+    }
+    sorted
 }
 
 /// Whether at every node as many pieces end as begin.
