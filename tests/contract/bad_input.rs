@@ -795,7 +795,7 @@ fn an_unreadable_file_outweighs_a_cell_in_error() {
         let ran = desk.run(&arguments);
         assert_eq!(ran.code, code, "{files:?}: {}", ran.err);
         // The good one is worked out beside them.
-        let told = ran.out.contains("1.000 m");
+        let told = ran.out.contains("a (value)\n  1 m\n");
         assert_eq!(
             told,
             files.contains(&"good.farglow"),
