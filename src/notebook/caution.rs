@@ -120,9 +120,7 @@ pub(super) fn of_cell(engine: &Engine, id: CellId, result: &CellResult) -> Vec<C
         Kind::Position => of_position(engine, id, &mut cautions),
         Kind::Assessment => of_assessment(engine, result, &mut cautions),
         Kind::Zone => of_zone(engine, id, result, &mut cautions),
-        Kind::Value
-        | Kind::Formula
-        | Kind::Note => {}
+        Kind::Value | Kind::Formula | Kind::Note => {}
     }
     if result.failed > 0 {
         cautions.push(called(
@@ -227,11 +225,7 @@ fn of_screen(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
             }
             Make::Filter { .. } => {
                 if !typed("visible_transmittance") {
-                    cautions.push(called(
-                        "filter-visible",
-                        Some("visible_transmittance"),
-                        &[],
-                    ));
+                    cautions.push(called("filter-visible", Some("visible_transmittance"), &[]));
                 }
                 cautions.push(called("filter-breaks", None, &[]));
             }
@@ -247,10 +241,13 @@ fn of_screen(engine: &Engine, id: CellId, cautions: &mut Vec<Caution>) {
     if outcome.hottest > BURNS {
         cautions.push(called("screen-hot", None, &[&told(outcome.hottest)]));
     }
-    let air = engine.room().map_or(surroundings::AIR_TEMPERATURE, |room| {
-        room.air_temperature
-    });
-    for film in [0.5 * (outcome.temperature + air), 0.5 * (outcome.hottest + air)] {
+    let air = engine
+        .room()
+        .map_or(surroundings::AIR_TEMPERATURE, |room| room.air_temperature);
+    for film in [
+        0.5 * (outcome.temperature + air),
+        0.5 * (outcome.hottest + air),
+    ] {
         if !FILM.contains(&film) {
             cautions.push(called("screen-convection", None, &[&told(film)]));
             break;

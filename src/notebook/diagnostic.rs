@@ -19,7 +19,7 @@ pub struct Diagnostic {
     /// What was expected and what was found.
     pub message: String,
     /// The remedy.
-    pub hint: Option<String>,
+    pub hint: Option<Box<str>>,
     /// The name that no cell has. The remedy then is the nearest name that a
     /// cell has when the fault is told, which other cells' edits may change.
     pub missing: Option<Box<str>>,
@@ -51,7 +51,7 @@ impl Diagnostic {
 
     /// Returns the fault with its remedy.
     #[must_use]
-    pub fn with_hint(mut self, hint: impl Into<String>) -> Self {
+    pub fn with_hint(mut self, hint: impl Into<Box<str>>) -> Self {
         self.hint = Some(hint.into());
         self
     }
@@ -79,7 +79,7 @@ impl Diagnostic {
             item: None,
             span: fault.span,
             message: fault.message,
-            hint: fault.hint,
+            hint: fault.hint.map(Into::into),
             missing: None,
         }
     }

@@ -387,11 +387,11 @@ fn cell_result(engine: &Engine, bounds: &Bounds, id: CellId) -> CellResult {
 fn told(engine: &Engine, node: Node, fault: &Diagnostic) -> Diagnostic {
     let mut fault = fault.clone();
     if let Some(name) = &fault.missing {
-        fault.hint = Some(engine.remedy(name));
+        fault.hint = Some(engine.remedy(name).into());
     }
     if fault.code == "ring" {
         fault.message = engine.ring(node);
-        fault.hint = Some("give one of them a quantity of its own".to_owned());
+        fault.hint = Some("give one of them a quantity of its own".into());
     }
     fault
 }

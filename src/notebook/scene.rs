@@ -21,8 +21,8 @@ use crate::physics::region::Region;
 use crate::physics::scene::{Barrier, Part, Scene};
 use crate::physics::view::{Sight, View};
 
-pub use balance::Balanced;
 pub(super) use balance::BalanceTask;
+pub use balance::Balanced;
 pub use clash::Clash;
 pub use heat::{Air, Heat, Weights, may_be_polished};
 pub(super) use heat::{HeatTask, Sender};
@@ -226,7 +226,9 @@ fn culprits(shapes: &[Arc<Shape>], error: crate::physics::Error) -> (usize, usiz
     };
     let screen = |barrier: usize| {
         let mut screens = shapes.iter().enumerate();
-        let own = screens.by_ref().filter(|(_, shape)| shape.barrier.is_some());
+        let own = screens
+            .by_ref()
+            .filter(|(_, shape)| shape.barrier.is_some());
         own.map(|(at, _)| at).nth(barrier).unwrap_or(0)
     };
     match error {
@@ -271,7 +273,8 @@ impl LayoutTask {
         let mut pairs = clash::all(&known);
         if pairs.is_empty() {
             // What the scene itself refuses, it refuses for two that overlap.
-            let shapes: Vec<Arc<Shape>> = known.iter().map(|(_, shape)| Arc::clone(shape)).collect();
+            let shapes: Vec<Arc<Shape>> =
+                known.iter().map(|(_, shape)| Arc::clone(shape)).collect();
             if let Err(error) = looking(&shapes) {
                 let (first, second) = culprits(&shapes, error);
                 pairs.extend(
@@ -309,11 +312,7 @@ impl ApartTask {
 
     pub(super) fn run(&self, inputs: Inputs<'_>) -> Result<Datum, Diagnostic> {
         let layout = inputs.layout(self.layout);
-        match layout
-            .clashes
-            .iter()
-            .find(|clash| clash.second == self.id)
-        {
+        match layout.clashes.iter().find(|clash| clash.second == self.id) {
             None => Ok(Datum::Apart),
             Some(clash) => Err(Diagnostic::of_cell(
                 "overlaps",
@@ -360,4 +359,3 @@ impl FormTask {
             .map_err(|error| Diagnostic::of_cell("no-such-scene", error.to_string()))
     }
 }
-

@@ -3,11 +3,11 @@
 use std::sync::Arc;
 
 use super::Diagnostic;
-use super::scene;
 use super::cell::field::{Expect, Item};
 use super::cell::{assessment, curve, position, screen, source, surroundings, zone};
 use super::datum::{CellId, Datum};
 use super::listed::ListedTask;
+use super::scene;
 use super::uncertainty::Draw;
 use crate::entry::{Entry, Outcome};
 use crate::graph::{Node, Values};
@@ -88,10 +88,7 @@ impl<'a> Inputs<'a> {
     }
 
     /// Returns the balance of all screens, or what stops it.
-    pub(super) fn balance(
-        self,
-        node: Node,
-    ) -> Result<&'a Arc<scene::Balanced>, (CellId, &'a str)> {
+    pub(super) fn balance(self, node: Node) -> Result<&'a Arc<scene::Balanced>, (CellId, &'a str)> {
         match self.datum(node) {
             Datum::Balanced(balanced) => Ok(balanced),
             Datum::Unbalanced(id, why) => Err((*id, why)),

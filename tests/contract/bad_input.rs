@@ -565,6 +565,146 @@ fn table() -> Vec<Bad> {
             r#"{"kind": "curve", "name": "p", "from": "door", "nearest": "9 m", "farthest": "3 m"}"#,
             &["field farthest", "beyond nearest", "greater `farthest`"],
         ),
+        wrong(
+            "an outline that crosses itself",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "vertices": [["0 m", "0 m"], ["1 m", "1 m"], ["1 m", "0 m"], ["0 m", "1 m"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &[
+                "field vertices[",
+                "must not cross itself",
+                "in order around the outline",
+            ],
+        ),
+        wrong(
+            "an outline without area",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "vertices": [["0 m", "0 m"], ["1 m", "1 m"], ["2 m", "2 m"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field vertices", "enclose an area"],
+        ),
+        wrong(
+            "two corners",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "vertices": [["0 m", "0 m"], ["1 m", "1 m"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &[
+                "field vertices",
+                "from 3 to 200 pairs, found 2",
+                "`0 m, 0 m; 1 m, 0 m; 0 m, 1 m`",
+            ],
+        ),
+        wrong(
+            "a fault in one corner",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "vertices": [["0 m", "0 m"], ["1 m", "0 m"], ["1 m", "nothing.width"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field vertices[2][1]", "no cell is named `nothing`"],
+        ),
+        wrong(
+            "a corner of another dimension",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "vertices": [["0 m", "0 m"], ["1 s", "0 m"], ["1 m", "1 m"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field vertices[1][0]", "expected a length"],
+        ),
+        wrong(
+            "corners as words",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "vertices": "round", "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field vertices", "expected pairs such as", "comma"],
+        ),
+        refused(
+            "corners that are no pairs",
+            notebook(
+                r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "vertices": [["0 m"], ["1 m", "0 m"], ["1 m", "1 m"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            ),
+            &["field vertices[0]", "expected a pair such as"],
+        ),
+        wrong(
+            "a cylinder as an opening",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "cylinder", "diameter": "1 m", "height": "1 m", "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &[
+                "field outline",
+                "expected disc or rectangle or polygon for an opening, found cylinder",
+            ],
+        ),
+        wrong(
+            "a table out of order",
+            r#"{"kind": "source", "name": "hot", "form": "pool", "outline": "disc", "diameter": "1 m", "temperature": "1500 K", "z": "1 m", "spectrum": [["1 µm", "0.4"], ["3 µm", "0.3"], ["2 µm", "0.2"]]}"#,
+            &["field spectrum[2][0]", "longer wavelength", "growing order"],
+        ),
+        wrong(
+            "a table and a number",
+            r#"{"kind": "source", "name": "hot", "form": "pool", "outline": "disc", "diameter": "1 m", "spectrum": [["1 µm", "0.4"], ["3 µm", "0.3"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field emissivity", "does not go with `spectrum`"],
+        ),
+        wrong(
+            "no emissivity at all",
+            r#"{"kind": "source", "name": "hot", "form": "pool", "outline": "disc", "diameter": "1 m", "temperature": "1500 K", "z": "1 m"}"#,
+            &["field emissivity", "found nothing", "add `emissivity`"],
+        ),
+        wrong(
+            "a wall thicker than twenty openings",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "disc", "diameter": "0.1 m", "wall_thickness": "2.1 m", "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field wall_thickness", "20"],
+        ),
+        wrong(
+            "a dent before a thick wall",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "wall_thickness": "0.2 m", "vertices": [["0 m", "0 m"], ["1 m", "0 m"], ["0.2 m", "0.2 m"], ["0 m", "1 m"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field vertices", "dent"],
+        ),
+        wrong(
+            "a rim below the melt",
+            r#"{"kind": "source", "name": "hot", "form": "pool", "outline": "disc", "diameter": "1 m", "freeboard": "-0.1 m", "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field freeboard", "zero or a value above it"],
+        ),
+        wrong(
+            "a vessel that runs out",
+            r#"{"kind": "source", "name": "hot", "form": "pool", "outline": "disc", "diameter": "1 m", "freeboard": "0.1 m", "vessel_tilt": "40 °", "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field vessel_tilt", "the metal runs out"],
+        ),
+        wrong(
+            "a freeboard of an opening",
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "disc", "diameter": "1 m", "freeboard": "0.1 m", "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &["field freeboard", "does not belong to this form"],
+        ),
+        beside(
+            "two sources in one place",
+            r#"{"kind": "source", "name": "hot", "form": "body", "outline": "sphere", "diameter": "0.4 m", "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            &[
+                "stands clear of all others",
+                "through or inside door",
+                "move one of them",
+            ],
+        ),
+        beside(
+            "a screen through a source",
+            r#"{"kind": "screen", "name": "plate", "make": "solid", "width": "2 m", "height": "2 m", "z": "1 m", "heading": "90 °"}"#,
+            &[
+                "expected a screen that stands clear",
+                "through or inside door",
+            ],
+        ),
+        beside(
+            "a plate that is a mesh",
+            r#"{"kind": "screen", "name": "plate", "make": "solid", "width": "2 m", "height": "2 m", "y": "1 m", "z": "1 m", "open_fraction": "0.5"}"#,
+            &["field open_fraction", "does not belong to this make"],
+        ),
+        beside(
+            "a mesh that is all open",
+            r#"{"kind": "screen", "name": "plate", "make": "mesh", "width": "2 m", "height": "2 m", "y": "1 m", "z": "1 m", "open_fraction": "1"}"#,
+            &["field open_fraction", "from 0 to less than 1", "`50 %`"],
+        ),
+        beside(
+            "a filter of one number",
+            r#"{"kind": "screen", "name": "plate", "make": "filter", "width": "2 m", "height": "2 m", "y": "1 m", "z": "1 m", "transmittance": "0.5"}"#,
+            &["field near_ir_transmittance", "add `near_ir_transmittance`"],
+        ),
+        beside(
+            "a screen of nothing",
+            r#"{"kind": "screen", "name": "plate", "make": "paper", "width": "2 m", "height": "2 m", "y": "1 m", "z": "1 m"}"#,
+            &["field make", "expected one of solid, mesh, filter"],
+        ),
+        beside(
+            "an unknown formula for the air",
+            r#"{"kind": "surroundings", "name": "bay", "absorption": "beer"}"#,
+            &["field absorption", "off, power_law, wayne"],
+        ),
+        beside(
+            "a position in the tunnel",
+            r#"{"kind": "source", "name": "hole", "form": "opening", "outline": "disc", "diameter": "1 m", "wall_thickness": "0.5 m", "temperature": "1500 K", "emissivity": "0.9", "x": "5 m", "z": "1.6 m"}, {"kind": "position", "name": "p", "x": "5 m", "y": "-0.2 m", "reach": "0 m"}"#,
+            &["field x", "lies inside or touches source hole"],
+        ),
     ]
 }
 
@@ -655,7 +795,7 @@ fn an_unreadable_file_outweighs_a_cell_in_error() {
         let ran = desk.run(&arguments);
         assert_eq!(ran.code, code, "{files:?}: {}", ran.err);
         // The good one is worked out beside them.
-        let told = ran.out.contains("1.000 m");
+        let told = ran.out.contains("a (value)\n  1 m\n");
         assert_eq!(
             told,
             files.contains(&"good.farglow"),

@@ -172,6 +172,8 @@ fn every_kind_has_the_outputs_that_must_exist_in_their_units() {
                 ("irradiance_from.pot", "W/m²"),
                 ("view_factor.door", ""),
                 ("view_factor.pot", ""),
+                ("angular_subtense.door", "rad"),
+                ("mean_radiant_temperature", "K"),
             ],
         ),
         (
@@ -471,4 +473,67 @@ fn the_text_of_a_cell_in_error_tells_it_and_whom_the_others_wait_for() {
     assert_eq!(ran.code, 3);
     assert!(ran.out.contains("waiting for b"), "{}", ran.out);
     assert!(ran.out.contains("mtr"), "{}", ran.out);
+}
+
+/// Screens, and what a position tells of them.
+#[test]
+fn screens_have_their_outputs_and_radiate_at_positions() {
+    let desk = Desk::new();
+    let cells = r#"
+    { "kind": "source", "name": "door", "form": "opening", "outline": "rectangle", "width": "0.9 m",
+      "height": "0.7 m", "wall_thickness": "0.2 m", "temperature": "1250 ± 25 °C", "emissivity": "0.95", "z": "1.2 m" },
+    { "kind": "screen", "name": "plate", "make": "solid", "width": "0.6 m", "height": "1 m", "y": "1 m",
+      "z": "0.9 m", "heading": "180 °" },
+    { "kind": "screen", "name": "curtain", "make": "mesh", "open_fraction": "0.2", "width": "2 m",
+      "height": "2 m", "y": "2 m", "z": "1 m", "heading": "180 °" },
+    { "kind": "position", "name": "charger", "from": "door", "distance": "3.5 m", "stay": "4 min",
+      "surface_temperature": "33 °C" },
+    { "kind": "formula", "name": "share", "entry": "charger.irradiance_from.plate / charger" },
+    { "kind": "formula", "name": "hot", "entry": "plate", "unit": "°C" }"#;
+    let _ = desk.put("screens.farglow", notebook(cells));
+    let told = desk.calc(&["screens.farglow"], 0);
+    for (name, outputs) in [
+        (
+            "plate",
+            &[
+                ("temperature", "K"),
+                ("hottest_temperature", "K"),
+                ("absorbed", "W/m²"),
+                ("absorbed_power", "W"),
+                ("front_exitance", "W/m²"),
+                ("back_exitance", "W/m²"),
+                ("convected", "W/m²"),
+            ][..],
+        ),
+        ("curtain", &[("temperature", "K"), ("absorbed", "W/m²")]),
+        (
+            "charger",
+            &[
+                ("irradiance_from.door", "W/m²"),
+                ("irradiance_from.plate", "W/m²"),
+                ("irradiance_from.curtain", "W/m²"),
+                ("view_factor.curtain", ""),
+                ("net_radiant_heat", "W/m²"),
+                ("mean_radiant_temperature", "K"),
+            ],
+        ),
+    ] {
+        for (output, unit) in outputs {
+            let value = &cell(&told, name)["outputs"][output];
+            assert_eq!(value["unit"], *unit, "{name}.{output}: {value}");
+            let [low, si, high] = ["low", "si", "high"].map(|key| value[key].as_f64());
+            let bounded = low < si && si < high && low > Some(0.0);
+            let geometric = output.starts_with("view_factor");
+            assert!(bounded || geometric, "{name}.{output}: {value}");
+        }
+    }
+    let [share, hot] =
+        ["share", "hot"].map(|name| cell(&told, name)["outputs"]["value"]["si"].clone());
+    assert!(
+        share
+            .as_f64()
+            .is_some_and(|share| share > 0.0 && share < 1.0),
+        "{share}"
+    );
+    assert_eq!(hot, cell(&told, "plate")["outputs"]["temperature"]["si"]);
 }

@@ -26,7 +26,6 @@ const RUNNING: [(&str, Work); 42] = [
     ),
     ("disc_pose", view_factor_catalogue::disc_pose),
     ("ring", view_factor_catalogue::ring),
-    ("cylinder", view_factor_catalogue::cylinder),
     ("sphere_tilt", view_factor_catalogue::sphere_tilt),
     ("disc_axis_tilt", view_factor_catalogue::disc_axis_tilt),
     (
@@ -56,10 +55,7 @@ const RUNNING: [(&str, Work); 42] = [
         view_factor_catalogue::rect_rect_perpendicular,
     ),
     ("thick_round_black", thick_openings::round_black),
-    (
-        "thick_round_reradiating",
-        thick_openings::round_reradiating,
-    ),
+    ("thick_round_reradiating", thick_openings::round_reradiating),
     ("thick_square_black", thick_openings::square_black),
     (
         "thick_square_reradiating",

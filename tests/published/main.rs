@@ -20,6 +20,7 @@ mod ladle_case;
 mod ladle_notebook;
 mod natural_wet_bulb;
 mod quadrature_of_planck;
+mod screened_scenes;
 mod shields;
 mod shop_air;
 mod textbook_examples;

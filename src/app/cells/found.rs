@@ -134,7 +134,7 @@ fn fault<'a>(cell: &Cell, fault: &Diagnostic, look: Look) -> Element<'a, Message
         look,
     ));
     if let Some(hint) = &fault.hint {
-        lines = lines.push(theme::words(hint.clone(), SMALL, Role::Ink, look));
+        lines = lines.push(theme::words(hint.to_string(), SMALL, Role::Ink, look));
     }
     lines.into()
 }

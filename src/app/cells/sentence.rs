@@ -359,19 +359,58 @@ const TELLINGS: &[Telling] = &[
 /// The fields that mean something only where all this holds; every other field
 /// of a kind always does.
 const MEANINGS: &[(Kind, &str, &[When])] = &[
-    (Kind::Source, "diameter", &[IsNot("outline", &["rectangle", "polygon", "plate"])]),
-    (Kind::Source, "width", &[Is("outline", &["rectangle", "plate"])]),
-    (Kind::Source, "height", &[Is("outline", &["rectangle", "cylinder", "plate"]), IsNot("form", &["pool"])]),
-    (Kind::Source, "length", &[Is("outline", &["rectangle"]), Is("form", &["pool"])]),
+    (
+        Kind::Source,
+        "diameter",
+        &[IsNot("outline", &["rectangle", "polygon", "plate"])],
+    ),
+    (
+        Kind::Source,
+        "width",
+        &[Is("outline", &["rectangle", "plate"])],
+    ),
+    (
+        Kind::Source,
+        "height",
+        &[
+            Is("outline", &["rectangle", "cylinder", "plate"]),
+            IsNot("form", &["pool"]),
+        ],
+    ),
+    (
+        Kind::Source,
+        "length",
+        &[Is("outline", &["rectangle"]), Is("form", &["pool"])],
+    ),
     (Kind::Source, "vertices", &[Is("outline", &["polygon"])]),
     (Kind::Source, "stance", &[Is("outline", &["cylinder"])]),
     (Kind::Source, "wall_thickness", &[Is("form", &["opening"])]),
-    (Kind::Source, "wall", &[Is("form", &["opening"]), Typed("wall_thickness")]),
-    (Kind::Source, "tilt", &[IsNot("form", &["pool"]), IsNot("outline", &["sphere"])]),
+    (
+        Kind::Source,
+        "wall",
+        &[Is("form", &["opening"]), Typed("wall_thickness")],
+    ),
+    (
+        Kind::Source,
+        "tilt",
+        &[IsNot("form", &["pool"]), IsNot("outline", &["sphere"])],
+    ),
     (Kind::Source, "freeboard", &[Is("form", &["pool"])]),
-    (Kind::Source, "vessel_tilt", &[Is("form", &["pool"]), Typed("freeboard")]),
-    (Kind::Source, "wall_temperature", &[Is("form", &["pool"]), Typed("freeboard")]),
-    (Kind::Source, "wall_emissivity", &[Is("form", &["pool"]), Typed("freeboard")]),
+    (
+        Kind::Source,
+        "vessel_tilt",
+        &[Is("form", &["pool"]), Typed("freeboard")],
+    ),
+    (
+        Kind::Source,
+        "wall_temperature",
+        &[Is("form", &["pool"]), Typed("freeboard")],
+    ),
+    (
+        Kind::Source,
+        "wall_emissivity",
+        &[Is("form", &["pool"]), Typed("freeboard")],
+    ),
     (Kind::Source, "emissivity", &[Absent("spectrum")]),
     (Kind::Source, "near_ir_emissivity", &[Absent("spectrum")]),
     (Kind::Source, "spectrum", &[Absent("emissivity")]),
@@ -381,8 +420,16 @@ const MEANINGS: &[(Kind, &str, &[When])] = &[
     (Kind::Screen, "back_absorptance", &[Is("make", &["solid"])]),
     (Kind::Screen, "open_fraction", &[Is("make", &["mesh"])]),
     (Kind::Screen, "transmittance", &[Is("make", &["filter"])]),
-    (Kind::Screen, "near_ir_transmittance", &[Is("make", &["filter"])]),
-    (Kind::Screen, "visible_transmittance", &[Is("make", &["filter"])]),
+    (
+        Kind::Screen,
+        "near_ir_transmittance",
+        &[Is("make", &["filter"])],
+    ),
+    (
+        Kind::Screen,
+        "visible_transmittance",
+        &[Is("make", &["filter"])],
+    ),
     (Kind::Position, "x", &[Absent("from")]),
     (Kind::Position, "y", &[Absent("from")]),
     (
@@ -494,9 +541,7 @@ pub fn choices(cell: &Cell, field: &str, names: &dyn Fn(&[Kind]) -> Vec<String>)
             .collect(),
         Some(Form::Guidance | Form::GuidanceList) => guidance(),
         Some(Form::Basis) => Basis::ALL.map(|basis| basis.words().to_owned()).to_vec(),
-        Some(
-            Form::Entry(_) | Form::Pairs(_) | Form::Count(..) | Form::Unit | Form::Text,
-        )
+        Some(Form::Entry(_) | Form::Pairs(_) | Form::Count(..) | Form::Unit | Form::Text)
         | None => Vec::new(),
     }
 }

@@ -146,9 +146,7 @@ impl Area {
         };
         let content = match cell.kind.field(field).map(|spec| spec.form) {
             // What is typed is never a choice, but for a facing, which is both.
-            Some(
-                Form::Entry(_) | Form::Pairs(_) | Form::Count(..) | Form::Unit | Form::Text,
-            )
+            Some(Form::Entry(_) | Form::Pairs(_) | Form::Count(..) | Form::Unit | Form::Text)
             | None => {
                 return Action::None;
             }

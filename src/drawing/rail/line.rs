@@ -87,11 +87,7 @@ impl Line {
                 .into_iter()
                 .find(|line| line.standing(engine, id).is_some()),
             Kind::Assessment => Line::of(engine, engine.find(cell.text("position")?)?),
-            Kind::Value
-            | Kind::Formula
-            | Kind::Surroundings
-            | Kind::Screen
-            | Kind::Note => None,
+            Kind::Value | Kind::Formula | Kind::Surroundings | Kind::Screen | Kind::Note => None,
         }
     }
 

@@ -354,11 +354,9 @@ impl Expect {
             Range::Fraction => si.clamp(0.0, 1.0),
             // The next below one.
             Range::Share => si.clamp(0.0, 1.0 - f64::EPSILON),
-            Range::Any
-            | Range::Positive
-            | Range::NotNegative
-            | Range::RightAngle
-            | Range::Lean => si,
+            Range::Any | Range::Positive | Range::NotNegative | Range::RightAngle | Range::Lean => {
+                si
+            }
         }
     }
 

@@ -19,6 +19,7 @@ use crate::notebook::datum::{Datum, Output, Slot};
 use crate::notebook::engine::{Linker, Slot as Own};
 use crate::notebook::scene::{Heat, Weights};
 use crate::notebook::task::{Inputs, Task};
+use crate::physics::region::Region;
 use crate::physics::view::View;
 use crate::physics::{radiant, subtense};
 use crate::units::{Dimension, Quantity};
@@ -223,7 +224,18 @@ impl SightsTask {
         };
         let around_eye = look(Envelope::Eye)?;
         let subtense = |shape: &Arc<Shape>| {
-            subtense::of(&shape.region, eye).map_or(0.0, subtense::Subtense::mean)
+            let found = match &shape.region {
+                // A screen is seen from both sides.
+                Region::Polygon { vertices, normal } if !shape.is_source() => {
+                    let plate = Region::Plate {
+                        vertices: vertices.clone(),
+                        normal: *normal,
+                    };
+                    subtense::of(&plate, eye)
+                }
+                region => subtense::of(region, eye),
+            };
+            found.map_or(0.0, subtense::Subtense::mean)
         };
         Ok(Datum::Sights(Arc::new(Sights {
             subtenses: form.shapes.iter().map(subtense).collect(),
@@ -413,8 +425,7 @@ impl ExposureTask {
         let heat = inputs.heat(self.heat);
         let orientation = self.facing.orientation(inputs);
         let weights = Band::ALL.map(|band| heat.weights(band));
-        let at_eye =
-            |weights: &Weights<'_>| sights.around_eye.irradiance(0, orientation, weights);
+        let at_eye = |weights: &Weights<'_>| sights.around_eye.irradiance(0, orientation, weights);
         let [total, near_infrared, skin] = weights.each_ref().map(at_eye);
         let worst = |around: &Views| weights.each_ref().map(|w| around.worst(orientation, w));
         let normal = total.1;
@@ -560,7 +571,10 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
     let temperature = linker.entry("surface_temperature");
     let emissivity = linker.always("surface_emissivity");
     if temperature.is_none() {
-        linker.refuse(&["surface_emissivity"], "goes with `surface_temperature` only");
+        linker.refuse(
+            &["surface_emissivity"],
+            "goes with `surface_temperature` only",
+        );
     }
     let surface = temperature.map(|temperature| [temperature, emissivity]);
     let exposure = facing.map(|facing| {

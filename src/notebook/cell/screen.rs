@@ -14,9 +14,11 @@ use crate::notebook::engine::Linker;
 use crate::notebook::task::{Inputs, Task};
 use crate::physics::region::Region;
 use crate::physics::scene::{Barrier, Part};
-use crate::physics::screen::{Make, SOILED};
+use crate::physics::screen::SOILED;
 use crate::physics::surface::Emission;
 use crate::units::{Dimension, Quantity};
+
+pub use crate::physics::screen::Make;
 
 /// An open fraction is less than the whole.
 const OPEN: Expect = Expect::of(Dimension::NONE, Range::Share);
@@ -260,9 +262,8 @@ impl StandTask {
             Diagnostic::of_cell("no-such-shape", error.to_string())
                 .with_hint("check the sizes and the place of the screen")
         };
-        let region =
-            Region::rectangle(centre, frame.normal, frame.up, frame.width, frame.height)
-                .map_err(fault)?;
+        let region = Region::rectangle(centre, frame.normal, frame.up, frame.width, frame.height)
+            .map_err(fault)?;
         let parts = pieces(centre, &frame).map_err(fault)?;
         Ok(Datum::Shape(Arc::new(Shape {
             kind: Kind::Screen,
@@ -381,7 +382,9 @@ impl OutcomeTask {
         };
         let state = balanced.screens.iter().find(|state| state.id == self.id);
         let Some(state) = state else {
-            return Err(fault("expected this screen in the balance, found it left out"));
+            return Err(fault(
+                "expected this screen in the balance, found it left out",
+            ));
         };
         Ok(Datum::Screen(Outcome {
             temperature: state.heated.mean_temperature,

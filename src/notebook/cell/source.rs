@@ -10,13 +10,13 @@ use crate::notebook::datum::{Datum, Output, Slot};
 use crate::notebook::engine::Linker;
 use crate::notebook::task::{Inputs, Task};
 use crate::physics::planck;
-use shape::Behind;
 use crate::units::{Dimension, Quantity};
+use shape::Behind;
 
-pub use emission::Emitted;
 pub(in crate::notebook) use emission::EmissionTask;
-pub use shape::{Frame, Shape, direction};
+pub use emission::Emitted;
 pub(in crate::notebook) use shape::ShapeTask;
+pub use shape::{Frame, Shape, direction};
 
 /// The corners of a polygon.
 const VERTICES: Pairs = Pairs {
@@ -332,7 +332,10 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
         if kind != Kind::Pool {
             linker.refuse(&VESSEL, ELSE);
         } else {
-            linker.refuse(&["tilt"], "goes with openings, plates and lying cylinders only");
+            linker.refuse(
+                &["tilt"],
+                "goes with openings, plates and lying cylinders only",
+            );
         }
         if kind != Kind::Opening {
             linker.refuse(&WALL, ELSE);
@@ -343,7 +346,10 @@ pub(in crate::notebook) fn link(linker: &mut Linker<'_>) {
             _ => true,
         };
         if kind == Kind::Body && !turned {
-            linker.refuse(&["tilt"], "goes with openings, plates and lying cylinders only");
+            linker.refuse(
+                &["tilt"],
+                "goes with openings, plates and lying cylinders only",
+            );
         }
     }
     let place = ["x", "y", "z"].map(|field| linker.always(field));

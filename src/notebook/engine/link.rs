@@ -497,13 +497,7 @@ impl<'e> Linker<'e> {
         (!pairs.is_empty()).then_some(pairs)
     }
 
-    fn set_entry(
-        &mut self,
-        slot: Slot,
-        text: &str,
-        expect: Expect,
-        unit: Option<Unit>,
-    ) -> Node {
+    fn set_entry(&mut self, slot: Slot, text: &str, expect: Expect, unit: Option<Unit>) -> Node {
         let field = slot.field().expect("an entry stands in a field");
         let item = match slot {
             Slot::Item(_, item) => Some(item),

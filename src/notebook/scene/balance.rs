@@ -168,7 +168,10 @@ fn parts(patches: &[Patch]) -> Vec<Emission> {
 /// Returns how many pieces of a face stand in one row: those whose centres lie
 /// on one line with the first two.
 fn columns(face: &[&Patch]) -> usize {
-    let centres: Vec<_> = face.iter().map(|patch| patch.part.region.centre()).collect();
+    let centres: Vec<_> = face
+        .iter()
+        .map(|patch| patch.part.region.centre())
+        .collect();
     let [first, second, ..] = centres.as_slice() else {
         return 1;
     };

@@ -291,10 +291,7 @@ fn field(spec: &'static Spec, node: &Node, path: &str, faults: &mut Faults) -> O
         let content = content(spec, node, path, faults)?;
         return Some(Field::new(spec.name, content));
     };
-    if !matches!(
-        spec.form,
-        Form::Entry(_) | Form::Facing | Form::Pairs(_)
-    ) {
+    if !matches!(spec.form, Form::Entry(_) | Form::Facing | Form::Pairs(_)) {
         faults.wrong(node, path, expected(spec.form));
         return None;
     }

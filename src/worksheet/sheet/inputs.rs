@@ -93,10 +93,21 @@ fn applies(sheet: &Sheet<'_>, cell: &CellResult, field: &str) -> bool {
         return false;
     };
     match (cell.kind, typed.text("form")) {
-        (Kind::Source, Some("opening")) => field != "freeboard",
-        (Kind::Source, Some("pool")) => !matches!(field, "wall_thickness" | "tilt"),
-        (Kind::Source, _) => !matches!(field, "wall_thickness" | "freeboard" | "tilt"),
+        (Kind::Source, form) => match field {
+            "wall_thickness" => form == Some("opening"),
+            "freeboard" | "vessel_tilt" => form == Some("pool"),
+            "wall_emissivity" => {
+                typed.field("freeboard").is_some() || typed.field("vessel_tilt").is_some()
+            }
+            "tilt" => {
+                form == Some("opening")
+                    || typed.text("outline") == Some("plate")
+                    || typed.text("stance") == Some("lying")
+            }
+            _ => true,
+        },
         (Kind::Position, _) => match field {
+            "surface_emissivity" => typed.field("surface_temperature").is_some(),
             "bearing" => typed.field("from").is_some(),
             "tilt" => sheet.engine.entry(cell.id, "faces").is_some(),
             _ => true,

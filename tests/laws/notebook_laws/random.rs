@@ -302,7 +302,11 @@ impl Dice {
                 let count = pairs.least + self.upto(3);
                 Content::Pairs(
                     (0..count)
-                        .map(|_| pairs.sides.map(|side| self.entry(side.dimension).to_owned()))
+                        .map(|_| {
+                            pairs
+                                .sides
+                                .map(|side| self.entry(side.dimension).to_owned())
+                        })
                         .collect(),
                 )
             }
@@ -335,7 +339,8 @@ impl Dice {
             Form::Text => self.text(WORDS),
         };
         let mut filled = Field::new(spec.name, content);
-        if matches!(spec.form, Form::Entry(_) | Form::Facing | Form::Pairs(_)) && self.upto(4) == 1 {
+        if matches!(spec.form, Form::Entry(_) | Form::Facing | Form::Pairs(_)) && self.upto(4) == 1
+        {
             filled.wrapped = true;
             if self.upto(2) == 1 {
                 filled.basis = Some(Basis::ALL[self.upto(6)]);

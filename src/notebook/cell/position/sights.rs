@@ -502,8 +502,7 @@ mod tests {
                             let found = views.worst(way, weights);
                             let each = (0..views.points.len()).map(|point| {
                                 let sent = weights.sent();
-                                way.irradiance(views.points[point], views.at(point), sent)
-                                    .0
+                                way.irradiance(views.points[point], views.at(point), sent).0
                             });
                             let expected = each.fold(0.0, f64::max);
                             assert!(

@@ -151,9 +151,11 @@ fn of_spectrum(error: physics::Error) -> Diagnostic {
     let fault = Diagnostic::of_field("spectrum", "no-such-table", error.to_string())
         .with_hint("give the wavelengths in growing order, each once");
     match error {
-        physics::Error::TableOrder { row, .. } => {
-            fault.in_item(u16::try_from(row.saturating_sub(1)).ok().map(|row| (row, 0)))
-        }
+        physics::Error::TableOrder { row, .. } => fault.in_item(
+            u16::try_from(row.saturating_sub(1))
+                .ok()
+                .map(|row| (row, 0)),
+        ),
         _ => fault,
     }
 }

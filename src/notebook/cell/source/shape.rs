@@ -12,8 +12,8 @@ use crate::notebook::engine::Linker;
 use crate::notebook::task::Inputs;
 use crate::physics::opening::{Opening, Walls};
 use crate::physics::pool::Pool;
-use crate::physics::{self, region::Region};
 use crate::physics::scene::{Barrier, Part};
+use crate::physics::{self, region::Region};
 
 /// The outline of a source, with the nodes of its sizes.
 #[derive(Clone, Debug, PartialEq)]
@@ -328,7 +328,10 @@ fn of_vessel(error: physics::Error) -> Diagnostic {
     use physics::Error;
     let field = match error {
         Error::NotConvex { .. } => "vertices",
-        Error::OutOfRange { parameter, .. } if parameter == "freeboard" => "freeboard",
+        Error::OutOfRange {
+            parameter: "freeboard",
+            ..
+        } => "freeboard",
         _ => "vessel_tilt",
     };
     Diagnostic::of_field(field, "no-such-vessel", error.to_string())
@@ -369,7 +372,9 @@ pub(super) fn outline_of(
     outline: &'static str,
 ) -> Option<Outline> {
     /// The fields of sizes, and which of them each outline has.
-    const SIZES: [&str; 6] = ["diameter", "width", "height", "length", "vertices", "stance"];
+    const SIZES: [&str; 6] = [
+        "diameter", "width", "height", "length", "vertices", "stance",
+    ];
     let (form, fits): (_, &[&str]) = match kind {
         Kind::Opening => ("an opening", &["disc", "rectangle", "polygon"]),
         Kind::Pool => ("a pool", &["disc", "rectangle", "polygon"]),
@@ -380,10 +385,7 @@ pub(super) fn outline_of(
             Diagnostic::of_field(
                 "outline",
                 "outline-out-of-place",
-                format!(
-                    "expected {} for {form}, found {outline}",
-                    fits.join(" or ")
-                ),
+                format!("expected {} for {form}, found {outline}", fits.join(" or ")),
             )
             .with_hint("change the outline or the form"),
         );
