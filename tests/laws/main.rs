@@ -7,5 +7,6 @@ mod graph_laws;
 mod json_laws;
 mod notebook_laws;
 mod printing_and_parsing_agree;
+mod rays;
 mod view_factor_laws;
 mod visibility_laws;
