@@ -11,5 +11,6 @@ mod opening_laws;
 mod printing_and_parsing_agree;
 mod screen_laws;
 mod skin_laws;
+mod rays;
 mod view_factor_laws;
 mod visibility_laws;

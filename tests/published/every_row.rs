@@ -69,6 +69,7 @@ const RUNNING: [(&str, Work); 42] = [
     ("cavity_exact", cavities::exact),
     ("cavity_enclosure", cavities::enclosure),
     ("cavity_gouffe", cavities::gouffe),
+    ("cylinder", view_factor_catalogue::cylinder),
 ];
 
 /// Worked examples of textbooks, whichever relation they are of.
