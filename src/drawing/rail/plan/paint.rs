@@ -110,8 +110,8 @@ impl Plan<'_> {
                     outline: area.corners(),
                     fill: None,
                     hatch: Some(Hatch {
-                        role,
                         width,
+                        role,
                         ..HIDDEN
                     }),
                     edge: None,
