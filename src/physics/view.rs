@@ -310,7 +310,7 @@ impl View {
             }
             Shape::Few(four) => four.vertices().iter().all(|vertex| within(*vertex)),
             Shape::Many(vertices) => vertices.iter().all(|vertex| within(*vertex)),
-            Shape::Loops(loops) => loops.extremes().into_iter().all(within),
+            Shape::Loops(loops) => loops.extremes().all(within),
         }
     }
 
@@ -332,7 +332,7 @@ impl View {
             }
             Shape::Few(four) => four.vertices().to_vec(),
             Shape::Many(vertices) => vertices.to_vec(),
-            Shape::Loops(loops) => loops.extremes(),
+            Shape::Loops(loops) => loops.extremes().collect(),
         }
     }
 }
