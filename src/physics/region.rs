@@ -190,10 +190,11 @@ impl Region {
 
     /// Returns what is seen of the region from a point.
     ///
-    /// Behind the plane of a flat region nothing is; in that plane outside the
-    /// outline it lies edge on, and the view is empty. On the region, on or
-    /// inside a body (to 10⁻¹² of the lengths at play), and from a place that
-    /// is not finite, the answer is [`Sight::Touching`].
+    /// Behind the plane of a flat region nothing is (of a plate its back is);
+    /// in that plane outside the outline it lies edge on, and the view is
+    /// empty. On the region, on or inside a body (to 10⁻¹² of the lengths at
+    /// play), and from a place that is not finite, the answer is
+    /// [`Sight::Touching`].
     #[must_use]
     #[inline]
     pub fn view(&self, point: DVec3) -> Sight {

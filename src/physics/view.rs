@@ -142,7 +142,8 @@ impl View {
     /// # Accuracy
     ///
     /// Exact relations. Discs and spheres: relative error below `1e-14` at any
-    /// distance. Polygons: `1e-16` times distance over size.
+    /// distance. Polygons: `1e-16` times distance over size. Cylinders, and
+    /// what shadows leave: absolute error below `1e-13`.
     #[must_use]
     pub fn flux(&self) -> DVec3 {
         self.flux
@@ -310,7 +311,7 @@ impl View {
             }
             Shape::Few(four) => four.vertices().iter().all(|vertex| within(*vertex)),
             Shape::Many(vertices) => vertices.iter().all(|vertex| within(*vertex)),
-            Shape::Loops(loops) => loops.extremes().into_iter().all(within),
+            Shape::Loops(loops) => loops.extremes().all(within),
         }
     }
 
@@ -332,7 +333,7 @@ impl View {
             }
             Shape::Few(four) => four.vertices().to_vec(),
             Shape::Many(vertices) => vertices.to_vec(),
-            Shape::Loops(loops) => loops.extremes(),
+            Shape::Loops(loops) => loops.extremes().collect(),
         }
     }
 }

@@ -375,3 +375,66 @@ fn reciprocity_holds_past_a_screen() {
         "{there} against {back}"
     );
 }
+
+/// A ladle with freeboard behind a half screen, seen from a platform: metal and
+/// inner wall by the outline and by four million squares of the metal's level
+/// and the rim's, each seen or not by its middle.
+#[test]
+fn a_ladle_behind_half_a_screen_agrees_with_squares() {
+    let level = |z: f64| Region::disc(DVec3::Z * z, DVec3::Z, 1.1).expect("a level");
+    let (rim, metal) = (level(1.8), level(1.5));
+    let screen = Region::rectangle(DVec3::new(0.3, 2.5, 2.0), DVec3::Y, DVec3::Z, 1.2, 1.6)
+        .expect("a screen");
+    let parts = vec![
+        Part {
+            region: metal.clone(),
+            through: Some(rim.clone()),
+            less: None,
+        },
+        Part {
+            region: rim,
+            through: None,
+            less: Some(metal),
+        },
+    ];
+    let scene = Scene::new(parts, vec![Barrier::solid(screen)]).expect("a ladle");
+    let (eye, normal) = (
+        DVec3::new(0.2, 5.0, 4.6),
+        DVec3::new(0.0, -1.0, -0.4).normalize(),
+    );
+    let looked = scene.look(eye);
+    let exact = [0, 1].map(|part| {
+        looked
+            .of(part)
+            .iter()
+            .map(|glimpse| glimpse.view.factor(normal))
+            .sum::<f64>()
+    });
+    let count = 2000_u32;
+    let mut sums = [0.0; 2];
+    let within = |place: DVec3| place.truncate().length() < 1.1;
+    for row in 0..count {
+        for column in 0..count {
+            let at = |index: u32| 2.2 * (f64::from(index) + 0.5) / f64::from(count) - 1.1;
+            for (part, height, other) in [(0, 1.5, 1.8), (1, 1.8, 1.5)] {
+                let way = DVec3::new(at(column), at(row), height) - eye;
+                let there = eye + way * ((other - eye.z) / way.z);
+                let past = eye + way * ((2.5 - eye.y) / way.y) - DVec3::new(0.3, 2.5, 2.0);
+                let hidden = past.x.abs() < 0.6 && past.z.abs() < 0.8;
+                // The metal shows through the rim, the wall where it does not.
+                if within(eye + way) && within(there) == (part == 0) && !hidden {
+                    let square = way.length_squared();
+                    sums[part] += way.dot(normal) * -way.z / (square * square * PI);
+                }
+            }
+        }
+    }
+    for (part, sum) in sums.into_iter().enumerate() {
+        let squares = sum * (2.2 / f64::from(count)).powi(2);
+        assert!(
+            (exact[part] - squares).abs() < 1e-6,
+            "part {part}: {} against {squares} by squares",
+            exact[part]
+        );
+    }
+}

@@ -224,29 +224,28 @@ impl Loops {
 
     /// Points whose cone holds the region: ends of edges, and where the
     /// tangents of short arcs meet.
-    pub(in crate::physics) fn extremes(&self) -> Vec<DVec3> {
-        let mut places = Vec::with_capacity(2 * self.pieces.len());
-        for piece in &self.pieces {
-            places.push(piece.ends().0);
-            if let Piece::Round {
-                circle,
-                start,
-                stop,
-                ..
-            } = *piece
-            {
-                let turn = stop - start;
-                let count = (turn.abs() / (0.25 * PI)).ceil().clamp(1.0, 8.0);
-                let step = turn / count;
-                let around = circle.widened(1.0 / (0.5 * step).cos());
-                let mut corner = 0.5;
-                while corner < count {
-                    places.push(around.point(start + corner * step));
-                    corner += 1.0;
+    pub(in crate::physics) fn extremes(&self) -> impl Iterator<Item = DVec3> {
+        self.pieces.iter().flat_map(|piece| {
+            let corners = match *piece {
+                Piece::Straight { .. } => None,
+                Piece::Round {
+                    circle,
+                    start,
+                    stop,
+                    ..
+                } => {
+                    let count = ((stop - start).abs() / (0.25 * PI)).ceil().clamp(1.0, 8.0);
+                    let step = (stop - start) / count;
+                    let around = circle.widened(1.0 / (0.5 * step).cos());
+                    let corner = move |index: u8| {
+                        let index = f64::from(index);
+                        (index < count).then(|| around.point(start + (index + 0.5) * step))
+                    };
+                    Some((0..8_u8).map_while(corner))
                 }
-            }
-        }
-        places
+            };
+            std::iter::once(piece.ends().0).chain(corners.into_iter().flatten())
+        })
     }
 }
 
