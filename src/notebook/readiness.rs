@@ -230,6 +230,7 @@ fn baseless(engine: &Engine, items: &mut Vec<Item>) {
         };
         let missing: Vec<String> = fields
             .iter()
+            .filter(|name| cell.field(name).is_some())
             .filter(|name| {
                 let typed = engine
                     .id(place)
