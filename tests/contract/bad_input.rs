@@ -567,7 +567,7 @@ fn table() -> Vec<Bad> {
         ),
         wrong(
             "an outline that crosses itself",
-            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "vertices": [["0 m", "0 m"], ["1 m", "1 m"], ["1 m", "0 m"], ["0 m", "1 m"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
+            r#"{"kind": "source", "name": "hot", "form": "opening", "outline": "polygon", "vertices": [["0 m", "0 m"], ["2 m", "2 m"], ["2 m", "0 m"], ["0 m", "1 m"]], "temperature": "1500 K", "emissivity": "0.9", "z": "1 m"}"#,
             &[
                 "field vertices[",
                 "must not cross itself",
