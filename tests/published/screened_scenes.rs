@@ -222,7 +222,7 @@ fn door(between: &str) -> Results {
         r#"{{"kind": "source", "name": "door", "form": "opening", "outline": "disc", "diameter": "1 m",
             "temperature": "1500 K", "emissivity": "0.9", "z": "1.6 m"}},
            {{"kind": "position", "name": "eye", "from": "door", "distance": "3 m", "faces": "door",
-             "reach": "0 m", "stay": "10 s"}},
+             "reach": "0 m", "stay": "5 s"}},
            {{"kind": "assessment", "name": "judged", "position": "eye", "guidance": "icnirp-2013-ir-eye"}}{between}"#
     ))
 }
