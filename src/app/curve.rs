@@ -8,7 +8,9 @@ use std::fmt;
 use glam::DVec2;
 use iced::widget::canvas::{self, Canvas};
 use iced::widget::{button, column, container, row, text};
-use iced::{Alignment, Element, Event, Length, Point, Rectangle, Renderer, Theme, mouse};
+use iced::{
+    Alignment, Color, Element, Event, Length, Point, Rectangle, Renderer, Size, Theme, mouse,
+};
 
 use super::canvas::{Held, SCALE, paint};
 use super::shared::{Look, Shared};
@@ -246,6 +248,9 @@ impl canvas::Program<Message> for Plot {
             .and_then(|_| Axes::of(&self.curve, width, height));
         if let (Some((distance, value)), Some(axes)) = (self.pointed, axes) {
             let mut frame = canvas::Frame::new(renderer, bounds.size());
+            if let Some(at) = axes.place(distance, value) {
+                soak(&mut frame, &axes, at);
+            }
             let over = hair(&axes, distance, value, width, height).scaled(SCALE);
             paint(&mut frame, &over, self.look.theme);
             layers.push(frame.into_geometry());
@@ -264,6 +269,24 @@ impl canvas::Program<Message> for Plot {
         } else {
             mouse::Interaction::default()
         }
+    }
+}
+
+/// Lays clear areas around the line and its ring. What is drawn again in a
+/// window are the bounds of the paths that changed, strokes not counted: an
+/// upright line has none and would stay behind where the pointer was.
+fn soak(frame: &mut canvas::Frame, axes: &Axes, at: DVec2) {
+    for (reach, from, to) in [
+        (3.0, axes.area.from.y, axes.area.to.y),
+        (6.0, at.y - 6.0, at.y + 6.0),
+    ] {
+        let corner = DVec2::new(at.x - reach, from) * SCALE;
+        let size = DVec2::new(2.0 * reach, to - from) * SCALE;
+        frame.fill_rectangle(
+            Point::new(corner.x as f32, corner.y as f32),
+            Size::new(size.x as f32, size.y as f32),
+            Color::TRANSPARENT,
+        );
     }
 }
 

@@ -193,6 +193,15 @@ mod tests {
     use super::*;
 
     #[test]
+    fn the_readme_lists_every_key() {
+        let readme = include_str!("../../README.md");
+        for shortcut in ALL {
+            let row = format!("| {} | {} |", shortcut.keys, shortcut.about);
+            assert!(readme.contains(&row), "no row `{row}` in README.md");
+        }
+    }
+
+    #[test]
     fn each_wish_stands_once_in_the_list() {
         for (place, shortcut) in ALL.iter().enumerate() {
             for other in &ALL[place + 1..] {

@@ -27,7 +27,7 @@ pub fn label(name: &str) -> &str {
         "irradiance" => "irradiance",
         "near_ir_irradiance" => "near infrared, 780–3000 nm",
         "skin_irradiance" => "skin band, 380–3000 nm",
-        "background" => "from the room itself (air, walls), counted in no limit",
+        "background" => "the room's own heat, in no limit",
         "envelope_irradiance" => "worst within reach",
         "envelope_near_ir_irradiance" => "near infrared, worst at the eye",
         "envelope_skin_irradiance" => "skin band, worst within reach",

@@ -9,6 +9,7 @@ mod look;
 mod looked;
 mod mouth;
 mod relation;
+mod shade;
 mod solid;
 #[cfg(test)]
 mod tests;
@@ -98,6 +99,21 @@ struct Target {
     less: Option<Solid>,
     /// How each occluder stands to it.
     relations: Vec<Relation>,
+}
+
+/// Says whether two regions overlap: whether they have more in common than
+/// touching, to a millionth of their size. Flat ones overlap in one plane, or
+/// where they run through each other.
+///
+/// Of use to refuse sources and screens that cannot both be there; a scene can
+/// be looked at in spite of many overlaps, and [`Scene::new`] refuses only
+/// those in which it cannot be said what hides what.
+#[must_use]
+pub fn overlap(one: &Region, other: &Region) -> bool {
+    let others = relation::pieces(other);
+    relation::pieces(one)
+        .iter()
+        .any(|piece| others.iter().any(|other| piece.meets(other)))
 }
 
 /// Emitting parts and what hides them.

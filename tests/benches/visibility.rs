@@ -64,8 +64,8 @@ fn plates(mixed: bool) -> Vec<Barrier> {
     }));
     if mixed {
         regions[1] = Region::disc(DVec3::new(-0.1, 2.4, 1.5), DVec3::Y, 0.2).expect("a disc");
-        regions[2] = Region::cylinder(DVec3::new(-0.45, 1.8, 0.0), DVec3::Z * 1.9, 0.15)
-            .expect("a column");
+        regions[2] =
+            Region::cylinder(DVec3::new(-0.45, 1.8, 0.0), DVec3::Z * 1.9, 0.15).expect("a column");
         regions[3] = Region::sphere(DVec3::new(0.6, 2.0, 1.3), 0.2).expect("a ball");
     }
     regions.into_iter().map(Barrier::solid).collect()

@@ -14,6 +14,9 @@ pub struct Row {
     pub tolerance: String,
     pub source: String,
     pub how: String,
+    /// What another solution gave, where the file says so.
+    #[serde(default)]
+    pub own_result: Option<f64>,
 }
 
 impl Row {

@@ -1,6 +1,8 @@
 //! Time to pain on bare skin: the fit of the SFPE guide of 2000 beside the
 //! table of older editions of API 521. Both are recalled, from memory.
 
+use farglow::physics::skin::pain::{Relation, shortest};
+
 use crate::guidance_rows::{self, Row, longest};
 
 /// Holds a row of the file of checks, if it is one of this source's.
@@ -14,6 +16,20 @@ pub fn row(row: &Row) -> bool {
     row.holds("fit", found, row.expected("sfpe_fit_s"), 0.05);
     let table = row.expected("t_s");
     row.holds("table", found, table, 0.12 * table);
+    let by = |relation: Relation| {
+        relation
+            .time(row.input("q_kW_m2") * 1000.0)
+            .expect("a fair irradiance")
+            .unwrap_or_else(|| panic!("{}: {relation:?} is silent", row.id))
+    };
+    // The library's formula and the model's are one; the table is met exactly.
+    row.holds("the same fit", by(Relation::Guide2000), found, 1e-9 * found);
+    row.holds(
+        "the table itself",
+        by(Relation::FlareTable),
+        table,
+        1e-12 * table,
+    );
     true
 }
 
@@ -46,6 +62,34 @@ fn other_figures_are_shorter_as_the_caution_says() {
         assert!(
             dose < found && conservative < found,
             "at {q} kW/m²: {found} s, by dose {dose} s, by Mudan and Croce {conservative} s"
+        );
+    }
+}
+
+/// Source: Stoll and Greene 1959, recalled; API 521, older table, recalled.
+#[test]
+fn shortest_time_is_never_above_any_published_table() {
+    for (q, forearm) in [
+        (4.2, 13.5),
+        (6.3, 7.8),
+        (8.4, 5.5),
+        (12.6, 2.9),
+        (16.8, 2.2),
+    ] {
+        let best = shortest(q * 1000.0).expect("fair").expect("it hurts");
+        assert!(
+            best.time <= forearm,
+            "at {q} kW/m²: {} s by {:?}, in the table {forearm} s",
+            best.time,
+            best.relation
+        );
+    }
+    for (q, flare) in [(1.74, 60.0), (4.73, 16.0), (9.46, 6.0), (19.87, 2.0)] {
+        let best = shortest(q * 1000.0).expect("fair").expect("it hurts");
+        assert!(
+            best.time <= flare,
+            "at {q} kW/m²: {} s against {flare} s",
+            best.time
         );
     }
 }

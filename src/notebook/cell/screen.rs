@@ -146,7 +146,7 @@ pub const EMISSIVITY: f64 = 0.9;
 
 /// Into how many pieces along either side a face is cut for what it sends: each
 /// has one temperature.
-pub const PATCHES: usize = 3;
+pub const PATCHES: usize = 7;
 
 /// How far in front of the plate its faces are taken to lie, m: so near that no
 /// figure shows it, and so far that rounding cannot put them behind the plate.

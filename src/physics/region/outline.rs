@@ -4,7 +4,8 @@ use glam::{DVec2, DVec3};
 
 use super::super::Error;
 use super::super::error::{SHORTEST, place};
-use super::{MOST_VERTICES, distance_to_segment};
+use super::MOST_VERTICES;
+use super::way::distance_to_segment;
 
 /// How far off its plane a vertex may lie, relative to the polygon's extent.
 const FLATNESS: f64 = 1e-9;

@@ -1,6 +1,7 @@
 use std::f64::consts::PI;
 
 use super::*;
+use crate::physics::Error;
 use crate::physics::view::Sight;
 
 fn door() -> Region {

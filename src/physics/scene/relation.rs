@@ -91,23 +91,33 @@ fn to_body_from_flat(solid: &Solid, occluder: &Solid, plane: Plane) -> Relation 
     if occluder.convex {
         return Relation::Overlapping;
     }
-    let (Region::Polygon { vertices, normal } | Region::Plate { vertices, normal }) =
-        &occluder.region
-    else {
-        return Relation::Overlapping;
-    };
-    let mut pieces = Vec::new();
-    for corners in triangles(vertices, *normal) {
-        let piece = Solid::new(Region::Polygon {
-            vertices: corners.to_vec(),
-            normal: *normal,
-        });
-        match piece.parted_from(solid) {
-            Some(parting) => pieces.push((piece, parting)),
-            None => return Relation::Overlapping,
+    let parted = pieces(&occluder.region).into_iter().map(|piece| {
+        let parting = piece.parted_from(solid)?;
+        Some((piece, parting))
+    });
+    parted
+        .collect::<Option<Vec<_>>>()
+        .map_or(Relation::Overlapping, Relation::Pieces)
+}
+
+/// The region in convex pieces: itself, or the triangles of a polygon with dents.
+pub(super) fn pieces(region: &Region) -> Vec<Solid> {
+    let solid = Solid::new(region.clone());
+    match region {
+        Region::Polygon { vertices, normal } | Region::Plate { vertices, normal }
+            if !solid.convex =>
+        {
+            let triangles = triangles(vertices, *normal).into_iter();
+            let piece = |corners: [DVec3; 3]| {
+                Solid::new(Region::Polygon {
+                    vertices: corners.to_vec(),
+                    normal: *normal,
+                })
+            };
+            triangles.map(piece).collect()
         }
+        _ => vec![solid],
     }
-    Relation::Pieces(pieces)
 }
 
 /// A simple polygon as triangles, cut off ear by ear.

@@ -131,6 +131,13 @@ impl Solid {
         }
     }
 
+    /// The same of the hull a millionth smaller about its centre.
+    fn nearest_within(&self, point: DVec3) -> DVec3 {
+        const SHARE: f64 = 1.0 - 1e-6;
+        let there = self.centre + (point - self.centre) / SHARE;
+        self.centre + (self.nearest(there) - self.centre) * SHARE
+    }
+
     /// The outline as seen from a point, and the direction towards which all of
     /// it lies within a right angle; none where it lies edge on, or the point
     /// on it or in it.
@@ -260,14 +267,10 @@ impl Solid {
             return Some(plane);
         }
         // By turns the nearest place of the one and of the other.
-        let shrunk = |solid: &Self, place: DVec3| {
-            let near = solid.nearest(place);
-            near + (solid.centre - near) * 1e-6
-        };
-        let mut there = shrunk(other, self.centre);
+        let mut there = other.nearest_within(self.centre);
         for _ in 0..2000 {
-            let here = shrunk(self, there);
-            there = shrunk(other, here);
+            let here = self.nearest_within(there);
+            there = other.nearest_within(here);
             if let Some(plane) = by(here - there) {
                 return Some(plane);
             }
@@ -276,6 +279,34 @@ impl Solid {
             }
         }
         None
+    }
+}
+
+impl Solid {
+    /// Whether the convex hulls have more in common than touching: by turns the
+    /// nearest place of the one and of the other, both a millionth smaller.
+    pub(super) fn meets(&self, other: &Self) -> bool {
+        let apart = self.centre.distance(other.centre);
+        if apart >= self.radius + other.radius {
+            return false;
+        }
+        let least = self.radius.min(other.radius);
+        let mut there = other.nearest_within(self.centre);
+        let mut last = f64::INFINITY;
+        for _ in 0..5000 {
+            let here = self.nearest_within(there);
+            there = other.nearest_within(here);
+            let gap = here.distance(there);
+            if gap <= 1e-9 * least {
+                return true;
+            }
+            // It only ever shrinks: once it stands still they are apart.
+            if gap > last * (1.0 - 1e-9) {
+                return false;
+            }
+            last = gap;
+        }
+        last <= 1e-7 * least
     }
 }
 

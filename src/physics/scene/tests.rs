@@ -583,3 +583,122 @@ fn impossible_scenes_are_refused_by_place() {
             .sum::<f64>()
     );
 }
+
+#[test]
+fn regions_overlap_where_they_have_more_in_common_than_touching() {
+    let ball = |x: f64| Region::sphere(DVec3::X * x, 1.0).expect("a ball");
+    let bar = |x: f64| Region::cylinder(at(x, 0.0, -1.0), DVec3::Z * 2.0, 0.5).expect("a bar");
+    let dented = || {
+        let points = [
+            [-1.0, -1.0],
+            [1.0, -1.0],
+            [1.0, 1.0],
+            [0.0, -0.5],
+            [-1.0, 1.0],
+        ];
+        Region::outline(DVec3::ZERO, DVec3::Y, DVec3::Z, &points).expect("a dented plate")
+    };
+    let floor =
+        |z: f64| Region::rectangle(DVec3::Z * z, DVec3::Z, DVec3::X, 4.0, 4.0).expect("a floor");
+    for (name, one, other, expected) in [
+        ("balls that touch", ball(0.0), ball(2.0), false),
+        ("balls that overlap", ball(0.0), ball(1.99), true),
+        ("a ball beside a bar", ball(0.0), bar(1.6), false),
+        ("a ball into a bar", ball(0.0), bar(1.4), true),
+        ("a bar on a floor", bar(0.0), floor(-1.0), false),
+        ("a bar through a floor", bar(0.0), floor(-0.9), true),
+        (
+            "doors side by side",
+            upright(0.0, 0.0, 0.0, 1.0, 1.0),
+            upright(1.0, 0.0, 0.0, 1.0, 1.0),
+            false,
+        ),
+        (
+            "doors that overlap",
+            upright(0.0, 0.0, 0.0, 1.0, 1.0),
+            upright(0.9, 0.0, 0.3, 1.0, 1.0),
+            true,
+        ),
+        (
+            "doors one behind the other",
+            upright(0.0, 0.0, 0.0, 1.0, 1.0),
+            upright(0.0, 0.001, 0.0, 1.0, 1.0),
+            false,
+        ),
+        (
+            "plates that cross",
+            door(),
+            Region::rectangle(DVec3::ZERO, DVec3::X, DVec3::Z, 1.0, 1.0).expect("a plate"),
+            true,
+        ),
+        (
+            "a ball in a dent",
+            Region::sphere(at(0.0, 0.0, 0.8), 0.3).expect("a ball"),
+            dented(),
+            false,
+        ),
+        (
+            "a ball in the plate",
+            Region::sphere(at(0.0, 0.0, -0.5), 0.3).expect("a ball"),
+            dented(),
+            true,
+        ),
+        ("a disc in a disc", round(0.0, 1.0), round(0.0, 0.2), true),
+        ("a disc in a ball", round(0.1, 0.2), ball(0.0), true),
+    ] {
+        assert_eq!(overlap(&one, &other), expected, "{name}");
+        assert_eq!(
+            overlap(&other, &one),
+            expected,
+            "{name}, the other way round"
+        );
+    }
+}
+
+/// A plate with a dent round a ball, part of it before the ball and part behind.
+#[test]
+fn a_plate_with_a_dent_round_a_ball_hides_and_is_hidden() {
+    let points = [
+        [-1.0, -1.0],
+        [1.0, -1.0],
+        [1.0, 1.0],
+        [0.5, 1.0],
+        [0.5, -0.5],
+        [-0.5, -0.5],
+        [-0.5, 1.0],
+        [-1.0, 1.0],
+    ];
+    let plate = Region::outline(DVec3::ZERO, at(1.0, 1.0, 0.0), DVec3::Z, &points)
+        .expect("a plate with a dent");
+    let ball = Region::sphere(at(0.0, 0.0, 0.2), 0.4).expect("a ball");
+    let point = at(-0.6, 4.0, 0.1);
+    let looked = look(ball.clone(), vec![plate.clone()], point);
+    let found = flux(&looked, 0);
+    // The same of the three bars of which the plate consists.
+    let along = DVec3::Z.cross(at(1.0, 1.0, 0.0).normalize());
+    let bar = |x: f64, z: f64, width: f64, height: f64| {
+        Region::rectangle(
+            along * x + DVec3::Z * z,
+            at(1.0, 1.0, 0.0),
+            DVec3::Z,
+            width,
+            height,
+        )
+        .expect("a bar")
+    };
+    let bars = vec![
+        bar(-0.75, 0.0, 0.5, 2.0),
+        bar(0.75, 0.0, 0.5, 2.0),
+        bar(0.0, -0.75, 1.0, 0.5),
+    ];
+    let expected = flux(&look(ball.clone(), bars, point), 0);
+    assert!(
+        (found - expected).length() < 1e-13,
+        "{found} against {expected}"
+    );
+    let all = alone(&ball, point);
+    assert!(
+        found.length() < all.length() * (1.0 - 1e-3),
+        "{found} of {all}"
+    );
+}
