@@ -1,9 +1,10 @@
 //! What still stops a worksheet from being issued as final.
 
 use super::caution::{is_assessed, is_unconfirmed, unconfirmed_limits};
-use super::cell::{Form, Kind};
+use super::cell::{Cell, Form, Kind, Need};
 use super::date;
-use super::engine::Engine;
+use super::datum::Datum;
+use super::engine::{Engine, Slot};
 use super::listed;
 use super::results::{CellResult, State};
 use crate::guidance::{Library, Limit};
@@ -223,6 +224,26 @@ const BASED: [(Kind, &[&str]); 4] = [
     (Kind::Position, &["x", "y", "distance"]),
 ];
 
+/// Returns whether an input says that there is none of it: no wall, no
+/// freeboard, no tilt. That needs no basis.
+fn is_none(engine: &Engine, place: usize, cell: &Cell, name: &str) -> bool {
+    let value = engine
+        .id(place)
+        .zip(cell.kind.field(name))
+        .and_then(|(id, spec)| engine.value_of(id, Slot::Field(spec.name)));
+    matches!(spec_default(cell, name), Some("0 m" | "0 °"))
+        && value
+            .and_then(Datum::as_quantity)
+            .is_some_and(|quantity| quantity.si == 0.0)
+}
+
+fn spec_default(cell: &Cell, name: &str) -> Option<&'static str> {
+    match cell.kind.field(name)?.need {
+        Need::Default(text) => Some(text),
+        Need::Required | Need::Optional => None,
+    }
+}
+
 fn baseless(engine: &Engine, items: &mut Vec<Item>) {
     for (place, cell) in engine.notebook().cells.iter().enumerate() {
         let Some((_, fields)) = BASED.iter().find(|(kind, _)| *kind == cell.kind) else {
@@ -230,6 +251,8 @@ fn baseless(engine: &Engine, items: &mut Vec<Item>) {
         };
         let missing: Vec<String> = fields
             .iter()
+            .filter(|name| cell.field(name).is_some())
+            .filter(|name| !is_none(engine, place, cell, name))
             .filter(|name| {
                 let typed = engine
                     .id(place)

@@ -2,7 +2,8 @@
 
 use crate::rows::{self, Row, Work};
 use crate::{
-    blackbody_tables, cavities, defining_constants, fixed_points, quadrature_of_planck, shields, shop_air, textbook_examples, thick_openings, view_factor_catalogue,
+    blackbody_tables, cavities, defining_constants, fixed_points, quadrature_of_planck, shields,
+    shop_air, textbook_examples, thick_openings, view_factor_catalogue,
 };
 
 /// The families that run, with what works their rows out.

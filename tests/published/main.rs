@@ -5,8 +5,8 @@ mod guidance_rows;
 mod rows;
 
 mod blackbody_tables;
-mod cavities;
 mod burns;
+mod cavities;
 mod common_practice;
 mod defining_constants;
 mod directive_2006_25;

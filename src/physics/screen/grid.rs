@@ -27,42 +27,53 @@ pub(super) struct Grid {
 /// only weighs how finely a screen is cut.
 const NOMINAL: f64 = 2000.0;
 
+/// Where a screen is looked from to find how finely it must be cut, from −1 to 1
+/// along either side.
+const PLACES: [f64; 5] = [-0.98, -2.0 / 3.0, 0.0, 2.0 / 3.0, 0.98];
+
 /// Differences below this, W/m², do not matter.
 const LITTLE: f64 = 200.0;
 
 impl Grid {
     /// Cuts a screen as finely as what it sees asks for.
     ///
-    /// From nine places it is found how much what is absorbed differs along each
-    /// side: by less than 1 % there is one piece along it, less than 10 % three,
-    /// less than 50 % five, else seven.
+    /// From places in the middle and near every edge it is found how much what is
+    /// absorbed differs along each side: by less than 1 % there is one piece
+    /// along it, less than 10 % three, less than 50 % five, else seven. A rim or
+    /// another screen may leave a strip along an edge alone in the heat, which
+    /// places in the middle of pieces would miss.
     pub(super) fn new(
         around: &Surroundings<'_>,
         screens: &[Screen],
         index: usize,
     ) -> Result<Self, Error> {
         let coarse = Self::of(around, screens, index, 3, 3)?;
-        let values: Vec<f64> = coarse
-            .pieces
-            .iter()
-            .map(|piece| {
-                piece.outlook.iter().fold(0.0, |sum, outlook| {
-                    sum + outlook.absorbed + NOMINAL * outlook.long.iter().sum::<f64>()
-                })
+        let weighed = |outlooks: &[Outlook; 2]| {
+            outlooks.iter().fold(0.0, |sum, outlook| {
+                sum + outlook.absorbed + NOMINAL * outlook.long.iter().sum::<f64>()
             })
-            .collect();
-        let scale = (values.iter().sum::<f64>() / 9.0).max(LITTLE);
-        let spread = |places: [usize; 3]| {
-            let of = places.map(|place| values[place]);
-            let most = of
-                .iter()
-                .fold(f64::NEG_INFINITY, |most, value| most.max(*value));
-            let least = of
-                .iter()
-                .fold(f64::INFINITY, |least, value| least.min(*value));
+        };
+        let screen = &screens[index];
+        let mut values = [[f64::NAN; PLACES.len()]; PLACES.len()];
+        for (row, up) in values.iter_mut().zip(PLACES) {
+            for (value, aside) in row.iter_mut().zip(PLACES) {
+                let place = screen.centre + screen.side * aside + screen.up * up;
+                // A place on something else is no place on the screen.
+                if let Ok(outlooks) = around.outlook(index, place) {
+                    *value = weighed(&outlooks);
+                }
+            }
+        }
+        let known = values.iter().flatten().filter(|value| value.is_finite());
+        let (sum, count) = known.fold((0.0, 0.0), |(sum, count), value| (sum + value, count + 1.0));
+        let scale = (sum / f64::max(count, 1.0)).max(LITTLE);
+        let spread = |of: [f64; PLACES.len()]| {
+            // What is not known is passed over by both.
+            let most = of.into_iter().fold(f64::NEG_INFINITY, f64::max);
+            let least = of.into_iter().fold(f64::INFINITY, f64::min);
             (most - least) / scale
         };
-        let needed = |lines: [[usize; 3]; 3]| {
+        let needed = |lines: [[f64; PLACES.len()]; PLACES.len()]| {
             let most = lines.into_iter().map(spread).fold(0.0, f64::max);
             match most {
                 _ if most < 0.01 => 1,
@@ -71,8 +82,8 @@ impl Grid {
                 _ => 7,
             }
         };
-        let columns = needed([[0, 1, 2], [3, 4, 5], [6, 7, 8]]);
-        let rows = needed([[0, 3, 6], [1, 4, 7], [2, 5, 8]]);
+        let turned = std::array::from_fn(|column| std::array::from_fn(|row| values[row][column]));
+        let (columns, rows) = (needed(values), needed(turned));
         if columns == 3 && rows == 3 {
             return Ok(coarse);
         }

@@ -208,12 +208,6 @@ impl Track {
     }
 
     /// Narrows a crossing between two stops down, and returns its outer side.
-    ///
-    /// The Illinois variant of the regula falsi (Dowell and Jarratt 1971) on
-    /// the logarithms of distance and of exposure over limit, which make a
-    /// nearly straight line; each guess but the first is aimed a little beyond
-    /// the crossing, so that it closes it in. Halving where a source is touched
-    /// or the steps stay large.
     fn narrow(&self, inside: &Stop, outside: &Stop, rule: &Rule<'_>) -> f64 {
         let height = |views: Option<&Views>| rule.height(rule.exposure(views));
         let whole = |distance| height(self.line.look(distance).as_ref());
@@ -239,40 +233,44 @@ impl Track {
 
 /// Closes a crossing in between a place inside and one outside, each with the
 /// logarithm of exposure over limit, and returns its outer side.
+///
+/// The Illinois variant of the regula falsi (Dowell and Jarratt 1971) on the
+/// logarithms of distance and of exposure over limit, which make a nearly
+/// straight line; each guess but the first is aimed a little beyond the
+/// crossing, so that it closes it in. Halving where a source is touched or the
+/// steps stay large.
 fn close_in(inside: (f64, f64), outside: (f64, f64), between: impl Fn(f64) -> f64) -> f64 {
-    {
-        const WIDTH: f64 = 1e-4;
-        let (mut a, mut fa) = inside;
-        let (mut b, mut fb) = outside;
-        let (mut side, mut beyond) = (0_i8, 0.0);
-        for round in 0..100 {
-            if b - a <= WIDTH {
-                break;
-            }
-            let straight = (b.ln() - fb * (b.ln() - a.ln()) / (fb - fa)).exp() + beyond;
-            let margin = 0.25 * WIDTH;
-            let next = if round % 4 < 3 && straight.is_finite() {
-                straight.clamp(a + margin, b - margin)
-            } else {
-                0.5 * (a + b)
-            };
-            let f = between(next);
-            if f > 0.0 {
-                (a, fa) = (next, f);
-                if side == 1 {
-                    fb /= 2.0;
-                }
-                (side, beyond) = (1, 0.4 * WIDTH);
-            } else {
-                (b, fb) = (next, f);
-                if side == -1 {
-                    fa /= 2.0;
-                }
-                (side, beyond) = (-1, -0.4 * WIDTH);
-            }
+    const WIDTH: f64 = 1e-4;
+    let (mut a, mut fa) = inside;
+    let (mut b, mut fb) = outside;
+    let (mut side, mut beyond) = (0_i8, 0.0);
+    for round in 0..100 {
+        if b - a <= WIDTH {
+            break;
         }
-        b
+        let straight = (b.ln() - fb * (b.ln() - a.ln()) / (fb - fa)).exp() + beyond;
+        let margin = 0.25 * WIDTH;
+        let next = if round % 4 < 3 && straight.is_finite() {
+            straight.clamp(a + margin, b - margin)
+        } else {
+            0.5 * (a + b)
+        };
+        let f = between(next);
+        if f > 0.0 {
+            (a, fa) = (next, f);
+            if side == 1 {
+                fb /= 2.0;
+            }
+            (side, beyond) = (1, 0.4 * WIDTH);
+        } else {
+            (b, fb) = (next, f);
+            if side == -1 {
+                fa /= 2.0;
+            }
+            (side, beyond) = (-1, -0.4 * WIDTH);
+        }
     }
+    b
 }
 
 #[cfg(test)]
