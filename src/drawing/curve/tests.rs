@@ -364,7 +364,7 @@ fn a_screen_and_the_ground_behind_it_are_drawn_and_named() {
         assert!(texts.contains(&words), "{words} not in {texts:?}");
     }
     let axes = Axes::of(&curve, 493.0, 300.0).expect("there is something to draw");
-    let hatched = picture.marks.iter().filter_map(|mark| match mark {
+    let mut hatched = picture.marks.iter().filter_map(|mark| match mark {
         Mark::Area {
             outline,
             hatch: Some(hatch),
@@ -373,7 +373,7 @@ fn a_screen_and_the_ground_behind_it_are_drawn_and_named() {
         _ => None,
     });
     // The sample of the legend comes first.
-    let found = hatched.last().expect("the ground is hatched");
+    let found = hatched.next_back().expect("the ground is hatched");
     let expected = [1.4, 4.4].map(|d| axes.place(d, 500.0).expect("it is on the plot").x);
     assert!(
         (found.0 - expected[0]).abs() < 1e-9 && (found.1 - expected[1]).abs() < 1e-9,

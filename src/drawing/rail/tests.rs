@@ -508,7 +508,7 @@ fn a_screen_has_a_flag_and_the_ground_behind_it_is_hatched() {
             outline,
             hatch: Some(hatch),
             ..
-        } if hatch.spacing == HIDDEN.spacing => Some(outline[1].x - outline[0].x),
+        } if (hatch.spacing - HIDDEN.spacing).abs() < 1e-9 => Some(outline[1].x - outline[0].x),
         _ => None,
     });
     let (got, expected) = (hatched.expect("the ground is hatched"), 3.0 * scale);
