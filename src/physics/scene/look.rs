@@ -28,7 +28,7 @@ impl Scene {
     /// # Accuracy
     ///
     /// Where nothing hides a part its view is that of
-    /// [`Region::view`](super::region::Region::view). Else the edges that remain
+    /// [`Region::view`](crate::physics::region::Region::view). Else the edges that remain
     /// are exact; the factor's absolute error is below `1e-12` of the
     /// unobstructed one. Two exceptions: a cylinder that pierces the plane of a
     /// flat part, within the part's outline and not square to it, is cut there
