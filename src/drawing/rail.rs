@@ -4,6 +4,7 @@
 //! No flag covers another, and everything can be read without colour: pins and
 //! findings by shape and word, shading by its steps and their legend.
 
+mod cover;
 mod data;
 mod line;
 mod plan;

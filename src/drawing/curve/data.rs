@@ -5,10 +5,12 @@ use super::comparison::value_at;
 use super::{Crossing, Curve, InverseSquare, LimitLine, Marker, drawable};
 use crate::drawing::mark::Shape;
 use crate::drawing::measure::Measure;
-use crate::notebook::cell::position::Band;
+use crate::drawing::rail::{Line, Probe};
+use crate::drawing::screen::{Screen, Shadow};
+use crate::notebook::cell::position::{Band, Orientation};
 use crate::notebook::cell::zone::Extent;
 use crate::notebook::cell::{Cell, Kind};
-use crate::notebook::datum::Datum;
+use crate::notebook::datum::{CellId, Datum};
 use crate::notebook::engine::{Engine, Slot};
 use crate::notebook::results::{CellResult, Results, Shown, sights, worst_word};
 use crate::units::format::{self, Rounding};
@@ -48,6 +50,7 @@ impl Curve {
             .map_or_else(String::new, |z| format!(", at {}", measure.height(z.si)));
         let positions = positions(engine, results, cell, column);
         let (length, irradiance) = (measure.length(), measure.irradiance());
+        let (screens, shadows) = cover(engine, cell.id, &rows);
         Curve {
             band,
             title: format!("{}: from {from}{height}", cell.name),
@@ -68,13 +71,24 @@ impl Curve {
             inverse_square: inverse_square(&rows, &positions, measure),
             limits,
             positions,
-            screens: Vec::new(),
-            shadows: Vec::new(),
+            screens,
+            shadows,
             rows,
             upper,
             number: |value| format::significant(value, 1, Rounding::Nearest),
         }
     }
+}
+
+/// Returns what stands across the curve's line between its ends.
+fn cover(engine: &Engine, id: CellId, rows: &[(f64, f64)]) -> (Vec<Screen>, Vec<Shadow>) {
+    let ends = rows.first().zip(rows.last());
+    let found = ends.and_then(|(first, last)| {
+        let line = Line::of(engine, id)?.at_height_of(engine, id);
+        let probe = Probe::new(engine, &line, Orientation::Strongest)?;
+        Some(probe.cover(first.0, last.0))
+    });
+    found.unwrap_or_default()
 }
 
 /// Returns the inverse square that goes on from the nearest position on the

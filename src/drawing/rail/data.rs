@@ -210,6 +210,16 @@ impl Rail {
             .chain(self.stands.iter().map(|stand| stand.distance));
         // Flags read to the right of their poles: the ruler goes on beyond.
         let reach = flags.fold(LEAST, f64::max) * 2.2;
+        let (screens, shadows) = probe.cover(edge, edge + reach);
+        self.screens = screens;
+        self.shadows = shadows;
+        for screen in &mut self.screens {
+            screen.distance -= edge;
+        }
+        for shadow in &mut self.shadows {
+            shadow.from -= edge;
+            shadow.to -= edge;
+        }
         let shading = match held {
             Some(known) if known.holds(&probe, edge, reach, band, self.measure) => known,
             _ => held.insert(Shading::new(probe, edge, reach, band, self.measure)),

@@ -237,6 +237,21 @@ impl Probe {
         })
     }
 
+    /// Where all is that emits and that hides.
+    pub(super) fn form(&self) -> &Form {
+        &self.form
+    }
+
+    /// The centre of the line's source, and the way of the line, a unit vector.
+    pub(super) fn way(&self) -> (DVec3, DVec3) {
+        (self.origin, self.ahead)
+    }
+
+    /// The point that is looked from at a distance in metres from the centre.
+    pub(super) fn point(&self, distance: f64) -> DVec3 {
+        (self.origin + self.ahead * distance).with_z(self.height)
+    }
+
     /// Returns whether two probes read the same everywhere.
     #[must_use]
     pub fn same(&self, other: &Probe) -> bool {
@@ -252,8 +267,7 @@ impl Probe {
     /// source; `None` inside a source.
     #[must_use]
     pub fn read(&self, distance: f64) -> Option<Reading> {
-        let point = (self.origin + self.ahead * distance).with_z(self.height);
-        let views = Views::standing(&self.form, vec![point]).ok()?;
+        let views = Views::standing(&self.form, vec![self.point(distance)]).ok()?;
         let [total, near_infrared, skin] = Band::ALL.map(|band| {
             views
                 .irradiance(0, self.orientation, &self.heat.judged(band))

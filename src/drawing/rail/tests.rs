@@ -544,3 +544,50 @@ fn thousands_of_flags_are_left_out_at_once_and_counted() {
         "{texts:?}"
     );
 }
+
+/// The way over the plate's upper edge by similar triangles: the door's lower
+/// edge, 0.85 m up, is lost to an eye at 1.60 m over an edge at 1.30 m and 2 m
+/// off from 0.75 · 2 / 0.45 m on.
+#[test]
+fn the_ground_behind_a_plate_begins_where_the_lower_edge_is_lost() {
+    use crate::drawing::curve::Curve;
+    let cells = |plate: &str| {
+        format!(
+            r#"{{"farglow": 1, "cells": [
+            {{"kind": "source", "name": "door", "form": "opening", "outline": "rectangle",
+              "width": "0.9 m", "height": "0.7 m", "temperature": "1250 °C",
+              "emissivity": "0.95", "z": "1.20 m"}},
+            {{"kind": "curve", "name": "falloff", "from": "door", "nearest": "0.5 m",
+              "farthest": "8 m", "points": 20}}{plate}]}}"#
+        )
+    };
+    let (engine, results) = worked_out(&cells(
+        r#", {"kind": "screen", "name": "plate", "make": "solid", "width": "3 m",
+              "height": "1.3 m", "y": "2 m", "z": "0.65 m", "heading": "180 °"}"#,
+    ));
+    let falloff = results.cell("falloff").expect("it has a curve");
+    let line = Line::of(&engine, falloff.id).expect("a curve has a line");
+    let rail = Rail::of(&engine, &results, &line, Measure::Metric).expect("no fault");
+    let curve = Curve::of(&engine, &results, falloff, Measure::Metric);
+    for (screens, shadows) in [
+        (&rail.screens, &rail.shadows),
+        (&curve.screens, &curve.shadows),
+    ] {
+        let [screen] = &screens[..] else {
+            panic!("one screen, found {screens:?}")
+        };
+        assert!((screen.distance - 2.0).abs() < 1e-9, "{screen:?}");
+        let [shadow] = &shadows[..] else {
+            panic!("one shadow, found {shadows:?}")
+        };
+        let begins = 0.75 * 2.0 / 0.45;
+        assert!(
+            (shadow.from - begins).abs() < 0.02 && shadow.to == f64::INFINITY,
+            "{shadow:?}, wanted from {begins} m on"
+        );
+    }
+    // Without the plate nothing is said of one.
+    let (engine, results) = worked_out(&cells(""));
+    let rail = Rail::of(&engine, &results, &line, Measure::Metric).expect("no fault");
+    assert!(rail.screens.is_empty() && rail.shadows.is_empty());
+}

@@ -1,0 +1,162 @@
+//! What stands across a line and hides a source from its ground.
+
+use std::sync::Arc;
+
+use glam::DVec3;
+
+use super::line::Probe;
+use crate::drawing::screen::{Screen, Shadow};
+use crate::notebook::cell::position::Views;
+use crate::notebook::scene::Form;
+use crate::physics::region::Region;
+
+/// Into how many steps the line is cut to find where a source is hidden: no
+/// stretch that shows on paper is passed over.
+const STEPS: u32 = 160;
+
+/// How often a step is halved to find where hiding begins.
+const HALVINGS: u32 = 10;
+
+/// A source of which less than this share is hidden is not called so.
+const SOME: f64 = 1e-3;
+
+impl Probe {
+    /// Returns the screens that stand across the line, nearest first, and the
+    /// stretches of its ground from which some of a source is hidden by what is
+    /// solid, sources in file order.
+    ///
+    /// Distances in metres from the centre of the line's source; only what lies
+    /// between `from` and `to` is looked for. A shadow that reaches `to` does
+    /// not end.
+    #[must_use]
+    pub fn cover(&self, from: f64, to: f64) -> (Vec<Screen>, Vec<Shadow>) {
+        let form = self.form();
+        let mut screens = Vec::new();
+        for (name, shape) in form.names.iter().zip(&form.shapes) {
+            if shape.is_source() {
+                continue;
+            }
+            if let Some(distance) = self.crossing(&shape.region).filter(|d| *d > 0.0 && *d < to) {
+                screens.push(Screen {
+                    cell: name.to_string(),
+                    label: name.to_string(),
+                    distance,
+                });
+            }
+        }
+        screens.sort_by(|one, other| one.distance.total_cmp(&other.distance));
+        let shadows = if form.is_plain() || !(from < to) {
+            Vec::new()
+        } else {
+            self.shadows(from, to)
+        };
+        (screens, shadows)
+    }
+
+    /// Where a flat outline meets the upright plane through the line: the middle
+    /// of what lies in it.
+    fn crossing(&self, region: &Region) -> Option<f64> {
+        let (Region::Polygon { vertices, .. } | Region::Plate { vertices, .. }) = region else {
+            return None;
+        };
+        let (origin, ahead) = self.way();
+        let aside = ahead.cross(DVec3::Z);
+        let place = |vertex: DVec3| {
+            let off = vertex - origin;
+            (off.dot(ahead), off.dot(aside))
+        };
+        let (mut low, mut high) = (f64::INFINITY, f64::NEG_INFINITY);
+        let mut last = place(*vertices.last()?);
+        for vertex in vertices {
+            let next = place(*vertex);
+            if (last.1 <= 0.0) != (next.1 <= 0.0) {
+                let share = last.1 / (last.1 - next.1);
+                let at = last.0 + (next.0 - last.0) * share;
+                (low, high) = (low.min(at), high.max(at));
+            }
+            last = next;
+        }
+        (low <= high).then(|| 0.5 * (low + high))
+    }
+
+    fn shadows(&self, from: f64, to: f64) -> Vec<Shadow> {
+        let form = self.form();
+        let sources: Vec<usize> = (0..form.shapes.len())
+            .filter(|at| form.shapes[*at].is_source())
+            .collect();
+        // The same scene with nothing in the way but the sources themselves.
+        let alone: Vec<Form> = sources
+            .iter()
+            .map_while(|at| {
+                let (names, shapes) = (&form.names, &form.shapes);
+                Form::new(
+                    vec![Arc::clone(&names[*at])],
+                    vec![Arc::clone(&shapes[*at])],
+                    false,
+                )
+                .ok()
+            })
+            .collect();
+        if alone.len() != sources.len() {
+            return Vec::new();
+        }
+        let hidden = |distance: f64| -> Vec<bool> {
+            let point = vec![self.point(distance)];
+            let Ok(views) = Views::standing(form, point.clone()) else {
+                return vec![false; sources.len()];
+            };
+            let mut seen = vec![DVec3::ZERO; form.shapes.len()];
+            for (part, view) in views.parts(0) {
+                seen[form.owner(part)] += view.flux();
+            }
+            let whole = alone.iter().map(|alone| {
+                let views = Views::standing(alone, point.clone()).ok()?;
+                Some(views.parts(0).map(|(_, view)| view.flux()).sum::<DVec3>())
+            });
+            whole
+                .zip(&sources)
+                .map(|(whole, at)| {
+                    whole.is_some_and(|whole| seen[*at].length() < whole.length() * (1.0 - SOME))
+                })
+                .collect()
+        };
+        let place = |step: u32| from + (to - from) * f64::from(step) / f64::from(STEPS);
+        let looks: Vec<Vec<bool>> = (0..=STEPS).map(|step| hidden(place(step))).collect();
+        let edge = |source: usize, mut low: f64, mut high: f64, begins: bool| {
+            for _ in 0..HALVINGS {
+                let middle = 0.5 * (low + high);
+                if hidden(middle)[source] == begins {
+                    high = middle;
+                } else {
+                    low = middle;
+                }
+            }
+            0.5 * (low + high)
+        };
+        let mut shadows = Vec::new();
+        for (source, at) in sources.iter().enumerate() {
+            let mut start = looks[0][source].then_some(from);
+            for step in 1..=STEPS {
+                let (before, now) = (step - 1, step);
+                let is = looks[now as usize][source];
+                if is && start.is_none() {
+                    start = Some(edge(source, place(before), place(now), true));
+                } else if !is && let Some(begin) = start.take() {
+                    shadows.push(Shadow {
+                        from: begin,
+                        to: edge(source, place(before), place(now), false),
+                        source: form.names[*at].to_string(),
+                    });
+                }
+            }
+            if let Some(begin) = start {
+                shadows.push(Shadow {
+                    from: begin,
+                    to: f64::INFINITY,
+                    source: form.names[*at].to_string(),
+                });
+            }
+        }
+        shadows
+    }
+}
