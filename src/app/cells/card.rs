@@ -15,6 +15,9 @@ use crate::notebook::results::CellResult;
 /// The space around what is in a card.
 const AROUND: f32 = 14.0;
 
+/// The space between what stands below one another in a card.
+const BETWEEN: f32 = 2.0;
+
 /// The widest that a result gets, and the space beside it.
 const FIGURE: f32 = 170.0;
 const BESIDE: f32 = 12.0;
@@ -59,34 +62,35 @@ pub fn view<'a>(
     };
     let told = figure::told(&shared, cell, result);
     let kind = theme::words(cell.kind.name(), SMALL, Role::Muted, look);
-    let mut body = column![kind, card.first(&told)].spacing(2);
+    let first = card.first(&told);
+    let mut said = column![].spacing(BETWEEN);
     if let Some(origin) = card.origin() {
-        body = body.push(theme::words(origin, SMALL, Role::Muted, look));
+        said = said.push(theme::words(origin, SMALL, Role::Muted, look));
     }
     for line in told.lines {
-        body = body.push(theme::words(line, SMALL, Role::Muted, look));
+        said = said.push(theme::words(line, SMALL, Role::Muted, look));
     }
     for finding in told.findings {
-        body = body.push(found::finding(finding, look));
+        said = said.push(found::finding(finding, look));
     }
     if cell.kind == Kind::Assessment && selected && shared.fresh {
         for limit in figure::limits(&shared, result) {
-            body = body.push(found::limit(limit, look));
+            said = said.push(found::limit(limit, look));
         }
     }
-    body = body.push(found::state(cell, result, look));
-    if let Some(strip) = card.editing() {
-        body = body.push(strip);
-    }
-    if selected {
-        body = body.push(card.others());
-    }
-    if !result.cautions.is_empty() {
-        body = body.push(found::cautions(result, selected, look));
-    }
-    if selected {
-        body = body.push(card.foot());
-    }
+    said = said.push(found::state(cell, result, look));
+    // Each part has a place of its own, empty or not: what is said of a cell
+    // comes and goes with every letter that is typed, and a field that moved to
+    // another place would lose the rest of the word.
+    let body = column![
+        kind,
+        below(Some(first)),
+        below(Some(said.into())),
+        below(card.editing()),
+        below(selected.then(|| card.others())),
+        below((!result.cautions.is_empty()).then(|| found::cautions(result, selected, look))),
+        below(selected.then(|| card.foot())),
+    ];
     mouse_area(
         container(body)
             .padding([9.0, AROUND])
@@ -95,6 +99,16 @@ pub fn view<'a>(
     )
     .on_press(Message::Select(result.id))
     .into()
+}
+
+/// A part of a card below another, or nothing in its place.
+fn below<'a>(part: Option<Element<'a, Message>>) -> Element<'a, Message> {
+    match part {
+        Some(part) => container(part)
+            .padding(iced::Padding::ZERO.top(BETWEEN))
+            .into(),
+        None => space().into(),
+    }
 }
 
 impl<'a> Card<'a, '_> {
@@ -130,7 +144,14 @@ impl<'a> Card<'a, '_> {
     fn first(&self, told: &Told) -> Element<'a, Message> {
         let look = self.shared.look;
         let Some(large) = told.large.clone() else {
-            return self.sentence(self.inner);
+            // As with a figure, so that a field being typed into stays where it
+            // is when the figure goes.
+            let sentence = self.sentence(self.inner);
+            return if self.inner < NARROW {
+                column![sentence, space()].into()
+            } else {
+                row![sentence, space()].into()
+            };
         };
         let ink = if self.shared.fresh {
             Role::Ink
