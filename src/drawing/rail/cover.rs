@@ -7,8 +7,8 @@ use glam::DVec3;
 use super::line::Probe;
 use crate::drawing::screen::{Screen, Shadow};
 use crate::notebook::cell::position::Views;
+use crate::notebook::cell::source::Shape;
 use crate::notebook::scene::Form;
-use crate::physics::region::Region;
 
 /// Into how many steps the line is cut to find where a source is hidden: no
 /// stretch that shows on paper is passed over.
@@ -36,7 +36,7 @@ impl Probe {
             if shape.is_source() {
                 continue;
             }
-            if let Some(distance) = self.crossing(&shape.region).filter(|d| *d > 0.0 && *d < to) {
+            if let Some(distance) = self.crossing(shape).filter(|d| *d > 0.0 && *d < to) {
                 screens.push(Screen {
                     cell: name.to_string(),
                     label: name.to_string(),
@@ -53,12 +53,14 @@ impl Probe {
         (screens, shadows)
     }
 
-    /// Where a flat outline meets the upright plane through the line: the middle
-    /// of what lies in it.
-    fn crossing(&self, region: &Region) -> Option<f64> {
-        let (Region::Polygon { vertices, .. } | Region::Plate { vertices, .. }) = region else {
-            return None;
-        };
+    /// Where a screen meets the upright plane through the line: the middle of
+    /// what lies in it.
+    fn crossing(&self, screen: &Shape) -> Option<f64> {
+        let frame = screen.frame.as_ref()?;
+        let across = frame.up.cross(frame.normal) * (0.5 * frame.width);
+        let up = frame.up * (0.5 * frame.height);
+        let corners = [-across - up, across - up, across + up, up - across]
+            .map(|corner| screen.centre + corner);
         let (origin, ahead) = self.way();
         let aside = ahead.cross(DVec3::Z);
         let place = |vertex: DVec3| {
@@ -66,9 +68,9 @@ impl Probe {
             (off.dot(ahead), off.dot(aside))
         };
         let (mut low, mut high) = (f64::INFINITY, f64::NEG_INFINITY);
-        let mut last = place(*vertices.last()?);
-        for vertex in vertices {
-            let next = place(*vertex);
+        let mut last = place(corners[3]);
+        for corner in corners {
+            let next = place(corner);
             if (last.1 <= 0.0) != (next.1 <= 0.0) {
                 let share = last.1 / (last.1 - next.1);
                 let at = last.0 + (next.0 - last.0) * share;
