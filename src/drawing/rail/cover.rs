@@ -22,8 +22,8 @@ const SOME: f64 = 1e-3;
 
 impl Probe {
     /// Returns the screens that stand across the line, nearest first, and the
-    /// stretches of its ground from which some of a source is hidden by what is
-    /// solid, sources in file order.
+    /// stretches of its ground from which solid screens hide some of a source,
+    /// sources in file order.
     ///
     /// Distances in metres from the centre of the line's source; only what lies
     /// between `from` and `to` is looked for. A shadow that reaches `to` does
@@ -45,7 +45,8 @@ impl Probe {
             }
         }
         screens.sort_by(|one, other| one.distance.total_cmp(&other.distance));
-        let shadows = if form.is_plain() || !(from < to) {
+        let screened = form.shapes.iter().any(|shape| !shape.is_source());
+        let shadows = if !screened || from >= to {
             Vec::new()
         } else {
             self.shadows(from, to)
@@ -78,7 +79,7 @@ impl Probe {
             }
             last = next;
         }
-        (low <= high).then(|| 0.5 * (low + high))
+        (low <= high).then_some(0.5 * (low + high))
     }
 
     fn shadows(&self, from: f64, to: f64) -> Vec<Shadow> {
@@ -86,40 +87,28 @@ impl Probe {
         let sources: Vec<usize> = (0..form.shapes.len())
             .filter(|at| form.shapes[*at].is_source())
             .collect();
-        // The same scene with nothing in the way but the sources themselves.
-        let alone: Vec<Form> = sources
-            .iter()
-            .map_while(|at| {
-                let (names, shapes) = (&form.names, &form.shapes);
-                Form::new(
-                    vec![Arc::clone(&names[*at])],
-                    vec![Arc::clone(&shapes[*at])],
-                    false,
-                )
-                .ok()
-            })
-            .collect();
-        if alone.len() != sources.len() {
+        // The same scene without its screens.
+        let names = sources.iter().map(|at| Arc::clone(&form.names[*at]));
+        let shapes = sources.iter().map(|at| Arc::clone(&form.shapes[*at]));
+        let Ok(open) = Form::new(names.collect(), shapes.collect(), false) else {
             return Vec::new();
-        }
-        let hidden = |distance: f64| -> Vec<bool> {
-            let point = vec![self.point(distance)];
-            let Ok(views) = Views::standing(form, point.clone()) else {
-                return vec![false; sources.len()];
-            };
+        };
+        let flux = |form: &Form, distance: f64| -> Option<Vec<DVec3>> {
+            let views = Views::standing(form, vec![self.point(distance)]).ok()?;
             let mut seen = vec![DVec3::ZERO; form.shapes.len()];
             for (part, view) in views.parts(0) {
                 seen[form.owner(part)] += view.flux();
             }
-            let whole = alone.iter().map(|alone| {
-                let views = Views::standing(alone, point.clone()).ok()?;
-                Some(views.parts(0).map(|(_, view)| view.flux()).sum::<DVec3>())
-            });
-            whole
-                .zip(&sources)
-                .map(|(whole, at)| {
-                    whole.is_some_and(|whole| seen[*at].length() < whole.length() * (1.0 - SOME))
-                })
+            Some(seen)
+        };
+        let hidden = |distance: f64| -> Vec<bool> {
+            let Some((seen, whole)) = flux(form, distance).zip(flux(&open, distance)) else {
+                return vec![false; sources.len()];
+            };
+            sources
+                .iter()
+                .zip(whole)
+                .map(|(at, whole)| seen[*at].length() < whole.length() * (1.0 - SOME))
                 .collect()
         };
         let place = |step: u32| from + (to - from) * f64::from(step) / f64::from(STEPS);
