@@ -68,7 +68,7 @@ pub fn saturation(temperature: f64) -> Result<f64, Error> {
 /// # Source
 ///
 /// ISO 7933:2004 and 2023, vapour pressure at the skin; read in two open
-/// transcriptions of the standard's own program.
+/// renderings of the standard's own program.
 #[must_use]
 pub fn saturation_by_iso_7933(temperature: f64) -> f64 {
     let t = temperature - 273.15;

@@ -209,7 +209,7 @@ pub const LONGEST: f64 = 86_400.0;
 ///
 /// # Source
 ///
-/// ISO 7933:2004 and 2023; the program of 2004 read in open transcriptions,
+/// ISO 7933:2004 and 2023; the program of 2004 read in open renderings,
 /// that of 2023 in the open library pythermalcomfort 4.8.1. Where the two
 /// differ from it, the difference stands beside the checks.
 ///
